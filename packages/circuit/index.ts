@@ -1,0 +1,10 @@
+/** The domain: kinds, circuit model, assembly, study. Knows no text, no editor, no rule. */
+export * from './model/origin.ts';
+export * from './model/value.ts';
+export * from './model/circuit.ts';
+export * from './kinds/names.ts';
+export * from './kinds/kind.ts';
+export * from './study/study.ts';
+export * from './kinds/index.ts';
+export * from './kinds/line-properties.ts';
+export * from './assembly/machine.ts';

@@ -1,0 +1,2 @@
+/** The computing core: a network of elements in, pressures, flows and motion out. Knows no names, no text, no trade. */
+export * from './network.ts';

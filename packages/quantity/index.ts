@@ -1,0 +1,3 @@
+/** Numbers with units: dimensions, exact unit table, parse, format. */
+export * from './dimension.ts';
+export * from './quantity.ts';
