@@ -5,15 +5,13 @@ import { hardware } from './common.ts';
 export const shuttle: Kind = {
   name: 'shuttle',
   noun: 'shuttle valve',
-  about: '',
+  about: 'Shuttle valve: joins the higher of A and B to C.',
   ports: [
-    { name: 'A', role: 'any', required: true, about: '' },
-    { name: 'B', role: 'any', required: true, about: '' },
-    { name: 'C', role: 'any', required: true, about: '' },
+    { name: 'A', role: 'any', required: true, about: 'One inlet.' },
+    { name: 'B', role: 'any', required: true, about: 'The other inlet.' },
+    { name: 'C', role: 'any', required: true, about: 'Outlet: the higher pressure.' },
   ],
   chain: { how: 'none' },
-  properties: [
-    ...hardware,
-  ],
+  properties: [...hardware],
   groups: [],
 };
