@@ -1,6 +1,8 @@
 /** Cylinder. */
+import type { Component } from '../model/circuit.ts';
 import type { Kind } from './kind.ts';
 import { hardware } from './common.ts';
+import { has, word } from './read.ts';
 
 export const cylinder: Kind = {
   name: 'cylinder',
@@ -100,4 +102,19 @@ export const cylinder: Kind = {
     ...hardware,
   ],
   groups: [],
+  portsOf(component) {
+    const only = portOfSingle(component);
+    return only === undefined ? cylinder.ports : cylinder.ports.filter((p) => p.name === only);
+  },
+  chainOf(component) {
+    const only = portOfSingle(component);
+    return only === undefined ? { how: 'none' } : { how: 'fixed', port: only };
+  },
 };
+
+/** The only port of a single-acting cylinder or plunger; undefined for a double-acting one. */
+export function portOfSingle(component: Component): 'cap' | 'rod' | undefined {
+  const single = word(component, 'single');
+  if (single === 'cap' || single === 'rod') return single;
+  return has(component, 'rod') ? undefined : 'cap';
+}

@@ -1,6 +1,14 @@
 /** Directional control valve. */
 import type { Kind } from './kind.ts';
 import { hardware } from './common.ts';
+import { word } from './read.ts';
+
+/** Main ports by the first number of the shape. */
+export const PORTS_BY_SHAPE: Readonly<Record<number, readonly string[]>> = {
+  2: ['P', 'A'],
+  3: ['P', 'T', 'A'],
+  4: ['P', 'T', 'A', 'B'],
+};
 
 export const directional: Kind = {
   name: 'directional',
@@ -121,4 +129,10 @@ export const directional: Kind = {
     ...hardware,
   ],
   groups: [{ name: 'return', need: 'exactly one', of: ['spring', 'detent', 'normally'] }],
+  portsOf(component) {
+    const main = PORTS_BY_SHAPE[component.shape?.ports ?? 4] ?? ['P', 'T', 'A', 'B'];
+    return directional.ports
+      .filter((p) => main.includes(p.name) || ['X', 'Y', 'LS'].includes(p.name))
+      .map((p) => (p.name === 'X' && word(component, 'external') === 'pilot' ? { ...p, required: true } : p));
+  },
 };

@@ -1,6 +1,7 @@
 /** Pump. */
 import type { Kind } from './kind.ts';
 import { hardware } from './common.ts';
+import { has } from './read.ts';
 
 export const pump: Kind = {
   name: 'pump',
@@ -102,4 +103,7 @@ export const pump: Kind = {
     ...hardware,
   ],
   groups: [],
+  portsOf(component) {
+    return pump.ports.map((p) => (p.name === 'LS' && has(component, 'sensing') ? { ...p, required: true } : p));
+  },
 };

@@ -1,6 +1,7 @@
 /** Pressure-relief valve. */
 import type { Kind } from './kind.ts';
 import { hardware } from './common.ts';
+import { has } from './read.ts';
 
 export const relief: Kind = {
   name: 'relief',
@@ -55,4 +56,7 @@ export const relief: Kind = {
     ...hardware,
   ],
   groups: [],
+  portsOf(component) {
+    return relief.ports.filter((p) => p.name !== 'X' || has(component, 'piloted'));
+  },
 };

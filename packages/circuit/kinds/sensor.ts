@@ -1,6 +1,7 @@
 /** Sensor. */
 import type { Kind } from './kind.ts';
 import { hardware } from './common.ts';
+import { has } from './read.ts';
 
 export const sensor: Kind = {
   name: 'sensor',
@@ -14,4 +15,10 @@ export const sensor: Kind = {
     ...hardware,
   ],
   groups: [],
+  portsOf(component) {
+    return has(component, 'on') ? [] : sensor.ports;
+  },
+  chainOf(component) {
+    return has(component, 'on') ? { how: 'none' } : sensor.chain;
+  },
 };

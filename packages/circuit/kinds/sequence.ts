@@ -1,6 +1,7 @@
 /** Sequence valve. */
 import type { Kind } from './kind.ts';
 import { hardware } from './common.ts';
+import { word } from './read.ts';
 
 export const sequence: Kind = {
   name: 'sequence',
@@ -50,4 +51,9 @@ export const sequence: Kind = {
     ...hardware,
   ],
   groups: [],
+  portsOf(component) {
+    return sequence.ports
+      .filter((p) => p.name !== 'Y' || word(component, 'internal') !== 'drain')
+      .map((p) => (p.name === 'X' && word(component, 'external') === 'pilot' ? { ...p, required: true } : p));
+  },
 };

@@ -1,6 +1,7 @@
 /** Switch. */
 import type { Kind } from './kind.ts';
 import { hardware } from './common.ts';
+import { has } from './read.ts';
 
 export const switchKind: Kind = {
   name: 'switch',
@@ -58,4 +59,10 @@ export const switchKind: Kind = {
     ...hardware,
   ],
   groups: [{ name: 'what', need: 'at least one', of: ['rises', 'falls', 'at', 'from', 'outside'] }],
+  portsOf(component) {
+    return ['on', 'at', 'from', 'outside'].some((n) => has(component, n)) ? [] : switchKind.ports;
+  },
+  chainOf(component) {
+    return ['on', 'at', 'from', 'outside'].some((n) => has(component, n)) ? { how: 'none' } : switchKind.chain;
+  },
 };
