@@ -8,3 +8,5 @@ export * from './study/study.ts';
 export * from './kinds/index.ts';
 export * from './kinds/line-properties.ts';
 export * from './assembly/machine.ts';
+export * from './fluid/index.ts';
+export * as read from './kinds/read.ts';
