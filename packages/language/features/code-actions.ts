@@ -1,0 +1,77 @@
+/** Quick fixes of the findings at a range, and the one action that applies every safe fix of the file. */
+import { CodeActionKind, type CodeAction, type Diagnostic, type TextEdit, type WorkspaceEdit } from 'vscode-languageserver-types';
+import type { TextChange } from '@oilway/circuit';
+import type { Finding, Fix } from '@oilway/rules';
+import type { Analysis } from './analysis.ts';
+import { sameFinding, toDiagnostic, type DiagnosticContext, type DiagnosticData } from './diagnostics.ts';
+
+/** All safe fixes of a file at once. */
+export const FIX_ALL = `${CodeActionKind.SourceFixAll}.oilway`;
+
+function toEdit(changes: readonly TextChange[], context: DiagnosticContext): WorkspaceEdit | undefined {
+  const byFile: Record<string, TextEdit[]> = {};
+  for (const change of changes) {
+    const range = context.range({ uri: change.uri, start: change.start, end: change.end });
+    if (!range) return undefined;
+    (byFile[change.uri] ??= []).push({ range, newText: change.text });
+  }
+  return { changes: byFile };
+}
+
+function overlaps(a: TextChange, b: TextChange): boolean {
+  if (a.uri !== b.uri) return false;
+  if (a.start === a.end && b.start === b.end) return false;
+  return a.start < b.end && b.start < a.end;
+}
+
+/** Safe fixes in text order; one that would touch the characters of an earlier one is left for the next round. */
+export function safeFixes(findings: readonly Finding[]): { readonly fixes: readonly Fix[]; readonly changes: readonly TextChange[] } {
+  const fixes: Fix[] = [];
+  const changes: TextChange[] = [];
+  const ordered = [...findings].filter((one) => one.accepted === undefined).sort((a, b) => a.origin.start - b.origin.start);
+  for (const finding of ordered) {
+    const fix = finding.fixes.find((one) => one.safe);
+    if (!fix) continue;
+    const known = fix.changes.every((change) => changes.some((other) => other.uri === change.uri && other.start === change.start && other.end === change.end && other.text === change.text));
+    if (known) continue;
+    if (fix.changes.some((change) => changes.some((other) => overlaps(change, other)))) continue;
+    fixes.push(fix);
+    changes.push(...fix.changes);
+  }
+  return { fixes, changes };
+}
+
+export interface CodeActionQuestion {
+  readonly start: number;
+  readonly end: number;
+  /** Diagnostics the client already shows there. */
+  readonly shown: readonly Diagnostic[];
+  /** Kinds asked for; absent = all. */
+  readonly only?: readonly string[];
+}
+
+export function codeActions(analysis: Analysis, question: CodeActionQuestion, context: DiagnosticContext): CodeAction[] {
+  const wants = (kind: string): boolean => !question.only || question.only.some((one) => kind === one || kind.startsWith(`${one}.`));
+  const actions: CodeAction[] = [];
+  if (wants(CodeActionKind.QuickFix)) {
+    for (const finding of analysis.findings) {
+      if (finding.accepted !== undefined || finding.origin.uri !== analysis.uri) continue;
+      if (finding.origin.start > question.end || finding.origin.end < question.start) continue;
+      const shown = question.shown.filter((one) => sameFinding(finding, (one.data ?? {}) as Partial<DiagnosticData>));
+      const own = toDiagnostic(finding, context);
+      const diagnostics = shown.length > 0 ? shown : own ? [own] : [];
+      finding.fixes.forEach((fix, index) => {
+        const edit = toEdit(fix.changes, context);
+        if (!edit) return;
+        actions.push({ title: fix.title, kind: CodeActionKind.QuickFix, diagnostics, edit, ...(index === 0 && fix.safe ? { isPreferred: true } : {}) });
+      });
+    }
+  }
+  // Only where asked for: an editor that runs it on saving must not wait for it otherwise.
+  if (wants(FIX_ALL) && question.only) {
+    const { fixes, changes } = safeFixes(analysis.findings);
+    const edit = fixes.length > 0 ? toEdit(changes, context) : undefined;
+    if (edit) actions.push({ title: `Apply all safe fixes (${fixes.length})`, kind: FIX_ALL, edit });
+  }
+  return actions;
+}
