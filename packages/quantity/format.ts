@@ -102,6 +102,8 @@ function usualDecimals(value: number, si: number, unit: Unit, options: FormatOpt
   if (options.position === true && unit.dimension === 'length' && Math.abs(si) < 10) return Math.max(0, Math.ceil(-Math.log10(1e-3 / unit.factor) - 1e-9));
   // Finer units than a kilopascal are chosen for small pressures and show them in full.
   if (unit.dimension === 'pressure' && Math.abs(value) < SMALL_PRESSURE / unit.factor && unit.factor >= 1000) {
+    // A whole psi would be too coarse for a suction line: one decimal there, as long as three figures have one.
+    if (unit.system === 'us') return Math.min(usual, Math.max(0, Math.ceil(-Math.log10(PRESSURE_STEP / unit.factor) - 1e-9) + 1));
     return Math.max(0, Math.ceil(-Math.log10(PRESSURE_STEP / unit.factor) - 1e-9));
   }
   return usual;
