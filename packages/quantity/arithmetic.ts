@@ -75,7 +75,12 @@ export function quantityOf(a: Amount, expected?: Dimension): Outcome<Quantity> {
   if (a.dimension !== undefined && (expected === undefined || expected === a.dimension)) {
     return found({ si: a.si, dimension: a.dimension, unit: a.unit });
   }
-  if (expected !== undefined && expected !== 'temperature' && a.dimension !== 'temperature' && same(EXPONENTS[expected], a.exponents, true)) {
+  if (
+    expected !== undefined &&
+    expected !== 'temperature' &&
+    a.dimension !== 'temperature' &&
+    same(EXPONENTS[expected], a.exponents, true)
+  ) {
     return found({ si: a.si, dimension: expected, unit: a.unit });
   }
   if (a.dimension !== undefined) return found({ si: a.si, dimension: a.dimension, unit: a.unit });
@@ -106,7 +111,10 @@ function combine(a: Amount, b: Amount, sign: 1 | -1): Outcome<Amount> {
   const pointA = a.dimension === 'temperature';
   const pointB = b.dimension === 'temperature';
   if (pointA || pointB) {
-    if (pointA && pointB) return sign === -1 ? computed(si, a.exponents, 'temperature difference', '') : problem('two temperatures cannot be added: one must be a difference in K');
+    if (pointA && pointB)
+      return sign === -1
+        ? computed(si, a.exponents, 'temperature difference', '')
+        : problem('two temperatures cannot be added: one must be a difference in K');
     const other = pointA ? b : a;
     if (!same(other.exponents, EXPONENTS.temperature)) return problem(`cannot ${what} ${nameOf(b)} and ${nameOf(a)}`);
     if (pointB && sign === -1) return problem('a temperature cannot be subtracted from a difference');

@@ -21,16 +21,60 @@ export interface FormatOptions {
 }
 
 const METRIC: Readonly<Record<Dimension, string>> = {
-  ratio: '%', length: 'mm', area: 'cm2', volume: 'L', angle: 'deg', time: 's', velocity: 'mm/s', acceleration: 'm/s2', rotation: 'rpm',
-  displacement: 'cm3/rev', flow: 'L/min', pressure: 'bar', force: 'kN', torque: 'N.m', energy: 'kJ', power: 'kW', mass: 'kg',
-  inertia: 'kg.m2', density: 'kg/m3', viscosity: 'mm2/s', temperature: 'degC', 'temperature difference': 'K',
-  'power/temperature': 'kW/K', stiffness: 'N/mm', voltage: 'V', current: 'A',
+  ratio: '%',
+  length: 'mm',
+  area: 'cm2',
+  volume: 'L',
+  angle: 'deg',
+  time: 's',
+  velocity: 'mm/s',
+  acceleration: 'm/s2',
+  rotation: 'rpm',
+  displacement: 'cm3/rev',
+  flow: 'L/min',
+  pressure: 'bar',
+  force: 'kN',
+  torque: 'N.m',
+  energy: 'kJ',
+  power: 'kW',
+  mass: 'kg',
+  inertia: 'kg.m2',
+  density: 'kg/m3',
+  viscosity: 'mm2/s',
+  temperature: 'degC',
+  'temperature difference': 'K',
+  'power/temperature': 'kW/K',
+  stiffness: 'N/mm',
+  voltage: 'V',
+  current: 'A',
 };
 const US: Readonly<Record<Dimension, string>> = {
-  ratio: '%', length: 'in', area: 'in2', volume: 'gal', angle: 'deg', time: 's', velocity: 'in/s', acceleration: 'ft/s2', rotation: 'rpm',
-  displacement: 'in3/rev', flow: 'gpm', pressure: 'psi', force: 'lbf', torque: 'lbf.in', energy: 'Btu', power: 'hp', mass: 'lb',
-  inertia: 'lb.in2', density: 'lb/ft3', viscosity: 'cSt', temperature: 'degF', 'temperature difference': 'R',
-  'power/temperature': 'hp/R', stiffness: 'lbf/in', voltage: 'V', current: 'A',
+  ratio: '%',
+  length: 'in',
+  area: 'in2',
+  volume: 'gal',
+  angle: 'deg',
+  time: 's',
+  velocity: 'in/s',
+  acceleration: 'ft/s2',
+  rotation: 'rpm',
+  displacement: 'in3/rev',
+  flow: 'gpm',
+  pressure: 'psi',
+  force: 'lbf',
+  torque: 'lbf.in',
+  energy: 'Btu',
+  power: 'hp',
+  mass: 'lb',
+  inertia: 'lb.in2',
+  density: 'lb/ft3',
+  viscosity: 'cSt',
+  temperature: 'degF',
+  'temperature difference': 'R',
+  'power/temperature': 'hp/R',
+  stiffness: 'lbf/in',
+  voltage: 'V',
+  current: 'A',
 };
 
 /** The unit a figure of this dimension is shown in. */
@@ -99,7 +143,8 @@ function usualDecimals(value: number, si: number, unit: Unit, options: FormatOpt
   const usual = decimalsFor(value, digits);
   if (options.digits !== undefined) return usual;
   if (unit.dimension === 'time' && unit.symbol === 's' && Math.abs(roundHalfAway(value, 2)) < 10) return 2;
-  if (options.position === true && unit.dimension === 'length' && Math.abs(si) < 10) return Math.max(0, Math.ceil(-Math.log10(1e-3 / unit.factor) - 1e-9));
+  if (options.position === true && unit.dimension === 'length' && Math.abs(si) < 10)
+    return Math.max(0, Math.ceil(-Math.log10(1e-3 / unit.factor) - 1e-9));
   // Finer units than a kilopascal are chosen for small pressures and show them in full.
   if (unit.dimension === 'pressure' && Math.abs(value) < SMALL_PRESSURE / unit.factor && unit.factor >= 1000) {
     // A whole psi would be too coarse for a suction line: one decimal there, as long as three figures have one.
@@ -154,7 +199,9 @@ export function formatAgainst(
   if (told(shown.value, shown.bound)) return shown;
   for (let digits = 3; digits <= 15; digits++) {
     const value = format(si, dimension, { ...options, digits });
-    const limit = format(bound, dimension, { ...options, digits }).replace(/(\.\d*?)0+(?= )/, '$1').replace(/\.(?= )/, '');
+    const limit = format(bound, dimension, { ...options, digits })
+      .replace(/(\.\d*?)0+(?= )/, '$1')
+      .replace(/\.(?= )/, '');
     if (told(value, limit)) return { value, bound: limit };
   }
   return shown;

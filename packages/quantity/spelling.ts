@@ -1,5 +1,5 @@
 /** Spellings of units: the table's symbols and aliases, and those that follow from them by rule (superscripts, middle dots, degree and micro signs). */
-import { type Dimension } from './dimension.ts';
+import type { Dimension } from './dimension.ts';
 import { UNITS, type Unit } from './units.ts';
 
 /** All spellings of one written form: `in2` is also `in²` and `in^2`, `kg.m2` also `kg·m²`, `um` also `µm` (both code points). */

@@ -1,7 +1,26 @@
 /** Computing with quantities, and the preferred numbers. */
 import {
-  add, amountOf, divide, DIMENSIONS, greatest, least, multiply, negate, nextPreferred, parseQuantity, preferredValues, quantityOf, RODS_OF_BORE,
-  SERIES, squareRoot, subtract, TUBES, type Amount, type Dimension, type Outcome, type SeriesName,
+  add,
+  amountOf,
+  divide,
+  DIMENSIONS,
+  greatest,
+  least,
+  multiply,
+  negate,
+  nextPreferred,
+  parseQuantity,
+  preferredValues,
+  quantityOf,
+  RODS_OF_BORE,
+  SERIES,
+  squareRoot,
+  subtract,
+  TUBES,
+  type Amount,
+  type Dimension,
+  type Outcome,
+  type SeriesName,
 } from '@oilway/quantity';
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';

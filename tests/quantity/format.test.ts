@@ -1,5 +1,15 @@
 /** Figures as shown. */
-import { displayUnit, format, formatAgainst, formatNumber, parseQuantity, roundHalfAway, UNITS, toSi, type FormatOptions } from '@oilway/quantity';
+import {
+  displayUnit,
+  format,
+  formatAgainst,
+  formatNumber,
+  parseQuantity,
+  roundHalfAway,
+  UNITS,
+  toSi,
+  type FormatOptions,
+} from '@oilway/quantity';
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 
@@ -61,20 +71,39 @@ describe('three significant digits and the exceptions', () => {
 
 describe('rounding', () => {
   it.each([
-    [1.005, 2, 1.01], [-1.005, 2, -1.01], [2.5, 0, 3], [-2.5, 0, -3], [0.125, 2, 0.13], [1234.5, -1, 1230], [1235, -1, 1240], [8.345, 2, 8.35],
+    [1.005, 2, 1.01],
+    [-1.005, 2, -1.01],
+    [2.5, 0, 3],
+    [-2.5, 0, -3],
+    [0.125, 2, 0.13],
+    [1234.5, -1, 1230],
+    [1235, -1, 1240],
+    [8.345, 2, 8.35],
   ])('%d to %d decimals is %d', (value, decimals, expected) => {
     expect(roundHalfAway(value, decimals)).toBe(expected);
   });
   it('is odd: the same size on both sides of zero', () => {
-    fc.assert(fc.property(fc.double({ min: 0, max: 1e9, noNaN: true }), fc.integer({ min: -3, max: 6 }), (x, d) => roundHalfAway(-x, d) === -roundHalfAway(x, d)));
+    fc.assert(
+      fc.property(
+        fc.double({ min: 0, max: 1e9, noNaN: true }),
+        fc.integer({ min: -3, max: 6 }),
+        (x, d) => roundHalfAway(-x, d) === -roundHalfAway(x, d),
+      ),
+    );
   });
   it('reads back within half a unit of the third figure, in every unit', () => {
     fc.assert(
-      fc.property(fc.constantFrom(...UNITS.filter((unit) => unit.offset === 0)), fc.double({ min: 12, max: 9e5, noNaN: true }), (unit, value) => {
-        const text = format(toSi(value, unit), unit.dimension, { unit: unit.symbol });
-        const back = parseFloat(text);
-        return Math.abs(back - value) <= 0.5 * 10 ** (Math.floor(Math.log10(value)) - 2) * 1.0001 + (unit.dimension === 'pressure' ? 0.5 : 0);
-      }),
+      fc.property(
+        fc.constantFrom(...UNITS.filter((unit) => unit.offset === 0)),
+        fc.double({ min: 12, max: 9e5, noNaN: true }),
+        (unit, value) => {
+          const text = format(toSi(value, unit), unit.dimension, { unit: unit.symbol });
+          const back = parseFloat(text);
+          return (
+            Math.abs(back - value) <= 0.5 * 10 ** (Math.floor(Math.log10(value)) - 2) * 1.0001 + (unit.dimension === 'pressure' ? 0.5 : 0)
+          );
+        },
+      ),
     );
   });
 });

@@ -110,7 +110,7 @@ describe('laws between units (definitions, no source needed)', () => {
     expect((si('1 bar') * si('1 L/min')) / si('1 kW')).toBeCloseTo(1 / 600, 15);
   });
   it('psi times gpm is hp times 550 x 12 x 60 / 231', () => {
-    expect((si('1 hp') / (si('1 psi') * si('1 gpm'))) / ((550 * 12 * 60) / 231)).toBeCloseTo(1, 12);
+    expect(si('1 hp') / (si('1 psi') * si('1 gpm')) / ((550 * 12 * 60) / 231)).toBeCloseTo(1, 12);
   });
   it('hp is lbf.in times rpm over 63025 (five printed figures)', () => {
     expect(si('1 hp') / (si('1 lbf.in') * si('1 rpm'))).toBeCloseTo(63025.4, 1);

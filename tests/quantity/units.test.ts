@@ -1,6 +1,18 @@
 /** Properties of the unit table and of its spellings. */
 import {
-  DIMENSIONS, fromSi, inUnit, matchUnit, nearestUnit, parseQuantity, quantity, SI_UNIT, toSi, UNIT_SPELLINGS, unitOf, UNITS, unitsOf,
+  DIMENSIONS,
+  fromSi,
+  inUnit,
+  matchUnit,
+  nearestUnit,
+  parseQuantity,
+  quantity,
+  SI_UNIT,
+  toSi,
+  UNIT_SPELLINGS,
+  unitOf,
+  UNITS,
+  unitsOf,
 } from '@oilway/quantity';
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
@@ -35,7 +47,9 @@ describe('unit table', () => {
   });
   it('brings every unit to SI and back', () => {
     fc.assert(
-      fc.property(anyUnit, anyNumber, (unit, value) => closeTo(fromSi(toSi(value, unit), unit), value, 1 + Math.abs(unit.offset / unit.factor))),
+      fc.property(anyUnit, anyNumber, (unit, value) =>
+        closeTo(fromSi(toSi(value, unit), unit), value, 1 + Math.abs(unit.offset / unit.factor)),
+      ),
       { numRuns: 2000 },
     );
   });
@@ -64,9 +78,26 @@ describe('unit table', () => {
 
 describe('spellings', () => {
   it.each([
-    ['in^2', 'in2'], ['in²', 'in2'], ['m³/h', 'm3/h'], ['kg·m²', 'kg.m2'], ['kg⋅m^2', 'kg.m2'], ['N·m', 'N.m'], ['l/min', 'L/min'],
-    ['\u00b5m', 'um'], ['\u03bcm', 'um'], ['\u00b5s', 'us'], ['°C', 'degC'], ['°F', 'degF'], ['°', 'deg'], ['cc/rev', 'cm3/rev'],
-    ['cm³/rev', 'cm3/rev'], ['lpm', 'L/min'], ['mm²/s', 'mm2/s'], ['lbf·ft', 'lbf.ft'], ['barg', 'bar'], ['psig', 'psi'],
+    ['in^2', 'in2'],
+    ['in²', 'in2'],
+    ['m³/h', 'm3/h'],
+    ['kg·m²', 'kg.m2'],
+    ['kg⋅m^2', 'kg.m2'],
+    ['N·m', 'N.m'],
+    ['l/min', 'L/min'],
+    ['\u00b5m', 'um'],
+    ['\u03bcm', 'um'],
+    ['\u00b5s', 'us'],
+    ['°C', 'degC'],
+    ['°F', 'degF'],
+    ['°', 'deg'],
+    ['cc/rev', 'cm3/rev'],
+    ['cm³/rev', 'cm3/rev'],
+    ['lpm', 'L/min'],
+    ['mm²/s', 'mm2/s'],
+    ['lbf·ft', 'lbf.ft'],
+    ['barg', 'bar'],
+    ['psig', 'psi'],
   ])('%s is %s', (spelling, symbol) => {
     expect(unitOf(spelling)?.symbol).toBe(symbol);
     expect(matchUnit(`${spelling} rest`, 0)?.length).toBe(spelling.length);
@@ -84,15 +115,26 @@ describe('spellings', () => {
       const match = matchUnit(`${spelling}zq`, 0);
       if (match !== undefined) expect(`${spelling}zq`[match.length]).toMatch(/[/*.·⋅^]/);
     }
-    for (const word of ['motor', 'minutes', 'hot', 'step', 'inward', 'N1', 'm_1', 'm4', 'm⁴', 'N.x', 'Kelvin']) expect(matchUnit(word, 0), word).toBeUndefined();
+    for (const word of ['motor', 'minutes', 'hot', 'step', 'inward', 'N1', 'm_1', 'm4', 'm⁴', 'N.x', 'Kelvin'])
+      expect(matchUnit(word, 0), word).toBeUndefined();
   });
   it('leaves a division by a name alone', () => {
     expect(matchUnit('L/Q1', 0)).toMatchObject({ length: 1, unit: { symbol: 'L' } });
     expect(matchUnit('L/min', 0)).toMatchObject({ length: 5, unit: { symbol: 'L/min' } });
   });
   it.each([
-    ['baar', 'bar'], ['Bar', 'bar'], ['l/mn', 'L/min'], ['gmp', 'gpm'], ['kn', 'kN'], ['cm3/rv', 'cm3/rev'], ['mm/sec', 'mm/s'], ['degc', 'degC'],
-    ['RPM', 'rpm'], ['Mpa', 'MPa'], ['KW', 'kW'], ['mm/S', 'mm/s'],
+    ['baar', 'bar'],
+    ['Bar', 'bar'],
+    ['l/mn', 'L/min'],
+    ['gmp', 'gpm'],
+    ['kn', 'kN'],
+    ['cm3/rv', 'cm3/rev'],
+    ['mm/sec', 'mm/s'],
+    ['degc', 'degC'],
+    ['RPM', 'rpm'],
+    ['Mpa', 'MPa'],
+    ['KW', 'kW'],
+    ['mm/S', 'mm/s'],
   ])('%s is taken for %s mistyped', (word, symbol) => {
     expect(nearestUnit(word)?.symbol).toBe(symbol);
   });
