@@ -4,6 +4,7 @@ import { mkdir, readdir, readFile, rename, rm, stat, writeFile } from 'node:fs/p
 import type { IncomingMessage, ServerResponse } from 'node:http';
 import { join, relative, resolve, sep } from 'node:path';
 import { mayWrite } from './guard.ts';
+import { FOLDER } from './page.ts';
 
 /** A request the disk refuses; the status tells the editor why. */
 class Refused extends Error {
@@ -41,7 +42,7 @@ export class Disk {
     this.port = port;
     this.watcher = watch(this.root, { recursive: true }, (_kind, name) => {
       if (name === null) return;
-      const path = `/${name.split(sep).join('/')}`;
+      const path = `${FOLDER}/${name.split(sep).join('/')}`;
       for (const listener of this.listeners) listener.write(`data: ${JSON.stringify(path)}\n\n`);
     });
   }
@@ -49,7 +50,8 @@ export class Disk {
   /** The file a workspace path names; never one outside the workspace. */
   private place(path: string | null): string {
     if (path === null || !path.startsWith('/') || path.includes('\0')) throw new Refused(400, 'a path begins with /');
-    const place = resolve(join(this.root, path));
+    if (path !== FOLDER && !path.startsWith(`${FOLDER}/`)) throw new Refused(404, `everything lies below ${FOLDER}`);
+    const place = resolve(join(this.root, path.slice(FOLDER.length)));
     const inside = relative(this.root, place);
     if (inside.startsWith('..') || resolve(inside) === inside) throw new Refused(403, 'outside the workspace');
     return place;

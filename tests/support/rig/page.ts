@@ -11,6 +11,8 @@ export interface PageSettings {
 
 export const DISK_SCHEME = 'rigdisk';
 export const DISK_AUTHORITY = 'workspace';
+/** The name under which the editor shows the workspace folder. */
+export const FOLDER = '/circuits';
 
 /** Quiet and reproducible: no start page, no telemetry, no assistants, nothing fetched from anywhere. */
 const QUIET = {
@@ -29,7 +31,7 @@ const attribute = (text: string): string => text.replaceAll('&', '&amp;').replac
 
 export function page({ host, open, settings }: PageSettings): string {
   const webHost = `http://{{uuid}}.${host}/build`;
-  const folder = { scheme: DISK_SCHEME, authority: DISK_AUTHORITY, path: '/' };
+  const folder = { scheme: DISK_SCHEME, authority: DISK_AUTHORITY, path: FOLDER };
   const configuration = {
     productConfiguration: {
       nameShort: 'Oilway',
@@ -41,7 +43,7 @@ export function page({ host, open, settings }: PageSettings): string {
     folderUri: folder,
     additionalBuiltinExtensions: ['/ext', '/disk-ext'].map((path) => ({ scheme: 'http', authority: host, path })),
     configurationDefaults: { ...QUIET, ...settings },
-    defaultLayout: { force: true, editors: open === undefined ? [] : [{ uri: { ...folder, path: open } }] },
+    defaultLayout: { force: true, editors: open === undefined ? [] : [{ uri: { ...folder, path: `${FOLDER}${open}` } }] },
   };
   return `<!DOCTYPE html>
 <html lang="en">
