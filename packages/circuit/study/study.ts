@@ -151,7 +151,9 @@ export interface StepResult {
   readonly time?: number;
   readonly entered?: number;
   /** Per actuator that moves in the step: lowest, highest over the steady points, mean from the run; m/s or rad/s. */
-  readonly speeds: Readonly<Record<string, { readonly low: number; readonly high: number; readonly mean?: number; readonly direction: -1 | 1 }>>;
+  readonly speeds: Readonly<
+    Record<string, { readonly low: number; readonly high: number; readonly mean?: number; readonly direction: -1 | 1 }>
+  >;
   /** Net id -> highest, Pa. */
   readonly peaks: Readonly<Record<string, number>>;
   /** Net id -> lowest, Pa. */
@@ -160,7 +162,16 @@ export interface StepResult {
 }
 
 export interface Fault {
-  readonly kind: 'time limit' | 'waits for ever' | 'chatters' | 'cycle without time' | 'two voices' | 'no equilibrium' | 'does not settle' | 'first run short of oil' | 'interlock';
+  readonly kind:
+    | 'time limit'
+    | 'waits for ever'
+    | 'chatters'
+    | 'cycle without time'
+    | 'two voices'
+    | 'no equilibrium'
+    | 'does not settle'
+    | 'first run short of oil'
+    | 'interlock';
   readonly words: string;
   readonly step?: string;
   readonly time?: number;

@@ -1,0 +1,95 @@
+/** Whether an actuator moves, what drives it, and which way its oil takes. */
+import type { Body, BodyLoad, Solution } from '../assembly/machine.ts';
+import { standWords } from './coils.ts';
+import { relaxesWithin } from './loads.ts';
+import type { Plant } from './scene.ts';
+import type { Variant } from './study.ts';
+
+/** 0.05 mm/s. */
+const STILL_LINEAR = 5e-5;
+/** 0.05 deg/s. */
+const STILL_ROTATING = (0.05 * Math.PI) / 180;
+/** 0.005 L/min, m3/s. */
+export const STILL_FLOW = 0.005 / 60000;
+/** A pressed or clamped part springs back within this way, m. */
+const RELAXING_WAY = 5e-3;
+/** Flow that counts as a way of the oil, m3/s (0.002 L/min). */
+const SEEN_FLOW = 0.002 / 60000;
+
+export function moves(body: Body, solution: Solution): boolean {
+  const v = solution.velocities[body.id] ?? 0;
+  if (Math.abs(v) <= (body.type === 'rotating' ? STILL_ROTATING : STILL_LINEAR)) return false;
+  return oilMoved(body, solution) > STILL_FLOW;
+}
+
+/** Oil that goes into or out of a body's chambers, the larger, m3/s. */
+function oilMoved(body: Body, solution: Solution): number {
+  let most = 0;
+  for (const actuator of body.actuators) {
+    for (const [key, flow] of Object.entries(solution.flows)) {
+      if (key.startsWith(`${actuator}.`)) most = Math.max(most, Math.abs(flow));
+    }
+  }
+  return most;
+}
+
+export function movingIn(plant: Plant, solution: Solution, loads: Readonly<Record<string, BodyLoad>>): Variant['moving'] {
+  return plant.bodies.flatMap((body) => {
+    if (!moves(body, solution)) return [];
+    const velocity = solution.velocities[body.id] ?? 0;
+    const direction = velocity > 0 ? 1 : -1;
+    const pressed = solution.forces[body.id] ?? 0;
+    const cause = pressed * direction > 0 ? ('pressure' as const) : ('load' as const);
+    const load = loads[body.id];
+    const way = cause === 'load' && load && body.type === 'linear' ? relaxesWithin(load, solution.positions[body.id] ?? 0, direction, RELAXING_WAY) : undefined;
+    const path = wayOfOil(plant, body, solution, cause);
+    return body.actuators.map((id) => ({ id, velocity, cause, path, ...(way === undefined ? {} : { relaxes: way }) }));
+  });
+}
+
+/** The components the oil of a moving actuator passes: out of it where a load drives, to it where a pressure does. */
+export function wayOfOil(plant: Plant, body: Body, solution: Solution, cause: 'load' | 'pressure'): string {
+  const out = cause === 'load';
+  // Flow into the component is positive: oil leaves the chamber where it is negative.
+  const sign = out ? -1 : 1;
+  const start = body.actuators
+    .flatMap((id) => plant.at.portsOf(id).map((one) => ({ ...one, component: id, flow: (solution.flows[`${id}.${one.port}`] ?? 0) * sign })))
+    .sort((a, b) => b.flow - a.flow)[0];
+  if (!start || start.flow <= SEEN_FLOW) return '';
+  const words: string[] = [];
+  const seen = new Set(body.actuators);
+  let net: string | undefined = start.net;
+  for (let hop = 0; hop < 40 && net !== undefined; hop += 1) {
+    const joined = plant.at.net(net);
+    if (!joined) break;
+    if (joined.reservoir) {
+      words.push(joined.reservoir);
+      break;
+    }
+    // The next component takes (or gives) the most oil at this net.
+    const next: { readonly component: string; readonly port: string; readonly flow: number } | undefined = joined.ports
+      .filter((one) => !seen.has(one.component))
+      .map((one) => ({ ...one, flow: (solution.flows[`${one.component}.${one.port}`] ?? 0) * (out ? 1 : -1) }))
+      .sort((a, b) => b.flow - a.flow)[0];
+    if (!next || next.flow <= SEEN_FLOW) break;
+    seen.add(next.component);
+    const exit = plant.at
+      .portsOf(next.component)
+      .filter((one) => one.port !== next.port)
+      .map((one) => ({ ...one, flow: (solution.flows[`${next.component}.${one.port}`] ?? 0) * (out ? -1 : 1) }))
+      .sort((a, b) => b.flow - a.flow)[0];
+    words.push(passing(plant, next.component, next.port, exit?.port, solution, out));
+    net = exit && exit.flow > SEEN_FLOW ? exit.net : undefined;
+  }
+  return (out ? words : words.reverse()).join(', ');
+}
+
+function passing(plant: Plant, id: string, entry: string, exit: string | undefined, solution: Solution, out: boolean): string {
+  const component = plant.at.component(id);
+  const stand = solution.stands[id];
+  if (component?.kind === 'directional' && exit) {
+    const [from, to] = out ? [entry, exit] : [exit, entry];
+    return `${id} ${from} to ${to}${stand ? ` (${standWords(component, stand)})` : ''}`;
+  }
+  return component && ['pump', 'accumulator'].includes(component.kind) ? id : exit ? id : `${id}.${entry}`;
+}

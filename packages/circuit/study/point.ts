@@ -1,0 +1,121 @@
+/** A solution as a point of the study: what is asked for of it, actuator by actuator. */
+import type { Body, BodyLoad, Setting, Solution } from '../assembly/machine.ts';
+import { standWords } from './coils.ts';
+import { limiters } from './limits.ts';
+import { needed } from './loads.ts';
+import { moves } from './motion.ts';
+import { flag, reference, si } from './read.ts';
+import type { Plant } from './scene.ts';
+import type { ActuatorPoint, Point } from './study.ts';
+
+/** Below this the regularised friction of the engine lets a standing rod creep, m/s or rad/s: five times its scale. */
+const CREEP = 5e-5;
+
+export interface Asked {
+  readonly label: string;
+  readonly time?: number;
+  /** Wanted direction of a body where the step is known to move it. */
+  readonly directions?: Readonly<Record<string, -1 | 0 | 1>>;
+  /** Solve also with each wanted actuator held, and say what limits it. */
+  readonly forces?: boolean;
+}
+
+export function pointOf(plant: Plant, setting: Setting, solution: Solution, asked: Asked): Point {
+  const power: Record<string, number> = { ...solution.shaft };
+  for (const drive of plant.at.drives) {
+    power[drive.id] = plant.at.pumpsOf(drive.id).reduce((sum, pump) => sum + (solution.shaft[pump.id] ?? 0), 0);
+  }
+  const positions: Record<string, string> = {};
+  for (const [id, stand] of Object.entries(solution.stands)) {
+    const valve = plant.at.component(id);
+    if (valve) positions[id] = standWords(valve, stand);
+  }
+  return {
+    label: asked.label,
+    ...(asked.time === undefined ? {} : { time: asked.time }),
+    solved: solution.solved,
+    pressures: solution.pressures,
+    undetermined: solution.undetermined,
+    flows: solution.flows,
+    openings: solution.openings,
+    lifting: solution.lifting,
+    actuators: plant.bodies.flatMap((body) => actuatorPoints(plant, body, setting, solution, asked)),
+    power,
+    positions,
+    oil: solution.oil,
+    diagnosis: solution.diagnosis,
+    remarks: solution.remarks,
+    notComputed: plant.machine.notComputed,
+  };
+}
+
+function actuatorPoints(plant: Plant, body: Body, setting: Setting, solution: Solution, asked: Asked): ActuatorPoint[] {
+  const position = solution.positions[body.id] ?? body.begins;
+  const velocity = solution.velocities[body.id] ?? 0;
+  const moving = moves(body, solution);
+  const wanted = asked.directions?.[body.id] ?? (moving ? (velocity > 0 ? 1 : -1) : 0);
+  const load: BodyLoad | undefined = setting.loads[body.id];
+  const need = load && wanted !== 0 ? needed(load, position, wanted) : 0;
+  const atStop = stopAt(body, position, velocity, moving, solution);
+  let available: number | undefined;
+  if (asked.forces && wanted !== 0) {
+    const held = plant.machine.solve({ ...setting, locked: [...(setting.locked ?? []), body.id] }, solution);
+    const force = held.forces[body.id];
+    if (held.solved && force !== undefined) available = force * wanted;
+  }
+  const short = available !== undefined && !moving && !atStop && available < need && Math.abs(velocity) < CREEP ? need - available : undefined;
+  const limitedBy = asked.forces && wanted !== 0 ? limiters(plant, body, setting, solution, { wanted, moving, atStop, short }) : [];
+  const stopForce = solution.stopForces[body.id];
+  return body.actuators.map((id) => ({
+    id,
+    position,
+    velocity,
+    direction: wanted,
+    force: body.actuators.length > 1 ? ownForce(plant, id, solution, moving ? velocity : 0) : (solution.forces[body.id] ?? 0),
+    ...(available === undefined ? {} : { available }),
+    needed: need,
+    limitedBy,
+    ...(short === undefined ? {} : { shortBy: short }),
+    ...(atStop === undefined ? {} : { atStop }),
+    ...(stopForce === undefined || stopForce === 0 ? {} : { stopForce }),
+  }));
+}
+
+function stopAt(body: Body, position: number, velocity: number, moving: boolean, solution: Solution): 'retracted' | 'extended' | undefined {
+  if (!Number.isFinite(body.stroke) || moving) return undefined;
+  const near = 1e-6;
+  const pressed = solution.stopForces[body.id];
+  if (position <= near && velocity <= CREEP && (pressed === undefined || pressed >= 0 || position <= 0)) return 'retracted';
+  if (position >= body.stroke - near) return 'extended';
+  return undefined;
+}
+
+/** What one cylinder of a rigid group presses with by its own pressures, N, + outward. */
+function ownForce(plant: Plant, id: string, solution: Solution, velocity: number): number {
+  const cylinder = plant.at.component(id);
+  if (cylinder?.kind !== 'cylinder') return 0;
+  const areas = cylinderAreas(plant, id);
+  const p = (port: string) => {
+    const net = plant.at.netOf(id, port);
+    return net === undefined ? 0 : (solution.pressures[net] ?? 0);
+  };
+  const pressing = p('cap') * areas.cap - p('rod') * areas.rod;
+  return pressing - Math.sign(velocity) * areas.sealFriction;
+}
+
+/** Areas of a cylinder, m2, and its seal friction, N (3 bar on the bore unless said). */
+export function cylinderAreas(plant: Plant, id: string): { readonly cap: number; readonly rod: number; readonly sealFriction: number } {
+  const cylinder = plant.at.component(id);
+  if (!cylinder) return { cap: 0, rod: 0, sealFriction: 0 };
+  const bore = si(cylinder, 'bore') ?? 0;
+  const full = (Math.PI / 4) * bore * bore;
+  const rod = si(cylinder, 'rod');
+  const annulus = rod === undefined ? 0 : full - (Math.PI / 4) * rod * rod;
+  return { cap: flag(cylinder, 'through') ? annulus : full, rod: annulus, sealFriction: (si(cylinder, 'seal') ?? 3e5) * full };
+}
+
+/** Drive of a pump. */
+export function driveOf(plant: Plant, pump: string): string | undefined {
+  const component = plant.at.component(pump);
+  return component ? reference(component, 'driven')?.id : undefined;
+}
