@@ -1,0 +1,136 @@
+/** What a person does in the editor and sees there, in the words of this suite. Waits for things, never for time. */
+import type { Locator, Page } from 'playwright-core';
+import { STEP } from './driver.ts';
+
+/** The editor writes no-break spaces; the suite reads plain ones. */
+export const plain = (text: string): string => text.replaceAll('\u00a0', ' ').replaceAll('\u200b', '');
+
+export class Editor {
+  readonly page: Page;
+
+  constructor(page: Page) {
+    this.page = page;
+  }
+
+  get errors(): Locator {
+    return this.page.locator('.editor-instance .squiggly-error');
+  }
+
+  get warnings(): Locator {
+    return this.page.locator('.editor-instance .squiggly-warning');
+  }
+
+  get hints(): Locator {
+    return this.page.locator('.editor-instance .view-line span[class*="dyn-rule"], .editor-instance .view-line span[class*="inlayHint"]');
+  }
+
+  get lines(): Locator {
+    return this.page.locator('.editor-instance .view-line');
+  }
+
+  /** The file at start is open and read by the language server. */
+  async ready(): Promise<void> {
+    await this.page.locator('.explorer-folders-view .monaco-list-row').first().waitFor();
+    await this.lines.first().waitFor();
+    await this.waitForText('.statusbar-item', 'Oilway');
+    await this.page.locator('.editor-instance .view-line').first().click();
+  }
+
+  async waitForText(selector: string, text: string | RegExp): Promise<Locator> {
+    const found = this.page.locator(selector).filter({ hasText: text }).first();
+    await found.waitFor();
+    return found;
+  }
+
+  /** Cursor by the go-to-line box; both from 1. */
+  async goTo(line: number, column = 1): Promise<void> {
+    await this.page.keyboard.press('Control+G');
+    const box = this.page.locator('.quick-input-widget .quick-input-filter input');
+    await box.waitFor();
+    await box.fill(`:${line}:${column}`);
+    await this.page.keyboard.press('Enter');
+    await box.waitFor({ state: 'hidden' });
+  }
+
+  async command(title: string): Promise<void> {
+    await this.page.keyboard.press('F1');
+    const box = this.page.locator('.quick-input-widget .quick-input-filter input');
+    await box.waitFor();
+    await box.fill(`>${title}`);
+    await this.page.locator('.quick-input-widget').getByRole('option', { name: title }).first().waitFor();
+    await this.page.keyboard.press('Enter');
+    await box.waitFor({ state: 'hidden' });
+  }
+
+  /** Replaces `length` characters at a place by typing; no closing brackets or suggestions get in between. */
+  async replace(line: number, column: number, length: number, text: string): Promise<void> {
+    await this.goTo(line, column);
+    for (let i = 0; i < length; i++) await this.page.keyboard.press('Shift+ArrowRight');
+    if (text === '') await this.page.keyboard.press('Delete');
+    else await this.page.keyboard.insertText(text);
+  }
+
+  async save(): Promise<void> {
+    await this.page.keyboard.press('Control+S');
+    await this.page.locator('.tab.dirty').waitFor({ state: 'detached' });
+  }
+
+  /** Text of the hover over a word of a line (the nth occurrence in it), once it contains what is awaited. */
+  async hover(word: Locator, awaited: RegExp): Promise<string> {
+    const hover = this.page.locator('.monaco-hover:not(.hidden) .hover-contents');
+    const until = Date.now() + STEP;
+    let seen = '';
+    while (Date.now() < until) {
+      await this.page.mouse.move(2, 2);
+      await hover.first().waitFor({ state: 'hidden' });
+      await word.hover();
+      try {
+        await hover
+          .filter({ hasText: awaited })
+          .first()
+          .waitFor({ timeout: STEP / 5 });
+        return plain((await hover.allInnerTexts()).join('\n'));
+      } catch {
+        seen = plain((await hover.allInnerTexts()).join('\n'));
+      }
+    }
+    throw new Error(`The hover never said ${awaited}. It said:\n${seen}`);
+  }
+
+  /** A word as the editor draws it on the line that starts with `lineStart`. */
+  word(lineStart: RegExp, word: string): Locator {
+    return this.lines
+      .filter({ hasText: lineStart })
+      .first()
+      .locator('span span', { hasText: new RegExp(`^\\s*${word}\\s*$`) })
+      .first();
+  }
+
+  /** Opens the quick fixes at the cursor and returns their titles. */
+  async fixes(): Promise<string[]> {
+    const menu = this.page.locator('.action-widget:not(.action-list-submenu-panel)');
+    await this.page.keyboard.press('Control+.');
+    await menu.getByRole('option').first().waitFor();
+    return (await menu.getByRole('option').allInnerTexts()).map(plain);
+  }
+
+  /** Takes the quick fix with this title (the menu is open). */
+  async takeFix(title: RegExp): Promise<void> {
+    const menu = this.page.locator('.action-widget:not(.action-list-submenu-panel)');
+    const option = menu.getByRole('option', { name: title }).first();
+    await option.waitFor();
+    const titles = (await menu.getByRole('option').allInnerTexts()).map(plain);
+    const at = titles.findIndex((text) => title.test(text));
+    // The first entry has the focus; the mouse would take it away again.
+    for (let i = 0; i < at; i++) await this.page.keyboard.press('ArrowDown');
+    await this.page.keyboard.press('Enter');
+    await menu.waitFor({ state: 'hidden' });
+  }
+
+  async problems(): Promise<Locator> {
+    await this.page.keyboard.press('Control+Shift+M');
+    const panel = this.page.locator('.markers-panel');
+    await panel.waitFor();
+    return panel.locator('.monaco-list-row');
+  }
+}
