@@ -106,6 +106,8 @@ export interface BypassRegulatorSpec extends Base {
   readonly t: NodeIndex;
   readonly set: Param;
   readonly needs: number;
+  /** K of the fully open path a to t, L/s at 1 MPa; default 20. */
+  readonly kBypass?: number;
 }
 /** Metering edge with a compensator: q = min(command qN sqrt(k/dpN), path) from a to b. */
 export interface CompensatedEdgeSpec extends Base {
@@ -224,6 +226,19 @@ export interface CustomSpec extends Base {
   readonly evaluate: (inputs: Float64Array, parameters: Float64Array, flows: Float64Array, gradient: Float64Array) => void;
 }
 
+/**
+ * An element with a law of its own, for tests and for kinds still to come. `evaluate` gets the pressures of `nodes` (terminals first, then
+ * sensed nodes), then the position of `actuator` if given; it writes the flow INTO the element at each terminal (L/s) and the derivatives,
+ * row by row over all inputs. The one element that cannot be structured-cloned.
+ */
+export interface CustomSpec extends Base {
+  readonly type: 'custom';
+  readonly nodes: readonly NodeIndex[];
+  readonly terminals: number;
+  readonly actuator?: number;
+  readonly evaluate: (inputs: Float64Array, parameters: Float64Array, flows: Float64Array, gradient: Float64Array) => void;
+}
+
 export type ElementSpec =
   | PathSpec
   | CheckSpec
@@ -240,7 +255,8 @@ export type ElementSpec =
   | GearDividerSpec
   | SpoolDividerSpec
   | IntensifierSpec
-  | ShuttleSpec;
+  | ShuttleSpec
+  | CustomSpec;
 
 /** Force over position: piecewise linear, end values hold; a jump is two knots at one position. Set per solve or per step. */
 export interface ForceTable {
