@@ -5,6 +5,8 @@ import { STEP } from './driver.ts';
 /** The editor writes no-break spaces; the suite reads plain ones. */
 export const plain = (text: string): string => text.replaceAll('\u00a0', ' ').replaceAll('\u200b', '');
 
+export const textOf = async (found: Locator): Promise<string> => plain((await found.textContent()) ?? '');
+
 export class Editor {
   readonly page: Page;
 
@@ -125,6 +127,22 @@ export class Editor {
     for (let i = 0; i < at; i++) await this.page.keyboard.press('ArrowDown');
     await this.page.keyboard.press('Enter');
     await menu.waitFor({ state: 'hidden' });
+  }
+
+  /** Rows of the outline, once the server has given them. */
+  async outline(): Promise<Locator> {
+    await this.command('Explorer: Focus on Outline View');
+    const rows = this.page.locator('.outline-tree .monaco-list-row');
+    await rows.first().waitFor();
+    return rows;
+  }
+
+  /** The first study has ended: its figures stand as hints in the text. */
+  async computed(): Promise<void> {
+    await this.lines
+      .filter({ hasText: /^cylinder.*mm\/s/ })
+      .first()
+      .waitFor();
   }
 
   async problems(): Promise<Locator> {
