@@ -32,6 +32,6 @@ module.exports = {
     tsPreCompilationDeps: true,
     doNotFollow: { path: 'node_modules' },
     exclude: { path: '(^|/)(dist|\\.cache)/' },
-    enhancedResolveOptions: { extensions: ['.ts', '.js', '.mjs'], exportsFields: ['exports'], conditionNames: ['import', 'default'] },
+    enhancedResolveOptions: { extensions: ['.ts', '.js', '.mjs'], exportsFields: ['exports'], conditionNames: ['import', 'node', 'browser', 'default'] },
   },
 };

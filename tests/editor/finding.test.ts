@@ -22,7 +22,7 @@ it('a sample without faults is coloured and has no error', async (context) => {
       .filter({ hasText: 'cylinder' })
       .first()
       .locator('span span')
-      .evaluateAll((spans) => spans.map((span) => span.className));
+      .evaluateAll((spans) => spans.map((span) => span.getAttribute('class') ?? ''));
     expect(new Set(classes.flatMap((one) => one.split(' ').filter((name) => name.startsWith('mtk')))).size).toBeGreaterThan(2);
     await show('sample');
     expect(await editor.errors.count()).toBe(0);
