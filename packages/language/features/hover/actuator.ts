@@ -1,0 +1,120 @@
+/** Hover on a cylinder, motor or semi-rotary actuator: a table by step and direction, then the working of the tightest row. */
+import type { Dimension } from '@oilway/quantity';
+import { KINDS, type ActuatorPoint, type Component, type Point } from '@oilway/circuit';
+import type { Analysis } from '../analysis.ts';
+import { actuatorAt, extent, flowInto, placesOf, pressureAt, type Place } from './places.ts';
+import { notComputed, restsOn, standing } from './rests.ts';
+import { escape, paragraphs, Show, table } from './show.ts';
+import { forceWorking, speedWorking, workingText } from './working.ts';
+
+interface Row {
+  readonly place: Place;
+  readonly direction: -1 | 0 | 1;
+  readonly points: readonly { readonly point: Point; readonly at: ActuatorPoint }[];
+}
+
+export interface ActuatorUnits {
+  readonly force: Dimension;
+  readonly speed: Dimension;
+  readonly position: Dimension;
+  readonly words: readonly [backward: string, stands: string, forward: string];
+  readonly ports: readonly [string, string];
+}
+export function unitsOfActuator(component: Component): ActuatorUnits {
+  if (component.kind === 'cylinder') return { force: 'force', speed: 'velocity', position: 'length', words: ['retracting', 'stands', 'extending'], ports: ['cap', 'rod'] };
+  return { force: 'torque', speed: 'rotation', position: 'angle', words: ['backward', 'stands', 'forward'], ports: ['A', 'B'] };
+}
+
+/** Points of a place by wanted direction; those that only stand are kept where they press. */
+export function rowsOf(places: readonly Place[], id: string): Row[] {
+  const rows: Row[] = [];
+  for (const place of places) {
+    const points = place.points.flatMap((point) => {
+      const at = actuatorAt(point, id);
+      return at && point.solved ? [{ point, at }] : [];
+    });
+    const of = (direction: -1 | 0 | 1): Row => ({ place, direction, points: points.filter((one) => (one.at.direction || Math.sign(one.at.velocity)) === direction) });
+    const moving = [of(1), of(-1)].filter((row) => row.points.length > 0);
+    const standing = of(0);
+    rows.push(...moving);
+    if (moving.length === 0 && standing.points.some((one) => Math.abs(one.at.force) > 1)) rows.push(standing);
+  }
+  return rows;
+}
+
+/** The point with the least of force available against needed; without such, the one that presses most. */
+export function tightest(row: Row): Row['points'][number] | undefined {
+  const ratio = (one: ActuatorPoint): number => (one.available !== undefined && one.needed > 0 ? one.available / one.needed : Number.POSITIVE_INFINITY);
+  return [...row.points].sort((a, b) => ratio(a.at) - ratio(b.at) || Math.abs(b.at.force) - Math.abs(a.at.force))[0];
+}
+
+export function limits(row: Row): string {
+  const words: string[] = [];
+  for (const { at } of row.points) for (const one of at.limitedBy) if (!words.includes(one.words)) words.push(one.words);
+  return words.slice(0, 2).join(', ');
+}
+
+export function hoverActuator(analysis: Analysis, component: Component): string {
+  const kind = KINDS[component.kind];
+  const title = `**${escape(component.id)}** ${kind.noun}${component.title ? `, ${escape(component.title)}` : ''}`;
+  const why = notComputed(analysis, component.id);
+  const { studied } = analysis;
+  if (why || !studied) return paragraphs(title, why, standing(analysis));
+  const show = new Show(studied.circuit);
+  const units = unitsOfActuator(component);
+  const rows = rowsOf(placesOf(studied), component.id);
+  if (rows.length === 0) return paragraphs(title, 'Does not move in any step.', standing(analysis), restsOn(analysis, component.id));
+
+  const cells = rows.map((row) => cellsOf(row, studied.circuit, component.id, units, show));
+  const head = ['Step', units.force === 'force' ? 'Force available of needed' : 'Torque available of needed', 'Speed', `Pressure ${units.ports[0]}`, `Pressure ${units.ports[1]}`, 'Flow in', 'Time', 'Limited by'];
+  return paragraphs(title, table(head, cells), working(rows, studied.circuit, component.id, units, show), standing(analysis), restsOn(analysis, component.id));
+}
+
+function cellsOf(row: Row, circuit: Parameters<typeof pressureAt>[0], id: string, units: ActuatorUnits, show: Show): string[] {
+  const worst = tightest(row);
+  const speeds = row.place.step?.speeds[id];
+  const own = extent(row.points.map((one) => Math.abs(one.at.velocity)).filter((v) => v > 0));
+  const speed = speeds && speeds.direction === row.direction ? { low: speeds.low, high: speeds.high } : own;
+  const inlet = row.direction < 0 ? units.ports[1] : units.ports[0];
+  const flow = extent(row.points.map((one) => flowInto(one.point, id, inlet)).map((q) => (q === undefined ? undefined : Math.abs(q))));
+  const pressure = (port: string): string => {
+    const span = extent(row.points.map((one) => pressureAt(circuit, one.point, id, port)));
+    return span ? show.span(span.low, span.high, 'pressure') : '—';
+  };
+  const force = !worst
+    ? '—'
+    : worst.at.shortBy !== undefined && worst.at.shortBy > 0
+      ? `stalled, short by ${show.figure(worst.at.shortBy, units.force)}`
+      : worst.at.available !== undefined && row.direction !== 0
+        ? show.of(worst.at.available, worst.at.needed, units.force)
+        : `presses ${show.figure(Math.abs(worst.at.force), units.force)}`;
+  return [
+    `${row.place.label} ${units.words[row.direction + 1]}`,
+    force,
+    row.direction !== 0 && speed ? show.span(speed.low, speed.high, units.speed) : '—',
+    pressure(units.ports[0]),
+    pressure(units.ports[1]),
+    row.direction !== 0 && flow ? show.span(flow.low, flow.high, 'flow') : '—',
+    row.place.step?.time === undefined ? '—' : show.figure(row.place.step.time, 'time'),
+    limits(row),
+  ];
+}
+
+function working(rows: readonly Row[], circuit: Parameters<typeof pressureAt>[0], id: string, units: ActuatorUnits, show: Show): string {
+  const moving = rows.filter((row) => row.direction !== 0);
+  const margin = (row: Row): number => {
+    const at = tightest(row)?.at;
+    return at?.available !== undefined && at.needed > 0 ? at.available / at.needed : Number.POSITIVE_INFINITY;
+  };
+  const row = [...(moving.length > 0 ? moving : rows)].sort((a, b) => margin(a) - margin(b))[0];
+  const worst = row && tightest(row);
+  if (!row || !worst) return '';
+  const force = forceWorking(circuit, id, worst.point);
+  const speed = speedWorking(circuit, id, worst.point);
+  if (!force && !speed) return '';
+  return paragraphs(
+    `**Working**, ${row.place.label} ${units.words[row.direction + 1]} at ${show.position(worst.at.position, units.position)} (${worst.point.label})`,
+    force ? workingText(force, show, 'Force on the load') : '',
+    speed ? workingText(speed, show, 'Speed') : '',
+  );
+}

@@ -1,0 +1,38 @@
+/** The last lines of a hover: what the figures rest on, and whether they are of the text as it stands. */
+import type { Assumption } from '@oilway/circuit';
+import type { Analysis } from '../analysis.ts';
+import { escape } from './show.ts';
+
+/** "rests on 3 assumptions: P1 volumetric 92 % ..": those of the component first. */
+export function restsOn(analysis: Analysis, component?: string): string {
+  const all = analysis.studied?.study.assumptions ?? [];
+  if (all.length === 0) return '';
+  const own = all.filter((one) => one.component === component);
+  const ordered = [...own, ...all.filter((one) => one.component !== component)];
+  const shown = ordered.slice(0, 3).map(words);
+  const more = ordered.length > shown.length ? ` and ${ordered.length - shown.length} more` : '';
+  return `_Rests on ${all.length} assumption${all.length === 1 ? '' : 's'}: ${shown.map(escape).join('; ')}${more}._`;
+}
+
+function words(one: Assumption): string {
+  const what = `${one.component} ${one.property}`;
+  if (one.source === 'not counted') return `${what} not counted`;
+  return `${what} ${one.value} (${one.source === 'memory' ? 'from memory of common practice' : one.source})`;
+}
+
+/** Says why there are no figures, or that they belong to an older text. */
+export function standing(analysis: Analysis): string {
+  if (!analysis.circuit) return '';
+  if (!analysis.studied) return '_Figures are being computed._';
+  return analysis.studied.older ? '_These figures are older than the text; new ones are being computed._' : '';
+}
+
+/** "not computed: V2 has no `passes`" for a component or net, where that is so. */
+export function notComputed(analysis: Analysis, ...ids: readonly (string | undefined)[]): string {
+  for (const id of ids) {
+    if (id === undefined) continue;
+    const why = analysis.circuit?.unknown[id] ?? analysis.studied?.study.notComputed[id];
+    if (why) return `**Not computed**: ${why}`;
+  }
+  return '';
+}
