@@ -1,6 +1,7 @@
 /** Starts the language client, restarts it, and gives it up in order; the same for node and web. */
 import * as vscode from 'vscode';
 import type { BaseLanguageClient } from 'vscode-languageclient';
+import { sayCautionOnce } from './caution.ts';
 import { CLIENT_NAME, clientOptions, type MakeClient } from './client.ts';
 import { registerCommands } from './commands.ts';
 import { serveFiles } from './files.ts';
@@ -29,6 +30,7 @@ export async function start(context: vscode.ExtensionContext, make: MakeClient, 
       await launch();
     }
   };
+  void sayCautionOnce(context);
   registerCommands(context, { output, restart });
   try {
     await launch();
