@@ -1,6 +1,6 @@
 /** The step chain of a cycle: which lines run, when they end, which come next. Knows no pressure; asks the situation. */
 import type { Action, Command, Cycle, Step } from '../model/circuit.ts';
-import { holds, outsideNeeds, type Situation } from './conditions.ts';
+import { holds, onlyOutside, outsideNeeds, type Situation } from './conditions.ts';
 import { type Demand, demandOf, join } from './logic.ts';
 import type { Lookup } from './lookup.ts';
 import { si } from './read.ts';
@@ -163,14 +163,22 @@ export function late(lines: readonly Line[], time: number): Line | undefined {
   return lines.find(({ step, entered }) => step.atMost !== undefined && time - entered >= step.atMost - 1e-9);
 }
 
-/** Outside switches as the running lines and the interlocks of their coils need them. */
-export function outsideFor(at: Lookup, lines: readonly Line[], demand: Demand, ending: boolean): ReadonlyMap<string, boolean> {
+/**
+ * Outside switches as the running lines and the interlocks of their coils need them.
+ * `pressed`: what `until` waits for happens at once. `held`: a push button, whose release alone would end it, stays pressed. `free`: interlocks only.
+ */
+export function outsideFor(at: Lookup, lines: readonly Line[], demand: Demand, untils: 'pressed' | 'held' | 'free'): ReadonlyMap<string, boolean> {
   const needs = new Map<string, boolean>();
+  if (untils === 'held') {
+    for (const { step } of lines) {
+      if (step.until && onlyOutside(at, step.until)) for (const [id, on] of outsideNeeds(at, step.until)) needs.set(id, !on);
+    }
+  }
   for (const lock of at.circuit.interlocks) {
     if (!lock.coils.some((coil) => demand.coils.some((one) => one.live.coil === coil))) continue;
     for (const [id, on] of outsideNeeds(at, lock.needs)) needs.set(id, on);
   }
-  if (ending) {
+  if (untils === 'pressed') {
     for (const { step } of lines) if (step.until) for (const [id, on] of outsideNeeds(at, step.until)) needs.set(id, on);
   }
   return needs;

@@ -1,0 +1,74 @@
+/** How much oil an accumulator holds at a pressure, and the pressure to which its net can charge it. */
+import type { Component } from '../model/circuit.ts';
+import { si, valueOf } from './read.ts';
+import type { Plant } from './scene.ts';
+
+/** 1.01325 bar, Pa: standard atmosphere (ISO 2533). */
+export const ATMOSPHERE = 101325;
+
+/** Precharge at the fluid's temperature, Pa absolute: p0 (T / T given). Boyle and Charles, ideal gas. */
+export function prechargeAt(accumulator: Component, temperature: number): number | undefined {
+  const value = valueOf(accumulator, 'precharge');
+  if (value?.type !== 'precharge') return undefined;
+  return ((value.pressure.si + ATMOSPHERE) * temperature) / value.temperature.si;
+}
+
+/** Oil (m3) that an accumulator holds at a gauge pressure, filled isothermally: V0 (1 - p0/p). */
+export function oilAt(accumulator: Component, pressure: number, temperature: number): number {
+  const volume = si(accumulator, 'volume');
+  const p0 = prechargeAt(accumulator, temperature);
+  if (volume === undefined || p0 === undefined) return 0;
+  const p = pressure + ATMOSPHERE;
+  return p <= p0 ? 0 : volume * (1 - p0 / p);
+}
+
+/** With no cycle to tell: the lowest of compensators, reliefs and switch thresholds on nets joined to the accumulator, Pa gauge. */
+export function usualCharge(plant: Plant, accumulator: Component): number | undefined {
+  const own = plant.at.netOf(accumulator.id, 'P');
+  if (own === undefined) return undefined;
+  const nets = joinedThroughOpen(plant, own);
+  const found: number[] = [];
+  for (const net of nets) {
+    for (const { component, port } of plant.at.net(net)?.ports ?? []) {
+      const part = plant.at.component(component);
+      if (!part) continue;
+      const setting =
+        part.kind === 'relief' && port === 'P' ? si(part, 'set') : part.kind === 'pump' && port === 'P' ? si(part, 'compensator') : part.kind === 'switch' ? si(part, 'rises') : undefined;
+      if (setting !== undefined) found.push(setting);
+    }
+  }
+  return found.length > 0 ? Math.min(...found) : undefined;
+}
+
+/** The net itself and those joined to it by shut-offs declared open, filters and gauges. */
+function joinedThroughOpen(plant: Plant, start: string): ReadonlySet<string> {
+  const seen = new Set([start]);
+  const queue = [start];
+  for (let net = queue.pop(); net !== undefined; net = queue.pop()) {
+    for (const { component } of plant.at.net(net)?.ports ?? []) {
+      const part = plant.at.component(component);
+      if (!part || !(part.kind === 'shutoff' && part.properties.some((one) => one.name === 'open')) && part.kind !== 'filter') continue;
+      for (const other of plant.at.portsOf(component)) {
+        if (seen.has(other.net) || plant.at.net(other.net)?.reservoir !== undefined) continue;
+        seen.add(other.net);
+        queue.push(other.net);
+      }
+    }
+  }
+  return seen;
+}
+
+/** Oil of every accumulator when charged: the highest pressure its net reached in the cycles, else the usual charge. */
+export function chargedOil(plant: Plant, highest: Readonly<Record<string, number>>): Record<string, number> {
+  const oil: Record<string, number> = {};
+  for (const one of plant.at.accumulators) {
+    const net = plant.at.netOf(one.id, 'P');
+    const reached = net === undefined ? undefined : highest[net];
+    const pressure = reached ?? usualCharge(plant, one);
+    oil[one.id] = pressure === undefined ? 0 : oilAt(one, pressure, plant.temperature);
+  }
+  return oil;
+}
+export function noOil(plant: Plant): Record<string, 'empty'> {
+  return Object.fromEntries(plant.at.accumulators.map((one) => [one.id, 'empty' as const]));
+}

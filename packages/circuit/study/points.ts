@@ -1,0 +1,179 @@
+/** Steady points of a step: entry, just before and after every knot passed, end. Each is one solution with positions given. */
+import type { Body, Setting, Solution } from '../assembly/machine.ts';
+import { NO_LOAD } from './loads.ts';
+import { knotsOf, passed } from './knots.ts';
+import { moves } from './motion.ts';
+import { pointOf } from './point.ts';
+import type { Plant } from './scene.ts';
+import type { Point } from './study.ts';
+import type { Sample, Snapshot, Trace } from './trace.ts';
+import { sayPlace } from './words.ts';
+
+/** Just before and just after a knot, m. */
+const BESIDE = 1e-6;
+/** Displacement that counts as motion of a step, m or rad. */
+const MOVED = 1e-4;
+
+type Direction = -1 | 0 | 1;
+
+/** A point to be solved: what is set, where, in which directions. */
+interface Wanted {
+  readonly label: string;
+  readonly time: number | undefined;
+  readonly setting: Setting;
+  readonly begun: Readonly<Record<string, boolean>>;
+}
+
+/** Points of one passage of a step in a run. */
+export function pointsInRun(plant: Plant, trace: Trace, step: string, from: number, to: number): readonly Point[] {
+  const samples = trace.between(from, to).filter((one) => one.lines.includes(step) || one.time <= from + 1e-9);
+  const [first, last] = [samples[0], samples.at(-1)];
+  const snapshot = trace.snapshotAt(from, false);
+  if (!first || !last || !snapshot) return [];
+  const shift: Record<string, number> = {};
+  for (const body of plant.bodies) shift[body.id] = (last.solution.positions[body.id] ?? 0) - (first.solution.positions[body.id] ?? 0);
+  const entry = settingAt(snapshot, first);
+  const directions = directionsOf(plant, entry, shift, first.solution);
+  const wanted: Wanted[] = [{ label: 'entry', time: from, setting: entry, begun: {} }];
+  for (const body of plant.bodies) {
+    if (!Number.isFinite(body.stroke) || Math.abs(shift[body.id] ?? 0) < MOVED) continue;
+    wanted.push(...knotPoints(plant, trace, body, samples, entry));
+  }
+  const closing = trace.snapshotAt(last.time, true) ?? snapshot;
+  if (last !== first && last.time > first.time + 1e-9) {
+    for (const body of plant.bodies) wanted.push(...beforeStop(plant, body, shift[body.id] ?? 0, closing, last));
+    const begun = Object.fromEntries(plant.bodies.map((one) => [one.id, true]));
+    wanted.push({ label: 'end', time: last.time, setting: settingAt(closing, last), begun });
+  }
+  wanted.sort((a, b) => (a.time ?? 0) - (b.time ?? 0));
+  return solveAll(plant, wanted, directions);
+}
+
+function settingAt(snapshot: Snapshot, sample: Sample): Setting {
+  return { ...snapshot.setting, positions: sample.solution.positions, oil: sample.solution.oil, bits: sample.solution.bits };
+}
+
+/** Directions in which a step moves its bodies: as they went; a body that stood as it would go without its load. */
+function directionsOf(plant: Plant, entry: Setting, shift: Readonly<Record<string, number>>, near: Solution): Record<string, Direction> {
+  const result: Record<string, Direction> = {};
+  const standing = plant.bodies.filter((one) => Math.abs(shift[one.id] ?? 0) < MOVED);
+  for (const body of plant.bodies) result[body.id] = Math.sign(shift[body.id] ?? 0) as Direction;
+  if (standing.length === 0) return result;
+  const ids = standing.map((one) => one.id);
+  const loads = { ...entry.loads, ...Object.fromEntries(ids.map((id) => [id, NO_LOAD])) };
+  const probe = plant.machine.solve({ ...entry, loads, free: ids }, near);
+  for (const body of standing) {
+    result[body.id] = probe.solved && moves(body, probe) ? (Math.sign(probe.velocities[body.id] ?? 0) as Direction) : 0;
+  }
+  return result;
+}
+
+function knotPoints(plant: Plant, trace: Trace, body: Body, samples: readonly Sample[], entry: Setting): Wanted[] {
+  const x = (one: Sample) => one.solution.positions[body.id] ?? 0;
+  const [from, to] = [x(samples[0]!), x(samples.at(-1)!)];
+  const direction = to > from ? 1 : -1;
+  const load = entry.loads[body.id] ?? NO_LOAD;
+  const wanted: Wanted[] = [];
+  for (const knot of passed(knotsOf(plant, body, load), from, to)) {
+    const index = samples.findIndex((one, i) => i > 0 && (x(one) - knot.at) * direction >= 0);
+    const [before, after] = [samples[index - 1], samples[index]];
+    if (!before || !after) continue;
+    const way = x(after) - x(before);
+    const share = Math.abs(way) > 0 ? Math.min(1, Math.max(0, (knot.at - x(before)) / way)) : 1;
+    const time = before.time + share * (after.time - before.time);
+    const others = between(before, after, share);
+    const begun = Object.fromEntries(plant.bodies.map((one) => [one.id, one.id === body.id || Math.abs((others[one.id] ?? 0) - (samples[0]!.solution.positions[one.id] ?? 0)) > MOVED]));
+    for (const side of knot.sides === 'both' ? (['before', 'after'] as const) : [knot.sides]) {
+      const snapshot = trace.snapshotAt(time, side === 'before');
+      // Control that changes at this very place ends the step: what comes after belongs to the next one.
+      if (!snapshot || (side === 'after' && !sameLines(snapshot, trace.snapshotAt(time, true)))) continue;
+      const near = side === 'before' ? before : after;
+      const position = knot.at + (side === 'before' ? -BESIDE : BESIDE) * direction;
+      const place = sayPlace(plant.circuit, knot.at, body.type === 'rotating');
+      const label = `${knot.sides === 'both' ? `just ${side} ` : ''}${place} (${knot.words})`;
+      wanted.push({
+        label: plant.bodies.length > 1 ? `${body.id} ${label}` : label,
+        time: time + (side === 'before' ? -1e-9 : 1e-9),
+        setting: { ...snapshot.setting, positions: { ...others, [body.id]: position }, oil: near.solution.oil, bits: near.solution.bits },
+        begun,
+      });
+    }
+  }
+  return wanted;
+}
+
+function sameLines(one: Snapshot, other: Snapshot | undefined): boolean {
+  return other !== undefined && one.lines.length === other.lines.length && one.lines.every((id, index) => id === other.lines[index]);
+}
+
+function between(before: Sample, after: Sample, share: number): Record<string, number> {
+  const positions: Record<string, number> = {};
+  for (const [id, x] of Object.entries(before.solution.positions)) positions[id] = x + share * ((after.solution.positions[id] ?? x) - x);
+  return positions;
+}
+
+/** The last point with motion where a step ends at a stop. */
+function beforeStop(plant: Plant, body: Body, shift: number, snapshot: Snapshot, last: Sample): Wanted[] {
+  const x = last.solution.positions[body.id] ?? 0;
+  const atStop = Number.isFinite(body.stroke) && (x <= 1e-7 || x >= body.stroke - 1e-7);
+  if (!atStop || Math.abs(shift) < MOVED) return [];
+  const position = x - Math.sign(shift) * BESIDE;
+  const setting = settingAt(snapshot, last);
+  return [
+    {
+      label: `${plant.bodies.length > 1 ? `${body.id} ` : ''}just before the stop`,
+      time: last.time - 1e-9,
+      setting: { ...setting, positions: { ...setting.positions, [body.id]: position } },
+      begun: { [body.id]: true },
+    },
+  ];
+}
+
+function solveAll(plant: Plant, wanted: readonly Wanted[], directions: Readonly<Record<string, Direction>>): readonly Point[] {
+  const points: Point[] = [];
+  let near: Solution | undefined;
+  for (const one of wanted) {
+    if (plant.cancelled()) break;
+    const solution = plant.machine.settle(one.setting, near);
+    near = solution.solved ? solution : near;
+    const setting = { ...one.setting, bits: solution.bits };
+    const point = pointOf(plant, setting, solution, { label: one.label, directions, forces: true, ...(one.time === undefined ? {} : { time: Math.max(0, one.time) }) });
+    points.push({ ...point, actuators: point.actuators.map((actuator) => begunOnly(plant, actuator, one.begun, one.label)) });
+  }
+  return points;
+}
+
+/** An actuator whose turn has not come yet is not stalled. */
+function begunOnly(plant: Plant, actuator: Point['actuators'][number], begun: Readonly<Record<string, boolean>>, label: string): Point['actuators'][number] {
+  if (actuator.shortBy === undefined || label === 'end') return actuator;
+  const body = plant.bodies.find((one) => one.actuators.includes(actuator.id));
+  if (body && begun[body.id]) return actuator;
+  const { shortBy: _waiting, ...rest } = actuator;
+  return rest;
+}
+
+/** Points without a run: from given positions all the way in the direction the entry moves; other bodies stand at entry. */
+export function pointsAlone(plant: Plant, setting: Setting, entryLabel: string): readonly Point[] {
+  const entry = plant.machine.settle(setting);
+  const directions = directionsOf(plant, setting, {}, entry);
+  const wanted: Wanted[] = [{ label: entryLabel, time: undefined, setting, begun: Object.fromEntries(plant.bodies.map((one) => [one.id, true])) }];
+  for (const body of plant.bodies) {
+    const direction = directions[body.id] ?? 0;
+    if (direction === 0 || !Number.isFinite(body.stroke)) continue;
+    const from = setting.positions[body.id] ?? body.begins;
+    const to = direction > 0 ? body.stroke : 0;
+    const load = setting.loads[body.id] ?? NO_LOAD;
+    const own = plant.bodies.length > 1 ? `${body.id} ` : '';
+    const place = (x: number, label: string) =>
+      wanted.push({ label: own + label, time: undefined, setting: { ...setting, positions: { ...setting.positions, [body.id]: x } }, begun: { [body.id]: true } });
+    for (const knot of passed(knotsOf(plant, body, load), from, to)) {
+      const words = `${sayPlace(plant.circuit, knot.at, body.type === 'rotating')} (${knot.words})`;
+      if (knot.sides !== 'after') place(knot.at - BESIDE * direction, `just before ${words}`);
+      if (knot.sides !== 'before') place(knot.at + BESIDE * direction, knot.sides === 'after' ? words : `just after ${words}`);
+    }
+    const middle = body.stroke / 2;
+    if ((middle - from) * direction > 2e-6) place(middle, 'mid-stroke');
+    if (Math.abs(to - from) > 2e-6) place(to - BESIDE * direction, 'just before the stop');
+  }
+  return solveAll(plant, wanted, directions);
+}
