@@ -10,3 +10,7 @@ export * from './kinds/line-properties.ts';
 export * from './assembly/machine.ts';
 export * from './fluid/index.ts';
 export * as read from './kinds/read.ts';
+export { assemble } from './assembly/assemble.ts';
+export { areasOf, beginsAt, portOfSingle } from './kinds/cylinder-areas.ts';
+export { type Positions, positionsOf, type Side, sideOfCoil } from './kinds/directional-positions.ts';
+export { ratedAt } from './kinds/read.ts';

@@ -75,14 +75,14 @@ export interface Solution {
   /** Net id -> Pa gauge. */
   readonly pressures: Readonly<Record<string, number>>;
   readonly undetermined: Readonly<Record<string, { readonly low: number; readonly high: number }>>;
-  /** `component.port` -> m3/s into the component. */
+  /** `component.port` -> m3/s into the component; id of a piece with a loss of its own -> m3/s from its first side to its second. */
   readonly flows: Readonly<Record<string, number>>;
   readonly openings: Readonly<Record<string, number>>;
   readonly lifting: readonly string[];
   /** Body id -> m/s or rad/s. */
   readonly velocities: Readonly<Record<string, number>>;
   readonly positions: Readonly<Record<string, number>>;
-  /** Body id -> N or N.m on the load, + outward: pressure force less seal friction and stop force. */
+  /** Body id -> N or N.m on the load, + outward: pressure force less seal friction and stop force. Locked: what it would press with against a stop. */
   readonly forces: Readonly<Record<string, number>>;
   readonly stopForces: Readonly<Record<string, number>>;
   readonly shaft: Readonly<Record<string, number>>;
@@ -96,7 +96,13 @@ export interface Solution {
 
 /** What a run is stopped for. Rising: value goes above the threshold. */
 export type Watch =
-  | { readonly what: 'pressure'; readonly net: string; readonly minus?: string; readonly threshold: number; readonly edge: 'rising' | 'falling' }
+  | {
+      readonly what: 'pressure';
+      readonly net: string;
+      readonly minus?: string;
+      readonly threshold: number;
+      readonly edge: 'rising' | 'falling';
+    }
   | { readonly what: 'position'; readonly body: string; readonly threshold: number; readonly edge: 'rising' | 'falling' }
   | { readonly what: 'oil'; readonly accumulator: string; readonly threshold: number; readonly edge: 'rising' | 'falling' }
   /** Volume in the reservoir. */
@@ -131,6 +137,8 @@ export interface Machine {
   readonly circuit: Circuit;
   readonly bodies: readonly Body[];
   readonly assumptions: readonly Assumption[];
+  /** Component id -> rho g z, Pa: to be taken off the net's pressure (which is at oil level) at this component's ports; absent = 0. */
+  readonly heads: Readonly<Record<string, number>>;
   /** Components (unknown or not computed) taken out, and nets that touch them, each with the reason. */
   readonly notComputed: Readonly<Record<string, string>>;
   /** One solve with everything as set. */
@@ -138,7 +146,11 @@ export interface Machine {
   /** Solve with memory logic: unloading lifted, burst shut, piloted valves that cannot shift; remarks say what was found ("hunts between 38 and 45 bar"). */
   settle(setting: Setting, near?: Solution): Solution;
   /** d ln v / d ln s of a body's speed for each setting or size that can limit it (semantics.md section 4, "Limited by"). */
-  sensitivities(setting: Setting, at: Solution, body: string): readonly { readonly of: string; readonly words: string; readonly share: number }[];
+  sensitivities(
+    setting: Setting,
+    at: Solution,
+    body: string,
+  ): readonly { readonly of: string; readonly words: string; readonly share: number }[];
   /** A run in time from this setting. */
   start(setting: Setting, at: Solution): MachineRun;
   /** The same machine at another oil temperature (K). */

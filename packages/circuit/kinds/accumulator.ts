@@ -1,5 +1,7 @@
 /** Accumulator. */
 import type { Kind } from './kind.ts';
+import { prechargeAt } from '../fluid/gas.ts';
+import { precharge, si } from './read.ts';
 import { hardware } from './common.ts';
 
 export const accumulator: Kind = {
@@ -25,4 +27,11 @@ export const accumulator: Kind = {
     ...hardware,
   ],
   groups: [{ name: 'form', need: 'exactly one', of: ['bladder', 'piston', 'diaphragm'] }],
+  /** Gas charge, ideal, at the temperature of the oil; below precharge no oil. */
+  assemble(component, into) {
+    const volume = si(component, 'volume');
+    const charge = precharge(component, 'precharge');
+    if (volume === undefined || charge === undefined) return into.cannot(component, `${component.id} has no \`${volume === undefined ? 'volume' : 'precharge'}\``);
+    into.gas(component, into.nodeOrBlind(component, 'P'), volume, prechargeAt(charge.pressure.si, charge.temperature.si, into.oil.temperature));
+  },
 };

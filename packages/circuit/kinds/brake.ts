@@ -1,5 +1,7 @@
 /** Brake. */
 import type { Kind } from './kind.ts';
+import { toLitres, toMPa } from '../assembly/units.ts';
+import { reference, si, word } from './read.ts';
 import { hardware } from './common.ts';
 
 export const brake: Kind = {
@@ -37,4 +39,17 @@ export const brake: Kind = {
     ...hardware,
   ],
   groups: [],
+  /** Holds torque (1 - p/opens) at the motor shaft; its volume is stored oil up to `opens`. */
+  assemble(component, into) {
+    const opens = si(component, 'opens');
+    const torque = si(component, 'torque');
+    const motorId = reference(component, 'on')?.id ?? word(component, 'on');
+    const motor = motorId === undefined ? undefined : into.component(motorId);
+    if (opens === undefined || torque === undefined) return into.cannot(component, `${component.id} has no \`${opens === undefined ? 'opens' : 'torque'}\``);
+    if (motor === undefined) return into.cannot(component, `${component.id}: its motor ${motorId ?? ''} is not computed`);
+    const node = into.nodeOrBlind(component, 'P');
+    into.brake(component, { actuator: motor.id, node, opens, torque: torque * (si(motor, 'gear') ?? 1) });
+    const volume = si(component, 'volume');
+    if (volume !== undefined) into.store(node, toLitres(volume) / toMPa(opens));
+  },
 };

@@ -1,5 +1,7 @@
 /** Check valve. */
 import type { Kind } from './kind.ts';
+import { BAR } from '../assembly/units.ts';
+import { addCheck, addLeak, crackFits, passesOf, SEAT_LEAK, siOr } from './passing.ts';
 import { hardware } from './common.ts';
 
 export const check: Kind = {
@@ -32,4 +34,14 @@ export const check: Kind = {
     ...hardware,
   ],
   groups: [],
+  /** Check law: path on what is left above the cracking pressure. */
+  assemble(component, into) {
+    const crack = siOr(component, into, 'crack', 0.5 * BAR, '0.5 bar');
+    if (!crackFits(component, crack)) return into.cannot(component, `${component.id} cracks at more than the drop it \`passes\` at`);
+    passesOf(component, into);
+    const a = { node: into.nodeOrBlind(component, 'in'), port: 'in' };
+    const b = { node: into.nodeOrBlind(component, 'out'), port: 'out' };
+    addCheck(component, into, a, b, crack, 'in to out');
+    addLeak(component, into, b, a, SEAT_LEAK);
+  },
 };

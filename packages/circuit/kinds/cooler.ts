@@ -1,5 +1,7 @@
 /** Cooler. */
 import type { Kind } from './kind.ts';
+import { pathK } from '../assembly/laws.ts';
+import { passesOf } from './passing.ts';
 import { hardware } from './common.ts';
 
 export const cooler: Kind = {
@@ -39,4 +41,14 @@ export const cooler: Kind = {
     ...hardware,
   ],
   groups: [],
+  /** A path; its heat is counted in the balance, not here. */
+  assemble(component, into) {
+    const element = into.add(
+      component,
+      { type: 'path', a: into.nodeOrBlind(component, 'in'), b: into.nodeOrBlind(component, 'out'), k: pathK(passesOf(component, into)) },
+      ['in', 'out'],
+      'in to out',
+    );
+    into.limitation({ component: component.id, words: `${component.id} passes`, targets: [{ element, size: 'k' }] });
+  },
 };

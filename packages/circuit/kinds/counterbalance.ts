@@ -1,5 +1,9 @@
 /** Counterbalance valve. */
 import type { Kind } from './kind.ts';
+import { bandOf, pathK, REVERSE_CRACK } from '../assembly/laws.ts';
+import { toMPa } from '../assembly/units.ts';
+import { addCheck, addLeak, crackFits, passesOf, SEAT_LEAK } from './passing.ts';
+import { si } from './read.ts';
 import { hardware } from './common.ts';
 
 export const counterbalance: Kind = {
@@ -27,4 +31,38 @@ export const counterbalance: Kind = {
     ...hardware,
   ],
   groups: [],
+  /** V to C free; C to V when p_C + R p_X - (1 + R) p_b reaches the setting, p_b the back pressure at V, or at Y where joined. */
+  assemble(component, into) {
+    const set = si(component, 'set');
+    const ratio = si(component, 'ratio');
+    if (set === undefined || ratio === undefined) return into.cannot(component, `${component.id} has no \`${set === undefined ? 'set' : 'ratio'}\``);
+    if (!crackFits(component, REVERSE_CRACK)) return into.cannot(component, `${component.id} \`passes\` at less than the crack of its free direction`);
+    const passes = passesOf(component, into);
+    const v = into.nodeOrBlind(component, 'V');
+    const c = into.nodeOrBlind(component, 'C');
+    const x = into.node(component, 'X');
+    const back = into.node(component, 'Y') ?? v;
+    const r = x === undefined ? 0 : ratio;
+    addCheck(component, into, { node: v, port: 'V' }, { node: c, port: 'C' }, REVERSE_CRACK, 'V to C');
+    const parameter = into.parameter(component, 'set', toMPa(set));
+    const element = into.add(
+      component,
+      {
+        type: 'piloted',
+        a: c,
+        b: v,
+        k: pathK(passes),
+        pilots: [{ node: c, weight: 1 }, ...(x === undefined ? [] : [{ node: x, weight: r }]), { node: back, weight: -(1 + r) }],
+        set: parameter,
+        band: into.parameter(component, 'band', toMPa(bandOf(set))),
+        oneWay: true,
+      },
+      ['C', 'V'],
+      'C to V',
+    );
+    addLeak(component, into, { node: c, port: 'C' }, { node: v, port: 'V' }, SEAT_LEAK);
+    into.limitation({ component: component.id, words: `${component.id} set`, targets: [{ parameter }] });
+    into.limitation({ component: component.id, words: `${component.id} passes`, targets: [{ element, size: 'k' }] });
+    into.opening({ component: component.id, element });
+  },
 };

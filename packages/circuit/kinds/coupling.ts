@@ -1,5 +1,7 @@
 /** Quick-action coupling. */
 import type { Kind } from './kind.ts';
+import { pathK } from '../assembly/laws.ts';
+import { passesOf } from './passing.ts';
 import { hardware } from './common.ts';
 
 export const coupling: Kind = {
@@ -31,4 +33,16 @@ export const coupling: Kind = {
     ...hardware,
   ],
   groups: [],
+  /** Joined; parted only where a rule or fault asks for it. */
+  assemble(component, into) {
+    const open = into.parameter(component, 'open', 1);
+    into.onSetting((setting, put) => put(open, setting.contrary?.includes(component.id) === true ? 0 : 1));
+    const element = into.add(
+      component,
+      { type: 'path', a: into.nodeOrBlind(component, 'A'), b: into.nodeOrBlind(component, 'B'), k: pathK(passesOf(component, into)), opening: open },
+      ['A', 'B'],
+      'A to B',
+    );
+    into.limitation({ component: component.id, words: `${component.id} passes`, targets: [{ element, size: 'k' }] });
+  },
 };

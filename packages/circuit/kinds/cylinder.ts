@@ -1,8 +1,14 @@
 /** Cylinder. */
-import type { Component } from '../model/circuit.ts';
 import type { Kind } from './kind.ts';
+import { NO_LOSS, pathK } from '../assembly/laws.ts';
+import { BAR, toArea, toKilo } from '../assembly/units.ts';
+import { areasOf, DEFAULT_SEAL, portOfSingle } from './cylinder-areas.ts';
+import { addLeak, siOr } from './passing.ts';
+import { range, si } from './read.ts';
 import { hardware } from './common.ts';
-import { has, word } from './read.ts';
+
+/** Speed at the stop for 100 bar across a cushion, m/s (common practice, from memory). */
+const CUSHION_SPEED = 0.05;
 
 export const cylinder: Kind = {
   name: 'cylinder',
@@ -110,11 +116,61 @@ export const cylinder: Kind = {
     const only = portOfSingle(component);
     return only === undefined ? { how: 'none' } : { how: 'fixed', port: only };
   },
+  /** One chamber a port; cushions are an orifice between chamber and port; spring, seal friction, stages. */
+  assemble(component, into) {
+    const areas = areasOf(component);
+    const stroke = si(component, 'stroke');
+    if (areas === undefined || stroke === undefined) return into.cannot(component, `${component.id} has no usable \`bore\`, \`rod\` and \`stroke\``);
+    const spring = range(component, 'spring');
+    const only = portOfSingle(component);
+    if (spring !== undefined && only === undefined) return into.cannot(component, `${component.id} has a spring but is double-acting`);
+    const cushion = si(component, 'cushion');
+    const addSide = (port: 'cap' | 'rod', area: number | undefined): void => {
+      if (area === undefined) return;
+      const node = into.nodeOrBlind(component, port);
+      const sign = port === 'cap' ? 1 : -1;
+      const steps = areas.stages;
+      const chamber = {
+        area: sign * toArea(area),
+        ...(steps === undefined ? {} : { areaSteps: { at: steps.at, area: steps.area.map(toArea) } }),
+      };
+      if (cushion === undefined) {
+        into.chamber(component, { node, ...chamber }, port, area * stroke);
+        return;
+      }
+      const behind = into.inner(component, `cushion ${port}`);
+      into.chamber(component, { node: behind, ...chamber }, undefined, area * stroke);
+      into.add(
+        component,
+        {
+          type: 'cushion',
+          a: behind,
+          b: node,
+          actuator: into.body(component.id) ?? 0,
+          end: port === 'cap' ? 'retracted' : 'extended',
+          length: Math.min(cushion, stroke / 2),
+          kMin: pathK({ flow: CUSHION_SPEED * area, drop: 100 * BAR }),
+          kFree: pathK(NO_LOSS),
+        },
+        [undefined, port],
+        `cushion, ${port} side`,
+      );
+      into.knot(component.id, port === 'cap' ? Math.min(cushion, stroke / 2) : stroke - Math.min(cushion, stroke / 2), `${component.id} cushion begins`);
+    };
+    addSide('cap', areas.cap);
+    addSide('rod', areas.rod);
+    if (cushion !== undefined) {
+      into.assume({ component: component.id, property: 'cushion', value: '50 mm/s at the stop for 100 bar, widening with the square of the way left', source: 'memory', note: 'common practice, from memory' });
+    }
+    for (const at of areas.stages?.at.slice(1) ?? []) into.knot(component.id, at, `${component.id} next stage`);
+    if (spring !== undefined) {
+      // f1 at the pressureless end, f2 at the other, always pushing to the pressureless end.
+      const [f1, f2] = [toKilo(spring.from.si), toKilo(spring.to.si)];
+      into.spring(component, only === 'rod' ? { at: [0, stroke], force: [f2, f1] } : { at: [0, stroke], force: [-f1, -f2] });
+    }
+    into.sealFriction(component, siOr(component, into, 'seal', DEFAULT_SEAL, '3 bar') * areas.bore);
+    if (areas.cap !== undefined && areas.rod !== undefined) {
+      addLeak(component, into, { node: into.nodeOrBlind(component, 'cap'), port: 'cap' }, { node: into.nodeOrBlind(component, 'rod'), port: 'rod' }, 0);
+    }
+  },
 };
-
-/** The only port of a single-acting cylinder or plunger; undefined for a double-acting one. */
-export function portOfSingle(component: Component): 'cap' | 'rod' | undefined {
-  const single = word(component, 'single');
-  if (single === 'cap' || single === 'rod') return single;
-  return has(component, 'rod') ? undefined : 'cap';
-}

@@ -1,14 +1,9 @@
 /** Directional control valve. */
 import type { Kind } from './kind.ts';
+import { addDirectional } from './directional-law.ts';
+import { PORTS_BY_SHAPE } from './directional-positions.ts';
 import { hardware } from './common.ts';
 import { word } from './read.ts';
-
-/** Main ports by the first number of the shape. */
-export const PORTS_BY_SHAPE: Readonly<Record<number, readonly string[]>> = {
-  2: ['P', 'A'],
-  3: ['P', 'T', 'A'],
-  4: ['P', 'T', 'A', 'B'],
-};
 
 export const directional: Kind = {
   name: 'directional',
@@ -134,5 +129,10 @@ export const directional: Kind = {
     return directional.ports
       .filter((p) => main.includes(p.name) || ['X', 'Y', 'LS'].includes(p.name))
       .map((p) => (p.name === 'X' && word(component, 'external') === 'pilot' ? { ...p, required: true } : p));
+  },
+  /** One edge for each pair of ports, opened by the position it stands in. */
+  assemble(component, into) {
+    const why = addDirectional(component, into);
+    if (why !== undefined) into.cannot(component, why);
   },
 };

@@ -1,5 +1,8 @@
 /** Flow divider. */
 import type { Kind } from './kind.ts';
+import { BAR, toLitresPerSecond, toMPa } from '../assembly/units.ts';
+import { siOr } from './passing.ts';
+import { flowAt, has, si } from './read.ts';
 import { hardware } from './common.ts';
 
 export const divider: Kind = {
@@ -29,4 +32,24 @@ export const divider: Kind = {
     ...hardware,
   ],
   groups: [{ name: 'form', need: 'exactly one', of: ['gear', 'spool'] }],
+  /** Gear: two sections on one shaft. Spool: throttles the outlet that gets too much. */
+  assemble(component, into) {
+    const passes = flowAt(component, 'passes');
+    const share = si(component, 'share') ?? 1;
+    const shares: readonly [number, number] = [share / (1 + share), 1 / (1 + share)];
+    const error = siOr(component, into, 'error', 0.03, '3 %');
+    if (passes === undefined) {
+      into.assume({ component: component.id, property: 'passes', value: 'no friction, flow of all pumps', source: 'not counted', note: `no loss declared for ${component.id}` });
+    }
+    const qN = toLitresPerSecond(passes?.flow ?? into.pumpFlow);
+    const drop = passes === undefined ? 0 : toMPa(passes.drop * into.oil.pathDrop);
+    if (!(qN > 0)) return into.cannot(component, `${component.id} has no \`passes\` and the circuit no pump`);
+    const nodes = { p: into.nodeOrBlind(component, 'P'), a: into.nodeOrBlind(component, 'A'), b: into.nodeOrBlind(component, 'B') };
+    if (has(component, 'gear')) {
+      const g = (i: 0 | 1) => ((error * qN * shares[i]) / toMPa(50 * BAR)) * into.oil.leakage;
+      into.add(component, { type: 'gearDivider', ...nodes, share: shares, g: [g(0), g(1)], friction: drop, qN }, ['P', 'A', 'B'], 'P to A and B');
+    } else {
+      into.add(component, { type: 'spoolDivider', ...nodes, share: shares, error, drop, qN, combines: has(component, 'combines') }, ['P', 'A', 'B'], 'P to A and B');
+    }
+  },
 };

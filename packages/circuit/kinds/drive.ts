@@ -40,4 +40,6 @@ export const drive: Kind = {
     ...hardware,
   ],
   groups: [],
+  /** Constant speed: it reaches the network through its pumps. */
+  assemble() {},
 };

@@ -1,5 +1,8 @@
 /** Filter. */
 import type { Kind } from './kind.ts';
+import { pathK } from '../assembly/laws.ts';
+import { toMPa } from '../assembly/units.ts';
+import { flowAt } from './read.ts';
 import { hardware } from './common.ts';
 
 export const filter: Kind = {
@@ -34,4 +37,18 @@ export const filter: Kind = {
     ...hardware,
   ],
   groups: [],
+  /** Clean element as a path; bypass in parallel, with the element's own K. */
+  assemble(component, into) {
+    const passes = flowAt(component, 'passes');
+    const bypass = component.properties.find((p) => p.name === 'bypass')?.value;
+    if (passes === undefined) return into.cannot(component, `${component.id} has no \`passes\``);
+    const k = pathK({ flow: passes.flow, drop: passes.drop * into.oil.filterDrop });
+    const a = into.nodeOrBlind(component, 'in');
+    const b = into.nodeOrBlind(component, 'out');
+    const element = into.add(component, { type: 'path', a, b, k }, ['in', 'out'], 'in to out');
+    if (bypass?.type === 'bypass' && bypass.crack !== undefined) {
+      into.add(component, { type: 'check', a, b, k, crack: toMPa(bypass.crack.si) }, ['in', 'out'], 'bypass');
+    }
+    into.limitation({ component: component.id, words: `${component.id} passes`, targets: [{ element, size: 'k' }] });
+  },
 };

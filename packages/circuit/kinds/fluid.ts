@@ -58,4 +58,5 @@ export const fluid: Kind = {
     ...commonCode,
   ],
   groups: [],
+  assemble() {},
 };

@@ -21,4 +21,5 @@ export const gauge: Kind = {
     ...hardware,
   ],
   groups: [],
+  assemble() {},
 };

@@ -14,4 +14,5 @@ export const heater: Kind = {
     ...hardware,
   ],
   groups: [],
+  assemble() {},
 };

@@ -76,3 +76,14 @@ export const LOAD_PROPERTIES: readonly PropertySpec[] = [
   },
   { name: 'propped', shape: { form: 'flag' }, required: false, default: 'not said', example: 'propped', about: 'A mechanical prop or lock holds the load when persons reach in.' },
 ];
+
+/** `velocity suction 1.0 m/s`: the line function stands where a port stands elsewhere (`Property.port`). */
+export const LIMITS_PROPERTIES: readonly PropertySpec[] = [
+  { name: 'velocity', shape: { form: 'portQuantity', dimension: 'velocity' }, required: false, many: true, default: 'by the rule', example: 'velocity suction 1.0 m/s', about: 'Highest mean velocity in lines of this function.' },
+  { name: 'temperature', shape: { form: 'quantity', dimensions: ['temperature'] }, required: false, default: 'by the rule', example: 'temperature 60 degC', about: 'Highest oil temperature.' },
+  { name: 'viscosity', shape: { form: 'range', dimensions: ['viscosity'] }, required: false, default: 'by the rule', example: 'viscosity 12 mm2/s to 800 mm2/s', about: 'Lowest and highest viscosity allowed.' },
+  { name: 'cleanliness', shape: { form: 'text' }, required: false, default: 'by the rule', example: 'cleanliness "18/16/13"', about: 'Dirtiest class allowed (ISO 4406).' },
+  { name: 'margin', shape: { form: 'quantity', dimensions: ['ratio'] }, required: false, default: '0 %', example: 'margin 10 %', about: 'By how much a requirement must be met.' },
+  { name: 'idle', shape: { form: 'quantity', dimensions: ['pressure'] }, required: false, default: '20 bar', example: 'idle 20 bar', about: 'Highest pump outlet pressure that counts as idling.' },
+  { name: 'surge', shape: { form: 'quantity', dimensions: ['pressure'] }, required: false, default: 'by the rule', example: 'surge 30 bar', about: 'Highest pressure rise when a valve closes.' },
+];

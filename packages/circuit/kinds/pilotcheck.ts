@@ -1,5 +1,9 @@
 /** Pilot-operated check valve. */
 import type { Kind } from './kind.ts';
+import { pathK } from '../assembly/laws.ts';
+import { BAR, toMPa } from '../assembly/units.ts';
+import { addCheck, addLeak, crackFits, passesOf, SEAT_LEAK, siOr } from './passing.ts';
+import { has, si } from './read.ts';
 import { hardware } from './common.ts';
 
 export const pilotcheck: Kind = {
@@ -36,4 +40,49 @@ export const pilotcheck: Kind = {
     ...hardware,
   ],
   groups: [],
+  /** V to C: check law. C to V: opened by the pilot against the trapped pressure. */
+  assemble(component, into) {
+    const ratio = si(component, 'ratio');
+    if (ratio === undefined) return into.cannot(component, `${component.id} has no \`ratio\``);
+    const crack = siOr(component, into, 'crack', BAR, '1 bar');
+    if (!crackFits(component, crack)) return into.cannot(component, `${component.id} cracks at more than the drop it \`passes\` at`);
+    const passes = passesOf(component, into);
+    const v = into.nodeOrBlind(component, 'V');
+    const c = into.nodeOrBlind(component, 'C');
+    addCheck(component, into, { node: v, port: 'V' }, { node: c, port: 'C' }, crack, 'V to C');
+    addLeak(component, into, { node: c, port: 'C' }, { node: v, port: 'V' }, SEAT_LEAK);
+    const x = into.node(component, 'X');
+    if (x === undefined) return;
+    const back = into.node(component, 'Y') ?? v;
+    const set = into.parameter(component, 'crack', toMPa(crack));
+    const band = into.parameter(component, 'band', toMPa(5 * BAR));
+    const opened = (r: number, k: number, words: string) =>
+      into.add(
+        component,
+        {
+          type: 'piloted',
+          a: c,
+          b: v,
+          k,
+          pilots: [
+            { node: x, weight: r },
+            { node: back, weight: -r },
+            { node: c, weight: -1 },
+            { node: v, weight: 1 },
+          ],
+          set,
+          band,
+          oneWay: true,
+        },
+        ['C', 'V'],
+        words,
+      );
+    const element = opened(ratio, pathK(passes), 'C to V');
+    if (has(component, 'decompressing')) {
+      into.assume({ component: component.id, property: 'decompressing', value: 'poppet of 5 % of `passes`, four times the ratio', source: 'memory', note: 'common practice, from memory' });
+      opened(4 * ratio, pathK({ flow: 0.05 * passes.flow, drop: passes.drop }), 'C to V, decompressing');
+    }
+    into.limitation({ component: component.id, words: `${component.id} passes`, targets: [{ element, size: 'k' }] });
+    into.opening({ component: component.id, element });
+  },
 };

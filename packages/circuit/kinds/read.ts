@@ -64,3 +64,10 @@ export const precharge = (owner: Owner, name: string): PrechargeValue | undefine
 export const cams = (owner: Owner, name: string): readonly CamValue[] =>
   valuesOf(owner, name).filter((v): v is CamValue => v.type === 'cam');
 export const coils = (owner: Owner): readonly CoilValue[] => valuesOf(owner, 'coil').filter((v): v is CoilValue => v.type === 'coil');
+
+/** Rating of a port, Pa: its own `rated T`, else the general one. */
+export function ratedAt(owner: Owner, port: string): number | undefined {
+  const all = owner.properties.filter((p) => p.name === 'rated' && p.value.type === 'quantity');
+  const own = all.find((p) => p.port === port) ?? all.find((p) => p.port === undefined);
+  return own?.value.type === 'quantity' ? own.value.q.si : undefined;
+}

@@ -1,5 +1,9 @@
 /** Pressure-relief valve. */
 import type { Kind } from './kind.ts';
+import { pathK } from '../assembly/laws.ts';
+import { BAR, LITRE_PER_MINUTE, toLitresPerSecond, toMPa } from '../assembly/units.ts';
+import { addLeak, coilOf, scaled, settingParameter, siOr } from './passing.ts';
+import { flowAt, si } from './read.ts';
 import { hardware } from './common.ts';
 import { has } from './read.ts';
 
@@ -58,5 +62,48 @@ export const relief: Kind = {
   groups: [],
   portsOf(component) {
     return relief.ports.filter((p) => p.name !== 'X' || has(component, 'piloted'));
+  },
+  /** Opens at set + back pressure; set + override is reached at the flow of `passes`; the open body is the floor. */
+  assemble(component, into) {
+    const set = si(component, 'set');
+    const passes = flowAt(component, 'passes');
+    if (set === undefined || passes === undefined) return into.cannot(component, `${component.id} has no \`${set === undefined ? 'set' : 'passes'}\``);
+    const piloted = has(component, 'piloted');
+    const vent = into.node(component, 'X');
+    if (vent !== undefined && !piloted) return into.cannot(component, `${component.id} has its X joined but is not \`piloted\``);
+    const override = siOr(component, into, 'override', 0.1, '10 % at the flow it passes');
+    const coil = coilOf(component, into);
+    const vented = si(component, 'vented') ?? 3 * BAR;
+    if (si(component, 'vented') === undefined && (coil !== undefined || vent !== undefined)) {
+      into.assume({ component: component.id, property: 'vented', value: '3 bar', source: 'default', note: 'common practice, no source' });
+    }
+    const p = into.nodeOrBlind(component, 'P');
+    const t = into.nodeOrBlind(component, 'T');
+    const parameter = settingParameter(component, into, coil, 'set', { lowest: vented, set }, toMPa);
+    const element = into.add(
+      component,
+      {
+        type: 'relief',
+        p,
+        t,
+        ref: into.node(component, 'Y') ?? t,
+        ...(vent === undefined ? {} : { x: vent }),
+        set: parameter,
+        vented: toMPa(vented),
+        override,
+        qN: toLitresPerSecond(passes.flow),
+        k: pathK(scaled(passes, into)),
+      },
+      ['P', 'T'],
+      'P to T',
+    );
+    if (vent !== undefined) {
+      into.assume({ component: component.id, property: 'X', value: '1 L/min at 50 bar', source: 'memory', note: 'flow the pilot stage takes from P: common practice, from memory' });
+      into.add(component, { type: 'path', a: p, b: vent, k: pathK({ flow: LITRE_PER_MINUTE, drop: 50 * BAR }) }, ['P', 'X'], 'pilot stage');
+    }
+    addLeak(component, into, { node: p, port: 'P' }, { node: t, port: 'T' }, piloted ? 5 : 0);
+    into.limitation({ component: component.id, words: `${component.id} set`, targets: [{ parameter }] });
+    into.lifting({ component: component.id, element, above: 0.01 * toLitresPerSecond(passes.flow) });
+    into.opening({ component: component.id, element });
   },
 };

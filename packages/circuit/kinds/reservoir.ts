@@ -48,4 +48,6 @@ export const reservoir: Kind = {
     ...hardware,
   ],
   groups: [],
+  /** Its pipes are fixed nodes at level pressure: nothing to add. */
+  assemble() {},
 };

@@ -1,5 +1,8 @@
 /** Semi-rotary actuator. */
 import type { Kind } from './kind.ts';
+import { toArea } from '../assembly/units.ts';
+import { addLeak } from './passing.ts';
+import { si } from './read.ts';
 import { hardware } from './common.ts';
 
 export const rotary: Kind = {
@@ -31,4 +34,19 @@ export const rotary: Kind = {
     ...hardware,
   ],
   groups: [],
+  /** Torque = pressure difference x volume an angle, less a tenth for friction; stops at 0 and `angle`. */
+  assemble(component, into) {
+    const displacement = si(component, 'displacement');
+    if (displacement === undefined) return into.cannot(component, `${component.id} has no \`displacement\``);
+    const angle = si(component, 'angle');
+    if (angle === undefined) return into.cannot(component, `${component.id} has no \`angle\``);
+    const area = toArea(displacement);
+    const a = into.nodeOrBlind(component, 'A');
+    const b = into.nodeOrBlind(component, 'B');
+    into.chamber(component, { node: a, area }, 'A', displacement * angle);
+    into.chamber(component, { node: b, area: -area }, 'B', displacement * angle);
+    into.pressureFriction(component, 0.1 * area);
+    into.assume({ component: component.id, property: 'friction', value: '10 % of the torque', source: 'memory', note: 'common practice, from memory' });
+    addLeak(component, into, { node: a, port: 'A' }, { node: b, port: 'B' }, 5);
+  },
 };

@@ -21,4 +21,5 @@ export const sensor: Kind = {
   chainOf(component) {
     return has(component, 'on') ? { how: 'none' } : sensor.chain;
   },
+  assemble() {},
 };

@@ -1,5 +1,8 @@
 /** Shut-off valve. */
 import type { Kind } from './kind.ts';
+import { pathK } from '../assembly/laws.ts';
+import { addLeak, passesOf, SEAT_LEAK } from './passing.ts';
+import { has } from './read.ts';
 import { hardware } from './common.ts';
 
 export const shutoff: Kind = {
@@ -26,4 +29,15 @@ export const shutoff: Kind = {
     ...hardware,
   ],
   groups: [{ name: 'position', need: 'exactly one', of: ['open', 'closed'] }],
+  /** As declared in every state; the contrary only where a rule asks for it. */
+  assemble(component, into) {
+    const declared = has(component, 'closed') ? 0 : 1;
+    const open = into.parameter(component, 'open', declared);
+    into.onSetting((setting, put) => put(open, setting.contrary?.includes(component.id) === true ? 1 - declared : declared));
+    const a = { node: into.nodeOrBlind(component, 'A'), port: 'A' };
+    const b = { node: into.nodeOrBlind(component, 'B'), port: 'B' };
+    const element = into.add(component, { type: 'path', a: a.node, b: b.node, k: pathK(passesOf(component, into)), opening: open }, ['A', 'B'], 'A to B');
+    if (declared === 0) addLeak(component, into, a, b, SEAT_LEAK);
+    into.limitation({ component: component.id, words: `${component.id} passes`, targets: [{ element, size: 'k' }] });
+  },
 };

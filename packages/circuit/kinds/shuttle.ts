@@ -1,5 +1,6 @@
 /** Shuttle valve. */
 import type { Kind } from './kind.ts';
+import { NO_LOSS, pathK } from '../assembly/laws.ts';
 import { hardware } from './common.ts';
 
 export const shuttle: Kind = {
@@ -14,4 +15,13 @@ export const shuttle: Kind = {
   chain: { how: 'none' },
   properties: [...hardware],
   groups: [],
+  /** The higher of A and B is joined to C without loss. */
+  assemble(component, into) {
+    into.add(
+      component,
+      { type: 'shuttle', a: into.nodeOrBlind(component, 'A'), b: into.nodeOrBlind(component, 'B'), c: into.nodeOrBlind(component, 'C'), k: pathK(NO_LOSS) },
+      ['A', 'B', 'C'],
+      'A or B to C',
+    );
+  },
 };

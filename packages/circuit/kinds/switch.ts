@@ -65,4 +65,5 @@ export const switchKind: Kind = {
   chainOf(component) {
     return ['on', 'at', 'from', 'outside'].some((n) => has(component, n)) ? { how: 'none' } : switchKind.chain;
   },
+  assemble() {},
 };

@@ -1,5 +1,9 @@
 /** Throttle. */
 import type { Kind } from './kind.ts';
+import { REVERSE_CRACK } from '../assembly/laws.ts';
+import { addLeak, addReverse, crackFits } from './passing.ts';
+import { has } from './read.ts';
+import { addMetering, passesForReverse } from './throttle-metering.ts';
 import { hardware } from './common.ts';
 
 export const throttle: Kind = {
@@ -85,4 +89,18 @@ export const throttle: Kind = {
     ...hardware,
   ],
   groups: [{ name: 'metering', need: 'exactly one', of: ['set', 'orifice', 'passes'] }],
+  /** Orifice, opening, set (plain or compensated), bypass form; reverse check; a coil on the setting. */
+  assemble(component, into) {
+    const a = { node: into.nodeOrBlind(component, 'in'), port: 'in' };
+    const b = { node: into.nodeOrBlind(component, 'out'), port: 'out' };
+    if (has(component, 'reverse') && !crackFits(component, REVERSE_CRACK)) return into.cannot(component, `${component.id} \`passes\` at less than the crack of its reverse check`);
+    const metering = addMetering(component, into, a, b);
+    if (typeof metering === 'string') return into.cannot(component, metering);
+    if (has(component, 'reverse')) {
+      passesForReverse(component, into);
+      addReverse(component, into, b, a);
+    }
+    addLeak(component, into, a, b, 0);
+    into.limitation(metering);
+  },
 };

@@ -1,5 +1,9 @@
 /** Unloading valve. */
 import type { Kind } from './kind.ts';
+import { bandOf, pathK } from '../assembly/laws.ts';
+import { toMPa } from '../assembly/units.ts';
+import { addLeak, scaled, siOr } from './passing.ts';
+import { flowAt, si } from './read.ts';
 import { hardware } from './common.ts';
 
 export const unloading: Kind = {
@@ -28,4 +32,44 @@ export const unloading: Kind = {
     ...hardware,
   ],
   groups: [],
+  /** Opening by the pilot above T (or Y): from `set` when not lifted, from `closes` when lifted; the two curves meet where the bit turns. */
+  assemble(component, into) {
+    const set = si(component, 'set');
+    const passes = flowAt(component, 'passes');
+    if (set === undefined || passes === undefined) return into.cannot(component, `${component.id} has no \`${set === undefined ? 'set' : 'passes'}\``);
+    const closes = siOr(component, into, 'closes', 0.9 * set, '90 % of set');
+    if (closes >= set) return into.cannot(component, `${component.id} closes at or above its \`set\``);
+    const p = into.nodeOrBlind(component, 'P');
+    const t = into.nodeOrBlind(component, 'T');
+    const x = into.nodeOrBlind(component, 'X');
+    const drain = into.node(component, 'Y') ?? t;
+    const parameter = into.parameter(component, 'set', toMPa(set));
+    const bit = into.parameter(component, 'lifted', 0);
+    into.onSetting((setting, put) => put(bit, setting.bits[component.id] === true ? 1 : 0));
+    const element = into.add(
+      component,
+      {
+        type: 'piloted',
+        a: p,
+        b: t,
+        k: pathK(scaled(passes, into)),
+        pilots: [
+          { node: x, weight: 1 },
+          { node: drain, weight: -1 },
+        ],
+        set: parameter,
+        band: into.parameter(component, 'band', toMPa(bandOf(set))),
+        bit,
+        setWhenOn: into.parameter(component, 'closes', toMPa(closes)),
+        oneWay: false,
+      },
+      ['P', 'T'],
+      'P to T',
+    );
+    addLeak(component, into, { node: p, port: 'P' }, { node: t, port: 'T' }, 20);
+    into.limitation({ component: component.id, words: `${component.id} set`, targets: [{ parameter }] });
+    into.limitation({ component: component.id, words: `${component.id} passes`, targets: [{ element, size: 'k' }] });
+    into.opening({ component: component.id, element });
+    into.memory({ component: component.id, kind: 'lifted', element, pilot: x, drain, set, band: bandOf(set), closes });
+  },
 };

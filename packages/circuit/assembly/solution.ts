@@ -1,0 +1,174 @@
+/** From the engine's result to a solution in SI and names. */
+import type { Network, SteadyResult } from '@oilway/engine';
+import type { Assembled } from './assembled.ts';
+import { translate } from './diagnosis.ts';
+import type { Setting, Solution, Stand } from './machine.ts';
+import { forceAt, ofBody, positionOf } from './setting.ts';
+import { fromKilo, fromLitresPerSecond, fromMPa, toMPa } from './units.ts';
+
+/** Laminar core of pressure-dependent friction, MPa. */
+const DELTA = 0.01;
+
+/** `brakes`: torque held by body index, N.m. */
+export function solutionOf(assembled: Assembled, network: Network, setting: Setting, result: SteadyResult, brakes: readonly number[]): Solution {
+  const pressures: Record<string, number> = {};
+  for (const [net, node] of assembled.nodeOf) pressures[net] = fromMPa(result.pressures[node] ?? 0);
+  const flows = flowsOf(assembled, network, setting, result);
+  const openings: Record<string, number> = {};
+  for (const o of assembled.openings) openings[o.component] = result.openings[o.element] ?? 0;
+  const lifting = assembled.liftings.filter((l) => terminalFlow(result, l.element, 0) > l.above).map((l) => l.component);
+
+  const velocities: Record<string, number> = {};
+  const positions: Record<string, number> = {};
+  const forces: Record<string, number> = {};
+  const stopForces: Record<string, number> = {};
+  assembled.bodies.forEach((body, i) => {
+    const x = positionOf(body, setting);
+    const v = result.velocities[i] ?? 0;
+    velocities[body.id] = v;
+    positions[body.id] = x;
+    const locked = result.contacts[i] === 'locked';
+    const pressed = (result.pressureForces[i] ?? 0) + (body.spring === undefined ? 0 : forceAt(body.spring, x));
+    stopForces[body.id] = fromKilo(result.stopForces[i] ?? 0);
+    const own = ownFriction(assembled, i, result, brakes[i] ?? 0);
+    if (locked) {
+      // What it would press with against a stop: friction takes its part of the force there is.
+      forces[body.id] = Math.sign(pressed) * Math.max(0, Math.abs(fromKilo(pressed)) - own);
+      return;
+    }
+    const load = ofBody(setting.loads, body);
+    const total = own + (load?.friction ?? 0);
+    const friction = sealAsResist(assembled, i, setting, v, fromKilo(result.frictionForces[i] ?? 0), own, total);
+    forces[body.id] = fromKilo(pressed + (result.stopForces[i] ?? 0)) + friction;
+  });
+
+  const shaft: Record<string, number> = {};
+  for (const pump of assembled.pumps) {
+    const spec = assembled.specs[pump.element];
+    if (spec?.type !== 'pump') continue;
+    const dp = (result.pressures[spec.p] ?? 0) - (result.pressures[spec.s] ?? 0);
+    const running = setting.drives[pump.drive] !== false;
+    // Flow through the pumping chambers: what leaves at P and what leaks back. 1 MPa x 1 L/s = 1 kW.
+    const displaced = running ? Math.max(0, -portFlow(network, result, pump.element, spec.p) + spec.leak * dp) : 0;
+    const watts = fromKilo((displaced * Math.max(0, dp)) / pump.mechanical);
+    shaft[pump.component] = watts;
+    shaft[pump.drive] = (shaft[pump.drive] ?? 0) + watts;
+  }
+  const oil: Record<string, number> = {};
+  for (const g of assembled.gases) {
+    const there = setting.oil[g.component];
+    oil[g.component] = typeof there === 'number' ? there : 0;
+  }
+  const stands: Record<string, Stand> = {};
+  for (const v of assembled.valves) stands[v.component] = setting.valves[v.component] ?? { position: v.rest };
+  const bits: Record<string, boolean> = {};
+  for (const m of assembled.memories) bits[m.component] = setting.bits[m.component] === true;
+
+  const diagnosis = translate(assembled, result.diagnosis, result, network.parameters, stands);
+  const undetermined: Record<string, { low: number; high: number }> = {};
+  for (const d of diagnosis) if (d.kind === 'CLOSED VOLUME') for (const net of d.nets) undetermined[net] = { low: d.low, high: d.high };
+  return {
+    solved: result.converged,
+    pressures,
+    undetermined,
+    flows,
+    openings,
+    lifting,
+    velocities,
+    positions,
+    forces,
+    stopForces,
+    shaft,
+    oil,
+    stands,
+    bits,
+    diagnosis,
+    remarks: [],
+    iterations: result.iterations,
+  };
+}
+
+export const terminalFlow = (result: SteadyResult, element: number, terminal: number): number =>
+  result.flows[(result.elementStart[element] ?? 0) + terminal] ?? 0;
+
+/** Flow into an element at the terminal that lies at a node, L/s. */
+export function portFlow(network: Network, result: SteadyResult, element: number, node: number): number {
+  const law = network.laws[element];
+  if (law === undefined) return 0;
+  const t = law.nodes.indexOf(node);
+  return t >= 0 && t < law.terminals ? terminalFlow(result, element, t) : 0;
+}
+
+/** Ports at the terminals as the engine orders them: a pump's outlet comes first there. */
+export function terminalPorts(assembled: Assembled, network: Network, element: number): readonly (string | undefined)[] {
+  const ports = assembled.elements[element]?.ports ?? [];
+  const spec = assembled.specs[element];
+  if (spec?.type === 'pump' && spec.p !== spec.s && network.laws[element]?.nodes[0] === spec.p) return [ports[1], ports[0], ...ports.slice(2)];
+  return ports;
+}
+
+function flowsOf(assembled: Assembled, network: Network, setting: Setting, result: SteadyResult): Record<string, number> {
+  const flows: Record<string, number> = {};
+  const add = (component: string, port: string | undefined, litres: number): void => {
+    if (port === undefined) return;
+    const key = `${component}.${port}`;
+    flows[key] = (flows[key] ?? 0) + fromLitresPerSecond(litres);
+  };
+  assembled.elements.forEach((note, e) => {
+    if (note.words === 'line') flows[note.component] = fromLitresPerSecond(terminalFlow(result, e, 0));
+    else terminalPorts(assembled, network, e).forEach((port, t) => add(note.component, port, terminalFlow(result, e, t)));
+  });
+  for (const c of assembled.chambers) {
+    const body = assembled.bodies[c.body];
+    if (body === undefined) continue;
+    add(c.component, c.port, areaAt(c, positionOf(body, setting)) * (result.velocities[c.body] ?? 0));
+  }
+  assembled.gases.forEach((g, i) => add(g.component, 'P', result.gasFlows[i] ?? 0));
+  return flows;
+}
+
+/** Area of a chamber at a position (telescopic: of the stage that moves there); engine units, + outward. */
+export function areaAt(chamber: Assembled['chambers'][number], x: number): number {
+  const { stages } = chamber;
+  if (stages === undefined) return chamber.area;
+  let area = stages.area[0] ?? 0;
+  stages.at.forEach((at, i) => {
+    if (x >= at) area = stages.area[i] ?? area;
+  });
+  return area;
+}
+
+/** Friction of the actuator itself (seals, motor, brake) that can act, N or N.m. */
+function ownFriction(assembled: Assembled, i: number, result: SteadyResult, brake: number): number {
+  const body = assembled.bodies[i];
+  const spec = assembled.actuators[i];
+  let own = (body?.sealFriction ?? 0) + brake;
+  const [first, second] = spec?.chambers ?? [];
+  if (spec?.pressureFriction !== undefined && first !== undefined && second !== undefined) {
+    const d = (result.pressures[first.node] ?? 0) - (result.pressures[second.node] ?? 0);
+    own += fromKilo(spec.pressureFriction * (Math.sqrt(d * d + DELTA * DELTA) - DELTA));
+  }
+  return own;
+}
+
+/** The part of the friction acting on the body that is the actuator's own, N. In states seal friction is a resistance of one direction. */
+function sealAsResist(assembled: Assembled, i: number, setting: Setting, v: number, acting: number, own: number, total: number): number {
+  const body = assembled.bodies[i];
+  if (body === undefined) return 0;
+  if (setting.sealFriction === 'not with load') {
+    const fixed = ofBody(setting.loads, body)?.fixed ?? [];
+    const pushes = fixed.reduce((sum, t) => sum + forceAt(t, positionOf(body, setting)), 0);
+    if (Math.abs(pushes) > 1) return v * pushes < 0 && Math.abs(v) > 3e-5 ? -Math.sign(v) * body.sealFriction : 0;
+  }
+  return total > 0 ? (acting * own) / total : 0;
+}
+
+/** Torque each brake holds at these pressures, by body index, N.m. */
+export function brakesAt(assembled: Assembled, result: SteadyResult | undefined): number[] {
+  const held = assembled.bodies.map(() => 0);
+  for (const b of assembled.brakes) {
+    const p = result === undefined ? 0 : (result.pressures[b.node] ?? 0) - toMPa(assembled.heads[b.component] ?? 0);
+    held[b.body] = (held[b.body] ?? 0) + b.torque * Math.min(1, Math.max(0, 1 - p / toMPa(b.opens)));
+  }
+  return held;
+}
