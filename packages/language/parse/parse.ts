@@ -1,0 +1,115 @@
+/** Text to syntax tree. One call, no document store: the tree, and what does not fit as data. */
+import { type AstNode, EmptyFileSystem, type LangiumCoreServices, createDefaultCoreModule, createDefaultSharedCoreModule, inject } from 'langium';
+import type { LangiumParser, LangiumSharedCoreServices } from 'langium';
+import type { Finding, Fix } from '@oilway/rules';
+import { type File as FileNode } from '../generated/ast.ts';
+import { OilwayGeneratedModule, OilwayGeneratedSharedModule } from '../generated/module.ts';
+import { finding } from './finding.ts';
+import type { Layout } from './layout.ts';
+import { OilwayLexer } from './lexer.ts';
+import { MessageProvider } from './messages.ts';
+
+/** Characters; a drawing has a few thousand. */
+export const LONGEST_FILE = 2_000_000;
+
+export interface Parsed {
+  readonly uri: string;
+  readonly text: string;
+  /** May lack any part that the text lacks: treat every member as optional. */
+  readonly root: FileNode;
+  readonly layout: Layout;
+  /** What does not parse, code SYNTAX; at most one a statement. */
+  readonly findings: readonly Finding[];
+}
+
+interface ParserRoom {
+  readonly parser: LangiumParser;
+  readonly lexer: OilwayLexer;
+}
+
+/** Langium services of the notation (parser, lexer, grammar), without any editor service. */
+export function createCoreServices(): LangiumCoreServices {
+  const shared: LangiumSharedCoreServices = inject(createDefaultSharedCoreModule(EmptyFileSystem), OilwayGeneratedSharedModule);
+  const services: LangiumCoreServices = inject(createDefaultCoreModule({ shared }), OilwayGeneratedModule, {
+    parser: {
+      Lexer: (s: LangiumCoreServices) => new OilwayLexer(s),
+      ParserErrorMessageProvider: () => new MessageProvider(),
+    },
+  });
+  shared.ServiceRegistry.register(services);
+  return services;
+}
+
+let room: ParserRoom | undefined;
+
+function parserRoom(): ParserRoom {
+  if (room === undefined) {
+    const services = createCoreServices();
+    room = { parser: services.parser.LangiumParser, lexer: services.parser.Lexer as OilwayLexer };
+  }
+  return room;
+}
+
+const EMPTY: FileNode = { $type: 'File', statements: [] };
+
+/** Never throws. A text too long or one the parser gives up on comes back empty, with a finding that says so. */
+export function parseText(uri: string, text: string): Parsed {
+  if (text.length > LONGEST_FILE) {
+    return refused(uri, '', `This file has ${text.length} characters; more than ${LONGEST_FILE} are not read`, 0);
+  }
+  try {
+    const { parser, lexer } = parserRoom();
+    const result = parser.parse<FileNode & AstNode>(text);
+    const layout = lexer.last;
+    if (layout === undefined) return refused(uri, text, 'The file could not be read', Math.min(1, text.length));
+    const lexical = layout.problems.map((problem) => {
+      const fixes: Fix[] = [];
+      if (problem.change !== undefined) {
+        const { start, end, text: written, title } = problem.change;
+        fixes.push({ title, safe: false, changes: [{ uri, start, end, text: written }] });
+      }
+      return finding({ code: 'SYNTAX', what: problem.what, mend: problem.mend, origin: { uri, start: problem.start, end: problem.end }, fixes });
+    });
+    return { uri, text, root: result.value, layout, findings: [...lexical, ...parserFindings(uri, layout, result.parserErrors)] };
+  } catch (error) {
+    // The parser keeps its stack after a throw: the next text would come out empty. A new one costs a few milliseconds.
+    room = undefined;
+    const reason = error instanceof RangeError ? 'it is nested too deep' : error instanceof Error ? error.message : String(error);
+    return refused(uri, text, `This file cannot be read: ${reason}`, Math.min(1, text.length));
+  }
+}
+
+function refused(uri: string, text: string, what: string, end: number): Parsed {
+  const layout: Layout = { tokens: [], comments: [], problems: [], statements: [], lineStarts: [0] };
+  return { uri, text, root: EMPTY, layout, findings: [finding({ code: 'SYNTAX', what, origin: { uri, start: 0, end } })] };
+}
+
+type ParserErrors = ReturnType<LangiumParser['parse']>['parserErrors'];
+
+/** One problem a statement: the first; what follows in it is mostly its echo. */
+function parserFindings(uri: string, layout: Layout, errors: ParserErrors): Finding[] {
+  const said = new Set<number>();
+  let next = 0;
+  layout.statements.forEach((statement, index) => {
+    while (next < layout.problems.length && (layout.problems[next]?.start ?? 0) < statement.start) next++;
+    let i = next;
+    const problem = layout.problems[i];
+    if (problem !== undefined && problem.start <= statement.end) said.add(index);
+    i = next;
+  });
+  const findings: Finding[] = [];
+  for (const error of errors) {
+    const token = error.token;
+    const previous = 'previousToken' in error ? (error.previousToken as typeof token | undefined) : undefined;
+    const own = typeof token.payload === 'number' ? token.payload : typeof previous?.payload === 'number' ? previous.payload : -1;
+    if (said.has(own)) continue;
+    said.add(own);
+    const gone = token.image === '' || Number.isNaN(token.startOffset);
+    const last = gone ? (previous ?? token) : token;
+    const statement = layout.statements[own];
+    const start = Number.isNaN(last.startOffset) ? (statement?.start ?? 0) : last.startOffset;
+    const end = Number.isNaN(last.startOffset) ? (statement?.end ?? start) : (last.endOffset ?? start) + 1;
+    findings.push(finding({ code: 'SYNTAX', what: error.message, origin: { uri, start, end: Math.max(start, end) } }));
+  }
+  return findings;
+}

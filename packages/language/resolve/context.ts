@@ -1,0 +1,148 @@
+/** What all parts of the resolution share: the text, the names, the findings so far. */
+import { type Component, KINDS, type Kind, type NotComputed, type Origin, type PortSpec, type Chain } from '@oilway/circuit';
+import type { Finding, Fix } from '@oilway/rules';
+import type { Let, Name, Ref } from '../generated/ast.ts';
+import { type FindingParts, finding } from '../parse/finding.ts';
+import { nearest } from '../parse/near.ts';
+import type { PortMention, SymbolDeclaration, SymbolKind, SymbolReference } from './symbols.ts';
+
+/** A syntax node, as far as its place in the text goes. */
+export interface Placed {
+  readonly $cstNode?: { readonly offset: number; readonly end: number } | undefined;
+}
+
+export interface Constants {
+  readonly nodes: Map<string, Let>;
+}
+
+export class Context {
+  readonly uri: string;
+  readonly text: string;
+  readonly findings: Finding[] = [];
+  readonly names = new Map<string, SymbolDeclaration>();
+  readonly references: SymbolReference[] = [];
+  readonly portMentions: PortMention[] = [];
+  readonly constants = new Map<string, Let>();
+  readonly components = new Map<string, Component>();
+  readonly notComputed: NotComputed[] = [];
+  /** Short step names: `Clamp` -> ids; more than one: the cycle must be written. */
+  readonly stepsByName = new Map<string, string[]>();
+  readonly steps = new Set<string>();
+  private readonly said = new Set<string>();
+
+  constructor(uri: string, text: string) {
+    this.uri = uri;
+    this.text = text;
+  }
+
+  origin(node: Placed | undefined): Origin {
+    const cst = node?.$cstNode;
+    return { uri: this.uri, start: cst?.offset ?? 0, end: cst?.end ?? 0 };
+  }
+
+  span(from: Origin, to: Origin): Origin {
+    return { uri: this.uri, start: from.start, end: Math.max(from.end, to.end) };
+  }
+
+  slice(origin: Origin): string {
+    return this.text.slice(origin.start, origin.end);
+  }
+
+  /** One finding; the same words at the same place (twins share their text) are said once. */
+  report(parts: FindingParts): void {
+    const key = `${parts.origin.start} ${parts.origin.end} ${parts.code} ${parts.what}`;
+    if (this.said.has(key)) return;
+    this.said.add(key);
+    this.findings.push(finding(parts));
+  }
+
+  replace(origin: Origin, text: string, title: string, safe = false): Fix {
+    return { title, safe, changes: [{ uri: this.uri, start: origin.start, end: origin.end, text }] };
+  }
+
+  declare(node: Name | undefined, what: SymbolKind, statement: Placed, detail: Partial<Pick<SymbolDeclaration, 'kind' | 'id'>> = {}): SymbolDeclaration | undefined {
+    const name = node?.text;
+    if (name === undefined || node === undefined) return undefined;
+    return this.declareWord(name, this.origin(node), what, this.origin(statement), detail);
+  }
+
+  /** First come keeps the name; a second one is said with the first as related place. */
+  declareWord(
+    name: string,
+    origin: Origin,
+    what: SymbolKind,
+    statement: Origin,
+    detail: Partial<Pick<SymbolDeclaration, 'kind' | 'id'>> = {},
+  ): SymbolDeclaration | undefined {
+    const id = detail.id ?? name;
+    const first = this.names.get(id);
+    if (first !== undefined) {
+      this.report({
+        code: 'M01',
+        what: `The name \`${name}\` is given twice: it is a ${WHAT[first.what]} already`,
+        mend: 'Give one of the two another name; a name stands for one thing in a circuit.',
+        origin,
+        related: [{ message: `\`${name}\` is declared here first`, origin: first.origin }],
+        place: id,
+      });
+      return undefined;
+    }
+    const declaration: SymbolDeclaration = { id, name, what, origin, statement, ...(detail.kind === undefined ? {} : { kind: detail.kind }) };
+    this.names.set(id, declaration);
+    return declaration;
+  }
+
+  refer(origin: Origin, target: string): void {
+    this.references.push({ origin, target });
+  }
+
+  /** The words of a reference, `['U1', 'M1']`. */
+  wordsOf(ref: Ref | undefined): string[] {
+    return (ref?.parts ?? []).map((part) => part.text ?? '').filter((text) => text !== '');
+  }
+
+  /** Says that a name is not declared, with the nearest name of those that would fit. */
+  unknownName(word: string, origin: Origin, fits: (declaration: SymbolDeclaration) => boolean, wanted: string, place = ''): void {
+    const candidates: string[] = [];
+    for (const declaration of this.names.values()) if (fits(declaration)) candidates.push(declaration.what === 'step' ? declaration.name : declaration.id);
+    const near = nearest(word, candidates);
+    this.report({
+      code: 'NAME',
+      what: `\`${word}\` is not declared${near === undefined ? '' : `: did you mean \`${near}\``}`,
+      mend: near === undefined ? `Declare ${wanted} of this name, or write one that is declared.` : undefined,
+      origin,
+      place,
+      fixes: near === undefined ? [] : [this.replace(origin, near, `Write \`${near}\``)],
+    });
+  }
+}
+
+export const WHAT: Readonly<Record<SymbolKind, string>> = {
+  component: 'component',
+  part: 'part',
+  assembly: 'assembly',
+  unit: 'unit',
+  coil: 'coil',
+  line: 'line',
+  constant: 'constant',
+  cycle: 'cycle',
+  step: 'step',
+};
+
+export function kindOf(component: Component): Kind {
+  return KINDS[component.kind];
+}
+export function portsOf(component: Component): readonly PortSpec[] {
+  const kind = kindOf(component);
+  return kind.portsOf?.(component) ?? kind.ports;
+}
+export function chainOf(component: Component): Chain {
+  const kind = kindOf(component);
+  return kind.chainOf?.(component) ?? kind.chain;
+}
+
+/** `a`, `b or c`, `a, b or c` for messages. */
+export function oneOf(words: readonly string[]): string {
+  const quoted = words.map((word) => `\`${word}\``);
+  return quoted.length < 2 ? (quoted[0] ?? 'nothing') : `${quoted.slice(0, -1).join(', ')} or ${quoted.at(-1)}`;
+}
