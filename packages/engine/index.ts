@@ -1,3 +1,6 @@
 /** The computing core: a network of elements in, pressures, flows and motion out. Knows no names, no text, no trade. */
+export { compile, problemsOf, type CompileProblem, type Network } from './compile.ts';
+export { chargeOf, gasOil, gasPressure } from './gas.ts';
 export * from './network.ts';
 export * from './results.ts';
+export { solveSteady } from './steady.ts';

@@ -267,7 +267,7 @@ export interface ForceTable {
 /** A body with one degree of freedom: a cylinder rod, several rigidly joined, a motor shaft, a semi-rotary actuator. */
 export interface ActuatorSpec {
   readonly tag: number;
-  /** Chambers pressing on it: + area pushes outward (forward). Area 1e-3 m2 or L/rad. `areaSteps`: telescopic. */
+  /** Chambers pressing on it: + area pushes outward (forward). Area 1e-3 m2 or L/rad. `areaSteps`: telescopic, from position at[i] on area[i]. */
   readonly chambers: readonly {
     readonly node: NodeIndex;
     readonly area: number;
@@ -290,15 +290,28 @@ export interface ActuatorSpec {
 }
 
 /** Oil as a spring: stiffness of the air-free oil, MPa; free air by volume at 1 atm, 0..1; polytropic exponent of that air. */
-export interface OilSpec { readonly bulk: number; readonly air: number; readonly exponent: number }
+export interface OilSpec {
+  readonly bulk: number;
+  readonly air: number;
+  readonly exponent: number;
+}
 
 /** Gas charge at a node: p V^n = const, absolute. */
 export interface GasSpec {
   readonly tag: number;
   readonly node: NodeIndex;
-  readonly head?: number /** L */;
-  readonly volume: number /** MPa absolute at the fluid's temperature */;
+  readonly head?: number;
+  /** Gas volume without oil, L. */
+  readonly volume: number;
+  /** MPa absolute at the fluid's temperature. */
   readonly precharge: number;
+  /** Real gas: absolute pressure over gas volume; replaces p V^n (see `nitrogenCurve`). */
+  readonly curve?: GasCurve;
+}
+/** Points of a monotone gas law: absolute MPa rising, L falling. */
+export interface GasCurve {
+  readonly pressure: readonly number[];
+  readonly volume: readonly number[];
 }
 
 export interface NetworkSpec {

@@ -307,4 +307,18 @@ export class System {
       if (openings) openings[e] = out[OPENING]!;
     }
   }
+
+  /** Conductance between two terminals of an element at the present state, without the floor, L/s/MPa. */
+  conductance(e: number, t: number, o: number): number {
+    const { net, y, p, z, out, gradient, x } = this;
+    const law = net.laws[e]!;
+    const first = net.inputStart[e]!;
+    const pressures = law.nodes.length;
+    for (let i = 0; i < pressures; i++) z[i] = p[net.inputNodes[first + i]!]! - net.inputHeads[first + i]!;
+    let inputs = pressures;
+    if (law.own) z[inputs++] = y[net.ownOf[e]!]!;
+    if (law.actuator >= 0) z[inputs++] = x[law.actuator]!;
+    law.evaluate(z, this.parameters, 1, out, gradient);
+    return Math.max(Math.abs(gradient[t * inputs + o]!), Math.abs(gradient[o * inputs + t]!));
+  }
 }
