@@ -36,6 +36,8 @@ export interface Finding {
   readonly fixes: readonly Fix[];
   /** Codes of findings at the same place that this one hides. */
   readonly hides?: readonly string[];
+  /** Findings at other places that follow from this one and are hidden by it (A06 at a relief hides A01 at the pump). */
+  readonly hidesAt?: readonly { readonly code: string; readonly place: string }[];
   /** True where it was decided from computed figures (it appears a moment after the others). */
   readonly computed: boolean;
   /** Set when an `allow` statement accepted it: the reason. Accepted findings are not shown as problems. */

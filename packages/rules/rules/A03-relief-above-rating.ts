@@ -1,0 +1,107 @@
+/** A03: a relief lets the pressure rise above what the weakest part on its line is rated for. */
+import { graphOf, type Graph } from '../graph/graph.ts';
+import { type Guard, guardsOf } from '../graph/guards.ts';
+import { openAlways, waysFrom, waysTo } from '../graph/reach.ts';
+import { type Rating, ratingOf } from '../graph/rating.ts';
+import { tell } from '../finding.ts';
+import { round, spreads } from '../fixes/values.ts';
+import { writable } from '../fixes/sheet.ts';
+import type { Finding, Fix, Rule, RuleContext } from '../rule.ts';
+import { against, show } from '../words.ts';
+import { pumpFlowTo, settingOf, withOverride } from './limits.ts';
+
+/** The lowest rating among the nets that stand at this relief's pressure: not those with a lower guard of their own. */
+function weakest(graph: Graph, guard: Guard): { readonly rating: Rating; readonly net: string } | undefined {
+  const set = settingOf(guard.component)?.set ?? Infinity;
+  const lower = guardsOf(graph).guards.filter(
+    (g) => g.component.id !== guard.component.id && (settingOf(g.component)?.set ?? Infinity) < set,
+  );
+  // Back along the free ways to the pumps it guards, and on from there to everything that is pressed by the same oil.
+  const nets = new Set(waysTo(graph, guard.net, openAlways).keys());
+  for (const net of waysFrom(graph, guard.net, spreads).keys()) nets.add(net);
+  let found: { rating: Rating; net: string } | undefined;
+  for (const net of nets) {
+    const node = graph.net(net);
+    if (
+      node === undefined ||
+      node.reservoir !== undefined ||
+      node.functions.every((f) => f === 'return' || f === 'drain' || f === 'suction')
+    )
+      continue;
+    const onward = waysFrom(graph, net, openAlways);
+    if (lower.some((g) => onward.has(g.net))) continue;
+    const rating = ratingOf(graph, net);
+    if (rating !== undefined && (found === undefined || rating.value < found.rating.value)) found = { rating, net };
+  }
+  return found;
+}
+
+function lowerTo(context: RuleContext, guard: Guard, limit: number, reached: number, set: number): Fix | undefined {
+  const property = guard.component.properties.find((p) => p.name === 'set' && p.part === undefined);
+  if (property?.value.type !== 'quantity' || property.value.from !== undefined || !writable(context, guard.component)) return undefined;
+  const to = round(context.circuit, (limit * set) / reached, 'pressure', 'down');
+  const { uri, start, end } = property.value.origin;
+  if (property.value.plusMinus !== undefined) return undefined;
+  return { title: `Set ${guard.component.id} to ${to.text}`, safe: false, changes: [{ uri, start, end, text: to.text }] };
+}
+
+function judge(context: RuleContext, graph: Graph, guard: Guard): Finding[] {
+  const setting = settingOf(guard.component);
+  const found = setting === undefined ? undefined : weakest(graph, guard);
+  if (setting === undefined || found === undefined) return [];
+  const flow = pumpFlowTo(graph, guard.net);
+  const reached = withOverride(guard.component, setting.highest, flow) + backPressure(context, graph, guard);
+  const { rating } = found;
+  if (reached <= rating.value * 1.001) return [];
+  const property = guard.component.properties.find((p) => p.name === 'set');
+  const { value, bound } = against(context.circuit, reached, rating.value, 'pressure', rating.unit);
+  const parts = [
+    `set ${show(context.circuit, setting.highest, 'pressure', setting.unit)}`,
+    ...(flow > 0 ? [`with override at ${show(context.circuit, flow, 'flow')}`] : []),
+  ];
+  return [
+    tell(A03, {
+      what: `${guard.component.id} lets the pressure rise to ${value} (${parts.join(' ')}); ${rating.of} is rated ${bound}.`,
+      origin: property?.origin ?? guard.component.nameOrigin,
+      place: guard.component.id,
+      related: [{ message: `rated ${show(context.circuit, rating.value, 'pressure', rating.unit)}`, origin: rating.origin }],
+      fixes: [lowerTo(context, guard, rating.value, reached, setting.set)],
+    }),
+  ];
+}
+
+/** Highest pressure behind the relief while it lifts, Pa; 0 until the figures are there. */
+function backPressure(context: RuleContext, graph: Graph, guard: Guard): number {
+  const outlet = graph.netAt(guard.component.id, 'T')?.id;
+  if (context.study === undefined || outlet === undefined) return 0;
+  let highest = 0;
+  for (const point of [
+    ...context.study.steps.flatMap((s) => s.points),
+    ...context.study.states.flatMap((s) => s.variants.map((v) => v.point)),
+  ]) {
+    if (point.solved && point.lifting.includes(guard.component.id)) highest = Math.max(highest, point.pressures[outlet] ?? 0);
+  }
+  return highest;
+}
+
+export const A03: Rule = {
+  code: 'A03',
+  name: 'relief-above-rating',
+  title: 'Relief set above the rating of a part',
+  severity: 'error',
+  why: 'The part rated lowest gives way before the relief has the pressure in hand.',
+  ground: 'ISO 4413, components within their rated limits',
+  mend: 'Set the relief lower, or choose parts with a higher rating.',
+  needs: 'topology',
+  page: `
+Setting plus tolerance plus override at the flow of all pumps that reach the relief (plus the pressure behind it, once that is computed) is compared with
+the lowest \`rated\` of ports and lines that stand at its pressure: back to the pumps, and on through directional valves, checks and shut-offs
+to the actuators.
+
+Stays clean: parts behind a reducing valve, or with a relief of their own that is set lower; return and drain lines; parts without a declared
+rating (nothing is guessed).`,
+  detect(context) {
+    const graph = graphOf(context.circuit);
+    return guardsOf(graph).guards.flatMap((guard) => (guard.what === 'relief' ? judge(context, graph, guard) : []));
+  },
+};

@@ -1,0 +1,113 @@
+/** A04: the setting that limits the pressure is below what a step needs. */
+import type { ActuatorPoint, LoadValue, Point } from '@oilway/circuit';
+import { graphOf, type Graph } from '../graph/graph.ts';
+import { tell } from '../finding.ts';
+import type { Finding, Rule, RuleContext } from '../rule.ts';
+import { round } from '../fixes/values.ts';
+import { against, show } from '../words.ts';
+import { type Limit, limitOfNet } from './limits.ts';
+import { relatedTo } from './pump-guard.ts';
+
+/** Common practice: a relief stands at least 5 % above what the work needs. */
+const MARGIN = 1.05;
+
+/** True where the actuator presses on a part that pushes back along a table: it stands where the relief lets it, on purpose. */
+function pressesOnPart(graph: Graph, a: ActuatorPoint): boolean {
+  const against = a.direction > 0 ? ['inward', 'backward'] : ['outward', 'forward'];
+  return graph.circuit.loads.some(
+    (load) =>
+      load.actuators.includes(a.id) &&
+      load.properties.some(
+        (p) => p.value.type === 'load' && against.includes(p.name) && p.value.table !== undefined && within(p.value, a.position),
+      ),
+  );
+}
+
+function within(value: LoadValue, position: number): boolean {
+  const table = value.table ?? [];
+  return table.some((knot, i) => {
+    const next = table[i + 1];
+    return (
+      next !== undefined &&
+      Math.max(Math.abs(knot.value.si), Math.abs(next.value.si)) > 0 &&
+      position >= knot.at.si &&
+      position <= next.at.si
+    );
+  });
+}
+
+interface Short {
+  readonly step: string;
+  readonly point: Point;
+  readonly actuator: ActuatorPoint;
+  readonly limit: Limit;
+}
+
+function shortfalls(context: RuleContext, graph: Graph): Short[] {
+  const found: Short[] = [];
+  for (const step of context.study?.steps ?? []) {
+    for (const point of step.points) {
+      if (!point.solved) continue;
+      for (const actuator of point.actuators) {
+        const { available, needed, direction } = actuator;
+        if (direction === 0 || available === undefined || available <= 0 || needed <= 0 || actuator.atStop !== undefined) continue;
+        if (available >= needed * MARGIN || pressesOnPart(graph, actuator) || actuator.limitedBy.some((l) => l.words.startsWith('no path')))
+          continue;
+        const kind = graph.component(actuator.id)?.kind;
+        const port = kind === 'cylinder' ? (direction > 0 ? 'cap' : 'rod') : direction > 0 ? 'A' : 'B';
+        const net = graph.netAt(actuator.id, port);
+        const limit = net === undefined ? undefined : limitOfNet(graph, net.id);
+        if (limit !== undefined) found.push({ step: step.id, point, actuator, limit });
+      }
+    }
+  }
+  return found;
+}
+
+function say(context: RuleContext, graph: Graph, short: Short): Finding {
+  const { actuator, limit, point, step } = short;
+  const { circuit } = context;
+  const dimension = graph.component(actuator.id)?.kind === 'cylinder' ? 'force' : 'torque';
+  const { value, bound } = against(circuit, actuator.available ?? 0, actuator.needed, dimension);
+  const enough = round(circuit, (limit.set * MARGIN * actuator.needed) / (actuator.available ?? 1), 'pressure', 'up');
+  const stalls = actuator.shortBy !== undefined || (actuator.available ?? 0) < actuator.needed;
+  const at = dimension === 'force' ? ` at ${show(circuit, actuator.position, 'length')}` : '';
+  const property = limit.by.properties.find((p) => p.name === (limit.by.kind === 'pump' ? 'compensator' : 'set'));
+  return tell(A04, {
+    what: `${limit.by.id} (${show(circuit, limit.set, 'pressure', limit.unit)}) is set too low for ${step}: ${actuator.id} ${stalls ? 'stalls' : 'has hardly anything to spare'}${at}, it presses with ${value} of ${bound} needed. It takes about ${enough.text}.`,
+    origin: property?.origin ?? limit.by.nameOrigin,
+    place: limit.by.id,
+    state: step,
+    related: [
+      ...(graph.component(actuator.id) === undefined
+        ? []
+        : [relatedTo(graph.component(actuator.id)!, `${actuator.id} in ${step}, ${point.label}`)]),
+    ],
+  });
+}
+
+export const A04: Rule = {
+  code: 'A04',
+  name: 'relief-below-need',
+  title: 'Relief set below what the work needs',
+  severity: 'warning',
+  why: 'The actuator stalls under load while the pump heats the oil over the relief.',
+  ground: 'force balance p x A; margin of the relief over the working pressure, fluid power textbooks and common practice',
+  mend: 'Raise the setting (within the ratings) or choose a larger cylinder.',
+  needs: 'computed',
+  page: `
+At every steady point of every step the force the actuator would press with, if it were held, is compared with loads plus friction. Less than 5 % more is told
+at the setting that limits the pressure there: the relief, the compensator, or the reducing valve in between; the worst point of the worst step.
+
+Stays clean: a clamp or press that stands on its part (a table of force over position) at the setting on purpose; end stops; steps in which the way is closed.`,
+  detect(context) {
+    const graph = graphOf(context.circuit);
+    const worst = new Map<string, Short>();
+    const lack = (s: Short) => (s.actuator.available ?? 0) / s.actuator.needed;
+    for (const short of shortfalls(context, graph)) {
+      const known = worst.get(short.limit.by.id);
+      if (known === undefined || lack(short) < lack(known)) worst.set(short.limit.by.id, short);
+    }
+    return [...worst.values()].map((short) => say(context, graph, short));
+  },
+};

@@ -1,0 +1,34 @@
+/** Figures and places as people read them, in the units of the circuit. */
+import type { Circuit } from '@oilway/circuit';
+import { type Dimension, format, formatAgainst } from '@oilway/quantity';
+
+/** `183 bar`, `0.72 kN`: SI in, the circuit's units out. `unit`: of the one setting the value comes from. */
+export function show(circuit: Circuit, si: number, dimension: Dimension, unit?: string): string {
+  return format(si, dimension, options(circuit, unit));
+}
+
+/** A value and its bound with enough digits to tell them apart. */
+export function against(
+  circuit: Circuit,
+  si: number,
+  bound: number,
+  dimension: Dimension,
+  unit?: string,
+): { readonly value: string; readonly bound: string } {
+  return formatAgainst(si, bound, dimension, options(circuit, unit));
+}
+
+function options(circuit: Circuit, unit: string | undefined) {
+  return { display: circuit.display, units: circuit.units, ...(unit === undefined ? {} : { unit }) };
+}
+
+/** "P1", "P1 and P2", "P1, P2 and P3". */
+export function list(items: readonly string[], word = 'and'): string {
+  if (items.length < 2) return items[0] ?? '';
+  return `${items.slice(0, -1).join(', ')} ${word} ${items[items.length - 1]}`;
+}
+
+/** First letter as a capital: sentences may begin with a component's name, which stays as written. */
+export function sentence(words: string): string {
+  return /^[a-z][a-z]/.test(words) ? words[0]!.toUpperCase() + words.slice(1) : words;
+}
