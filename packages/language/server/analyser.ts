@@ -4,7 +4,9 @@ import type { Finding } from '@oilway/rules';
 import type { Occurrence } from '../features/analysis.ts';
 
 export interface TextAnswer {
-  readonly circuit?: Circuit;
+  readonly circuit: Circuit;
+  /** False for a shelf: nothing in it runs, there is no study. */
+  readonly runs: boolean;
   /** Of the language itself: letters, words, names, units. */
   readonly language: readonly Finding[];
   /** Of the rules that need no figures. */
@@ -12,6 +14,8 @@ export interface TextAnswer {
   readonly occurrences: readonly Occurrence[];
   /** Addresses of the files it uses, those they use, and so on; missing ones too. */
   readonly uses: readonly string[];
+  /** An error of the tool itself, for the log. */
+  readonly failed?: string;
 }
 
 export interface Analyser {

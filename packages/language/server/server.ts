@@ -306,11 +306,11 @@ export function startServer(connection: Connection, host: Host, analyser: Analys
   });
   connection.onDocumentFormatting(({ textDocument }) => {
     const analysis = session?.analysis(textDocument.uri);
-    return analysis ? formatEdits(analysis) : [];
+    return analysis ? formatEdits(analysis, analysis.text) : [];
   });
   connection.onDocumentRangeFormatting(({ textDocument, range }) => {
     const analysis = session?.analysis(textDocument.uri);
-    return analysis ? formatEdits(analysis, { start: analysis.lines.offset(range.start), end: analysis.lines.offset(range.end) }) : [];
+    return analysis ? formatEdits(analysis, analysis.text, { start: analysis.lines.offset(range.start), end: analysis.lines.offset(range.end) }) : [];
   });
   connection.onRequest(SemanticTokensRequest.type, ({ textDocument }) => {
     const analysis = session?.analysis(textDocument.uri);

@@ -158,6 +158,7 @@ export class Session {
       return text;
     });
     document.analysis = undefined;
+    if (document.answer.failed) this.#parts.log(`${uri}: ${document.answer.failed}`);
     for (const other of missing) this.#read(other);
     // What is still being read would show as missing: the findings wait for it, a moment.
     if (missing.size === 0) this.#publish(document);
@@ -179,7 +180,7 @@ export class Session {
   }
 
   #study(document: Document, urgent: boolean): void {
-    const circuit = document.answer?.circuit;
+    const circuit = document.answer?.runs ? document.answer.circuit : undefined;
     if (!this.#compute || !circuit) {
       this.#studies.drop(document.uri);
       if (!circuit) {

@@ -1,0 +1,31 @@
+/** Bundles the server and its study worker as the extension ships them, into a folder of this run. */
+import { mkdtempSync, mkdirSync } from 'node:fs';
+import { join } from 'node:path';
+import { fileURLToPath } from 'node:url';
+import { build } from 'esbuild';
+
+const root = fileURLToPath(new URL('../../..', import.meta.url));
+
+/** Folder with `server.cjs` and `study-worker.cjs`. */
+export async function bundleServer(): Promise<string> {
+  const output = join(root, 'tests/output');
+  mkdirSync(output, { recursive: true });
+  const folder = mkdtempSync(join(output, 'server-'));
+  for (const [from, to] of [
+    ['node.ts', 'server.cjs'],
+    ['study-worker-node.ts', 'study-worker.cjs'],
+  ] as const) {
+    await build({
+      entryPoints: [join(root, 'packages/language/server', from)],
+      outfile: join(folder, to),
+      bundle: true,
+      platform: 'node',
+      format: 'cjs',
+      target: 'es2022',
+      logLevel: 'silent',
+      define: { 'import.meta.url': '__bundleUrl' },
+      banner: { js: "const __bundleUrl = require('node:url').pathToFileURL(__filename).href;" },
+    });
+  }
+  return folder;
+}
