@@ -1,6 +1,6 @@
 /** The real command as a child process on real files: streams, exit status, shapes. */
 import { spawnSync } from 'node:child_process';
-import { chmodSync, mkdirSync, mkdtempSync, readdirSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
+import { mkdirSync, mkdtempSync, readdirSync, readFileSync, rmSync, symlinkSync, writeFileSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { fileURLToPath } from 'node:url';
@@ -113,10 +113,9 @@ describe('what cannot be read', () => {
     write('latin.oilway', new Uint8Array([0x22, 0xe4, 0x22]));
     refused(['check', 'latin.oilway'], /not UTF-8/);
   });
-  it.skipIf(process.getuid?.() === 0)('a file without permission', () => {
-    const path = write('locked.oilway', 'circuit A');
-    chmodSync(path, 0o000);
-    refused(['check', 'locked.oilway'], /permission denied/);
+  it('a link that leads back to itself', () => {
+    symlinkSync('loop.oilway', join(folder, 'loop.oilway'));
+    refused(['check', 'loop.oilway'], /leads back to itself/);
   });
   it('a missing file beside a good one: the good one is checked, the failure is not lost', () => {
     write('good.oilway', sample('01-table.oilway'));

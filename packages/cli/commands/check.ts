@@ -79,6 +79,7 @@ export async function check(options: CheckOptions, output: Output, paint: Paint)
     }
     output.out(summary(totals));
   }
-  if (gathered.unusable.length > 0) return 2;
+  for (const failure of session.failures) output.err(`oilway: internal error, please report it: ${failure}`);
+  if (gathered.unusable.length > 0 || session.failures.length > 0) return 2;
   return totals.errors + totals.warnings > 0 ? 1 : 0;
 }

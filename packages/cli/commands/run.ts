@@ -4,7 +4,7 @@ import { gather } from '../files.ts';
 import { open } from '../service.ts';
 import type { Paint } from '../text/colour.ts';
 import { courseCsv, courseData, turning } from './course.ts';
-import { cycleLines, dutyLines, headLines, requirementLines, restLines } from './steps.ts';
+import { coilLines, cycleLines, dutyLines, headLines, requirementLines, restLines } from './steps.ts';
 
 export interface RunOptions {
   readonly path: string;
@@ -22,7 +22,9 @@ export async function run(options: RunOptions, output: Output, paint: Paint): Pr
   const unusable = gathered.unusable[0];
   if (unusable !== undefined) return refuse(`${unusable.path} ${unusable.why}`);
   if (gathered.files.length > 1) return refuse(`${options.path} holds ${gathered.files.length} circuits: name one file to run`);
-  const { opened } = await open(gathered.files);
+  const { opened, failures } = await open(gathered.files);
+  for (const failure of failures) output.err(`oilway: internal error, please report it: ${failure}`);
+  if (failures.length > 0) return 2;
   const one = opened[0];
   if (one === undefined) return refuse(`${options.path} cannot be run`);
   const { circuit, study, file } = one;
@@ -42,6 +44,7 @@ export async function run(options: RunOptions, output: Output, paint: Paint): Pr
     const text = file.text;
     for (const line of headLines(circuit, study, paint)) output.out(line);
     for (const cycle of cycles) for (const line of cycleLines(cycle, circuit, study, paint)) output.out(line);
+    for (const line of coilLines(circuit, study, paint)) output.out(line);
     for (const line of requirementLines(circuit, study, text, paint)) output.out(line);
     for (const line of dutyLines(cycles, circuit, study)) output.out(line);
     for (const line of restLines(study)) output.out(line);

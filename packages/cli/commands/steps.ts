@@ -72,22 +72,21 @@ function peakOf(step: StepResult, show: Show): string {
   return best === undefined ? '' : `${show(best[1], 'pressure')} ${best[0]}`;
 }
 
-export function cycleLines(cycle: CycleResult, circuit: Circuit, study: Study, paint: Paint): string[] {
-  const show = shower(circuit);
+/** One line a step and moving actuator. */
+function stepRows(steps: readonly StepResult[], cycle: string, circuit: Circuit, show: Show): string[][] {
   const turns = turning(circuit.components);
-  const steps = study.steps.filter((step) => step.cycle === cycle.id);
-  const ids = [
-    ...new Set(
-      steps.flatMap((step) => [...step.points.flatMap((point) => point.actuators.map((one) => one.id)), ...Object.keys(step.speeds)]),
-    ),
+  const named = (step: StepResult) => [
+    ...step.points.flatMap((point) => point.actuators.map((one) => one.id)),
+    ...Object.keys(step.speeds),
   ];
+  const ids = [...new Set(steps.flatMap(named))];
   const rows: string[][] = [];
   for (const step of steps) {
     const moving = ids.flatMap((id) => actuatorRow(id, step, turns(id), show) ?? []);
     const first = [
-      step.id.startsWith(`${cycle.id}.`) ? step.id.slice(cycle.id.length + 1) : step.id,
+      step.id.startsWith(`${cycle}.`) ? step.id.slice(cycle.length + 1) : step.id,
       step.entered === undefined ? '' : show(step.entered, 'time'),
-      step.time === undefined ? 'does not end' : show(step.time, 'time'),
+      step.time === undefined ? (cycle === '' ? '' : 'does not end') : show(step.time, 'time'),
     ];
     const list: readonly Partial<Row>[] = moving.length === 0 ? [{}] : moving;
     list.forEach((row, i) => {
@@ -102,16 +101,35 @@ export function cycleLines(cycle: CycleResult, circuit: Circuit, study: Study, p
       ]);
     });
   }
-  const columns = [
-    { title: 'step' },
-    { title: 'entered', align: 'right' as const },
-    { title: 'time', align: 'right' as const },
-    { title: 'motion' },
-    { title: 'speed', align: 'right' as const },
-    { title: 'force', align: 'right' as const },
-    { title: 'peak pressure' },
-    { title: 'limited by' },
+  return rows;
+}
+
+const STEP_COLUMNS = [
+  { title: 'step' },
+  { title: 'entered', align: 'right' as const },
+  { title: 'time', align: 'right' as const },
+  { title: 'motion' },
+  { title: 'speed', align: 'right' as const },
+  { title: 'force', align: 'right' as const },
+  { title: 'peak pressure' },
+  { title: 'limited by' },
+];
+
+/** Where no cycle is declared: what each coil does alone. */
+export function coilLines(circuit: Circuit, study: Study, paint: Paint): string[] {
+  const steps = study.steps.filter((step) => step.cycle === '');
+  if (steps.length === 0) return [];
+  return [
+    '',
+    paint.strong('each coil alone (no cycle is declared)'),
+    ...table(STEP_COLUMNS, stepRows(steps, '', circuit, shower(circuit)), paint.strong),
   ];
+}
+
+export function cycleLines(cycle: CycleResult, circuit: Circuit, study: Study, paint: Paint): string[] {
+  const show = shower(circuit);
+  const steps = study.steps.filter((step) => step.cycle === cycle.id);
+  const rows = stepRows(steps, cycle.id, circuit, show);
   const time = cycle.time === undefined ? 'does not end' : show(cycle.time, 'time');
   const first =
     cycle.firstTime !== undefined && cycle.time !== undefined && show(cycle.firstTime, 'time') !== time
@@ -119,7 +137,7 @@ export function cycleLines(cycle: CycleResult, circuit: Circuit, study: Study, p
       : '';
   const settled = cycle.runs > 1 ? `, ${cycle.settled ? 'settled after' : 'not settled after'} ${plural(cycle.runs, 'run')}` : '';
   const faults = cycle.faults.map((fault) => paint.error(`  fault: ${fault.words}`));
-  return ['', paint.strong(`${cycle.mode} ${cycle.id}: ${time}${first}${settled}`), ...table(columns, rows, paint.strong), ...faults];
+  return ['', paint.strong(`${cycle.mode} ${cycle.id}: ${time}${first}${settled}`), ...table(STEP_COLUMNS, rows, paint.strong), ...faults];
 }
 
 function boundOf(requirement: Requirement): { readonly value: number; readonly dimension: Dimension; readonly words: string } | undefined {
