@@ -66,9 +66,11 @@ export function problemsOf(spec: NetworkSpec): CompileProblem[] {
   spec.elements.forEach((element, index) => {
     const law = lawOf(element, spec.actuators);
     if (law.nodes.some(bad)) problems.push({ element: index, message: `${element.type}: a node is not in the network` });
-    if (law.actuator >= spec.actuators.length) problems.push({ element: index, message: `${element.type}: its actuator is not in the network` });
+    if (law.actuator >= spec.actuators.length)
+      problems.push({ element: index, message: `${element.type}: its actuator is not in the network` });
     for (const [size, value] of Object.entries(element)) {
-      if (typeof value === 'number' && !Number.isFinite(value)) problems.push({ element: index, message: `${element.type}: ${size} is not a finite number` });
+      if (typeof value === 'number' && !Number.isFinite(value))
+        problems.push({ element: index, message: `${element.type}: ${size} is not a finite number` });
     }
   });
   spec.actuators.forEach((actuator, index) => {

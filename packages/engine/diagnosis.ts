@@ -68,7 +68,14 @@ export function diagnose(sys: System, result: Reported): EngineDiagnosis[] {
         });
       });
       const wants = kind === 'OVERPRESSURE' ? sources.filter(([, node]) => find(node) === root) : drawers(sys, result, root, find);
-      found.push({ kind, nodes: group, flow, closed: closedAround(root), sources: [...new Set(wants.map(([e]) => tagOf(e)))], actuators: pressing });
+      found.push({
+        kind,
+        nodes: group,
+        flow,
+        closed: closedAround(root),
+        sources: [...new Set(wants.map(([e]) => tagOf(e)))],
+        actuators: pressing,
+      });
     }
   }
   const fixed = determined(sys, result, find, sources);

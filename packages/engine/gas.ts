@@ -40,7 +40,9 @@ export function gasPressure(spec: GasSpec, oil: number, exponent = GAS_EXPONENT)
 /** Oil (L) in a charge at an absolute pressure (MPa); 0 below the precharge. */
 export function gasOil(spec: GasSpec, absolute: number, exponent = GAS_EXPONENT): number {
   if (absolute <= spec.precharge) return 0;
-  return spec.volume - (spec.curve ? curveVolume(spec.curve, absolute).volume : spec.volume * (spec.precharge / absolute) ** (1 / exponent));
+  return (
+    spec.volume - (spec.curve ? curveVolume(spec.curve, absolute).volume : spec.volume * (spec.precharge / absolute) ** (1 / exponent))
+  );
 }
 
 /** Oil and absolute pressure of a stated charge; undefined when it holds no oil. */

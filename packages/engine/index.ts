@@ -4,3 +4,4 @@ export { chargeOf, gasOil, gasPressure } from './gas.ts';
 export * from './network.ts';
 export * from './results.ts';
 export { solveSteady } from './steady.ts';
+export { Transient } from './transient.ts';

@@ -90,7 +90,14 @@ export class System {
     if (this.loads[a] === load) return;
     this.loads[a] = load;
     const own = this.net.knots[a]!;
-    this.knots[a] = load ? sortedKnots([...own, ...load.fixed.flatMap((t) => t.at), ...load.resistOut.flatMap((t) => t.at), ...load.resistIn.flatMap((t) => t.at)]) : own;
+    this.knots[a] = load
+      ? sortedKnots([
+          ...own,
+          ...load.fixed.flatMap((t) => t.at),
+          ...load.resistOut.flatMap((t) => t.at),
+          ...load.resistIn.flatMap((t) => t.at),
+        ])
+      : own;
     this.friction[a] = load?.friction ?? 0;
   }
 

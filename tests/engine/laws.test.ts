@@ -11,8 +11,37 @@ const specs: Record<string, ElementSpec> = {
   path: { type: 'path', tag: 0, a: 0, b: 1, k: 0.7, opening: 3 },
   check: { type: 'check', tag: 0, a: 0, b: 1, k: 0.7, crack: 0.05 },
   laminar: { type: 'laminar', tag: 0, a: 0, b: 1, g: 0.01, factor: 3 },
-  unloading: { type: 'piloted', tag: 0, a: 0, b: 1, k: 1, pilots: [{ node: 2, weight: 1 }, { node: 1, weight: -1 }], set: 0, band: 2, bit: 5, setWhenOn: 1, oneWay: false },
-  counterbalance: { type: 'piloted', tag: 0, a: 0, b: 1, k: 1, pilots: [{ node: 0, weight: 1 }, { node: 2, weight: 3 }, { node: 1, weight: -4 }], set: 0, band: 2, oneWay: true },
+  unloading: {
+    type: 'piloted',
+    tag: 0,
+    a: 0,
+    b: 1,
+    k: 1,
+    pilots: [
+      { node: 2, weight: 1 },
+      { node: 1, weight: -1 },
+    ],
+    set: 0,
+    band: 2,
+    bit: 5,
+    setWhenOn: 1,
+    oneWay: false,
+  },
+  counterbalance: {
+    type: 'piloted',
+    tag: 0,
+    a: 0,
+    b: 1,
+    k: 1,
+    pilots: [
+      { node: 0, weight: 1 },
+      { node: 2, weight: 3 },
+      { node: 1, weight: -4 },
+    ],
+    set: 0,
+    band: 2,
+    oneWay: true,
+  },
   relief: { type: 'relief', tag: 0, p: 0, t: 1, ref: 2, set: 0, vented: 0.4, override: 0.08, qN: 1.5, k: 2 },
   'remote relief': { type: 'relief', tag: 0, p: 0, t: 1, ref: 1, x: 2, set: 0, vented: 0.4, override: 0.08, qN: 1.5, k: 2 },
   regulator: { type: 'regulator', tag: 0, a: 0, b: 1, set: 4, needs: 0.6 },
@@ -21,8 +50,28 @@ const specs: Record<string, ElementSpec> = {
   cam: { type: 'camPath', tag: 0, a: 0, b: 1, k: 0.7, actuator: 0, at: [0.1, 0.2, 0.3], opening: [1, 0.6, 0] },
   cushion: { type: 'cushion', tag: 0, a: 0, b: 1, actuator: 0, end: 'extended', length: 0.3, kMin: 0.01, kFree: 1 },
   'fixed pump': { type: 'pump', tag: 0, s: 0, p: 1, qth: 1, leak: 0.003, running: 6 },
-  'compensated pump': { type: 'pump', tag: 0, s: 0, p: 1, l: 2, qth: 1, leak: 0.003, running: 6, compensator: { set: 0, band: 2, smallest: 0.2 } },
-  'sensing pump': { type: 'pump', tag: 0, s: 0, p: 1, qth: 1, leak: 0.003, running: 6, compensator: { set: 0, band: 2, smallest: 0, x: 3, xAdds: 2 }, sensing: { ls: 2, margin: 2 } },
+  'compensated pump': {
+    type: 'pump',
+    tag: 0,
+    s: 0,
+    p: 1,
+    l: 2,
+    qth: 1,
+    leak: 0.003,
+    running: 6,
+    compensator: { set: 0, band: 2, smallest: 0.2 },
+  },
+  'sensing pump': {
+    type: 'pump',
+    tag: 0,
+    s: 0,
+    p: 1,
+    qth: 1,
+    leak: 0.003,
+    running: 6,
+    compensator: { set: 0, band: 2, smallest: 0, x: 3, xAdds: 2 },
+    sensing: { ls: 2, margin: 2 },
+  },
   line: { type: 'line', tag: 0, a: 0, b: 1, bore: 0.012, length: 1.5, roughness: 2e-5, minor: 1.5, nu: 32e-6, rho: 870 },
   'gear divider': { type: 'gearDivider', tag: 0, p: 0, a: 1, b: 2, share: [1, 2], g: [0.001, 0.002], friction: 0.6, qN: 0.5 },
   'spool divider': { type: 'spoolDivider', tag: 0, p: 0, a: 1, b: 2, share: [1, 1], error: 0.05, drop: 0.6, qN: 0.5, combines: false },
@@ -41,9 +90,21 @@ function evaluate(law: Law, z: ArrayLike<number>, parameters: Float64Array, blen
 }
 
 /** Pressures near each other and far apart, so that blends and saturated ranges are both met. */
-const pressure = fc.oneof(fc.double({ min: -0.1, max: 35, noNaN: true }), fc.double({ min: 4.9, max: 5.6, noNaN: true }), fc.constantFrom(0, 5, 10));
+const pressure = fc.oneof(
+  fc.double({ min: -0.1, max: 35, noNaN: true }),
+  fc.double({ min: 4.9, max: 5.6, noNaN: true }),
+  fc.constantFrom(0, 5, 10),
+);
 const parameters = fc
-  .tuple(fc.double({ min: 0.5, max: 20, noNaN: true }), fc.double({ min: 0.5, max: 5, noNaN: true }), fc.double({ min: 0.05, max: 2, noNaN: true }), fc.double({ min: 0, max: 1, noNaN: true }), fc.double({ min: 0.01, max: 1, noNaN: true }), fc.constantFrom(0, 1), fc.constantFrom(0, 1))
+  .tuple(
+    fc.double({ min: 0.5, max: 20, noNaN: true }),
+    fc.double({ min: 0.5, max: 5, noNaN: true }),
+    fc.double({ min: 0.05, max: 2, noNaN: true }),
+    fc.double({ min: 0, max: 1, noNaN: true }),
+    fc.double({ min: 0.01, max: 1, noNaN: true }),
+    fc.constantFrom(0, 1),
+    fc.constantFrom(0, 1),
+  )
   .map((values) => Float64Array.from(values));
 
 describe.each(Object.entries(specs))('%s', (name, spec) => {
@@ -56,7 +117,11 @@ describe.each(Object.entries(specs))('%s', (name, spec) => {
     fc.double({ min: -2, max: 2, noNaN: true }),
     fc.double({ min: 0, max: 0.5, noNaN: true }),
   );
-  const inputsAt = ([p, own, x]: [number[], number, number]): number[] => [...p, ...(law.own ? [own] : []), ...(law.actuator >= 0 ? [x] : [])];
+  const inputsAt = ([p, own, x]: [number[], number, number]): number[] => [
+    ...p,
+    ...(law.own ? [own] : []),
+    ...(law.actuator >= 0 ? [x] : []),
+  ];
 
   it('has the derivatives of its own values', () => {
     fc.assert(
@@ -75,7 +140,9 @@ describe.each(Object.entries(specs))('%s', (name, spec) => {
             const ends = [low.gradient[o * inputs + i]!, gradient[o * inputs + i]!, high.gradient[o * inputs + i]!];
             const spread = Math.max(...ends) - Math.min(...ends);
             const size = Math.max(...ends.map(Math.abs), Math.abs(high.out[o]!) * 1e-3, 1e-3);
-            expect(Math.abs(difference - gradient[o * inputs + i]!), `output ${o} by input ${i}`).toBeLessThan(spread + 2e-4 * size + (1e-9 * Math.abs(high.out[o]!)) / step);
+            expect(Math.abs(difference - gradient[o * inputs + i]!), `output ${o} by input ${i}`).toBeLessThan(
+              spread + 2e-4 * size + (1e-9 * Math.abs(high.out[o]!)) / step,
+            );
           }
         }
       }),

@@ -15,7 +15,7 @@ export function churchill(re: number, rough: number): { f: number; slope: number
   const inside = seven + 0.27 * rough;
   const log = -2.457 * Math.log(inside);
   const a = log ** 16;
-  const aSlope = 16 * log ** 15 * (2.457 * 0.9 * seven) / (inside * re);
+  const aSlope = (16 * log ** 15 * (2.457 * 0.9 * seven)) / (inside * re);
   const b = (37530 / re) ** 16;
   const bSlope = (-16 * b) / re;
   const laminar = (8 / re) ** 12;

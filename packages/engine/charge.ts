@@ -1,0 +1,119 @@
+/** What a node stores over its pressure: constant storage, oil with air in lines and chambers, gas charges. */
+import type { Network } from './compile.ts';
+import { curveVolume } from './gas.ts';
+import type { GasSpec, OilSpec } from './network.ts';
+import { positive, positiveSlope } from './smooth.ts';
+import { ATMOSPHERE, GAS_EDGE } from './tolerances.ts';
+
+/** Absolute pressure below which the air law runs on as a straight line, MPa. */
+const THIN_AIR = 0.02;
+
+/**
+ * Compression of oil with free air from atmosphere to gauge p, as ln(V0/V), and its slope 1/K_e:
+ * V/V0 = a (p0/p)^(1/n) + (1 - a) exp(-(p - p0)/K), absolute pressures; 1/K_e = -V'/V.
+ */
+export function compression(oil: OilSpec, gauge: number): { value: number; slope: number } {
+  const absolute = gauge + ATMOSPHERE;
+  const at = absolute < THIN_AIR ? THIN_AIR : absolute;
+  const air = oil.air > 0 ? oil.air * (ATMOSPHERE / at) ** (1 / oil.exponent) : 0;
+  const liquid = (1 - oil.air) * Math.exp((ATMOSPHERE - at) / oil.bulk);
+  const volume = air + liquid;
+  const slope = (air / (oil.exponent * at) + liquid / oil.bulk) / volume;
+  return { value: -Math.log(volume) + (absolute - at) * slope, slope };
+}
+
+/** A gas charge with the base point from which p V^n holds. */
+export interface Charge {
+  readonly spec: GasSpec;
+  /** Absolute MPa and gas volume L of the base point. */
+  pressure: number;
+  volume: number;
+  exponent: number;
+}
+
+/** Oil (L) in a charge at node gauge pressure p and its slope. Zero up to where the gas fills its volume, rounded over a hundredth of that. */
+export function chargeOil(charge: Charge, gauge: number): { value: number; slope: number } {
+  const { spec } = charge;
+  const absolute = gauge - (spec.head ?? 0) + ATMOSPHERE;
+  const empty = spec.curve ? spec.precharge : charge.pressure * (charge.volume / spec.volume) ** charge.exponent;
+  const width = GAS_EDGE * empty;
+  const excess = positive(absolute - empty, width);
+  if (excess <= 0) return { value: 0, slope: 0 };
+  const at = empty + excess;
+  const by = positiveSlope(absolute - empty, width);
+  if (spec.curve) {
+    const { volume, slope } = curveVolume(spec.curve, at);
+    return { value: spec.volume - volume, slope: -slope * by };
+  }
+  const volume = spec.volume * (empty / at) ** (1 / charge.exponent);
+  return { value: spec.volume - volume, slope: (by * volume) / (charge.exponent * at) };
+}
+
+/** Storage of all free nodes. Volumes of chambers are set once a step (`setPositions`). */
+export class Storage {
+  private readonly net: Network;
+  private readonly constant: Float64Array;
+  private readonly dead: Float64Array;
+  /** Oil volume at each unknown now, L. */
+  private readonly volume: Float64Array;
+  readonly charges: Charge[];
+  private readonly chargesAt: (Charge[] | undefined)[];
+  value = 0;
+  slope = 0;
+
+  constructor(net: Network, charges: Charge[]) {
+    this.net = net;
+    this.constant = new Float64Array(net.free);
+    this.dead = new Float64Array(net.free);
+    this.volume = new Float64Array(net.free);
+    this.charges = charges;
+    this.chargesAt = new Array<Charge[] | undefined>(net.free).fill(undefined);
+    for (let i = 0; i < net.free; i++) {
+      const node = net.spec.nodes[net.nodeOf[i]!]!;
+      this.constant[i] = Math.max(node.storage, 1e-9);
+      this.dead[i] = node.volume ?? 0;
+    }
+    for (const charge of charges) {
+      const i = net.unknownOf[charge.spec.node]!;
+      if (i >= 0) (this.chargesAt[i] ??= []).push(charge);
+    }
+  }
+
+  /** Chamber volumes at these positions (areas in force from `area`), L. */
+  setPositions(x: Float64Array, area: Float64Array): void {
+    const { net, volume } = this;
+    if (!net.spec.oil) return;
+    volume.set(this.dead);
+    net.spec.actuators.forEach((actuator, a) => {
+      for (let c = net.chamberStart[a]!; c < net.chamberStart[a + 1]!; c++) {
+        const i = net.unknownOf[net.chamberNodes[c]!]!;
+        const size = area[c]!;
+        const left = size > 0 ? x[a]! - actuator.low : actuator.high - x[a]!;
+        // Motors (no stops) enclose no volume of their own here: the caller counts it as dead volume.
+        if (i >= 0 && Number.isFinite(left) && left > 0) volume[i]! += Math.abs(size) * left;
+      }
+    });
+  }
+
+  /** Stored volume (L) of an unknown at gauge pressure p, left in `value`, its slope in `slope`. */
+  at(i: number, p: number): void {
+    let value = this.constant[i]! * p;
+    let slope = this.constant[i]!;
+    const { oil } = this.net.spec;
+    if (oil && this.volume[i]! > 0) {
+      const pressed = compression(oil, p);
+      value += this.volume[i]! * pressed.value;
+      slope += this.volume[i]! * pressed.slope;
+    }
+    const charges = this.chargesAt[i];
+    if (charges) {
+      for (const charge of charges) {
+        const held = chargeOil(charge, p);
+        value += held.value;
+        slope += held.slope;
+      }
+    }
+    this.value = value;
+    this.slope = slope;
+  }
+}
