@@ -14,3 +14,4 @@ export { assemble } from './assembly/assemble.ts';
 export { areasOf, beginsAt, portOfSingle } from './kinds/cylinder-areas.ts';
 export { type Positions, positionsOf, type Side, sideOfCoil } from './kinds/directional-positions.ts';
 export { ratedAt } from './kinds/read.ts';
+export { study, type StudyOptions } from './study/run-study.ts';

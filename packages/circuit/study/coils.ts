@@ -1,8 +1,9 @@
 /** What a live coil does: where its valve then stands, or which setting it commands. */
 import type { Stand } from '../assembly/machine.ts';
+import { positionsOf as valvePositions, type Side, sideOfCoil } from '../kinds/directional-positions.ts';
 import type { Command, Component } from '../model/circuit.ts';
 import type { Lookup } from './lookup.ts';
-import { coilsOf, flag, flowAt, si, valueOf, word } from './read.ts';
+import { flag, flowAt, si } from './read.ts';
 
 /** A coil as live: 1 = fully; a proportional command as a signed ratio; a setting commanded directly in SI. */
 export interface Live {
@@ -13,8 +14,7 @@ export interface Live {
   readonly setting?: number;
 }
 
-export const POSITIONS = ['a', 'b', 'centre'] as const;
-export type Position = (typeof POSITIONS)[number];
+export type Position = Side;
 
 /** The value a command ends with (its ramp over). */
 export function finalLive(command: Command): Live {
@@ -37,21 +37,15 @@ export function sameLive(one: Live, other: Live): boolean {
 
 /** Positions a directional valve has. */
 export function positionsOf(valve: Component): readonly Position[] {
-  return valve.shape?.positions === 3 ? ['a', 'centre', 'b'] : ['a', 'b'];
+  return valvePositions(valve).sides;
 }
-
 export function isDetent(valve: Component): boolean {
-  return valve.kind === 'directional' && flag(valve, 'detent');
+  return valve.kind === 'directional' && valvePositions(valve).detent;
 }
-
 /** The sprung position; undefined for a detent. */
 export function sprung(valve: Component): Position | undefined {
-  const spring = word(valve, 'spring');
-  if (spring === 'a' || spring === 'b' || spring === 'centre') return spring;
-  const normally = word(valve, 'normally');
-  if (normally === 'open') return 'a';
-  if (normally === 'closed') return 'b';
-  return undefined;
+  const { rest, detent } = valvePositions(valve);
+  return detent ? undefined : rest;
 }
 
 /** Words for a stand: 2/2 valves are open or closed. */
@@ -63,12 +57,7 @@ export function standWords(valve: Component, stand: Stand): string {
   return stand.opening === undefined ? stand.position : `${stand.position} at ${percent(stand.opening)}`;
 }
 function valveJoins(valve: Component, position: Position): boolean {
-  const value = valveProperty(valve, position);
-  return value ? value.length > 0 : position === 'a';
-}
-function valveProperty(valve: Component, position: Position): readonly unknown[] | undefined {
-  const value = valueOf(valve, position);
-  return value?.type === 'position' ? value.paths : undefined;
+  return valvePositions(valve).paths[position].length > 0;
 }
 function percent(ratio: number): string {
   return `${Math.round(ratio * 1000) / 10} %`;
@@ -81,12 +70,8 @@ export function standBy(at: Lookup, live: Live): { readonly valve: string; reado
   if (!coil || valve?.kind !== 'directional') return undefined;
   const ratio = live.ratio ?? 1;
   const rest = sprung(valve);
-  const two = valve.shape?.positions === 2;
-  let position: Position;
-  if (two && word(valve, 'normally') !== undefined) position = rest === 'a' ? 'b' : 'a';
-  else if (coil.side) position = coil.side;
-  else if (two) position = rest === 'a' ? 'b' : 'a';
-  else position = ratio < 0 ? 'b' : 'a';
+  // A single signed command: + is a, - is b.
+  const position: Position = coil.side === undefined && ratio < 0 ? 'b' : sideOfCoil(valve, coil.side);
   if (!flag(valve, 'proportional')) return { valve: valve.id, stand: { position } };
   if (Math.abs(ratio) < 1e-12) return { valve: valve.id, stand: { position: rest ?? 'centre' } };
   return { valve: valve.id, stand: { position, opening: Math.min(1, Math.abs(ratio)) } };
@@ -102,11 +87,7 @@ export function settingBy(at: Lookup, live: Live): number | undefined {
   return set === undefined ? undefined : set * Math.abs(live.ratio ?? 1);
 }
 
-/** Every coil at its greatest command. */
+/** A coil at its greatest command. */
 export function greatest(coil: string): Live {
   return { coil, ratio: 1 };
-}
-
-export function hasCoils(component: Component): boolean {
-  return coilsOf(component).length > 0;
 }

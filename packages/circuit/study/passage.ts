@@ -1,8 +1,9 @@
 /** Which ports of a component are joined by open oil in a solution. */
 import type { Solution } from '../assembly/machine.ts';
+import { positionsOf } from '../kinds/directional-positions.ts';
 import type { Component } from '../model/circuit.ts';
 import type { Lookup } from './lookup.ts';
-import { flag, valueOf, word } from './read.ts';
+import { flag } from './read.ts';
 
 type Pair = readonly [string, string];
 
@@ -47,25 +48,7 @@ export function openPairs(at: Lookup, component: Component, solution: Solution):
   }
 }
 
-const FOUR: Readonly<Record<string, readonly Pair[]>> = {
-  a: [['P', 'A'], ['B', 'T']],
-  b: [['P', 'B'], ['A', 'T']],
-  closed: [],
-  open: [['P', 'T'], ['P', 'A'], ['P', 'B']],
-  tandem: [['P', 'T']],
-  float: [['A', 'T'], ['B', 'T']],
-};
-
-/** Paths of a position as declared, else those usual for the shape. */
+/** Paths of a position. */
 export function pathsIn(valve: Component, position: 'a' | 'b' | 'centre'): readonly Pair[] {
-  const written = valueOf(valve, position);
-  if (written?.type === 'position') {
-    if (written.paths.length > 0 || written.word === undefined) return written.paths.map((one) => [one.from, one.to] as const);
-    return FOUR[written.word] ?? [];
-  }
-  if (position === 'centre') return FOUR[word(valve, 'centre') ?? 'closed'] ?? [];
-  const ports = valve.shape?.ports ?? 4;
-  if (ports === 2) return position === 'a' ? [['P', 'A']] : [];
-  if (ports === 3) return position === 'a' ? [['P', 'A']] : [['A', 'T']];
-  return FOUR[position] ?? [];
+  return positionsOf(valve).paths[position].map((one) => [one.from, one.to] as const);
 }

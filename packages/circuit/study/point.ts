@@ -1,10 +1,11 @@
 /** A solution as a point of the study: what is asked for of it, actuator by actuator. */
 import type { Body, BodyLoad, Setting, Solution } from '../assembly/machine.ts';
+import { areasOf, DEFAULT_SEAL } from '../kinds/cylinder-areas.ts';
 import { standWords } from './coils.ts';
 import { limiters } from './limits.ts';
 import { needed } from './loads.ts';
 import { moves } from './motion.ts';
-import { flag, reference, si } from './read.ts';
+import { reference, si } from './read.ts';
 import type { Plant } from './scene.ts';
 import type { ActuatorPoint, Point } from './study.ts';
 
@@ -103,15 +104,12 @@ function ownForce(plant: Plant, id: string, solution: Solution, velocity: number
   return pressing - Math.sign(velocity) * areas.sealFriction;
 }
 
-/** Areas of a cylinder, m2, and its seal friction, N (3 bar on the bore unless said). */
+/** Areas of a cylinder, m2, and its seal friction, N. */
 export function cylinderAreas(plant: Plant, id: string): { readonly cap: number; readonly rod: number; readonly sealFriction: number } {
   const cylinder = plant.at.component(id);
-  if (!cylinder) return { cap: 0, rod: 0, sealFriction: 0 };
-  const bore = si(cylinder, 'bore') ?? 0;
-  const full = (Math.PI / 4) * bore * bore;
-  const rod = si(cylinder, 'rod');
-  const annulus = rod === undefined ? 0 : full - (Math.PI / 4) * rod * rod;
-  return { cap: flag(cylinder, 'through') ? annulus : full, rod: annulus, sealFriction: (si(cylinder, 'seal') ?? 3e5) * full };
+  const areas = cylinder ? areasOf(cylinder) : undefined;
+  if (!cylinder || !areas) return { cap: 0, rod: 0, sealFriction: 0 };
+  return { cap: areas.cap ?? 0, rod: areas.rod ?? 0, sealFriction: (si(cylinder, 'seal') ?? DEFAULT_SEAL) * areas.bore };
 }
 
 /** Drive of a pump. */

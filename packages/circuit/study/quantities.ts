@@ -1,5 +1,6 @@
 /** What a switch, a sensor or a condition looks at, and its value in a solution. */
 import type { Body, Solution, Watch } from '../assembly/machine.ts';
+import { areasOf } from '../kinds/cylinder-areas.ts';
 import type { Component } from '../model/circuit.ts';
 import type { Lookup } from './lookup.ts';
 import { flag, range, reference, si } from './read.ts';
@@ -114,14 +115,9 @@ export function level(scene: Scene, reservoir: string, solution: Solution): numb
 
 /** Oil a cylinder takes from the reservoir per metre of extension: the area of its rod, m2. */
 function rodArea(cylinder: Component | undefined): number {
-  if (cylinder?.kind !== 'cylinder' || flag(cylinder, 'through')) return 0;
-  const bore = si(cylinder, 'bore') ?? 0;
-  const rod = si(cylinder, 'rod');
-  const single = cylinder.properties.find((one) => one.name === 'single')?.value;
-  const capOnly = rod === undefined || (single?.type === 'word' && single.word === 'cap');
-  if (capOnly) return (Math.PI / 4) * bore * bore;
-  if (single?.type === 'word' && single.word === 'rod') return -(Math.PI / 4) * (bore * bore - rod * rod);
-  return (Math.PI / 4) * rod * rod;
+  if (cylinder?.kind !== 'cylinder') return 0;
+  const areas = areasOf(cylinder);
+  return areas ? (areas.cap ?? 0) - (areas.rod ?? 0) : 0;
 }
 
 /** A watch on a source; undefined where a run cannot watch it. */

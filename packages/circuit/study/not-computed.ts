@@ -1,0 +1,47 @@
+/** What depends on something unknown: nets reached from a component that was taken out without passing a closed valve. */
+import type { Solution } from '../assembly/machine.ts';
+import { openPairs, pathsIn } from './passage.ts';
+import type { Plant } from './scene.ts';
+import type { Point } from './study.ts';
+
+/** The point with every net (and the components on it) marked whose figures rest on something unknown. */
+export function spread(plant: Plant, point: Point): Point {
+  const marked = Object.entries(plant.machine.notComputed);
+  const start = marked.filter(([id]) => plant.at.net(id) !== undefined);
+  if (start.length === 0) return point;
+  const reasons: Record<string, string> = Object.fromEntries(marked);
+  const picture = { stands: standsOf(plant, point), flows: point.flows, openings: point.openings } as unknown as Solution;
+  const queue = start.map(([id]) => id);
+  for (let net = queue.pop(); net !== undefined; net = queue.pop()) {
+    const joined = plant.at.net(net);
+    const why = reasons[net];
+    if (!joined || joined.reservoir !== undefined || why === undefined) continue;
+    for (const { component, port } of joined.ports) {
+      const part = plant.at.component(component);
+      if (!part || reasons[component] !== undefined) continue;
+      if (['cylinder', 'motor', 'rotary'].includes(part.kind)) {
+        reasons[component] = why;
+        continue;
+      }
+      for (const pair of openPairs(plant.at, part, picture)) {
+        if (!pair.includes(port)) continue;
+        const other = plant.at.netOf(component, pair[0] === port ? pair[1] : pair[0]);
+        if (other === undefined || reasons[other] !== undefined) continue;
+        reasons[other] = why;
+        queue.push(other);
+      }
+    }
+  }
+  return { ...point, notComputed: reasons };
+}
+
+function standsOf(plant: Plant, point: Point): Solution['stands'] {
+  const stands: Record<string, Solution['stands'][string]> = {};
+  for (const [id, words] of Object.entries(point.positions)) {
+    const name = words.split(' ')[0];
+    const valve = plant.at.component(id);
+    if (name === 'a' || name === 'b' || name === 'centre') stands[id] = { position: name };
+    else if (valve) stands[id] = { position: (['a', 'b'] as const).find((side) => pathsIn(valve, side).length > 0 === (name === 'open')) ?? 'a' };
+  }
+  return stands;
+}
