@@ -197,8 +197,9 @@ describe('explain, help, version, mistakes', () => {
     const { status, out } = oilway(['explain', 'a01']);
     expect(status).toBe(0);
     expect(out).toMatch(/^A01 /);
-    expect(out).toMatch(/why: +\w/);
-    expect(out).toMatch(/ground: +\w/);
+    expect(out).toMatch(/Published ground: \w/);
+    expect(out).toMatch(/Mend: \w/);
+    expect(out).toContain('How it is decided');
   });
   it('lists all rules without a code', () => {
     const rules = readdirSync(join(ROOT, 'packages/rules/rules')).filter((name) => /^[A-Z]\d\d-/.test(name));
@@ -206,10 +207,20 @@ describe('explain, help, version, mistakes', () => {
     expect(status).toBe(0);
     for (const name of rules) expect(out, name).toMatch(new RegExp(`^${name.slice(0, 3)} `, 'm'));
   });
-  it('says that there is no such rule', () => {
+  it('explains every code that the notation itself gives', () => {
+    const folder = join(ROOT, 'packages/language');
+    const sources = ['parse', 'resolve'].flatMap((part) =>
+      readdirSync(join(folder, part)).map((name) => readFileSync(join(folder, part, name), 'utf8')),
+    );
+    const codes = new Set(sources.flatMap((source) => [...source.matchAll(/code: '([A-Z]+)'/g)].map(([, code = '']) => code)));
+    expect(codes.size).toBeGreaterThan(3);
+    const { out } = oilway(['explain']);
+    for (const code of codes) expect(out, code).toMatch(new RegExp(`^${code} `, 'm'));
+  });
+  it('says that there is no such code', () => {
     const { status, err } = oilway(['explain', 'Q99']);
     expect(status).toBe(2);
-    expect(err).toContain('there is no rule Q99');
+    expect(err).toContain('there is no code Q99');
   });
   it('helps with examples', () => {
     const { status, out } = oilway(['--help']);
