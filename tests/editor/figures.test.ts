@@ -19,7 +19,7 @@ const figures = (text: string, unit: string): number[] =>
 it('hovering the cylinder reads speed and force by step', async (context) => {
   await inEditor(context, TWO_PUMP, async ({ editor, show }) => {
     await editor.computed();
-    const said = await editor.hover(editor.word(/^cylinder/, 'C1'), /mm\/s/);
+    const said = await editor.hover(/^cylinder/, 'C1', /mm\/s/);
     await show('hover');
     expect(said).toMatch(/Out/);
     const speeds = figures(said, 'mm/s');

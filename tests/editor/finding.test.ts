@@ -48,8 +48,8 @@ it('a missing check between the pumps is underlined, told and mended by its quic
     expect(told).toMatch(/P1|P2|UV1/);
     await show('finding');
 
-    // F8 and a double click lead to the place; the cursor then stands where the fix is offered.
-    await row.dblclick();
+    // A double click leads to the place; the cursor then stands where the fix is offered.
+    await editor.goToProblem(row);
     const fixes = await editor.fixes();
     const fix = fixes.find((title) => /check/i.test(title));
     expect(fix, fixes.join(' | ')).toBeDefined();
@@ -58,7 +58,6 @@ it('a missing check between the pumps is underlined, told and mended by its quic
     await rows.filter({ hasText: 'B01' }).first().waitFor({ state: 'detached' });
     await show('mended');
     await editor.save();
-    expect(saved()).not.toBe(TWO_PUMP);
     expect(saved()).toMatch(/^working\s.*\bCV\w+\b/m);
   });
 });

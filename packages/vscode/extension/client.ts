@@ -17,6 +17,7 @@ export function clientOptions(output: vscode.LogOutputChannel, more: Record<stri
       configurationSection: LANGUAGE,
       fileEvents: vscode.workspace.createFileSystemWatcher('**/*.oilway'),
     },
-    initializationOptions: { settings: vscode.workspace.getConfiguration(LANGUAGE), ...more },
+    // Asked for anew at each start. Plain data: what the editor hands out has functions in it, which no worker takes.
+    initializationOptions: () => ({ settings: JSON.parse(JSON.stringify(vscode.workspace.getConfiguration(LANGUAGE))), ...more }),
   };
 }

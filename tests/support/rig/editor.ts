@@ -77,35 +77,53 @@ export class Editor {
     await this.page.locator('.tab.dirty').waitFor({ state: 'detached' });
   }
 
-  /** Text of the hover over a word of a line (the nth occurrence in it), once it contains what is awaited. */
-  async hover(word: Locator, awaited: RegExp): Promise<string> {
+  /** Where a word stands on the line that starts with `lineStart`, as the editor draws it, in page pixels. */
+  async place(lineStart: RegExp, word: string): Promise<{ readonly x: number; readonly y: number }> {
+    const line = this.lines.filter({ hasText: lineStart }).first();
+    await line.waitFor();
+    const place = await line.evaluate((drawn, wanted) => {
+      const walk = document.createTreeWalker(drawn, NodeFilter.SHOW_TEXT);
+      const parts: { node: Node; from: number }[] = [];
+      let text = '';
+      for (let node = walk.nextNode(); node; node = walk.nextNode()) {
+        parts.push({ node, from: text.length });
+        text += node.textContent ?? '';
+      }
+      const at = text.search(new RegExp(`\\b${wanted}\\b`));
+      const part = parts.filter(({ from }) => from <= at).at(-1);
+      if (at < 0 || !part) return undefined;
+      const range = document.createRange();
+      range.setStart(part.node, at - part.from);
+      range.setEnd(part.node, at - part.from + 1);
+      const box = range.getBoundingClientRect();
+      return { x: box.left + box.width / 2 + 2, y: box.top + box.height / 2 };
+    }, word);
+    if (!place) throw new Error(`There is no ${word} on that line.`);
+    return place;
+  }
+
+  /** Rests the mouse on a word until its hover says what is awaited; returns all it says. */
+  async hover(lineStart: RegExp, word: string, awaited: RegExp): Promise<string> {
     const hover = this.page.locator('.monaco-hover:not(.hidden) .hover-contents');
-    const until = Date.now() + STEP;
     let seen = '';
-    while (Date.now() < until) {
+    for (let attempt = 0; attempt < 5; attempt++) {
       await this.page.mouse.move(2, 2);
       await hover.first().waitFor({ state: 'hidden' });
-      await word.hover();
+      const { x, y } = await this.place(lineStart, word);
+      // Two moves: an editor takes no hover from a mouse that appears out of nowhere.
+      await this.page.mouse.move(x - 6, y);
+      await this.page.mouse.move(x, y);
       try {
         await hover
           .filter({ hasText: awaited })
           .first()
-          .waitFor({ timeout: STEP / 5 });
+          .waitFor({ timeout: STEP / 4 });
         return plain((await hover.allInnerTexts()).join('\n'));
       } catch {
         seen = plain((await hover.allInnerTexts()).join('\n'));
       }
     }
     throw new Error(`The hover never said ${awaited}. It said:\n${seen}`);
-  }
-
-  /** A word as the editor draws it on the line that starts with `lineStart`. */
-  word(lineStart: RegExp, word: string): Locator {
-    return this.lines
-      .filter({ hasText: lineStart })
-      .first()
-      .locator('span span', { hasText: new RegExp(`^\\s*${word}\\s*$`) })
-      .first();
   }
 
   /** Opens the quick fixes at the cursor and returns their titles. */
@@ -143,6 +161,12 @@ export class Editor {
       .filter({ hasText: /^cylinder.*mm\/s/ })
       .first()
       .waitFor();
+  }
+
+  /** Goes to the place of a problem, as a double click does; the editor then has the keys. */
+  async goToProblem(row: Locator): Promise<void> {
+    await row.dblclick();
+    await this.page.locator('.editor-instance .monaco-editor.focused').waitFor();
   }
 
   async problems(): Promise<Locator> {
