@@ -51,6 +51,14 @@ export type Memory =
       readonly band: number;
       readonly closes: number;
     }
+  /** A pilot-operated check at standstill is shut until its pilot force is enough; `sum` of weighted pressures above `crack` opens it. */
+  | {
+      readonly kind: 'held';
+      readonly component: string;
+      readonly element: number;
+      readonly pilots: readonly { readonly node: NodeIndex; readonly weight: number }[];
+      readonly crack: number;
+    }
   | { readonly kind: 'shut'; readonly component: string; readonly element: number; readonly c: NodeIndex; readonly v: NodeIndex; readonly closes: number };
 
 export interface ValveOf {

@@ -79,6 +79,10 @@ export function turned(assembled: Assembled, m: Memory, on: boolean, solution: S
     if (on && z <= m.closes + REACHED) return false;
     return undefined;
   }
+  if (m.kind === 'held') {
+    const sum = m.pilots.reduce((total, x) => total + x.weight * at(assembled, x.node, solution), 0);
+    return on && sum > m.crack ? false : undefined;
+  }
   if (!on && (solution.flows[`${m.component}.C`] ?? 0) > m.closes * (1 + 1e-9)) return true;
   if (on && at(assembled, m.v, solution) >= at(assembled, m.c, solution) - REACHED) return false;
   return undefined;
@@ -92,6 +96,9 @@ function withBits(
   remarks: { of: string; words: string }[],
 ): { solution: Solution; bits: Readonly<Record<string, boolean>> } {
   const bits: Record<string, boolean> = { ...setting.bits };
+  for (const m of assembled.memories) {
+    if (m.kind === 'held' && setting.bits[m.component] === undefined) bits[m.component] = (near?.openings[m.component] ?? 0) <= 0;
+  }
   const turns = new Map<string, number>();
   const frozen = new Set<string>();
   let solution = solve({ ...setting, bits }, near);
@@ -109,7 +116,7 @@ function withBits(
       if (n >= 3) {
         frozen.add(m.component);
         if (m.kind === 'lifted') remarks.push({ of: m.component, words: `${m.component} hunts between ${shown(m.closes)} and ${shown(m.set)} bar` });
-        else remarks.push({ of: m.component, words: `${m.component} shuts and opens again at ${(m.closes / LITRE_PER_MINUTE).toPrecision(3)} L/min` });
+        else if (m.kind === 'shut') remarks.push({ of: m.component, words: `${m.component} shuts and opens again at ${(m.closes / LITRE_PER_MINUTE).toPrecision(3)} L/min` });
       }
     }
     if (!changed) break;

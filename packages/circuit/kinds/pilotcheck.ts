@@ -6,6 +6,9 @@ import { addCheck, addLeak, crackFits, passesOf, SEAT_LEAK, siOr } from './passi
 import { has, si } from './read.ts';
 import { hardware } from './common.ts';
 
+/** A pilot sum that is never reached, MPa. */
+const NEVER = 1e6;
+
 export const pilotcheck: Kind = {
   name: 'pilotcheck',
   noun: 'pilot-operated check valve',
@@ -56,7 +59,17 @@ export const pilotcheck: Kind = {
     const back = into.node(component, 'Y') ?? v;
     const set = into.parameter(component, 'crack', toMPa(crack));
     const band = into.parameter(component, 'band', toMPa(5 * BAR));
-    const opened = (r: number, k: number, words: string) =>
+    // Open and shut can both be in balance; from standstill it stays shut until the pilot force is enough.
+    const held = into.parameter(component, 'held', 0);
+    const never = into.parameter(component, 'never', NEVER);
+    into.onSetting((setting, put) => put(held, setting.bits[component.id] === true ? 1 : 0));
+    const pilots = (r: number) => [
+      { node: x, weight: r },
+      { node: back, weight: -r },
+      { node: c, weight: -1 },
+      { node: v, weight: 1 },
+    ];
+    const opened = (r: number, k: number, words: string, holds: boolean) =>
       into.add(
         component,
         {
@@ -64,25 +77,22 @@ export const pilotcheck: Kind = {
           a: c,
           b: v,
           k,
-          pilots: [
-            { node: x, weight: r },
-            { node: back, weight: -r },
-            { node: c, weight: -1 },
-            { node: v, weight: 1 },
-          ],
+          pilots: pilots(r),
           set,
           band,
+          ...(holds ? { bit: held, setWhenOn: never } : {}),
           oneWay: true,
         },
         ['C', 'V'],
         words,
       );
-    const element = opened(ratio, pathK(passes), 'C to V');
+    const element = opened(ratio, pathK(passes), 'C to V', true);
     if (has(component, 'decompressing')) {
       into.assume({ component: component.id, property: 'decompressing', value: 'poppet of 5 % of `passes`, four times the ratio', source: 'memory', note: 'common practice, from memory' });
-      opened(4 * ratio, pathK({ flow: 0.05 * passes.flow, drop: passes.drop }), 'C to V, decompressing');
+      opened(4 * ratio, pathK({ flow: 0.05 * passes.flow, drop: passes.drop }), 'C to V, decompressing', false);
     }
     into.limitation({ component: component.id, words: `${component.id} passes`, targets: [{ element, size: 'k' }] });
     into.opening({ component: component.id, element });
+    into.memory({ component: component.id, kind: 'held', element, pilots: pilots(ratio), crack });
   },
 };
