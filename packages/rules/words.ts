@@ -4,7 +4,12 @@ import { type Dimension, format, formatAgainst } from '@oilway/quantity';
 
 /** `183 bar`, `0.72 kN`: SI in, the circuit's units out. `unit`: of the one setting the value comes from. */
 export function show(circuit: Circuit, si: number, dimension: Dimension, unit?: string): string {
-  return format(si, dimension, options(circuit, unit));
+  return plain(format(si, dimension, options(circuit, unit)));
+}
+
+/** `45 bar`, not `45.0 bar`: most figures in a message are settings as somebody wrote them. */
+function plain(shown: string): string {
+  return shown.replace(/(\.\d*?)0+(?= )/, '$1').replace(/\.(?= )/, '');
 }
 
 /** A value and its bound with enough digits to tell them apart. */
@@ -15,7 +20,8 @@ export function against(
   dimension: Dimension,
   unit?: string,
 ): { readonly value: string; readonly bound: string } {
-  return formatAgainst(si, bound, dimension, options(circuit, unit));
+  const shown = formatAgainst(si, bound, dimension, options(circuit, unit));
+  return { value: plain(shown.value), bound: plain(shown.bound) };
 }
 
 function options(circuit: Circuit, unit: string | undefined) {

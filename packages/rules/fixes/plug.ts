@@ -4,7 +4,7 @@ import type { Fix, RuleContext } from '../rule.ts';
 import { reservoirFor, writable } from './sheet.ts';
 
 /** `plug SV1.Y` becomes `drain SV1.Y to R1`; where several ports are plugged in one statement only this one leaves. */
-export function unplug(context: RuleContext, component: Component, port: string, plugged: Origin): Fix | undefined {
+export function unplug(context: RuleContext, component: Component, port: string, plugged: Origin, head: 'drain' | 'return'): Fix | undefined {
   const reservoir = reservoirFor(context.circuit);
   if (reservoir === undefined || !writable(context, component) || plugged.uri !== context.circuit.uri) return undefined;
   const text = context.text(plugged.uri);
@@ -13,9 +13,9 @@ export function unplug(context: RuleContext, component: Component, port: string,
   const end = next < 0 ? text.length : next;
   const line = text.slice(start, end);
   const parts = /^(\s*)(plug\s+)([^/\r]*)(.*)$/.exec(line);
-  const drain = `drain ${component.id}.${port} to ${reservoir}`;
+  const drain = `${head} ${component.id}.${port} to ${reservoir}`;
   if (parts === null) return undefined;
-  const [, indent = '', head = '', ports = '', rest = ''] = parts;
+  const [, indent = '', word = '', ports = '', rest = ''] = parts;
   const left = ports
     .split(',')
     .map((p) => p.trim())
@@ -23,7 +23,7 @@ export function unplug(context: RuleContext, component: Component, port: string,
   const changed =
     left.length === 0
       ? `${indent}${drain}${rest === '' ? '' : ` ${rest}`}`
-      : `${indent}${head}${left.join(', ')}${rest === '' ? '' : ` ${rest}`}\n${indent}${drain}`;
+      : `${indent}${word}${left.join(', ')}${rest === '' ? '' : ` ${rest}`}\n${indent}${drain}`;
   const change: TextChange = { uri: plugged.uri, start, end, text: changed };
   return { title: `Lead ${component.id}.${port} to ${reservoir} instead`, safe: false, changes: [change] };
 }

@@ -4,16 +4,17 @@ import type { Graph } from '../graph/graph.ts';
 import type { Fix, RuleContext } from '../rule.ts';
 import { neighbours, takeOut, writtenAt } from './places.ts';
 import { below, freeName, reservoirFor, statement, writable } from './sheet.ts';
-import { drop, pumpFlow, reliefSetting, round } from './values.ts';
+import { ratingOf } from '../graph/rating.ts';
+import { drop, pumpFlow, reliefSetting, round, type Setting } from './values.ts';
 
 /** A new relief at the pump's outlet with its line to the reservoir. */
-export function addRelief(context: RuleContext, graph: Graph, pump: Component): Fix | undefined {
+export function addRelief(context: RuleContext, graph: Graph, pump: Component, like?: Component): Fix | undefined {
   const { circuit } = graph;
   const net = graph.netAt(pump.id, 'P');
   const reservoir = reservoirFor(circuit, pump.id);
   const at = writtenAt(circuit, pump.id, 'P')[0];
   if (net === undefined || reservoir === undefined || at === undefined || !writable(context, pump)) return undefined;
-  const setting = reliefSetting(graph, net.id);
+  const setting = (like === undefined ? undefined : settingLike(context, graph, net.id, like)) ?? reliefSetting(graph, net.id);
   const flow = pumpFlow(graph, pump);
   if (setting === undefined || flow === undefined) return undefined;
   const name = freeName(circuit, 'RV');
@@ -31,6 +32,15 @@ export function addRelief(context: RuleContext, graph: Graph, pump: Component): 
       ]),
     ],
   };
+}
+
+/** The setting of the relief that is there, as written, unless it is above what the pump's line bears. */
+function settingLike(context: RuleContext, graph: Graph, net: string, like: Component): Setting | undefined {
+  const value = like.properties.find((p) => p.name === 'set' && p.part === undefined)?.value;
+  const rating = ratingOf(graph, net);
+  if (value?.type !== 'quantity' || value.origin.uri !== context.circuit.uri || (rating !== undefined && value.q.si * 1.1 > rating.value)) return undefined;
+  const text = context.text(value.origin.uri).slice(value.origin.start, value.origin.end);
+  return { text, si: value.q.si, reason: `as ${like.id}` };
 }
 
 /** The relief's inlet taken off its present line and joined to the pump's outlet; undefined where its line would lose its only end. */

@@ -27,6 +27,9 @@ export const throughValves: Passing = (edge) => {
   return edge.kind === 'directional' ? 1 : undefined;
 };
 
+/** Ways as they stand: open-always ones, shut-offs declared open, filters in either direction. Where oil can run back, it will. */
+export const asDeclared: Passing = (edge) => (edge.class === 'always' || edge.byHand === true || edge.kind === 'filter' ? 0 : undefined);
+
 /** Every way oil may take at one time or another: all but against a seat. */
 export const spreadable: Passing = (edge) => (edge.class === 'never' && edge.shut !== true ? undefined : 0);
 

@@ -76,7 +76,7 @@ function judge(context: RuleContext, graph: Graph, { pump, outlet, perhaps }: Pu
       fixes: [
         ...(byHand ? closing.map((c) => lockOpen(context, c)) : []),
         reached.guard.what === 'relief' ? moveRelief(context, graph, pump, relief) : undefined,
-        addRelief(context, graph, pump),
+        addRelief(context, graph, pump, reached.guard.what === 'relief' ? relief : undefined),
       ],
     }),
   ];

@@ -1,6 +1,6 @@
 /** A03: a relief lets the pressure rise above what the weakest part on its line is rated for. */
 import { graphOf, type Graph } from '../graph/graph.ts';
-import { type Guard, guardsOf } from '../graph/guards.ts';
+import { type Guard, guardsOf, guardsReached } from '../graph/guards.ts';
 import { openAlways, waysFrom, waysTo } from '../graph/reach.ts';
 import { type Rating, ratingOf } from '../graph/rating.ts';
 import { tell } from '../finding.ts';
@@ -45,11 +45,21 @@ function lowerTo(context: RuleContext, guard: Guard, limit: number, reached: num
   return { title: `Set ${guard.component.id} to ${to.text}`, safe: false, changes: [{ uri, start, end, text: to.text }] };
 }
 
+/** Flow of the pumps whose oil leaves here: those without a lower guard that is as sure, m3/s. */
+function flowOver(graph: Graph, guard: Guard): number {
+  const set = settingOf(guard.component)?.set ?? 0;
+  const others = graph.ofKind('pump').every((pump) => {
+    const outlet = graph.netAt(pump.id, 'P')?.id;
+    return outlet === undefined || guardsReached(graph, outlet, openAlways).some((r) => r.guard.component.id !== guard.component.id && (settingOf(r.guard.component)?.set ?? Infinity) < set);
+  });
+  return others ? 0 : pumpFlowTo(graph, guard.net);
+}
+
 function judge(context: RuleContext, graph: Graph, guard: Guard): Finding[] {
   const setting = settingOf(guard.component);
   const found = setting === undefined ? undefined : weakest(graph, guard);
   if (setting === undefined || found === undefined) return [];
-  const flow = pumpFlowTo(graph, guard.net);
+  const flow = flowOver(graph, guard);
   const reached = withOverride(guard.component, setting.highest, flow) + backPressure(context, graph, guard);
   const { rating } = found;
   if (reached <= rating.value * 1.001) return [];

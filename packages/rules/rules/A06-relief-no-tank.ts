@@ -5,7 +5,8 @@ import { type Discharge, guardsOf } from '../graph/guards.ts';
 import { ifOpened, openAlways, waysFrom } from '../graph/reach.ts';
 import { tell } from '../finding.ts';
 import { toReservoirLine } from '../fixes/lines.ts';
-import type { Rule } from '../rule.ts';
+import { unplug } from '../fixes/plug.ts';
+import type { Fix, Rule, RuleContext } from '../rule.ts';
 import { list } from '../words.ts';
 import { relatedTo } from './pump-guard.ts';
 
@@ -13,6 +14,12 @@ import { relatedTo } from './pump-guard.ts';
 function crossPort(graph: Graph, relief: Component, why: Discharge): boolean {
   const net = graph.netAt(relief.id, 'T');
   return why.cause !== 'open' && why.cause !== 'plugged' && net?.functions.includes('working') === true;
+}
+
+function mend(context: RuleContext, graph: Graph, relief: Component, why: Discharge): readonly (Fix | undefined)[] {
+  if (why.cause === 'open') return [toReservoirLine(context, relief, 'T', 'return')];
+  const plugged = graph.netAt(relief.id, 'T')?.plugged;
+  return plugged === undefined ? [] : [unplug(context, relief, 'T', plugged, 'return')];
 }
 
 export const A06: Rule = {
@@ -52,7 +59,7 @@ The pumps that have only this relief are not reported again (A01, A02).`,
           origin: relief.nameOrigin,
           place: relief.id,
           related: closing.map((c) => relatedTo(c, `${c.id} stands between ${relief.id}.T and the reservoir`)),
-          fixes: why.cause === 'open' ? [toReservoirLine(context, relief, 'T', 'return')] : [],
+          fixes: mend(context, graph, relief, why),
           hidesAt: [
             ...pumps.map((p) => ({ code: 'A01', place: p.id })),
             ...sure.flatMap((p) => ['A02', 'A07'].map((code) => ({ code, place: p.id }))),

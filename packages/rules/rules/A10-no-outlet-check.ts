@@ -1,7 +1,7 @@
 /** A10: oil of an accumulator, of a pump on another drive or of a carried load can run back through a pump that stands still. */
 import type { Component } from '@oilway/circuit';
 import { graphOf, type Graph } from '../graph/graph.ts';
-import { openAlways, type Way, waysTo, wayWords } from '../graph/reach.ts';
+import { asDeclared, type Way, waysTo, wayWords } from '../graph/reach.ts';
 import { tell } from '../finding.ts';
 import { checkAtOutlet } from '../fixes/check.ts';
 import type { Related, Rule } from '../rule.ts';
@@ -61,8 +61,8 @@ export const A10: Rule = {
   mend: 'Put a check valve at the pump outlet.',
   needs: 'topology',
   page: `
-Another source (an accumulator, a pump on another drive, a chamber that carries a load) reaches the pump's outlet through ways that nothing can
-close and no check stops.
+Another source (an accumulator, a pump on another drive, a chamber that carries a load) reaches the pump's outlet as the circuit
+stands (shut-offs as declared, filters in either direction), and no check stops it.
 
 Stays clean: a check between them; two pumps on one drive (A19 judges them); the high-pressure pump of a two-pump unit, to whose line
 the low-pressure pump joins over its check; a load behind a directional valve.`,
@@ -71,7 +71,7 @@ the low-pressure pump joins over its check; a load behind a directional valve.`,
     return graph.ofKind('pump').flatMap((pump) => {
       const outlet = graph.netAt(pump.id, 'P');
       if (outlet === undefined || outlet.open === true) return [];
-      const sources = sourcesOf(graph, pump, waysTo(graph, outlet.id, openAlways));
+      const sources = sourcesOf(graph, pump, waysTo(graph, outlet.id, asDeclared));
       if (sources.length === 0) return [];
       return [
         tell(A10, {

@@ -2,7 +2,7 @@
 import type { Component } from '@oilway/circuit';
 import { graphOf, type Graph } from '../graph/graph.ts';
 import { toReservoir } from '../graph/guards.ts';
-import { openAlways, type Passing, waysFrom, waysTo } from '../graph/reach.ts';
+import { asDeclared, openAlways, waysFrom, waysTo } from '../graph/reach.ts';
 import { tell } from '../finding.ts';
 import { checkAtOutlet } from '../fixes/check.ts';
 import type { Rule } from '../rule.ts';
@@ -10,15 +10,15 @@ import { highLowUnits } from './high-low.ts';
 import { relatedTo } from './pump-guard.ts';
 import { driveOf } from './sources.ts';
 
-/** A valve between the pump and the common net that leads this pump's oil to the reservoir by itself. */
-function ownWayToTank(graph: Graph, pump: Component, common: string): Component | undefined {
-  const outlet = graph.netAt(pump.id, 'P')?.id;
-  if (outlet === undefined || outlet === common) return undefined;
-  const notCommon: Passing = (e) => (e.target === common || e.source === common ? undefined : openAlways(e));
-  for (const net of waysFrom(graph, outlet, notCommon).keys()) {
+/** A valve before the common line that leads this pump's oil to the reservoir by itself. */
+function ownWayToTank(graph: Graph, outlet: string, other: string): Component | undefined {
+  const common = new Set(waysFrom(graph, other, openAlways).keys());
+  if (common.has(outlet)) return undefined;
+  for (const net of waysFrom(graph, outlet, openAlways, (n) => common.has(n)).keys()) {
+    if (common.has(net)) continue;
     for (const edge of graph.from(net)) {
       const valve = edge.kind === 'directional' ? graph.component(edge.component) : undefined;
-      if (valve !== undefined && edge.target !== common && toReservoir(graph, edge.target, openAlways) !== undefined) return valve;
+      if (valve !== undefined && !common.has(edge.target) && toReservoir(graph, edge.target, openAlways) !== undefined) return valve;
     }
   }
   return undefined;
@@ -46,12 +46,12 @@ by A10, a missing check in a two-pump unit with an unloading valve by B01.`,
     return pumps.flatMap((pump) => {
       const outlet = graph.netAt(pump.id, 'P');
       if (outlet === undefined || outlet.open === true) return [];
-      const into = waysTo(graph, outlet.id, openAlways);
+      const into = waysTo(graph, outlet.id, asDeclared);
       for (const other of pumps) {
         const from = graph.netAt(other.id, 'P')?.id;
         if (other.id === pump.id || from === undefined || !into.has(from) || driveOf(other) !== driveOf(pump)) continue;
         if (units.some((u) => [u.low.id, u.high.id].includes(pump.id) && [u.low.id, u.high.id].includes(other.id))) continue;
-        const valve = ownWayToTank(graph, pump, from);
+        const valve = ownWayToTank(graph, outlet.id, from);
         if (valve === undefined) continue;
         return [
           tell(A19, {

@@ -49,11 +49,11 @@ pumps that are unloaded together on purpose (the pilot senses an accumulator beh
   detect(context) {
     const graph = graphOf(context.circuit);
     return highLowUnits(graph).flatMap((unit) => {
-      const { low, high, unloading, escape } = unit;
-      if (escape === undefined || wrongWayCheck(graph, unit) !== undefined) return [];
+      const { low, high, unloading, escapeWay } = unit;
+      if (escapeWay === undefined || wrongWayCheck(graph, unit) !== undefined) return [];
       const opens = read.si(unloading, 'set');
       const flow = pumpFlow(graph, high);
-      const by = wayWords(escape);
+      const by = wayWords(escapeWay);
       const figures = [
         flow === undefined ? '' : `, ${show(context.circuit, flow, 'flow')},`,
         opens === undefined ? '' : ` as soon as ${unloading.id} opens at ${show(context.circuit, opens, 'pressure')}`,

@@ -66,7 +66,7 @@ Stays clean: a setting between the two; one that opens only in the working part 
   detect(context) {
     const graph = graphOf(context.circuit);
     return highLowUnits(graph).flatMap((unit) => {
-      if (unit.escape !== undefined) return [];
+      if (unit.escapeWay !== undefined) return [];
       return tooHigh(context, graph, unit) ?? (context.study === undefined ? undefined : tooLow(context, context.study, unit)) ?? [];
     });
   },

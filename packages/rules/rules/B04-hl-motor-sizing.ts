@@ -51,7 +51,7 @@ function corners(context: RuleContext, graph: Graph, unit: HighLow, power: numbe
 
 function judge(context: RuleContext, graph: Graph, unit: HighLow): Finding[] {
   const drive = graph.component(driveOf(unit.low) ?? '');
-  if (drive === undefined || driveOf(unit.high) !== drive.id || unit.escape !== undefined) return [];
+  if (drive === undefined || driveOf(unit.high) !== drive.id || unit.escapeWay !== undefined) return [];
   const power = read.si(drive, 'power');
   if (power === undefined) return [];
   const worst = corners(context, graph, unit, power, read.si(drive, 'peak') ?? 1).sort(

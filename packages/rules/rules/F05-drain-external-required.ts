@@ -10,7 +10,7 @@ import { unplug } from '../fixes/plug.ts';
 import type { Finding, Rule, RuleContext } from '../rule.ts';
 import { relatedTo } from './pump-guard.ts';
 
-function internallyDrained(context: RuleContext, graph: Graph, valve: Component): Finding[] {
+function internallyDrained(graph: Graph, valve: Component): Finding[] {
   const outlet = graph.netAt(valve.id, 'A')?.id;
   if (outlet === undefined || toReservoir(graph, outlet, openAlways) !== undefined) return [];
   const word = valve.properties.find((p) => p.name === 'internal');
@@ -34,12 +34,12 @@ function drained(context: RuleContext, graph: Graph, valve: Component): Finding[
   }
   if (net.plugged !== undefined) {
     const what = `${valve.id}.Y is plugged: the oil that leaks into the spring chamber cannot leave, and ${valve.id} sticks.`;
-    return [tell(F05, { ...place, what, origin: net.plugged, fixes: [unplug(context, valve, 'Y', net.plugged)] })];
+    return [tell(F05, { ...place, what, origin: net.plugged, fixes: [unplug(context, valve, 'Y', net.plugged, 'drain')] })];
   }
-  return blocked(context, graph, valve, net, place);
+  return blocked(graph, valve, net, place);
 }
 
-function blocked(_context: RuleContext, graph: Graph, valve: Component, net: Net, place: { readonly place: string }): Finding[] {
+function blocked(graph: Graph, valve: Component, net: Net, place: { readonly place: string }): Finding[] {
   const free = toReservoir(graph, net.id, openAlways);
   if (free === undefined) {
     const way = toReservoir(graph, net.id, spreadable);
@@ -93,7 +93,7 @@ their T.`,
         return net !== undefined && net.open !== true;
       });
       if (!joined) return [];
-      return read.word(valve, 'internal') === 'drain' ? internallyDrained(context, graph, valve) : drained(context, graph, valve);
+      return read.word(valve, 'internal') === 'drain' ? internallyDrained(graph, valve) : drained(context, graph, valve);
     });
   },
 };

@@ -12,7 +12,7 @@ export interface HighLow {
   readonly low: Component;
   readonly high: Component;
   /** The way by which oil of the high-pressure pump gets to the unloading valve, where there is one (B01, B06). */
-  readonly escape?: Way;
+  readonly escapeWay?: Way;
   /** Check on the way from the low-pressure pump to the high-pressure line, where there is one. */
   readonly joining?: Edge;
 }
@@ -60,15 +60,15 @@ export function highLowUnits(graph: Graph): readonly HighLow[] {
     for (const high of others) {
       const from = outlet(graph, high);
       if (from === undefined) continue;
-      const escape = waysFrom(graph, from, throughValves).get(net.id);
+      const escapeWay = waysFrom(graph, from, throughValves).get(net.id);
       const joining = joiningCheck(graph, onward, from);
-      if (escape === undefined && joining === undefined) continue;
+      if (escapeWay === undefined && joining === undefined) continue;
       units.push({
         unloading,
         net: net.id,
         low,
         high,
-        ...(escape === undefined ? {} : { escape }),
+        ...(escapeWay === undefined ? {} : { escapeWay }),
         ...(joining === undefined ? {} : { joining }),
       });
     }
@@ -90,7 +90,7 @@ function joiningCheck(graph: Graph, onward: ReadonlyMap<string, Way>, high: stri
  * side uses oil but by way of it.
  */
 export function wrongWayCheck(graph: Graph, unit: HighLow): Component | undefined {
-  const edge = unit.escape?.edges.find((e) => e.kind === 'check');
+  const edge = unit.escapeWay?.edges.find((e) => e.kind === 'check');
   if (edge === undefined) return undefined;
   const withoutIt: Passing = (e) => (e.component === edge.component ? undefined : spreadable(e));
   for (const id of waysFrom(graph, unit.net, withoutIt).keys()) {
