@@ -25,7 +25,6 @@ export class Components {
   private readonly values: Values;
   private readonly parts = new Map<string, ComponentNode>();
   private readonly read = new Map<string, PartContent | 'reading'>();
-  private readonly codes = new Map<string, { readonly id: string; readonly origin: Origin }>();
 
   constructor(context: Context, values: Values) {
     this.context = context;
@@ -119,7 +118,6 @@ export class Components {
       context.components.set(id, component);
       this.check(component);
       this.addCoils(component);
-      this.checkCode(component, names.length > 1);
       return component;
     });
   }
@@ -134,25 +132,6 @@ export class Components {
         });
       }
     }
-  }
-
-  private checkCode(component: Component, twins: boolean): void {
-    const property = component.properties.find((candidate) => candidate.name === 'code');
-    if (property?.value.type !== 'text') return;
-    const first = this.codes.get(property.value.text);
-    if (first === undefined) {
-      this.codes.set(property.value.text, { id: component.id, origin: property.value.origin });
-      return;
-    }
-    this.context.report({
-      code: 'M01',
-      what: `The code "${property.value.text}" stands for \`${first.id}\` already`,
-      why: 'A designation names one component on the drawing (ISO 1219-2).',
-      ...(twins ? { mend: 'Twins share their settings: give each its own line where it has a code.' } : {}),
-      origin: property.value.origin,
-      related: [{ message: `first used for \`${first.id}\``, origin: first.origin }],
-      place: component.id,
-    });
   }
 
   private addCoils(component: Component): void {
@@ -207,6 +186,8 @@ export class Components {
   }
 
   private missing(component: Component, what: string, example: string): void {
+    // A line that does not parse may have it in the part that was lost.
+    if (this.context.isHalfRead(component)) return;
     this.context.report({
       code: 'M08',
       what,
@@ -260,7 +241,8 @@ export class Components {
     }
   }
 
-  noPort(component: Component, port: string, origin: Origin, ports: readonly string[]): void {
+  private noPort(component: Component, port: string, origin: Origin, ports: readonly string[]): void {
+    if (this.context.isHalfRead(component)) return;
     this.context.report({
       code: 'PORT',
       what: `\`${component.id}\` has no port \`${port}\`${ports.length === 0 ? '' : `: it has ${ports.map((name) => `\`${name}\``).join(', ')}`}`,
