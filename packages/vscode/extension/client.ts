@@ -13,10 +13,7 @@ export function clientOptions(output: vscode.LogOutputChannel, more: Record<stri
   return {
     documentSelector: [{ language: LANGUAGE }],
     outputChannel: output,
-    synchronize: {
-      configurationSection: LANGUAGE,
-      fileEvents: vscode.workspace.createFileSystemWatcher('**/*.oilway'),
-    },
+    synchronize: { fileEvents: vscode.workspace.createFileSystemWatcher('**/*.oilway') },
     // Asked for anew at each start. Plain data: what the editor hands out has functions in it, which no worker takes.
     initializationOptions: () => ({ settings: JSON.parse(JSON.stringify(vscode.workspace.getConfiguration(LANGUAGE))), ...more }),
   };

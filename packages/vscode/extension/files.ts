@@ -32,11 +32,6 @@ export function serveFiles(client: BaseLanguageClient): vscode.Disposable {
       const bytes = await orNull(fs.readFile(vscode.Uri.parse(uri)));
       return bytes === null ? null : new TextDecoder().decode(bytes);
     }),
-    client.onRequest('oilway/stat', async ({ uri }: { uri: string }) => {
-      const target = vscode.Uri.parse(uri);
-      const stat = await orNull(fs.stat(target));
-      return stat === null ? null : entry(target, stat.type);
-    }),
     client.onRequest('oilway/readDirectory', async ({ uri }: { uri: string }) => {
       const target = vscode.Uri.parse(uri);
       const list = await orNull(fs.readDirectory(target));

@@ -5,6 +5,7 @@ import { sayCautionOnce } from './caution.ts';
 import { CLIENT_NAME, clientOptions, type MakeClient } from './client.ts';
 import { registerCommands } from './commands.ts';
 import { serveFiles } from './files.ts';
+import { RULE_PAGE, serveRulePages } from './rule-pages.ts';
 import { StatusItem } from './status.ts';
 
 let running: BaseLanguageClient | undefined;
@@ -13,10 +14,14 @@ let running: BaseLanguageClient | undefined;
 export async function start(context: vscode.ExtensionContext, make: MakeClient, more: Record<string, unknown> = {}): Promise<void> {
   const output = vscode.window.createOutputChannel(CLIENT_NAME, { log: true });
   const status = new StatusItem();
-  context.subscriptions.push(output, status);
+  context.subscriptions.push(
+    output,
+    status,
+    serveRulePages(() => running),
+  );
 
   const launch = async (): Promise<void> => {
-    const client = make(clientOptions(output, more));
+    const client = make(clientOptions(output, { rulePage: RULE_PAGE, ...more }));
     running = client;
     status.follow(client);
     context.subscriptions.push(serveFiles(client));

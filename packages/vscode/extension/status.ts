@@ -14,6 +14,9 @@ export class StatusItem implements vscode.Disposable {
 
   follow(client: BaseLanguageClient): void {
     client.onDidChangeState(({ newState }) => this.show(newState));
+    client.onNotification('oilway/studied', ({ ms }: { ms: number }) => {
+      this.item.detail = vscode.l10n.t('last computed in {0} s', (ms / 1000).toFixed(2));
+    });
   }
 
   private show(state: State): void {
