@@ -1,4 +1,16 @@
-/** What computes and checks, as the server and its study worker use it. */
-import type { Engines } from '../service.ts';
+/** What computes and checks: the study and the rules, as server and study worker use them. What breaks inside is told apart from what is found. */
+import { study, type Circuit, type Study } from '@oilway/circuit';
+import { runRules, type Finding, type RuleContext } from '@oilway/rules';
 
-export const engines: Engines = {};
+export interface Checked {
+  readonly findings: readonly Finding[];
+  /** Rules that broke down, for the log. */
+  readonly failed?: string;
+}
+
+export function checkCircuit(context: RuleContext): Checked {
+  const { findings, failed } = runRules(context);
+  return { findings, ...(failed ? { failed: failed.map((one) => `rule ${one.code}: ${one.why}`).join('\n') } : {}) };
+}
+
+export const computeStudy = (circuit: Circuit): Study => study(circuit, { clock: () => performance.now() });

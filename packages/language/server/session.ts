@@ -205,6 +205,7 @@ export class Session {
         },
         done: (answer, ms) => {
           if (this.#documents.get(uri) !== document) return;
+          if (answer.failed) this.#parts.log(`${uri}: ${answer.failed}`);
           document.studied = { study: answer.study, circuit, findings: answer.findings, text: serial };
           // It may have ended between a key and the next resolution: its findings then follow the edit.
           const edit = editBetween(studiedText, document.text);

@@ -11,6 +11,8 @@ export interface StudyAnswer {
   readonly study: Study;
   /** What the rules find with the study at hand, fixes included. */
   readonly findings: readonly Finding[];
+  /** Rules that broke down, for the log. */
+  readonly failed?: string;
 }
 
 export interface StudyRunner {
@@ -122,12 +124,12 @@ export class WorkerRunner implements StudyRunner {
 
 /** In the server's own thread: for clients that allow no worker. It blocks for as long as the study takes, so it waits for a quiet moment. */
 export class InlineRunner implements StudyRunner {
-  readonly #work: (job: StudyJob) => StudyAnswer | undefined;
+  readonly #work: (job: StudyJob) => StudyAnswer;
   readonly #quiet: number;
   #cancel: (() => void) | undefined;
 
   /** @param quiet ms without a new job before it begins. */
-  constructor(work: (job: StudyJob) => StudyAnswer | undefined, quiet = 400) {
+  constructor(work: (job: StudyJob) => StudyAnswer, quiet = 400) {
     this.#work = work;
     this.#quiet = quiet;
   }

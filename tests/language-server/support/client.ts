@@ -35,8 +35,12 @@ export class Client {
         waiter.resolve(one);
       }
     });
-    connection.onNotification('window/logMessage', (one: { readonly message: string }) => this.logged.push(one.message));
-    connection.onNotification('oilway/studied', (one: { readonly uri: string; readonly version: number; readonly ms: number }) => this.studied.push(one));
+    connection.onNotification('window/logMessage', (one: { readonly message: string }) => {
+      this.logged.push(one.message);
+    });
+    connection.onNotification('oilway/studied', (one: { readonly uri: string; readonly version: number; readonly ms: number }) => {
+      this.studied.push(one);
+    });
     connection.onRequest('client/registerCapability', () => null);
     connection.onRequest('workspace/inlayHint/refresh', () => {
       this.#hintRefreshes += 1;

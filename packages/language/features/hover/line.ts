@@ -13,6 +13,9 @@ const key = (port: PortRef): string => `${port.component}.${port.port}`;
  * Undefined where the pieces form a ring, or where neither side's ports are all known.
  */
 export function flowThrough(circuit: Circuit, piece: Piece, point: Point): number | undefined {
+  // A piece with a loss of its own is solved with its flow.
+  const solved = point.flows[piece.id];
+  if (solved !== undefined) return solved;
   const group = (side: 0 | 1): ReadonlySet<string> | undefined => {
     const seen = new Set(piece.sides[side].map(key));
     // A side that is only the name of a line branches off somewhere in it: what stands behind is not told.
@@ -23,7 +26,10 @@ export function flowThrough(circuit: Circuit, piece: Piece, point: Point): numbe
       for (const other of circuit.pieces) {
         if (other.id === piece.id) continue;
         const ports = [...other.sides[0], ...other.sides[1]].map(key);
-        if (!ports.some((one) => seen.has(one)) || ports.every((one) => seen.has(one))) continue;
+        if (!ports.some((one) => seen.has(one))) continue;
+        // It leads on to a reservoir or to the name of a line: what passes there is not among the ports.
+        if (other.sides[0].length === 0 || other.sides[1].length === 0) return undefined;
+        if (ports.every((one) => seen.has(one))) continue;
         for (const one of ports) seen.add(one);
         grown = true;
       }
