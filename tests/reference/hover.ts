@@ -7,7 +7,11 @@ import { occurrencesOf } from '../../packages/language/features/names.ts';
 import type { Bench } from './bench.ts';
 
 /** What hover shows over the word that begins `line`, in the table's row of `place`. */
-export function lineFigures(bench: Bench, line: string, place: string): { readonly flow: number; readonly velocity: number; readonly reynolds: number } {
+export function lineFigures(
+  bench: Bench,
+  line: string,
+  place: string,
+): { readonly flow: number; readonly velocity: number; readonly reynolds: number } {
   const { uri } = bench.circuit;
   const { circuit, findings, symbols } = analyseText({ uri, text: bench.text });
   const analysis = new Analysis({

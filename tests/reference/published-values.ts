@@ -636,6 +636,15 @@ export const PUBLISHED = {
     kind: 'derived',
     source: 'derived pX-pB>=(pA-pB)/R, pilot spring side at B',
   },
+  'acc-01': {
+    what: 'isothermal size, absolute pressures',
+    value: 20.049,
+    unit: 'gal',
+    within: 0.001,
+    kind: 'source',
+    source:
+      "Sullivan, 'Fluid Power: Theory and Applications', 4th ed., Example 12.4 (p. 298); data and printed answer in a public textbook-companion repository",
+  },
   'acc-06': {
     what: 'ideal isothermal yield, 10 L, 90/100/200 bar gauge',
     value: 4.482,
