@@ -4,7 +4,7 @@ import type { Component, Origin } from '@oilway/circuit';
 import type { Analysis } from './analysis.ts';
 import { rowsOf, tightest, unitsOfActuator } from './hover/actuator.ts';
 import { meteringOf } from './hover/metering.ts';
-import { extent, placesOf, type Place } from './hover/places.ts';
+import { extent, placesOf, STILL, type Place } from './hover/places.ts';
 import { marginText, resultOf } from './hover/requirement.ts';
 import { Show } from './hover/show.ts';
 
@@ -85,7 +85,7 @@ export function actuatorHint(component: Component, places: readonly Place[], sho
   const names = component.kind === 'cylinder' ? (['in', 'out'] as const) : (['backward', 'forward'] as const);
   const speed = (direction: -1 | 1): string => {
     const fastest = extent(rows.filter((row) => row.direction === direction).flatMap((row) => row.points.map((one) => Math.abs(one.at.velocity))))?.high;
-    return fastest === undefined || fastest === 0 ? '' : `${names[direction < 0 ? 0 : 1]} ${show.figure(fastest, units.speed)}`;
+    return fastest === undefined || fastest <= STILL[units.speed] ? '' : `${names[direction < 0 ? 0 : 1]} ${show.figure(fastest, units.speed)}`;
   };
   const stalled = rows.some((row) => (tightest(row)?.at.shortBy ?? 0) > 0);
   const force = extent(rows.flatMap((row) => row.points.map((one) => Math.abs(one.at.force))))?.high;

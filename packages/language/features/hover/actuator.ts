@@ -2,10 +2,10 @@
 import type { Dimension } from '@oilway/quantity';
 import { KINDS, type ActuatorPoint, type Component, type Point } from '@oilway/circuit';
 import type { Analysis } from '../analysis.ts';
-import { actuatorAt, extent, flowInto, placesOf, pressureAt, type Place } from './places.ts';
+import { actuatorAt, extent, flowInto, placesOf, pressureAt, STILL, type Place } from './places.ts';
 import { notComputed, restsOn, standing } from './rests.ts';
 import { escape, paragraphs, Show, table } from './show.ts';
-import { forceWorking, speedWorking, workingText } from './working.ts';
+import { forceWorking, speedWorking, torqueWorking, workingText } from './working.ts';
 
 interface Row {
   readonly place: Place;
@@ -15,7 +15,7 @@ interface Row {
 
 export interface ActuatorUnits {
   readonly force: Dimension;
-  readonly speed: Dimension;
+  readonly speed: 'velocity' | 'rotation';
   readonly position: Dimension;
   readonly words: readonly [backward: string, stands: string, forward: string];
   readonly ports: readonly [string, string];
@@ -73,7 +73,7 @@ export function hoverActuator(analysis: Analysis, component: Component): string 
 function cellsOf(row: Row, circuit: Parameters<typeof pressureAt>[0], id: string, units: ActuatorUnits, show: Show): string[] {
   const worst = tightest(row);
   const speeds = row.place.step?.speeds[id];
-  const own = extent(row.points.map((one) => Math.abs(one.at.velocity)).filter((v) => v > 0));
+  const own = extent(row.points.map((one) => Math.abs(one.at.velocity)).filter((v) => v > STILL[units.speed]));
   const speed = speeds && speeds.direction === row.direction ? { low: speeds.low, high: speeds.high } : own;
   const inlet = row.direction < 0 ? units.ports[1] : units.ports[0];
   const flow = extent(row.points.map((one) => flowInto(one.point, id, inlet)).map((q) => (q === undefined ? undefined : Math.abs(q))));
@@ -91,7 +91,7 @@ function cellsOf(row: Row, circuit: Parameters<typeof pressureAt>[0], id: string
   return [
     `${row.place.label} ${units.words[row.direction + 1]}`,
     force,
-    row.direction !== 0 && speed ? show.span(speed.low, speed.high, units.speed) : '—',
+    row.direction === 0 ? '—' : speed ? show.span(speed.low, speed.high, units.speed) : 'stands',
     pressure(units.ports[0]),
     pressure(units.ports[1]),
     row.direction !== 0 && flow ? show.span(flow.low, flow.high, 'flow') : '—',
@@ -109,12 +109,12 @@ function working(rows: readonly Row[], circuit: Parameters<typeof pressureAt>[0]
   const row = [...(moving.length > 0 ? moving : rows)].sort((a, b) => margin(a) - margin(b))[0];
   const worst = row && tightest(row);
   if (!row || !worst) return '';
-  const force = forceWorking(circuit, id, worst.point);
+  const force = forceWorking(circuit, id, worst.point) ?? torqueWorking(circuit, id, worst.point);
   const speed = speedWorking(circuit, id, worst.point);
   if (!force && !speed) return '';
   return paragraphs(
     `**Working**, ${row.place.label} ${units.words[row.direction + 1]} at ${show.position(worst.at.position, units.position)} (${worst.point.label})`,
-    force ? workingText(force, show, 'Force on the load') : '',
+    force ? workingText(force, show, units.force === 'force' ? 'Force on the load' : 'Torque on the load') : '',
     speed ? workingText(speed, show, 'Speed') : '',
   );
 }

@@ -3,7 +3,7 @@ import { KINDS, KIND_NAMES, LINE_PROPERTIES, LOAD_PROPERTIES, type KindName, typ
 import { LINE_FUNCTIONS } from '../../parse/words.ts';
 import { HEAD_ABOUT } from '../completion/heads.ts';
 import { LIMIT_PROPERTIES } from '../completion/properties.ts';
-import { escape, paragraphs, table } from './show.ts';
+import { paragraphs, table } from './show.ts';
 
 const FORM: Readonly<Record<string, string>> = {
   circuit: 'circuit NAME "Title"',
@@ -49,7 +49,7 @@ const isKind = (word: string): word is KindName => (KIND_NAMES as readonly strin
 export function propertyRows(specs: readonly PropertySpec[]): string {
   return table(
     ['Property', 'Example', 'Unsaid', 'Meaning'],
-    specs.map((spec) => [spec.required ? `**${spec.name}**` : spec.name, `\`${spec.example}\``, spec.required ? 'required' : spec.default === '—' ? '' : escape(spec.default), escape(spec.about)]),
+    specs.map((spec) => [spec.required ? `**${spec.name}**` : spec.name, `\`${spec.example}\``, spec.required ? 'required' : spec.default === '—' ? '' : spec.default, spec.about]),
   );
 }
 

@@ -1,5 +1,5 @@
 /** Hover on a line: flow, velocity, Reynolds number, loss by step, and the highest pressure against the rating. */
-import { oilOf, type Circuit, type LineStatement, type Piece, type Point, type PortRef } from '@oilway/circuit';
+import { oilOf, ratedAt, type Circuit, type LineStatement, type Piece, type Point, type PortRef } from '@oilway/circuit';
 import type { Analysis } from '../analysis.ts';
 import { componentOf, extent, placesOf, type Place } from './places.ts';
 import { notComputed, restsOn, standing } from './rests.ts';
@@ -62,9 +62,8 @@ export function ratingOf(circuit: Circuit, netId: string): { readonly rating: nu
   };
   for (const id of net?.pieces ?? []) take(circuit.pieces.find((one) => one.id === id)?.rated, 'line');
   for (const { component, port } of net?.ports ?? []) {
-    const rated = componentOf(circuit, component)?.properties.filter((one) => one.name === 'rated' && one.value.type === 'quantity') ?? [];
-    const own = rated.find((one) => one.port === port) ?? rated.find((one) => one.port === undefined);
-    if (own?.value.type === 'quantity') take(own.value.q.si, `${component}.${port}`);
+    const owner = componentOf(circuit, component);
+    if (owner) take(ratedAt(owner, port), `${component}.${port}`);
   }
   return best;
 }

@@ -17,7 +17,9 @@ export function hoverPart(analysis: Analysis, component: Component): string {
   const places = placesOf(studied);
   const span = (place: Place, value: (point: Point) => number | undefined): { low: number; high: number } | undefined => extent(place.points.map(value));
   if (component.kind === 'reservoir') {
-    const heat = Object.entries(studied.study.heat).map(([id, one]) => `${escape(id)}: ${show.figure(one.heat, 'power')} of heat, oil settles at ${show.figure(one.temperature.value, 'temperature')}`);
+    const all = Object.entries(studied.study.heat);
+    const own = all.filter(([id]) => id.endsWith(` ${component.id}`));
+    const heat = (own.length > 0 ? own : all).map(([id, one]) => `${escape(id)}: ${show.figure(one.heat, 'power')} of heat, oil settles at ${show.figure(one.temperature.value, 'temperature')}`);
     return paragraphs(title, heat.join('  \n'), standing(analysis), restsOn(analysis, component.id));
   }
   if (component.kind === 'accumulator') {

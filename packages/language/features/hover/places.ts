@@ -46,3 +46,6 @@ export function extent(values: readonly (number | undefined)[]): { readonly low:
   const found = values.filter((value): value is number => value !== undefined && Number.isFinite(value));
   return found.length === 0 ? undefined : { low: Math.min(...found), high: Math.max(...found) };
 }
+
+/** Slower than this is leakage, not motion: 0.05 mm/s, 0.05 deg/s (in SI). */
+export const STILL = { velocity: 5e-5, rotation: (0.05 * Math.PI) / 180 } as const;

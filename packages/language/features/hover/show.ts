@@ -22,7 +22,9 @@ export class Show {
   span(low: number, high: number, dimension: Dimension): string {
     if (Math.abs(high - low) <= 0.01 * Math.max(Math.abs(low), Math.abs(high))) return this.figure(Math.abs(low) > Math.abs(high) ? low : high, dimension);
     const number = formatNumber(low, dimension, this.#options);
-    return `${number} to ${this.figure(high, dimension)}`;
+    const most = this.figure(high, dimension);
+    // What reads alike is one value.
+    return number === formatNumber(high, dimension, this.#options) ? most : `${number} to ${most}`;
   }
 
   /** `17.3 of 9.25 kN`: the first number without its unit. */
