@@ -3,33 +3,42 @@ import type { Body, BodyLoad, ForceOverPosition } from '../assembly/machine.ts';
 import { loadKnots } from './loads.ts';
 import type { Plant } from './scene.ts';
 
+/** Just before and just after a knot, m. */
+const BESIDE = 1e-6;
+
 export interface Knot {
   readonly at: number;
   readonly words: string;
-  /** Solved just before and just after; else once. */
-  readonly sides: 'both' | 'before' | 'after';
+  /**
+   * `both`: solved just before and just after. `once`: nothing jumps there. `above`, `below`: on that side only, whatever the direction.
+   * `control`: both where the control changes there, else once.
+   */
+  readonly sides: 'both' | 'once' | 'above' | 'below' | 'control';
 }
 
 export function knotsOf(plant: Plant, body: Body, load: BodyLoad): readonly Knot[] {
   const found: Knot[] = [];
   for (const one of body.knots) found.push({ at: one.at, words: one.words, sides: 'both' });
-  for (const at of loadKnots(load)) found.push({ at, words: 'load', sides: jumps(load, at) ? 'both' : 'after' });
+  for (const at of loadKnots(load)) found.push({ at, words: 'load', sides: jumps(load, at) ? 'both' : 'once' });
   for (const contact of plant.contacts) {
     if (contact.source.what !== 'position' || contact.source.body !== body.id) continue;
     const ends = contact.test.is === 'inside' ? [contact.test.from, contact.test.to] : contact.test.is === 'above' ? [contact.test.rises, contact.test.falls] : [];
-    for (const at of ends) if (Number.isFinite(at)) found.push({ at, words: contact.key, sides: 'both' });
+    for (const at of ends) if (Number.isFinite(at)) found.push({ at, words: contact.key, sides: 'control' });
   }
-  for (const at of requiredEnds(plant, body)) found.push({ at, words: 'required range', sides: 'both' });
+  for (const { low, high } of requiredRanges(plant, body)) {
+    found.push({ at: low, words: 'required range', sides: 'above' }, { at: high, words: 'required range', sides: 'below' });
+  }
   return merged(found);
 }
 
-/** Ends of ranges that requirements name for this body (or for the only actuator). */
-function requiredEnds(plant: Plant, body: Body): readonly number[] {
+/** Ranges that requirements name for this body (or for the only actuator). */
+function requiredRanges(plant: Plant, body: Body): readonly { readonly low: number; readonly high: number }[] {
   return plant.circuit.requirements.flatMap((one) => {
     if (one.form === 'never' || !one.where.range) return [];
     const own = body.actuators.includes(one.of);
     const only = !plant.at.actuators.some((part) => part.id === one.of) && plant.bodies.length === 1;
-    return own || only ? [one.where.range.from.si, one.where.range.to.si] : [];
+    const { from, to } = one.where.range;
+    return own || only ? [{ low: Math.min(from.si, to.si), high: Math.max(from.si, to.si) }] : [];
   });
 }
 
@@ -46,10 +55,25 @@ function merged(knots: readonly Knot[]): readonly Knot[] {
     const last = result.at(-1);
     if (last && one.at - last.at < 2e-6) {
       const words = last.words.split(', ').includes(one.words) ? last.words : `${last.words}, ${one.words}`;
-      result[result.length - 1] = { at: last.at, words, sides: last.sides === one.sides ? last.sides : 'both' };
+      result[result.length - 1] = { at: last.at, words, sides: joint(last.sides, one.sides) };
     } else result.push(one);
   }
   return result;
+}
+
+function joint(one: Knot['sides'], other: Knot['sides']): Knot['sides'] {
+  if (one === other) return one;
+  if (one === 'once' || one === 'control') return other === 'once' ? one : other;
+  return other === 'once' || other === 'control' ? one : 'both';
+}
+
+/** Places beside a knot at which it is solved, m: in the order a motion in `direction` passes them. */
+export function besides(knot: Knot, direction: number, turns: boolean): readonly { readonly at: number; readonly when: 'before' | 'after' | 'at' }[] {
+  const beside = (when: 'before' | 'after') => ({ at: knot.at + (when === 'before' ? -BESIDE : BESIDE) * direction, when });
+  if (knot.sides === 'both' || (knot.sides === 'control' && turns)) return [beside('before'), beside('after')];
+  if (knot.sides === 'above') return [{ at: knot.at + BESIDE, when: 'at' }];
+  if (knot.sides === 'below') return [{ at: knot.at - BESIDE, when: 'at' }];
+  return [{ at: knot.at, when: 'at' }];
 }
 
 /** Knots strictly between two places, in the order they are passed. */

@@ -84,7 +84,7 @@ function actuatorPoints(plant: Plant, body: Body, setting: Setting, solution: So
 
 function stopAt(body: Body, position: number, velocity: number, moving: boolean, solution: Solution): 'retracted' | 'extended' | undefined {
   if (!Number.isFinite(body.stroke) || moving) return undefined;
-  const near = 1e-6;
+  const near = 1e-5;
   const pressed = solution.stopForces[body.id];
   if (position <= near && velocity <= CREEP && (pressed === undefined || pressed >= 0 || position <= 0)) return 'retracted';
   if (position >= body.stroke - near) return 'extended';

@@ -1,7 +1,7 @@
 /** Steady points of a step: entry, just before and after every knot passed, end. Each is one solution with positions given. */
 import type { Body, Setting, Solution } from '../assembly/machine.ts';
 import { NO_LOAD } from './loads.ts';
-import { knotsOf, passed } from './knots.ts';
+import { besides, knotsOf, passed } from './knots.ts';
 import { moves } from './motion.ts';
 import { pointOf } from './point.ts';
 import type { Plant } from './scene.ts';
@@ -9,8 +9,8 @@ import type { Point } from './study.ts';
 import type { Sample, Snapshot, Trace } from './trace.ts';
 import { sayPlace } from './words.ts';
 
-/** Just before and just after a knot, m. */
-const BESIDE = 1e-6;
+/** So far from a stop a rod counts as not there yet, m or rad. */
+const OFF_STOP = 1e-4;
 /** Displacement that counts as motion of a step, m or rad. */
 const MOVED = 1e-4;
 
@@ -83,18 +83,19 @@ function knotPoints(plant: Plant, trace: Trace, body: Body, samples: readonly Sa
     const time = before.time + share * (after.time - before.time);
     const others = between(before, after, share);
     const begun = Object.fromEntries(plant.bodies.map((one) => [one.id, one.id === body.id || Math.abs((others[one.id] ?? 0) - (samples[0]!.solution.positions[one.id] ?? 0)) > MOVED]));
-    for (const side of knot.sides === 'both' ? (['before', 'after'] as const) : [knot.sides]) {
-      const snapshot = trace.snapshotAt(time, side === 'before');
+    const [closing, opening] = [trace.snapshotAt(time, true), trace.snapshotAt(time, false)];
+    const turns = closing !== undefined && opening !== undefined && closing !== opening;
+    for (const side of besides(knot, direction, turns)) {
       // Control that changes at this very place ends the step: what comes after belongs to the next one.
-      if (!snapshot || (side === 'after' && !sameLines(snapshot, trace.snapshotAt(time, true)))) continue;
-      const near = side === 'before' ? before : after;
-      const position = knot.at + (side === 'before' ? -BESIDE : BESIDE) * direction;
+      const snapshot = side.when === 'after' ? opening : closing;
+      if (!snapshot || (side.when === 'after' && !sameLines(snapshot, closing))) continue;
+      const near = side.when === 'after' ? after : before;
       const place = sayPlace(plant.circuit, knot.at, body.type === 'rotating');
-      const label = `${knot.sides === 'both' ? `just ${side} ` : ''}${place} (${knot.words})`;
+      const label = `${side.when === 'at' ? '' : `just ${side.when} `}${place} (${knot.words})`;
       wanted.push({
         label: plant.bodies.length > 1 ? `${body.id} ${label}` : label,
-        time: time + (side === 'before' ? -1e-9 : 1e-9),
-        setting: { ...snapshot.setting, positions: { ...others, [body.id]: position }, oil: near.solution.oil, bits: near.solution.bits },
+        time: time + (side.when === 'before' ? -1e-9 : side.when === 'after' ? 1e-9 : 0),
+        setting: { ...snapshot.setting, positions: { ...others, [body.id]: side.at }, oil: near.solution.oil, bits: near.solution.bits },
         begun,
       });
     }
@@ -117,7 +118,7 @@ function beforeStop(plant: Plant, body: Body, shift: number, snapshot: Snapshot,
   const x = last.solution.positions[body.id] ?? 0;
   const atStop = Number.isFinite(body.stroke) && (x <= 1e-7 || x >= body.stroke - 1e-7);
   if (!atStop || Math.abs(shift) < MOVED) return [];
-  const position = x - Math.sign(shift) * BESIDE;
+  const position = x - Math.sign(shift) * OFF_STOP;
   const setting = settingAt(snapshot, last);
   return [
     {
@@ -152,28 +153,38 @@ function begunOnly(plant: Plant, actuator: Point['actuators'][number], begun: Re
   return rest;
 }
 
-/** Points without a run: from given positions all the way in the direction the entry moves; other bodies stand at entry. */
-export function pointsAlone(plant: Plant, setting: Setting, entryLabel: string): readonly Point[] {
-  const entry = plant.machine.settle(setting);
-  const directions = directionsOf(plant, setting, {}, entry);
+/**
+ * Points without a run: from given positions all the way in the direction the entry moves; other bodies stand at entry.
+ * `turn`: a body that begins at the stop it is pushed to begins at the other one.
+ */
+export function pointsAlone(plant: Plant, given: Setting, entryLabel: string, turn = false): readonly Point[] {
+  const found = directionsOf(plant, given, {}, plant.machine.settle(given));
+  const positions = { ...given.positions };
+  for (const body of plant.bodies) {
+    const direction = found[body.id] ?? 0;
+    const x = positions[body.id] ?? body.begins;
+    if (turn && direction !== 0 && Number.isFinite(body.stroke) && x === (direction > 0 ? body.stroke : 0)) positions[body.id] = direction > 0 ? 0 : body.stroke;
+  }
+  const setting = { ...given, positions };
   const wanted: Wanted[] = [{ label: entryLabel, time: undefined, setting, begun: Object.fromEntries(plant.bodies.map((one) => [one.id, true])) }];
   for (const body of plant.bodies) {
-    const direction = directions[body.id] ?? 0;
+    const direction = found[body.id] ?? 0;
     if (direction === 0 || !Number.isFinite(body.stroke)) continue;
     const from = setting.positions[body.id] ?? body.begins;
     const to = direction > 0 ? body.stroke : 0;
-    const load = setting.loads[body.id] ?? NO_LOAD;
     const own = plant.bodies.length > 1 ? `${body.id} ` : '';
-    const place = (x: number, label: string) =>
-      wanted.push({ label: own + label, time: undefined, setting: { ...setting, positions: { ...setting.positions, [body.id]: x } }, begun: { [body.id]: true } });
-    for (const knot of passed(knotsOf(plant, body, load), from, to)) {
+    const places: { readonly at: number; readonly label: string }[] = [];
+    for (const knot of passed(knotsOf(plant, body, setting.loads[body.id] ?? NO_LOAD), from, to)) {
       const words = `${sayPlace(plant.circuit, knot.at, body.type === 'rotating')} (${knot.words})`;
-      if (knot.sides !== 'after') place(knot.at - BESIDE * direction, `just before ${words}`);
-      if (knot.sides !== 'before') place(knot.at + BESIDE * direction, knot.sides === 'after' ? words : `just after ${words}`);
+      for (const side of besides(knot, direction, false)) places.push({ at: side.at, label: side.when === 'at' ? words : `just ${side.when} ${words}` });
     }
     const middle = body.stroke / 2;
-    if ((middle - from) * direction > 2e-6) place(middle, 'mid-stroke');
-    if (Math.abs(to - from) > 2e-6) place(to - BESIDE * direction, 'just before the stop');
+    if ((middle - from) * direction > 2e-6) places.push({ at: middle, label: 'mid-stroke' });
+    if (Math.abs(to - from) > 2 * OFF_STOP) places.push({ at: to - OFF_STOP * direction, label: 'just before the stop' });
+    places.sort((a, b) => (a.at - b.at) * direction);
+    for (const place of places) {
+      wanted.push({ label: own + place.label, time: undefined, setting: { ...setting, positions: { ...setting.positions, [body.id]: place.at } }, begun: { [body.id]: true } });
+    }
   }
-  return solveAll(plant, wanted, directions);
+  return solveAll(plant, wanted, found);
 }

@@ -87,7 +87,7 @@ export function coilTables(plant: Plant, circuit: Circuit): readonly StepResult[
     const control = decide(plant.at, { ...demand, coils: [...demand.coils, ...helped.coils] }, dead, { whileLines: false, interlocks: false });
     const setting = settingOf(plant, { control, detents: {}, positions: begins(plant), loads: loadsInSteps(plant, []) });
     const label = helpers.length > 0 ? `entry (with ${helpers.join(', ')})` : 'entry';
-    const points = pointsAlone(plant, setting, label);
+    const points = pointsAlone(plant, setting, label, true);
     const { peaks, lows } = extremes(points, []);
     return { id: `coil ${coil.id}`, cycle: '', points, speeds: speedsOf(plant, points, []), peaks, lows, faults: [] };
   });
