@@ -3,7 +3,7 @@ import type { Component } from '@oilway/circuit';
 import type { Graph } from '../graph/graph.ts';
 import type { Fix, RuleContext } from '../rule.ts';
 import { neighbours, takeOut, writtenAt } from './places.ts';
-import { below, freeName, reservoirFor, statement, writable } from './sheet.ts';
+import { below, freeName, reservoirFor, statement, valueOrigin, writable } from './sheet.ts';
 import { ratingOf } from '../graph/rating.ts';
 import { drop, pumpFlow, reliefSetting, round, type Setting } from './values.ts';
 
@@ -36,10 +36,12 @@ export function addRelief(context: RuleContext, graph: Graph, pump: Component, l
 
 /** The setting of the relief that is there, as written, unless it is above what the pump's line bears. */
 function settingLike(context: RuleContext, graph: Graph, net: string, like: Component): Setting | undefined {
-  const value = like.properties.find((p) => p.name === 'set' && p.part === undefined)?.value;
+  const property = like.properties.find((p) => p.name === 'set' && p.part === undefined);
+  const value = property?.value;
   const rating = ratingOf(graph, net);
-  if (value?.type !== 'quantity' || value.origin.uri !== context.circuit.uri || (rating !== undefined && value.q.si * 1.1 > rating.value)) return undefined;
-  const text = context.text(value.origin.uri).slice(value.origin.start, value.origin.end);
+  if (property === undefined || value?.type !== 'quantity' || value.origin.uri !== context.circuit.uri || (rating !== undefined && value.q.si * 1.1 > rating.value)) return undefined;
+  const { uri, start, end } = valueOrigin(context, property);
+  const text = context.text(uri).slice(start, end);
   return { text, si: value.q.si, reason: `as ${like.id}` };
 }
 

@@ -1,5 +1,5 @@
 /** The text as something to mend: where to insert, in whose style, under which free name. */
-import type { Circuit, Component, LineStatement, Origin, TextChange } from '@oilway/circuit';
+import type { Circuit, Component, LineStatement, Origin, Property, TextChange } from '@oilway/circuit';
 import type { RuleContext } from '../rule.ts';
 
 /** True where the component is written in this circuit's own text (not inside a unit, whose text stands for several). */
@@ -68,4 +68,13 @@ export function reservoirFor(circuit: Circuit, near?: string): string | undefine
   const all = circuit.components.filter((c) => c.kind === 'reservoir' && !c.id.includes('.'));
   const suction = circuit.nets.find((n) => n.reservoir !== undefined && n.ports.some((p) => p.component === near));
   return all.find((r) => r.id === suction?.reservoir)?.id ?? all[0]?.id;
+}
+
+/** The characters of a property's value: everything behind its name. */
+export function valueOrigin(context: RuleContext, property: Property): Origin {
+  const { uri, end } = property.origin;
+  const text = context.text(uri);
+  let start = property.nameOrigin.end;
+  while (start < end && /\s/.test(text[start] ?? '')) start++;
+  return { uri, start, end };
 }

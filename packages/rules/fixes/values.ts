@@ -19,7 +19,7 @@ export function round(
   const value = fromSi(si, unit);
   const usual = STEPS[unit.symbol] ?? 10 ** Math.floor(Math.log10(Math.max(Math.abs(value), 1e-9)) - 1);
   // A small figure is rounded finer than the usual step.
-  const step = value < 4 * usual ? usual / 10 : usual;
+  const step = value < 2 * usual ? usual / 5 : usual;
   const count = way === 'up' ? Math.ceil(value / step - 1e-9) : Math.floor(value / step + 1e-9);
   const rounded = Math.max(count, 1) * step;
   const decimals = Math.max(0, Math.ceil(-Math.log10(step) - 1e-9));

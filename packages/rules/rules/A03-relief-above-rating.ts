@@ -5,7 +5,7 @@ import { openAlways, waysFrom, waysTo } from '../graph/reach.ts';
 import { type Rating, ratingOf } from '../graph/rating.ts';
 import { tell } from '../finding.ts';
 import { round, spreads } from '../fixes/values.ts';
-import { writable } from '../fixes/sheet.ts';
+import { valueOrigin, writable } from '../fixes/sheet.ts';
 import type { Finding, Fix, Rule, RuleContext } from '../rule.ts';
 import { against, show } from '../words.ts';
 import { pumpFlowTo, settingOf, withOverride } from './limits.ts';
@@ -13,9 +13,11 @@ import { pumpFlowTo, settingOf, withOverride } from './limits.ts';
 /** The lowest rating among the nets that stand at this relief's pressure: not those with a lower guard of their own. */
 function weakest(graph: Graph, guard: Guard): { readonly rating: Rating; readonly net: string } | undefined {
   const set = settingOf(guard.component)?.set ?? Infinity;
-  const lower = guardsOf(graph).guards.filter(
-    (g) => g.component.id !== guard.component.id && (settingOf(g.component)?.set ?? Infinity) < set,
-  );
+  // Reliefs between the two lines of an actuator count here: they keep their own line down.
+  const lower = graph.ofKind('relief').flatMap((relief) => {
+    const net = graph.netAt(relief.id, 'P');
+    return relief.id !== guard.component.id && net !== undefined && (settingOf(relief)?.set ?? Infinity) < set ? [net.id] : [];
+  });
   // Back along the free ways to the pumps it guards, and on from there to everything that is pressed by the same oil.
   const nets = new Set(waysTo(graph, guard.net, openAlways).keys());
   for (const net of waysFrom(graph, guard.net, spreads).keys()) nets.add(net);
@@ -29,7 +31,7 @@ function weakest(graph: Graph, guard: Guard): { readonly rating: Rating; readonl
     )
       continue;
     const onward = waysFrom(graph, net, openAlways);
-    if (lower.some((g) => onward.has(g.net))) continue;
+    if (lower.some((own) => onward.has(own))) continue;
     const rating = ratingOf(graph, net);
     if (rating !== undefined && (found === undefined || rating.value < found.rating.value)) found = { rating, net };
   }
@@ -40,7 +42,7 @@ function lowerTo(context: RuleContext, guard: Guard, limit: number, reached: num
   const property = guard.component.properties.find((p) => p.name === 'set' && p.part === undefined);
   if (property?.value.type !== 'quantity' || property.value.from !== undefined || !writable(context, guard.component)) return undefined;
   const to = round(context.circuit, (limit * set) / reached, 'pressure', 'down');
-  const { uri, start, end } = property.value.origin;
+  const { uri, start, end } = valueOrigin(context, property);
   if (property.value.plusMinus !== undefined) return undefined;
   return { title: `Set ${guard.component.id} to ${to.text}`, safe: false, changes: [{ uri, start, end, text: to.text }] };
 }
