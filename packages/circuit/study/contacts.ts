@@ -142,7 +142,7 @@ export function closed(scene: Scene, contact: Contact, solution: Solution, befor
   const was = before === undefined ? undefined : before !== inverted;
   const near = slack(source);
   if (test.is === 'inside') {
-    const wide = was === true ? near : -near;
+    const wide = was === true ? near : 0;
     return turn(value >= test.from - wide && value <= test.to + wide);
   }
   if (was === true) return turn(!(value < test.falls - near || (test.falls < test.rises && value <= test.falls)));
