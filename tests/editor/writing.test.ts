@@ -62,14 +62,24 @@ it('formatting mends the spacing and changes no word', async (context) => {
   });
 });
 
-it('the outline lists the components and the steps of the cycle', async (context) => {
-  await inEditor(context, TWO_PUMP, async ({ editor, show }) => {
-    const rows = await editor.outline();
-    await rows
-      .filter({ hasText: /^\s*C1/ })
-      .first()
-      .waitFor();
-    await rows.filter({ hasText: 'Form' }).first().waitFor();
+it('the outline lists the components and, below their cycle, its steps', async (context) => {
+  await inEditor(context, TWO_PUMP, async ({ editor, page, show }) => {
+    await editor.outline();
     await show('outline');
+    // The list of symbols is the same outline, with a box to search in.
+    await editor.goTo(1);
+    await page.keyboard.press('Control+Shift+O');
+    const box = page.locator('.quick-input-widget .quick-input-filter input');
+    await box.waitFor();
+    const options = page.locator('.quick-input-widget').getByRole('option');
+    for (const name of ['C1', 'Form', 'Back']) {
+      await box.fill(`@${name}`);
+      await options
+        .filter({ hasText: new RegExp(`^\\s*${name}\\b`) })
+        .first()
+        .waitFor();
+    }
+    await page.keyboard.press('Enter');
+    await editor.waitForText('.statusbar-item', /Ln 42/);
   });
 });

@@ -10,5 +10,7 @@ export async function sayCautionOnce(context: vscode.ExtensionContext): Promise<
     vscode.l10n.t(
       'Oilway calculates from what the text declares. Hydraulic machines can hurt people: local codes, the standards named and a competent person decide.',
     ),
+    // With a button the editor shows all of the words, and keeps them until they are read.
+    vscode.l10n.t('Understood'),
   );
 }
