@@ -84,6 +84,7 @@ export class Solver {
       for (let i = 0; i < n; i++) d[i] = -d[i]!;
       this.change = this.largestChange();
       if (!Number.isFinite(this.change)) return false;
+      const limited = sys.limitSpeeds(y, d);
       const cap = this.cap();
       let share = cap;
       y0.set(y);
@@ -92,14 +93,14 @@ export class Solver {
         for (let i = 0; i < n; i++) y[i] = y0[i]! + share * d[i]!;
         sys.evaluate();
         const now = this.length();
-        if (now <= (1 - ARMIJO * share) * length || (this.change < LOOSE && now < 1e-7)) {
+        if (now <= (1 - ARMIJO * share) * length || limited || (this.change < LOOSE && now < 1e-7)) {
           length = now;
           break;
         }
         if (++halvings > HALVINGS) return false;
         share *= 0.5;
       }
-      if (share === 1 && (this.change < TIGHT || (this.change < LOOSE && this.residual < RESIDUAL))) return true;
+      if (share === 1 && !limited && (this.change < TIGHT || (this.change < LOOSE && this.residual < RESIDUAL))) return true;
     }
     return false;
   }

@@ -5,7 +5,7 @@ import type { LoadState } from './network.ts';
 import { onset, onsetSlope, resisting, resistingSlope, sliding, slidingSlope } from './smooth.ts';
 import { SparseLu } from './sparse/lu.ts';
 import { cellOf, insideOf, lineAt, sortedKnots, sumAt } from './tables.ts';
-import { CEILING_ONSET, DELTA, FICTITIOUS, FLOOR_PRESSURE, FLOOR_STEADY, LEAST_DAMPING, SUPPLY_ONSET } from './tolerances.ts';
+import { CEILING_ONSET, DELTA, FICTITIOUS, FLOOR_PRESSURE, FLOOR_STEADY, LEAST_DAMPING, RUNAWAY, SUPPLY_ONSET } from './tolerances.ts';
 
 /** Stiffness of a soft stop against v, in MPa s/m of the scaled balance: only where rigid stops contradict each other. */
 const SOFT_STOP = 1e6;
@@ -48,6 +48,8 @@ export class System {
   readonly in1: Float64Array;
   readonly friction: Float64Array;
   readonly area: Float64Array;
+  /** Unit of speed of each body: 1 m/s, or 1000 rad/s where no stop ends the way. */
+  private readonly speed: Float64Array;
   private readonly loads: (LoadState | undefined)[];
   private readonly z = new Float64Array(MAX_INPUTS);
   readonly out = new Float64Array(MAX_OUTPUTS);
@@ -81,6 +83,7 @@ export class System {
     this.in1 = new Float64Array(bodies);
     this.friction = new Float64Array(bodies);
     this.area = new Float64Array(net.chamberNodes.length);
+    this.speed = Float64Array.from(net.spec.actuators, (actuator) => (Number.isFinite(actuator.high) ? 1 : 1000));
     this.loads = new Array<LoadState | undefined>(bodies).fill(undefined);
     for (let a = 0; a < bodies; a++) this.enter(a, 0);
   }
@@ -248,9 +251,9 @@ export class System {
     const perPressure = spec.pressureFriction ?? 0;
     if (perPressure > 0 && end - first >= 2) {
       const d = p[net.chamberNodes[first]!]! - p[net.chamberNodes[first + 1]!]!;
-      const size = Math.sqrt(d * d + DELTA * DELTA);
-      coulomb += perPressure * (size - DELTA);
-      const by = (perPressure * d * sliding(v, v0) * scale) / size;
+      const apart = Math.sqrt(d * d + DELTA * DELTA);
+      coulomb += perPressure * (apart - DELTA);
+      const by = (perPressure * d * sliding(v, v0) * scale) / apart;
       j[net.chamberForceSlot[first]!]! -= by;
       j[net.chamberForceSlot[first + 1]!]! += by;
     }
@@ -267,8 +270,11 @@ export class System {
       force += resist * resisting(-v, v0);
       slope -= resist * resistingSlope(-v, v0) - xv * this.in1[a]! * resisting(-v, v0);
     }
-    let scaled = force * scale - LEAST_DAMPING * v;
-    let scaledSlope = slope * scale - LEAST_DAMPING;
+    // Losses in ports grow with the square of speed: an unloaded body that nothing throttles stays finite.
+    const fast = RUNAWAY / (this.speed[a]! * this.speed[a]!);
+    const size = v < 0 ? -v : v;
+    let scaled = force * scale - LEAST_DAMPING * v - fast * v * size;
+    let scaledSlope = slope * scale - LEAST_DAMPING - 2 * fast * size;
     if (this.soft[a]! * v > 0) {
       scaled -= SOFT_STOP * v;
       scaledSlope -= SOFT_STOP;
@@ -276,6 +282,39 @@ export class System {
     r[row] = scaled;
     j[diagonal]! += scaledSlope;
     for (let c = first; c < end; c++) j[net.chamberForceSlot[c]!]! += this.area[c]! * scale;
+  }
+
+  /**
+   * Shortens a Newton change d of the speeds where it would jump over the steep part of friction or of a resisting load: it ends in that
+   * part, from where the next change sees the slope. True when something was shortened.
+   */
+  limitSpeeds(y: Float64Array, d: Float64Array): boolean {
+    const { net } = this;
+    let limited = false;
+    for (let a = 0; a < this.held.length; a++) {
+      if (this.held[a]) continue;
+      const i = net.firstVelocity + a;
+      const v = y[i]!;
+      const to = v + d[i]!;
+      const v0 = 1.5 * net.creep[a]! * this.blend;
+      let stop = to;
+      const coulomb =
+        this.friction[a]! > 0 || (net.spec.actuators[a]!.pressureFriction ?? 0) > 0 || net.spec.actuators[a]!.force !== undefined;
+      if (to > v) {
+        if (v < -v0 * 1.01 && stop > -v0 && this.in0[a]! > 0) stop = -v0;
+        else if (v < -1e-12 && stop > 0 && coulomb) stop = 0;
+        else if (v < v0 * 0.99 && stop > v0 && this.out0[a]! > 0) stop = v0;
+      } else {
+        if (v > v0 * 1.01 && stop < v0 && this.out0[a]! > 0) stop = v0;
+        else if (v > 1e-12 && stop < 0 && coulomb) stop = 0;
+        else if (v > -v0 * 0.99 && stop < -v0 && this.in0[a]! > 0) stop = -v0;
+      }
+      if (stop !== to) {
+        d[i] = stop - v;
+        limited = true;
+      }
+    }
+    return limited;
   }
 
   /** Nodes held at a pressure: their balance becomes p - p0; what flowed in is kept. */

@@ -17,6 +17,8 @@ const E0 = -E1 - E2;
 /** Newton in a stage: converged below this relative change; most iterations. */
 const STAGE_TIGHT = 1e-7;
 const STAGE_ITERATIONS = 14;
+/** Weight of a way (m, rad) against a relative change: 1e-10 m is converged. */
+const WAY = 1e3;
 
 export interface StepTolerance {
   readonly position: number;
@@ -158,7 +160,7 @@ export class Stepper {
 
   /** Newton on one stage: base + gamma h (right side) = stored; bodies at xb + gamma h v. */
   private stage(time: number, gh: number): boolean {
-    const { sys, d, keep } = this;
+    const { sys, net, d, keep, xb } = this;
     const { y, lu } = sys;
     const n = y.length;
     this.ramps.apply(time, sys.parameters, false);
@@ -167,24 +169,28 @@ export class Stepper {
       this.newtons++;
       if (!Number.isFinite(norm) || !lu.factor(sys.j)) return false;
       lu.solve(sys.r, d);
+      for (let i = 0; i < n; i++) d[i] = -d[i]!;
+      const limited = sys.limitSpeeds(y, d);
       let change = 0;
       for (let i = 0; i < n; i++) {
-        const size = Math.abs(d[i]!) / (1 + Math.abs(y[i]!));
+        let size = Math.abs(d[i]!) / (1 + Math.abs(y[i]!));
+        // In a very short step a speed counts by the way it makes: it is ill-determined and harmless.
+        if (i >= net.firstVelocity && i < net.firstVelocity + xb.length) size = Math.min(size, Math.abs(d[i]!) * gh * WAY);
         if (!(size <= change)) change = size;
       }
       if (!Number.isFinite(change)) return false;
       keep.set(y);
       let share = 1;
       for (let halvings = 0; ; halvings++) {
-        for (let i = 0; i < n; i++) y[i] = keep[i]! - share * d[i]!;
+        for (let i = 0; i < n; i++) y[i] = keep[i]! + share * d[i]!;
         const now = this.evaluate(gh);
-        if (now < norm || change < 1e-4 || halvings >= 5) {
+        if (now < norm || limited || change < 1e-4 || halvings >= 5) {
           norm = now;
           break;
         }
         share *= 0.5;
       }
-      if (change < STAGE_TIGHT && share === 1) return true;
+      if (change < STAGE_TIGHT && share === 1 && !limited) return true;
     }
     return false;
   }

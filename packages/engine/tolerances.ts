@@ -18,6 +18,9 @@ export const CREEP = 1e-5;
 /** Viscous share of a body that has neither friction nor load, kN s/m per 1e-3 m2 of chamber: keeps an unloaded body determined. */
 export const LEAST_DAMPING = 1e-6;
 
+/** Pressure lost in the ports of a body at 1 m/s (1000 rad/s), MPa, growing with the square: 0.0001 bar, nothing in a machine; keeps a runaway finite. */
+export const RUNAWAY = 1e-5;
+
 /** Leakage floor across closable elements, L/s/MPa: 0.0006 L/min at 100 bar, a tenth of "still"; keeps closed volumes determined. */
 export const FLOOR_STEADY = 1e-6;
 /** The same in runs, where storage keeps volumes determined and the floor adds up over time. */

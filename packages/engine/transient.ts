@@ -247,15 +247,20 @@ export class Transient {
         this.h = h * Math.max(SHRINK, SAFETY * stepper.error ** (-1 / 3));
         continue;
       }
-      failures = 0;
       let fired = this.fired();
       let taken = h;
       if (fired.length > 0) {
-        const located = this.locate(h);
-        if (located === undefined) return report([], 'no solution in time at an event: the equations do not converge');
-        taken = located;
+        taken = this.locate(h);
+        if (taken === 0) {
+          this.counts.rejected++;
+          this.h = 0.1 * h;
+          stepper.smooth = false;
+          if (++failures > 60 || this.h < LEAST_STEP) return report([], 'no solution in time at an event: the equations do not converge');
+          continue;
+        }
         fired = this.fired();
       }
+      failures = 0;
       const grown = taken * Math.min(GROWTH, Math.max(SHRINK, SAFETY * Math.max(stepper.error, 1e-6) ** (-1 / 3)));
       this.commit(taken, edge);
       if (taken === h || grown > this.h) this.h = grown;
@@ -321,8 +326,11 @@ export class Transient {
     return fired;
   }
 
-  /** Finds the step at which the first event has just happened (Illinois, each trial a whole step from the start). */
-  private locate(h: number): number | undefined {
+  /**
+   * Finds the step at which the first event has just happened (Illinois, each trial a whole step from the start). Where a trial does not
+   * converge, the longest step without event is taken instead; 0: there is none.
+   */
+  private locate(h: number): number {
     const { events } = this;
     let low = 0;
     let high = h;
@@ -350,7 +358,7 @@ export class Transient {
       if (k > 20 && k % 3 === 0) at = 0.5 * (low + high);
       if (!this.trial(at)) {
         at = 0.5 * (low + high);
-        if (!this.trial(at)) return undefined;
+        if (!this.trial(at)) return low > 0 && this.trial(low) ? low : 0;
       }
       const now = this.fired();
       if (now.length > 0) {
@@ -366,8 +374,8 @@ export class Transient {
         last = -1;
       }
     }
-    if (!this.trial(high)) return undefined;
-    return high;
+    if (this.trial(high)) return high;
+    return low > 0 && this.trial(low) ? low : 0;
   }
 
   private commit(h: number, edge: number): void {
