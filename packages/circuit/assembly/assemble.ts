@@ -4,7 +4,7 @@ import type { Circuit } from '../model/circuit.ts';
 import { assembleNetwork } from './assemble-network.ts';
 import type { Assembled } from './assembled.ts';
 import type { Machine, MachineOptions, Setting, Solution } from './machine.ts';
-import { startRun } from './run.ts';
+import { Run } from './run.ts';
 import { sensitivitiesOf } from './sensitivities.ts';
 import { applySetting, requestOf } from './setting.ts';
 import { settleMachine } from './settle.ts';
@@ -23,10 +23,10 @@ export function assemble(circuit: Circuit, options: MachineOptions = {}): Machin
 
   const solveEngine = (setting: Setting, near?: SteadyResult): { readonly result: SteadyResult; readonly brakes: readonly number[] } => {
     applySetting(assembled, setting, network.parameters);
-    let brakes = brakesAt(assembled, near);
+    let brakes = brakesAt(assembled, near?.pressures);
     let result = solveSteady(network, { ...requestOf(assembled, setting, brakes), start: near });
     for (let pass = 0; assembled.brakes.length > 0 && pass < BRAKE_PASSES; pass++) {
-      const now = brakesAt(assembled, result);
+      const now = brakesAt(assembled, result.pressures);
       const close = now.every((b, i) => Math.abs(b - (brakes[i] ?? 0)) <= BRAKE_CLOSE * (1 + Math.abs(b)));
       if (close) break;
       // Averaged after the first passes: pressure and friction of a slipping brake depend on each other.
@@ -36,8 +36,9 @@ export function assemble(circuit: Circuit, options: MachineOptions = {}): Machin
     return { result, brakes };
   };
   const solve = (setting: Setting, near?: Solution): Solution => {
-    const { result, brakes } = solveEngine(setting, near === undefined ? undefined : results.get(near));
-    const solution = solutionOf(assembled, network, setting, result, brakes);
+    const whole = near === undefined ? setting : { ...setting, bits: { ...near.bits, ...setting.bits } };
+    const { result, brakes } = solveEngine(whole, near === undefined ? undefined : results.get(near));
+    const solution = solutionOf(assembled, network, whole, result, brakes);
     results.set(solution, result);
     return solution;
   };
@@ -57,7 +58,14 @@ export function assemble(circuit: Circuit, options: MachineOptions = {}): Machin
     solve,
     settle,
     sensitivities: (setting, at, body) => sensitivitiesOf(assembled, network, solveEngine, setting, results.get(at), body),
-    start: (setting, at) => startRun(assembled, network, setting, at, results.get(at), options),
+    start: (setting, at) => {
+      // The run starts from where the solution was settled: valves that did not shift, bits that turned.
+      const from = { ...setting, valves: { ...setting.valves, ...at.stands }, bits: at.bits };
+      applySetting(assembled, from, network.parameters);
+      const start = results.get(at) ?? solveEngine(from).result;
+      applySetting(assembled, from, network.parameters);
+      return new Run(assembled, network, from, setting.valves, start, options.dynamics ?? false);
+    },
   };
 }
 

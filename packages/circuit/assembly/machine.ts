@@ -32,14 +32,16 @@ export interface BodyLoad {
 export interface Setting {
   readonly drives: Readonly<Record<string, boolean>>;
   readonly valves: Readonly<Record<string, Stand>>;
-  /** Coils on settings (relief, reducing, throttle): setting in SI of that setting; absent = dead. */
+  /** Coils on settings (relief, reducing, throttle): setting in SI of that setting (a throttle with `passes`: share of its opening); absent = dead. */
   readonly commands: Readonly<Record<string, number>>;
-  /** Memory bits: unloading lifted, burst shut. */
+  /** Memory bits: unloading lifted, burst shut, pilot-operated check held shut from standstill. Absent: as `near` has them in `solve`, else off. */
   readonly bits: Readonly<Record<string, boolean>>;
   /** Actuator id -> m or rad. Bodies joined by `with` move as one. */
   readonly positions: Readonly<Record<string, number>>;
   /** Accumulator id -> oil m3, or 'empty' (no oil, gas at precharge). */
   readonly oil: Readonly<Record<string, number | 'empty'>>;
+  /** Accumulator id -> absolute gas pressure Pa with that oil in; absent: as after filling slowly (isothermal). */
+  readonly gasPressures?: Readonly<Record<string, number>>;
   readonly loads: Readonly<Record<string, BodyLoad>>;
   /** Actuators held at v = 0 (force available). */
   readonly locked?: readonly string[];
@@ -51,7 +53,7 @@ export interface Setting {
   readonly sealFriction?: 'always' | 'not with load';
   /** Shut-offs taken as the contrary of what is declared, couplings parted (rules E01, E02). */
   readonly contrary?: readonly string[];
-  /** Gas exponent; default 1.4. */
+  /** Gas exponent of a run from here; default 1.4. */
   readonly gasExponent?: number;
 }
 
@@ -87,6 +89,8 @@ export interface Solution {
   readonly stopForces: Readonly<Record<string, number>>;
   readonly shaft: Readonly<Record<string, number>>;
   readonly oil: Readonly<Record<string, number>>;
+  /** Accumulator id -> absolute gas pressure, Pa. */
+  readonly gasPressures?: Readonly<Record<string, number>>;
   readonly stands: Readonly<Record<string, Stand>>;
   readonly bits: Readonly<Record<string, boolean>>;
   readonly diagnosis: readonly Diagnosis[];

@@ -1,8 +1,9 @@
 /** From a setting in SI to what the engine is asked: parameters, positions, loads, charges. */
 import type { ForceTable, GasState, LoadState, SteadyRequest } from '@oilway/engine';
-import type { Assembled, BodyNote } from './assembled.ts';
+import { pressureWith } from '../fluid/gas.ts';
+import type { Assembled, BodyNote, GasNote } from './assembled.ts';
 import type { BodyLoad, ForceOverPosition, Setting } from './machine.ts';
-import { toKilo, toLitres } from './units.ts';
+import { toKilo, toLitres, toMPa } from './units.ts';
 
 /** Writes all parameters as the setting has them. */
 export function applySetting(assembled: Assembled, setting: Setting, parameters: Float64Array): void {
@@ -39,6 +40,13 @@ export function positionOf(body: BodyNote, setting: Setting): number {
   return body.stroke === Number.POSITIVE_INFINITY ? x : Math.min(Math.max(x, 0), body.stroke);
 }
 
+/** Oil in a charge, m3, and its absolute gas pressure, Pa: as stated, else as after filling slowly (isothermal). */
+export function chargeIn(gas: GasNote, setting: Setting): { readonly oil: number; readonly pressure: number } {
+  const oil = setting.oil[gas.component];
+  if (oil === undefined || oil === 'empty' || !(oil > 0)) return { oil: 0, pressure: gas.precharge };
+  return { oil, pressure: setting.gasPressures?.[gas.component] ?? pressureWith(gas.volume, gas.precharge, oil, 1) };
+}
+
 const kilo = (t: ForceOverPosition): ForceTable => ({ at: t.at, force: t.force.map(toKilo) });
 const constant = (newton: number): ForceTable => ({ at: [0], force: [toKilo(newton)] });
 
@@ -59,8 +67,8 @@ export function requestOf(assembled: Assembled, setting: Setting, brakes: readon
   const { bodies } = assembled;
   const positions = bodies.map((b) => positionOf(b, setting));
   const gas = assembled.gases.map((g): GasState => {
-    const oil = setting.oil[g.component];
-    return oil === undefined || oil === 'empty' || !(oil > 0) ? 'empty' : toLitres(oil);
+    const { oil, pressure } = chargeIn(g, setting);
+    return oil > 0 ? { oil: toLitres(oil), pressure: toMPa(pressure) } : 'empty';
   });
   return {
     positions,

@@ -97,6 +97,7 @@ function withBits(
 ): { solution: Solution; bits: Readonly<Record<string, boolean>> } {
   const bits: Record<string, boolean> = { ...setting.bits };
   for (const m of assembled.memories) {
+    if (m.kind !== 'held') bits[m.component] ??= false;
     if (m.kind === 'held' && setting.bits[m.component] === undefined) bits[m.component] = (near?.openings[m.component] ?? 0) <= 0;
   }
   const turns = new Map<string, number>();

@@ -3,17 +3,35 @@ import type { Network, SteadyResult } from '@oilway/engine';
 import type { Assembled } from './assembled.ts';
 import { translate } from './diagnosis.ts';
 import type { Setting, Solution, Stand } from './machine.ts';
-import { forceAt, ofBody, positionOf } from './setting.ts';
+import { chargeIn, forceAt, ofBody, positionOf } from './setting.ts';
 import { fromKilo, fromLitresPerSecond, fromMPa, toMPa } from './units.ts';
 
 /** Laminar core of pressure-dependent friction, MPa. */
 const DELTA = 0.01;
 
+/** Where bodies and gas charges stand: m or rad by body index, oil m3 and absolute pressure Pa by accumulator index. */
+export interface Standing {
+  readonly positions: readonly number[];
+  readonly oil: readonly { readonly oil: number; readonly pressure: number }[];
+}
+export const standingOf = (assembled: Assembled, setting: Setting): Standing => ({
+  positions: assembled.bodies.map((b) => positionOf(b, setting)),
+  oil: assembled.gases.map((g) => chargeIn(g, setting)),
+});
+
 /** `brakes`: torque held by body index, N.m. */
-export function solutionOf(assembled: Assembled, network: Network, setting: Setting, result: SteadyResult, brakes: readonly number[]): Solution {
+export function solutionOf(
+  assembled: Assembled,
+  network: Network,
+  setting: Setting,
+  result: SteadyResult,
+  brakes: readonly number[],
+  standing: Standing = standingOf(assembled, setting),
+  parameters: Float64Array = network.parameters,
+): Solution {
   const pressures: Record<string, number> = {};
   for (const [net, node] of assembled.nodeOf) pressures[net] = fromMPa(result.pressures[node] ?? 0);
-  const flows = flowsOf(assembled, network, setting, result);
+  const flows = flowsOf(assembled, network, standing, result);
   const openings: Record<string, number> = {};
   for (const o of assembled.openings) openings[o.component] = result.openings[o.element] ?? 0;
   const lifting = assembled.liftings.filter((l) => terminalFlow(result, l.element, 0) > l.above).map((l) => l.component);
@@ -23,7 +41,7 @@ export function solutionOf(assembled: Assembled, network: Network, setting: Sett
   const forces: Record<string, number> = {};
   const stopForces: Record<string, number> = {};
   assembled.bodies.forEach((body, i) => {
-    const x = positionOf(body, setting);
+    const x = standing.positions[i] ?? 0;
     const v = result.velocities[i] ?? 0;
     velocities[body.id] = v;
     positions[body.id] = x;
@@ -38,7 +56,7 @@ export function solutionOf(assembled: Assembled, network: Network, setting: Sett
     }
     const load = ofBody(setting.loads, body);
     const total = own + (load?.friction ?? 0);
-    const friction = sealAsResist(assembled, i, setting, v, fromKilo(result.frictionForces[i] ?? 0), own, total);
+    const friction = sealAsResist(assembled, i, setting, x, v, fromKilo(result.frictionForces[i] ?? 0), own, total);
     forces[body.id] = fromKilo(pressed + (result.stopForces[i] ?? 0)) + friction;
   });
 
@@ -55,16 +73,17 @@ export function solutionOf(assembled: Assembled, network: Network, setting: Sett
     shaft[pump.drive] = (shaft[pump.drive] ?? 0) + watts;
   }
   const oil: Record<string, number> = {};
-  for (const g of assembled.gases) {
-    const there = setting.oil[g.component];
-    oil[g.component] = typeof there === 'number' ? there : 0;
-  }
+  const gasPressures: Record<string, number> = {};
+  assembled.gases.forEach((g, i) => {
+    oil[g.component] = standing.oil[i]?.oil ?? 0;
+    gasPressures[g.component] = standing.oil[i]?.pressure ?? g.precharge;
+  });
   const stands: Record<string, Stand> = {};
   for (const v of assembled.valves) stands[v.component] = setting.valves[v.component] ?? { position: v.rest };
   const bits: Record<string, boolean> = {};
   for (const m of assembled.memories) bits[m.component] = setting.bits[m.component] === true;
 
-  const diagnosis = translate(assembled, result.diagnosis, result, network.parameters, stands);
+  const diagnosis = translate(assembled, result.diagnosis, result, parameters, stands);
   const undetermined: Record<string, { low: number; high: number }> = {};
   for (const d of diagnosis) if (d.kind === 'CLOSED VOLUME') for (const net of d.nets) undetermined[net] = { low: d.low, high: d.high };
   return {
@@ -80,6 +99,7 @@ export function solutionOf(assembled: Assembled, network: Network, setting: Sett
     stopForces,
     shaft,
     oil,
+    gasPressures,
     stands,
     bits,
     diagnosis,
@@ -107,7 +127,7 @@ export function terminalPorts(assembled: Assembled, network: Network, element: n
   return ports;
 }
 
-function flowsOf(assembled: Assembled, network: Network, setting: Setting, result: SteadyResult): Record<string, number> {
+function flowsOf(assembled: Assembled, network: Network, standing: Standing, result: SteadyResult): Record<string, number> {
   const flows: Record<string, number> = {};
   const add = (component: string, port: string | undefined, litres: number): void => {
     if (port === undefined) return;
@@ -119,9 +139,7 @@ function flowsOf(assembled: Assembled, network: Network, setting: Setting, resul
     else terminalPorts(assembled, network, e).forEach((port, t) => add(note.component, port, terminalFlow(result, e, t)));
   });
   for (const c of assembled.chambers) {
-    const body = assembled.bodies[c.body];
-    if (body === undefined) continue;
-    add(c.component, c.port, areaAt(c, positionOf(body, setting)) * (result.velocities[c.body] ?? 0));
+    add(c.component, c.port, areaAt(c, standing.positions[c.body] ?? 0) * (result.velocities[c.body] ?? 0));
   }
   assembled.gases.forEach((g, i) => add(g.component, 'P', result.gasFlows[i] ?? 0));
   return flows;
@@ -152,22 +170,22 @@ function ownFriction(assembled: Assembled, i: number, result: SteadyResult, brak
 }
 
 /** The part of the friction acting on the body that is the actuator's own, N. In states seal friction is a resistance of one direction. */
-function sealAsResist(assembled: Assembled, i: number, setting: Setting, v: number, acting: number, own: number, total: number): number {
+function sealAsResist(assembled: Assembled, i: number, setting: Setting, x: number, v: number, acting: number, own: number, total: number): number {
   const body = assembled.bodies[i];
   if (body === undefined) return 0;
   if (setting.sealFriction === 'not with load') {
     const fixed = ofBody(setting.loads, body)?.fixed ?? [];
-    const pushes = fixed.reduce((sum, t) => sum + forceAt(t, positionOf(body, setting)), 0);
+    const pushes = fixed.reduce((sum, t) => sum + forceAt(t, x), 0);
     if (Math.abs(pushes) > 1) return v * pushes < 0 && Math.abs(v) > 3e-5 ? -Math.sign(v) * body.sealFriction : 0;
   }
   return total > 0 ? (acting * own) / total : 0;
 }
 
-/** Torque each brake holds at these pressures, by body index, N.m. */
-export function brakesAt(assembled: Assembled, result: SteadyResult | undefined): number[] {
+/** Torque each brake holds at these pressures (MPa by node; none: without pressure), by body index, N.m. */
+export function brakesAt(assembled: Assembled, pressures: Float64Array | undefined): number[] {
   const held = assembled.bodies.map(() => 0);
   for (const b of assembled.brakes) {
-    const p = result === undefined ? 0 : (result.pressures[b.node] ?? 0) - toMPa(assembled.heads[b.component] ?? 0);
+    const p = pressures === undefined ? 0 : (pressures[b.node] ?? 0) - toMPa(assembled.heads[b.component] ?? 0);
     held[b.body] = (held[b.body] ?? 0) + b.torque * Math.min(1, Math.max(0, 1 - p / toMPa(b.opens)));
   }
   return held;

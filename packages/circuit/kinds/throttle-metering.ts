@@ -28,12 +28,12 @@ export function addMetering(component: Component, into: Assembly, a: End, b: End
   const passes = flowAt(component, 'passes');
   if (passes !== undefined) {
     const declared = si(component, 'opening') ?? 1;
-    // A coil commands a share of `passes` (ratio), or a flow of it.
+    // A coil commands a share of the full opening.
     const opening = into.parameter(component, 'opening', declared);
     if (coil !== undefined) {
       into.onSetting((setting, put) => {
         const asked = setting.commands[coil] ?? setting.commands[id];
-        put(opening, asked === undefined ? 0 : Math.min(1, Math.max(0, asked / passes.flow)));
+        put(opening, asked === undefined ? 0 : Math.min(1, Math.max(0, asked)));
       });
     }
     into.add(component, { type: 'path', a: a.node, b: b.node, k: pathK(scaled(passes, into)), opening }, [a.port, b.port], 'in to out');

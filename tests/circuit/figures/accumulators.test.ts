@@ -26,9 +26,8 @@ test('a charge with that oil in holds its line at that pressure', () => {
   const m = machineOf(`${HEAD}accumulator ACC1 (bladder, volume 10 L, precharge 90 bar at 45 degC, gas nitrogen)
 shutoff BV1 (closed)
 working ACC1 to BV1 to R1`);
-  for (const n of [1, 1.4]) {
-    const s = m.solve({ ...blank, oil: { ACC1: oilAt(0.01, gauge(90), gauge(200), n) }, gasExponent: n });
-    expect(toBar(s.pressures['ACC1.P'])).toBeCloseTo(200, 3);
-  }
+  expect(toBar(m.solve({ ...blank, oil: { ACC1: oilAt(0.01, gauge(90), gauge(200), 1) } }).pressures['ACC1.P'])).toBeCloseTo(200, 3);
+  const cold = m.solve({ ...blank, oil: { ACC1: 0.002 }, gasPressures: { ACC1: gauge(100) } });
+  expect(toBar(cold.pressures['ACC1.P'])).toBeCloseTo(100, 3);
   expect(m.solve({ ...blank, oil: { ACC1: 'empty' } }).undetermined['ACC1.P']).toBeDefined();
 });

@@ -1,0 +1,139 @@
+/** Runs in time: shifting, stops, watches, memory bits, accumulators. */
+import { expect, test } from 'vitest';
+import { delivers, HEAD, toBar } from '../support/bench.ts';
+import { blank, load, machineOf } from '../support/text.ts';
+
+const RAM = `${HEAD}${delivers('P1', 30, 'V1.P, RV1')}
+relief RV1 (set 100 bar, passes 40 L/min at 5 bar)
+directional V1 (4/3, centre closed, spring to centre, coil a SOL1, coil b SOL2, takes 80 ms, passes 60 L/min at 5 bar)
+cylinder C1 (bore 50 mm, rod 28 mm, stroke 300 mm)
+working V1.A to C1.cap
+working V1.B to C1.rod
+return V1.T, RV1 to R1`;
+const A = (Math.PI * 0.05 ** 2) / 4;
+
+test('a cylinder goes out and back: time by flow over area, stop at the end, pressures between', () => {
+  const m = machineOf(RAM);
+  const rest = m.settle(blank);
+  expect(toBar(rest.pressures['P1.P'])).toBeGreaterThan(100);
+  const run = m.start(blank, rest);
+  run.shift('V1', { position: 'a' });
+  const out = run.advance(10, [{ what: 'position', body: 'C1', threshold: 0.2, edge: 'rising' }]);
+  expect(out.failed).toBeUndefined();
+  expect(out.fired).toEqual([0]);
+  expect(run.now().positions['C1']).toBeCloseTo(0.2, 6);
+  // 30 L/min into the cap once the valve is over, and a little that the oil at 107 bar gives when it expands.
+  const stroke = (0.2 * A) / (30 / 60000);
+  expect(out.time).toBeGreaterThan(stroke + 0.035);
+  expect(out.time).toBeLessThan(stroke + 0.09);
+  const end = run.advance(out.time + 2, []);
+  expect(end.happened.map((h) => h.words)).toContain('C1 reaches its stop, extended');
+  const stalled = run.now();
+  expect(toBar(stalled.pressures['V1.A'])).toBeGreaterThan(100);
+  expect(stalled.lifting).toEqual(['RV1']);
+  run.shift('V1', { position: 'b' });
+  const back = run.advance(end.time + 5, [{ what: 'position', body: 'C1', threshold: 0.01, edge: 'falling' }]);
+  expect(back.fired).toEqual([0]);
+  expect(back.happened.map((h) => h.words)).toContain('C1 leaves its stop');
+  const annulus = A - (Math.PI * 0.028 ** 2) / 4;
+  expect(back.time - end.time).toBeGreaterThan((0.29 * annulus) / (30 / 60000));
+});
+
+test('the valve is closed in the middle of its shift: all flow over the relief', () => {
+  const m = machineOf(RAM);
+  const start = { ...blank, valves: { V1: { position: 'a' as const } }, positions: { C1: 0.1 } };
+  const run = m.start(start, m.settle(start));
+  run.shift('V1', { position: 'b' });
+  run.advance(0.04, []);
+  const middle = run.now();
+  expect(middle.flows['V1.P']).toBeCloseTo(0, 8);
+  expect(middle.stands['V1']?.position).toBe('a');
+  run.advance(0.2, []);
+  expect(run.now().stands['V1']?.position).toBe('b');
+  expect(run.now().velocities['C1']).toBeLessThan(-0.1);
+});
+
+test('a pressure watch fires on the way', () => {
+  const m = machineOf(RAM);
+  const start = { ...blank, loads: { C1: load(0, 0, 0) } };
+  const run = m.start(start, m.settle(start));
+  run.shift('V1', { position: 'a' });
+  const report = run.advance(10, [{ what: 'pressure', net: 'V1.A', threshold: 60e5, edge: 'rising' }]);
+  expect(report.fired).toEqual([0]);
+  expect(toBar(run.now().pressures['V1.A'])).toBeCloseTo(60, 3);
+  expect(run.now().positions['C1']).toBeCloseTo(0.3, 9);
+});
+
+test('an unloading valve lifts when the high-pressure pump has filled the store and closes when it is drawn down', () => {
+  const m = machineOf(`${HEAD}${delivers('P1', 20, 'UV1, CV1')}
+pump P2 (displacement 6 cm3/rev, driven by M1, volumetric 100 %)
+suction R1 to P2
+unloading UV1 (set 90 bar, closes 70 bar, passes 40 L/min at 3 bar)
+check CV1 (crack 0.5 bar, passes 40 L/min at 2 bar)
+accumulator ACC1 (bladder, volume 2 L, precharge 50 bar at 45 degC, gas nitrogen)
+throttle FC1 (set 4 L/min, compensated)
+throttle FC2 (set 10 L/min, compensated)
+directional V1 (2/2, normally closed, coil SOL1, passes 40 L/min at 1 bar, poppet, takes 20 ms)
+working store: P2, CV1 to ACC1, FC1.in, V1.P
+working V1.A to FC2
+pilot store to UV1.X
+return UV1, FC1.out, FC2.out to R1`);
+  const run = m.start(blank, m.settle(blank));
+  const up = run.advance(60, [{ what: 'pressure', net: 'store', threshold: 100e5, edge: 'rising' }]);
+  expect(up.fired).toEqual([0]);
+  expect(up.happened.map((h) => h.words)).toEqual(['UV1 has lifted']);
+  expect(run.now().bits['UV1']).toBe(true);
+  run.shift('V1', { position: 'a' });
+  const down = run.advance(up.time + 60, [{ what: 'pressure', net: 'store', threshold: 69e5, edge: 'falling' }]);
+  const closed = down.happened.find((h) => h.words === 'UV1 has closed');
+  expect(closed).toBeDefined();
+  // From 100 to 70 bar at n = 1.4, 4 + 10 - 6 L/min: V0 ((p0/p1)^(1/n) - (p0/p2)^(1/n)).
+  const [p0, p1, p2] = [51.01325, 71.01325, 101.01325];
+  const taken = 2 * ((p0 / p1) ** (1 / 1.4) - (p0 / p2) ** (1 / 1.4));
+  expect(Math.abs(((closed?.time ?? 0) - up.time) / ((taken / 8) * 60) - 1)).toBeLessThan(0.03);
+});
+
+test('a piloted valve waits for its pilot pressure and shifts when it comes', () => {
+  const m = machineOf(`${HEAD}${delivers('P1', 20, 'V2.P, V1.P, RV1')}
+relief RV1 (set 100 bar, passes 40 L/min at 5 bar)
+directional V2 (2/2, normally open, coil a SOL2, passes 40 L/min at 1 bar)
+directional V1 (4/2, spring to b, internal pilot, needs 15 bar, coil a SOL1, passes 40 L/min at 5 bar, centre closed)
+cylinder C1 (bore 50 mm, rod 28 mm, stroke 300 mm, begins retracted)
+working V1.A to C1.cap
+working V1.B to C1.rod
+return V1.T, RV1, V2.A to R1`.replace(', centre closed', ''));
+  const asked = { ...blank, valves: { V1: { position: 'a' as const } } };
+  const settled = m.settle(asked);
+  expect(settled.remarks[0]?.words).toMatch(/^V1 cannot shift: 0\.\d of 15 bar$/);
+  expect(settled.stands['V1']?.position).toBe('b');
+  const loaded = { ...blank, loads: { C1: load(0, 6000) } };
+  const run = m.start(loaded, m.settle(loaded));
+  run.shift('V1', { position: 'a' });
+  const waits = run.advance(0.5, []);
+  expect(waits.happened[0]?.words).toMatch(/^V1 cannot shift/);
+  run.shift('V2', { position: 'b' });
+  const goes = run.advance(1.5, []);
+  expect(goes.happened.map((h) => h.words)).toContain('V1 shifts to a');
+  expect(run.now().velocities['C1']).toBeGreaterThan(0);
+});
+
+test('a proportional command is followed along its ramp', () => {
+  const m = machineOf(`${HEAD}${delivers('P1', 60, 'V1.P, RV1')}
+relief RV1 (set 100 bar, passes 80 L/min at 5 bar)
+directional V1 (4/3, proportional, centre closed, spring to centre, coil a SOL1, coil b SOL2, compensator 5 bar, passes 30 L/min at 5 bar)
+cylinder C1 (bore 50 mm, rod 28 mm, stroke 900 mm)
+working V1.A to C1.cap
+working V1.B to C1.rod
+return V1.T, RV1 to R1`);
+  const run = m.start(blank, m.settle(blank));
+  run.shift('V1', { position: 'a', opening: 0.8 }, { over: 1 });
+  run.advance(0.5, []);
+  expect((run.now().velocities['C1'] ?? 0) * A * 60000).toBeCloseTo(0.4 * 30, 1);
+  run.advance(1.5, []);
+  expect((run.now().velocities['C1'] ?? 0) * A * 60000).toBeCloseTo(0.8 * 30, 1);
+  run.shift('V1', { position: 'b', opening: 0.5 }, { over: 1.3 });
+  run.advance(1.5 + 0.8, []);
+  expect(Math.abs(run.now().velocities['C1'] ?? 1)).toBeLessThan(1e-4);
+  run.advance(3, []);
+  expect(run.now().velocities['C1']).toBeLessThan(-0.1);
+});
