@@ -17,28 +17,16 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
       "entry": true,
       "name": "File",
       "definition": {
-        "$type": "Group",
-        "elements": [
-          {
-            "$type": "Assignment",
-            "feature": "statements",
-            "operator": "+=",
-            "terminal": {
-              "$type": "RuleCall",
-              "rule": {
-                "$ref": "#/rules@1"
-              },
-              "arguments": []
-            }
+        "$type": "Assignment",
+        "feature": "statements",
+        "operator": "+=",
+        "terminal": {
+          "$type": "RuleCall",
+          "rule": {
+            "$ref": "#/rules@1"
           },
-          {
-            "$type": "RuleCall",
-            "rule": {
-              "$ref": "#/rules@93"
-            },
-            "arguments": []
-          }
-        ],
+          "arguments": []
+        },
         "cardinality": "*"
       },
       "fragment": false,
@@ -51,102 +39,147 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
         "$type": "Alternatives",
         "elements": [
           {
-            "$type": "RuleCall",
-            "rule": {
-              "$ref": "#/rules@3"
-            },
-            "arguments": []
-          },
-          {
-            "$type": "RuleCall",
-            "rule": {
-              "$ref": "#/rules@4"
-            },
-            "arguments": []
-          },
-          {
-            "$type": "RuleCall",
-            "rule": {
-              "$ref": "#/rules@5"
-            },
-            "arguments": []
-          },
-          {
-            "$type": "RuleCall",
-            "rule": {
-              "$ref": "#/rules@6"
-            },
-            "arguments": []
-          },
-          {
-            "$type": "RuleCall",
-            "rule": {
-              "$ref": "#/rules@7"
-            },
-            "arguments": []
-          },
-          {
-            "$type": "RuleCall",
-            "rule": {
-              "$ref": "#/rules@10"
-            },
-            "arguments": []
-          },
-          {
-            "$type": "RuleCall",
-            "rule": {
-              "$ref": "#/rules@11"
-            },
-            "arguments": []
-          },
-          {
-            "$type": "RuleCall",
-            "rule": {
-              "$ref": "#/rules@12"
-            },
-            "arguments": []
-          },
-          {
-            "$type": "RuleCall",
-            "rule": {
-              "$ref": "#/rules@15"
-            },
-            "arguments": []
-          },
-          {
-            "$type": "RuleCall",
-            "rule": {
-              "$ref": "#/rules@16"
-            },
-            "arguments": []
-          },
-          {
-            "$type": "RuleCall",
-            "rule": {
-              "$ref": "#/rules@17"
-            },
-            "arguments": []
-          },
-          {
-            "$type": "RuleCall",
-            "rule": {
-              "$ref": "#/rules@18"
-            },
-            "arguments": []
-          },
-          {
-            "$type": "RuleCall",
-            "rule": {
-              "$ref": "#/rules@20"
-            },
-            "arguments": []
-          },
-          {
-            "$type": "RuleCall",
-            "rule": {
-              "$ref": "#/rules@21"
-            },
-            "arguments": []
+            "$type": "Group",
+            "elements": [
+              {
+                "$type": "Alternatives",
+                "elements": [
+                  {
+                    "$type": "RuleCall",
+                    "rule": {
+                      "$ref": "#/rules@3"
+                    },
+                    "arguments": []
+                  },
+                  {
+                    "$type": "RuleCall",
+                    "rule": {
+                      "$ref": "#/rules@4"
+                    },
+                    "arguments": []
+                  },
+                  {
+                    "$type": "RuleCall",
+                    "rule": {
+                      "$ref": "#/rules@5"
+                    },
+                    "arguments": []
+                  },
+                  {
+                    "$type": "RuleCall",
+                    "rule": {
+                      "$ref": "#/rules@6"
+                    },
+                    "arguments": []
+                  },
+                  {
+                    "$type": "RuleCall",
+                    "rule": {
+                      "$ref": "#/rules@7"
+                    },
+                    "arguments": []
+                  },
+                  {
+                    "$type": "RuleCall",
+                    "rule": {
+                      "$ref": "#/rules@10"
+                    },
+                    "arguments": []
+                  },
+                  {
+                    "$type": "RuleCall",
+                    "rule": {
+                      "$ref": "#/rules@13"
+                    },
+                    "arguments": []
+                  },
+                  {
+                    "$type": "RuleCall",
+                    "rule": {
+                      "$ref": "#/rules@16"
+                    },
+                    "arguments": []
+                  },
+                  {
+                    "$type": "RuleCall",
+                    "rule": {
+                      "$ref": "#/rules@17"
+                    },
+                    "arguments": []
+                  },
+                  {
+                    "$type": "RuleCall",
+                    "rule": {
+                      "$ref": "#/rules@18"
+                    },
+                    "arguments": []
+                  },
+                  {
+                    "$type": "RuleCall",
+                    "rule": {
+                      "$ref": "#/rules@19"
+                    },
+                    "arguments": []
+                  },
+                  {
+                    "$type": "RuleCall",
+                    "rule": {
+                      "$ref": "#/rules@21"
+                    },
+                    "arguments": []
+                  },
+                  {
+                    "$type": "RuleCall",
+                    "rule": {
+                      "$ref": "#/rules@24"
+                    },
+                    "arguments": []
+                  },
+                  {
+                    "$type": "RuleCall",
+                    "rule": {
+                      "$ref": "#/rules@26"
+                    },
+                    "arguments": []
+                  },
+                  {
+                    "$type": "RuleCall",
+                    "rule": {
+                      "$ref": "#/rules@27"
+                    },
+                    "arguments": []
+                  },
+                  {
+                    "$type": "RuleCall",
+                    "rule": {
+                      "$ref": "#/rules@28"
+                    },
+                    "arguments": []
+                  },
+                  {
+                    "$type": "RuleCall",
+                    "rule": {
+                      "$ref": "#/rules@43"
+                    },
+                    "arguments": []
+                  },
+                  {
+                    "$type": "RuleCall",
+                    "rule": {
+                      "$ref": "#/rules@2"
+                    },
+                    "arguments": []
+                  }
+                ]
+              },
+              {
+                "$type": "RuleCall",
+                "rule": {
+                  "$ref": "#/rules@95"
+                },
+                "arguments": []
+              }
+            ]
           },
           {
             "$type": "RuleCall",
@@ -158,35 +191,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
           {
             "$type": "RuleCall",
             "rule": {
-              "$ref": "#/rules@24"
-            },
-            "arguments": []
-          },
-          {
-            "$type": "RuleCall",
-            "rule": {
-              "$ref": "#/rules@25"
-            },
-            "arguments": []
-          },
-          {
-            "$type": "RuleCall",
-            "rule": {
-              "$ref": "#/rules@26"
-            },
-            "arguments": []
-          },
-          {
-            "$type": "RuleCall",
-            "rule": {
-              "$ref": "#/rules@41"
-            },
-            "arguments": []
-          },
-          {
-            "$type": "RuleCall",
-            "rule": {
-              "$ref": "#/rules@2"
+              "$ref": "#/rules@11"
             },
             "arguments": []
           }
@@ -206,7 +211,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
         "terminal": {
           "$type": "RuleCall",
           "rule": {
-            "$ref": "#/rules@92"
+            "$ref": "#/rules@94"
           },
           "arguments": []
         }
@@ -232,7 +237,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@89"
+                "$ref": "#/rules@91"
               },
               "arguments": []
             }
@@ -244,7 +249,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@95"
+                "$ref": "#/rules@97"
               },
               "arguments": []
             },
@@ -273,7 +278,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@95"
+                "$ref": "#/rules@97"
               },
               "arguments": []
             }
@@ -301,7 +306,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@90"
+                "$ref": "#/rules@92"
               },
               "arguments": []
             },
@@ -330,7 +335,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@89"
+                "$ref": "#/rules@91"
               },
               "arguments": []
             }
@@ -346,7 +351,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@73"
+                "$ref": "#/rules@75"
               },
               "arguments": []
             }
@@ -392,7 +397,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@89"
+                "$ref": "#/rules@91"
               },
               "arguments": []
             }
@@ -411,7 +416,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
                 "terminal": {
                   "$type": "RuleCall",
                   "rule": {
-                    "$ref": "#/rules@89"
+                    "$ref": "#/rules@91"
                   },
                   "arguments": []
                 }
@@ -433,7 +438,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
                 "terminal": {
                   "$type": "RuleCall",
                   "rule": {
-                    "$ref": "#/rules@89"
+                    "$ref": "#/rules@91"
                   },
                   "arguments": []
                 }
@@ -448,7 +453,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@55"
+                "$ref": "#/rules@57"
               },
               "arguments": []
             },
@@ -461,7 +466,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@95"
+                "$ref": "#/rules@97"
               },
               "arguments": []
             },
@@ -646,7 +651,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@89"
+                "$ref": "#/rules@91"
               },
               "arguments": []
             }
@@ -665,7 +670,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
                 "terminal": {
                   "$type": "RuleCall",
                   "rule": {
-                    "$ref": "#/rules@89"
+                    "$ref": "#/rules@91"
                   },
                   "arguments": []
                 }
@@ -684,7 +689,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@89"
+                "$ref": "#/rules@91"
               },
               "arguments": []
             }
@@ -696,7 +701,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@55"
+                "$ref": "#/rules@57"
               },
               "arguments": []
             },
@@ -709,7 +714,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@95"
+                "$ref": "#/rules@97"
               },
               "arguments": []
             },
@@ -728,6 +733,47 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
         "$type": "Group",
         "elements": [
           {
+            "$type": "RuleCall",
+            "rule": {
+              "$ref": "#/rules@12"
+            },
+            "arguments": []
+          },
+          {
+            "$type": "Keyword",
+            "value": "{"
+          },
+          {
+            "$type": "Assignment",
+            "feature": "statements",
+            "operator": "+=",
+            "terminal": {
+              "$type": "RuleCall",
+              "rule": {
+                "$ref": "#/rules@1"
+              },
+              "arguments": []
+            },
+            "cardinality": "*"
+          },
+          {
+            "$type": "Keyword",
+            "value": "}"
+          }
+        ]
+      },
+      "entry": false,
+      "fragment": false,
+      "parameters": []
+    },
+    {
+      "$type": "ParserRule",
+      "fragment": true,
+      "name": "AssemblyHead",
+      "definition": {
+        "$type": "Group",
+        "elements": [
+          {
             "$type": "Keyword",
             "value": "assembly"
           },
@@ -738,7 +784,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@89"
+                "$ref": "#/rules@91"
               },
               "arguments": []
             }
@@ -750,7 +796,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@55"
+                "$ref": "#/rules@57"
               },
               "arguments": []
             },
@@ -767,7 +813,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@89"
+                "$ref": "#/rules@91"
               },
               "arguments": []
             }
@@ -786,7 +832,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
                 "terminal": {
                   "$type": "RuleCall",
                   "rule": {
-                    "$ref": "#/rules@89"
+                    "$ref": "#/rules@91"
                   },
                   "arguments": []
                 }
@@ -795,42 +841,15 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "cardinality": "*"
           },
           {
-            "$type": "Keyword",
-            "value": "{"
-          },
-          {
-            "$type": "Group",
-            "elements": [
-              {
-                "$type": "Assignment",
-                "feature": "statements",
-                "operator": "+=",
-                "terminal": {
-                  "$type": "RuleCall",
-                  "rule": {
-                    "$ref": "#/rules@1"
-                  },
-                  "arguments": []
-                }
-              },
-              {
-                "$type": "RuleCall",
-                "rule": {
-                  "$ref": "#/rules@93"
-                },
-                "arguments": []
-              }
-            ],
-            "cardinality": "*"
-          },
-          {
-            "$type": "Keyword",
-            "value": "}"
+            "$type": "RuleCall",
+            "rule": {
+              "$ref": "#/rules@95"
+            },
+            "arguments": []
           }
         ]
       },
       "entry": false,
-      "fragment": false,
       "parameters": []
     },
     {
@@ -846,7 +865,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@13"
+                "$ref": "#/rules@14"
               },
               "arguments": []
             }
@@ -861,7 +880,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
                 "terminal": {
                   "$type": "RuleCall",
                   "rule": {
-                    "$ref": "#/rules@89"
+                    "$ref": "#/rules@91"
                   },
                   "arguments": []
                 }
@@ -880,7 +899,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@14"
+                "$ref": "#/rules@15"
               },
               "arguments": []
             }
@@ -899,7 +918,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
                 "terminal": {
                   "$type": "RuleCall",
                   "rule": {
-                    "$ref": "#/rules@14"
+                    "$ref": "#/rules@15"
                   },
                   "arguments": []
                 }
@@ -914,7 +933,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@55"
+                "$ref": "#/rules@57"
               },
               "arguments": []
             },
@@ -972,7 +991,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@87"
+                "$ref": "#/rules@89"
               },
               "arguments": []
             }
@@ -991,7 +1010,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
                 "terminal": {
                   "$type": "RuleCall",
                   "rule": {
-                    "$ref": "#/rules@87"
+                    "$ref": "#/rules@89"
                   },
                   "arguments": []
                 }
@@ -1022,7 +1041,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@87"
+                "$ref": "#/rules@89"
               },
               "arguments": []
             }
@@ -1041,7 +1060,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
                 "terminal": {
                   "$type": "RuleCall",
                   "rule": {
-                    "$ref": "#/rules@87"
+                    "$ref": "#/rules@89"
                   },
                   "arguments": []
                 }
@@ -1072,7 +1091,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@87"
+                "$ref": "#/rules@89"
               },
               "arguments": []
             }
@@ -1091,7 +1110,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
                 "terminal": {
                   "$type": "RuleCall",
                   "rule": {
-                    "$ref": "#/rules@87"
+                    "$ref": "#/rules@89"
                   },
                   "arguments": []
                 }
@@ -1106,7 +1125,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@55"
+                "$ref": "#/rules@57"
               },
               "arguments": []
             },
@@ -1135,7 +1154,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@55"
+                "$ref": "#/rules@57"
               },
               "arguments": []
             },
@@ -1164,7 +1183,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@95"
+                "$ref": "#/rules@97"
               },
               "arguments": []
             }
@@ -1183,7 +1202,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
                 "terminal": {
                   "$type": "RuleCall",
                   "rule": {
-                    "$ref": "#/rules@19"
+                    "$ref": "#/rules@20"
                   },
                   "arguments": []
                 }
@@ -1202,7 +1221,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
                     "terminal": {
                       "$type": "RuleCall",
                       "rule": {
-                        "$ref": "#/rules@19"
+                        "$ref": "#/rules@20"
                       },
                       "arguments": []
                     }
@@ -1236,7 +1255,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@87"
+                "$ref": "#/rules@89"
               },
               "arguments": []
             }
@@ -1251,7 +1270,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
                 "terminal": {
                   "$type": "RuleCall",
                   "rule": {
-                    "$ref": "#/rules@95"
+                    "$ref": "#/rules@97"
                   },
                   "arguments": []
                 }
@@ -1263,7 +1282,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
                 "terminal": {
                   "$type": "RuleCall",
                   "rule": {
-                    "$ref": "#/rules@97"
+                    "$ref": "#/rules@99"
                   },
                   "arguments": []
                 }
@@ -1293,7 +1312,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@89"
+                "$ref": "#/rules@91"
               },
               "arguments": []
             }
@@ -1312,7 +1331,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
                 "terminal": {
                   "$type": "RuleCall",
                   "rule": {
-                    "$ref": "#/rules@87"
+                    "$ref": "#/rules@89"
                   },
                   "arguments": []
                 }
@@ -1327,7 +1346,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@45"
+                "$ref": "#/rules@47"
               },
               "arguments": []
             },
@@ -1340,7 +1359,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@95"
+                "$ref": "#/rules@97"
               },
               "arguments": []
             },
@@ -1355,6 +1374,47 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
     {
       "$type": "ParserRule",
       "name": "Cycle",
+      "definition": {
+        "$type": "Group",
+        "elements": [
+          {
+            "$type": "RuleCall",
+            "rule": {
+              "$ref": "#/rules@23"
+            },
+            "arguments": []
+          },
+          {
+            "$type": "Keyword",
+            "value": "{"
+          },
+          {
+            "$type": "Assignment",
+            "feature": "lines",
+            "operator": "+=",
+            "terminal": {
+              "$type": "RuleCall",
+              "rule": {
+                "$ref": "#/rules@1"
+              },
+              "arguments": []
+            },
+            "cardinality": "*"
+          },
+          {
+            "$type": "Keyword",
+            "value": "}"
+          }
+        ]
+      },
+      "entry": false,
+      "fragment": false,
+      "parameters": []
+    },
+    {
+      "$type": "ParserRule",
+      "fragment": true,
+      "name": "CycleHead",
       "definition": {
         "$type": "Group",
         "elements": [
@@ -1375,7 +1435,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
                     "terminal": {
                       "$type": "RuleCall",
                       "rule": {
-                        "$ref": "#/rules@89"
+                        "$ref": "#/rules@91"
                       },
                       "arguments": []
                     }
@@ -1402,7 +1462,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
                             "terminal": {
                               "$type": "RuleCall",
                               "rule": {
-                                "$ref": "#/rules@97"
+                                "$ref": "#/rules@99"
                               },
                               "arguments": []
                             }
@@ -1438,7 +1498,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
                     "terminal": {
                       "$type": "RuleCall",
                       "rule": {
-                        "$ref": "#/rules@89"
+                        "$ref": "#/rules@91"
                       },
                       "arguments": []
                     }
@@ -1454,49 +1514,22 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@95"
+                "$ref": "#/rules@97"
               },
               "arguments": []
             },
             "cardinality": "?"
           },
           {
-            "$type": "Keyword",
-            "value": "{"
-          },
-          {
-            "$type": "Group",
-            "elements": [
-              {
-                "$type": "Assignment",
-                "feature": "lines",
-                "operator": "+=",
-                "terminal": {
-                  "$type": "RuleCall",
-                  "rule": {
-                    "$ref": "#/rules@1"
-                  },
-                  "arguments": []
-                }
-              },
-              {
-                "$type": "RuleCall",
-                "rule": {
-                  "$ref": "#/rules@93"
-                },
-                "arguments": []
-              }
-            ],
-            "cardinality": "*"
-          },
-          {
-            "$type": "Keyword",
-            "value": "}"
+            "$type": "RuleCall",
+            "rule": {
+              "$ref": "#/rules@95"
+            },
+            "arguments": []
           }
         ]
       },
       "entry": false,
-      "fragment": false,
       "parameters": []
     },
     {
@@ -1512,7 +1545,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@23"
+                "$ref": "#/rules@25"
               },
               "arguments": []
             }
@@ -1524,7 +1557,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@89"
+                "$ref": "#/rules@91"
               },
               "arguments": []
             }
@@ -1536,7 +1569,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@27"
+                "$ref": "#/rules@29"
               },
               "arguments": []
             },
@@ -1556,7 +1589,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
                 "terminal": {
                   "$type": "RuleCall",
                   "rule": {
-                    "$ref": "#/rules@73"
+                    "$ref": "#/rules@75"
                   },
                   "arguments": []
                 }
@@ -1583,7 +1616,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
                 "terminal": {
                   "$type": "RuleCall",
                   "rule": {
-                    "$ref": "#/rules@33"
+                    "$ref": "#/rules@35"
                   },
                   "arguments": []
                 }
@@ -1613,7 +1646,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
                 "terminal": {
                   "$type": "RuleCall",
                   "rule": {
-                    "$ref": "#/rules@73"
+                    "$ref": "#/rules@75"
                   },
                   "arguments": []
                 }
@@ -1628,7 +1661,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@95"
+                "$ref": "#/rules@97"
               },
               "arguments": []
             },
@@ -1678,7 +1711,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@33"
+                "$ref": "#/rules@35"
               },
               "arguments": []
             }
@@ -1690,7 +1723,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@27"
+                "$ref": "#/rules@29"
               },
               "arguments": []
             }
@@ -1718,7 +1751,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@87"
+                "$ref": "#/rules@89"
               },
               "arguments": []
             }
@@ -1737,7 +1770,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
                 "terminal": {
                   "$type": "RuleCall",
                   "rule": {
-                    "$ref": "#/rules@87"
+                    "$ref": "#/rules@89"
                   },
                   "arguments": []
                 }
@@ -1756,7 +1789,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@33"
+                "$ref": "#/rules@35"
               },
               "arguments": []
             }
@@ -1791,7 +1824,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@27"
+                "$ref": "#/rules@29"
               },
               "arguments": []
             },
@@ -1804,7 +1837,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@95"
+                "$ref": "#/rules@97"
               },
               "arguments": []
             },
@@ -1825,13 +1858,6 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
           {
             "$type": "RuleCall",
             "rule": {
-              "$ref": "#/rules@28"
-            },
-            "arguments": []
-          },
-          {
-            "$type": "RuleCall",
-            "rule": {
               "$ref": "#/rules@30"
             },
             "arguments": []
@@ -1839,14 +1865,21 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
           {
             "$type": "RuleCall",
             "rule": {
-              "$ref": "#/rules@31"
+              "$ref": "#/rules@32"
             },
             "arguments": []
           },
           {
             "$type": "RuleCall",
             "rule": {
-              "$ref": "#/rules@32"
+              "$ref": "#/rules@33"
+            },
+            "arguments": []
+          },
+          {
+            "$type": "RuleCall",
+            "rule": {
+              "$ref": "#/rules@34"
             },
             "arguments": []
           }
@@ -1873,7 +1906,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@29"
+                "$ref": "#/rules@31"
               },
               "arguments": []
             }
@@ -1892,7 +1925,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
                 "terminal": {
                   "$type": "RuleCall",
                   "rule": {
-                    "$ref": "#/rules@29"
+                    "$ref": "#/rules@31"
                   },
                   "arguments": []
                 }
@@ -1919,7 +1952,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@87"
+                "$ref": "#/rules@89"
               },
               "arguments": []
             }
@@ -1941,7 +1974,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
                     "terminal": {
                       "$type": "RuleCall",
                       "rule": {
-                        "$ref": "#/rules@73"
+                        "$ref": "#/rules@75"
                       },
                       "arguments": []
                     }
@@ -1962,7 +1995,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
                     "terminal": {
                       "$type": "RuleCall",
                       "rule": {
-                        "$ref": "#/rules@73"
+                        "$ref": "#/rules@75"
                       },
                       "arguments": []
                     }
@@ -1978,7 +2011,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
                     "terminal": {
                       "$type": "RuleCall",
                       "rule": {
-                        "$ref": "#/rules@73"
+                        "$ref": "#/rules@75"
                       },
                       "arguments": []
                     }
@@ -2002,7 +2035,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
                 "terminal": {
                   "$type": "RuleCall",
                   "rule": {
-                    "$ref": "#/rules@73"
+                    "$ref": "#/rules@75"
                   },
                   "arguments": []
                 }
@@ -2033,7 +2066,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@87"
+                "$ref": "#/rules@89"
               },
               "arguments": []
             }
@@ -2049,7 +2082,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@90"
+                "$ref": "#/rules@92"
               },
               "arguments": []
             }
@@ -2077,7 +2110,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@87"
+                "$ref": "#/rules@89"
               },
               "arguments": []
             }
@@ -2096,7 +2129,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
                 "terminal": {
                   "$type": "RuleCall",
                   "rule": {
-                    "$ref": "#/rules@87"
+                    "$ref": "#/rules@89"
                   },
                   "arguments": []
                 }
@@ -2127,7 +2160,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@87"
+                "$ref": "#/rules@89"
               },
               "arguments": []
             }
@@ -2142,7 +2175,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
                 "terminal": {
                   "$type": "RuleCall",
                   "rule": {
-                    "$ref": "#/rules@97"
+                    "$ref": "#/rules@99"
                   },
                   "arguments": []
                 }
@@ -2173,7 +2206,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@36"
+                "$ref": "#/rules@38"
               },
               "arguments": []
             }
@@ -2188,7 +2221,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
                 "terminal": {
                   "$type": "RuleCall",
                   "rule": {
-                    "$ref": "#/rules@34"
+                    "$ref": "#/rules@36"
                   },
                   "arguments": []
                 }
@@ -2200,7 +2233,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
                 "terminal": {
                   "$type": "RuleCall",
                   "rule": {
-                    "$ref": "#/rules@36"
+                    "$ref": "#/rules@38"
                   },
                   "arguments": []
                 }
@@ -2224,7 +2257,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
         "terminal": {
           "$type": "RuleCall",
           "rule": {
-            "$ref": "#/rules@35"
+            "$ref": "#/rules@37"
           },
           "arguments": []
         }
@@ -2263,14 +2296,14 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
           {
             "$type": "RuleCall",
             "rule": {
-              "$ref": "#/rules@37"
+              "$ref": "#/rules@39"
             },
             "arguments": []
           },
           {
             "$type": "RuleCall",
             "rule": {
-              "$ref": "#/rules@38"
+              "$ref": "#/rules@40"
             },
             "arguments": []
           }
@@ -2297,7 +2330,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@33"
+                "$ref": "#/rules@35"
               },
               "arguments": []
             }
@@ -2325,7 +2358,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@87"
+                "$ref": "#/rules@89"
               },
               "arguments": []
             }
@@ -2340,7 +2373,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
                 "terminal": {
                   "$type": "RuleCall",
                   "rule": {
-                    "$ref": "#/rules@39"
+                    "$ref": "#/rules@41"
                   },
                   "arguments": []
                 }
@@ -2355,7 +2388,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
                     "terminal": {
                       "$type": "RuleCall",
                       "rule": {
-                        "$ref": "#/rules@40"
+                        "$ref": "#/rules@42"
                       },
                       "arguments": []
                     }
@@ -2367,7 +2400,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
                     "terminal": {
                       "$type": "RuleCall",
                       "rule": {
-                        "$ref": "#/rules@73"
+                        "$ref": "#/rules@75"
                       },
                       "arguments": []
                     }
@@ -2453,14 +2486,14 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
               {
                 "$type": "RuleCall",
                 "rule": {
-                  "$ref": "#/rules@42"
+                  "$ref": "#/rules@44"
                 },
                 "arguments": []
               },
               {
                 "$type": "RuleCall",
                 "rule": {
-                  "$ref": "#/rules@43"
+                  "$ref": "#/rules@45"
                 },
                 "arguments": []
               }
@@ -2489,7 +2522,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@33"
+                "$ref": "#/rules@35"
               },
               "arguments": []
             }
@@ -2513,7 +2546,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@87"
+                "$ref": "#/rules@89"
               },
               "arguments": []
             }
@@ -2537,7 +2570,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
                 "terminal": {
                   "$type": "RuleCall",
                   "rule": {
-                    "$ref": "#/rules@44"
+                    "$ref": "#/rules@46"
                   },
                   "arguments": []
                 }
@@ -2551,7 +2584,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@45"
+                "$ref": "#/rules@47"
               },
               "arguments": []
             },
@@ -2564,7 +2597,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@50"
+                "$ref": "#/rules@52"
               },
               "arguments": []
             },
@@ -2584,7 +2617,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
                 "terminal": {
                   "$type": "RuleCall",
                   "rule": {
-                    "$ref": "#/rules@73"
+                    "$ref": "#/rules@75"
                   },
                   "arguments": []
                 }
@@ -2612,7 +2645,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
         "terminal": {
           "$type": "RuleCall",
           "rule": {
-            "$ref": "#/rules@98"
+            "$ref": "#/rules@100"
           },
           "arguments": []
         }
@@ -2630,21 +2663,21 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
           {
             "$type": "RuleCall",
             "rule": {
-              "$ref": "#/rules@46"
-            },
-            "arguments": []
-          },
-          {
-            "$type": "RuleCall",
-            "rule": {
-              "$ref": "#/rules@47"
-            },
-            "arguments": []
-          },
-          {
-            "$type": "RuleCall",
-            "rule": {
               "$ref": "#/rules@48"
+            },
+            "arguments": []
+          },
+          {
+            "$type": "RuleCall",
+            "rule": {
+              "$ref": "#/rules@49"
+            },
+            "arguments": []
+          },
+          {
+            "$type": "RuleCall",
+            "rule": {
+              "$ref": "#/rules@50"
             },
             "arguments": []
           }
@@ -2671,7 +2704,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@87"
+                "$ref": "#/rules@89"
               },
               "arguments": []
             }
@@ -2690,7 +2723,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
                 "terminal": {
                   "$type": "RuleCall",
                   "rule": {
-                    "$ref": "#/rules@87"
+                    "$ref": "#/rules@89"
                   },
                   "arguments": []
                 }
@@ -2721,7 +2754,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@73"
+                "$ref": "#/rules@75"
               },
               "arguments": []
             }
@@ -2737,7 +2770,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@73"
+                "$ref": "#/rules@75"
               },
               "arguments": []
             }
@@ -2758,7 +2791,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
         "terminal": {
           "$type": "RuleCall",
           "rule": {
-            "$ref": "#/rules@49"
+            "$ref": "#/rules@51"
           },
           "arguments": []
         }
@@ -2797,13 +2830,6 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
           {
             "$type": "RuleCall",
             "rule": {
-              "$ref": "#/rules@51"
-            },
-            "arguments": []
-          },
-          {
-            "$type": "RuleCall",
-            "rule": {
               "$ref": "#/rules@53"
             },
             "arguments": []
@@ -2811,7 +2837,14 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
           {
             "$type": "RuleCall",
             "rule": {
-              "$ref": "#/rules@54"
+              "$ref": "#/rules@55"
+            },
+            "arguments": []
+          },
+          {
+            "$type": "RuleCall",
+            "rule": {
+              "$ref": "#/rules@56"
             },
             "arguments": []
           }
@@ -2838,7 +2871,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@52"
+                "$ref": "#/rules@54"
               },
               "arguments": []
             }
@@ -2850,7 +2883,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@73"
+                "$ref": "#/rules@75"
               },
               "arguments": []
             }
@@ -2899,7 +2932,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@73"
+                "$ref": "#/rules@75"
               },
               "arguments": []
             }
@@ -2915,7 +2948,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@73"
+                "$ref": "#/rules@75"
               },
               "arguments": []
             }
@@ -2943,7 +2976,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@73"
+                "$ref": "#/rules@75"
               },
               "arguments": []
             }
@@ -2962,7 +2995,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
                 "terminal": {
                   "$type": "RuleCall",
                   "rule": {
-                    "$ref": "#/rules@73"
+                    "$ref": "#/rules@75"
                   },
                   "arguments": []
                 }
@@ -3000,7 +3033,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@57"
+                "$ref": "#/rules@59"
               },
               "arguments": []
             },
@@ -3013,7 +3046,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@56"
+                "$ref": "#/rules@58"
               },
               "arguments": []
             },
@@ -3051,7 +3084,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@57"
+                "$ref": "#/rules@59"
               },
               "arguments": []
             },
@@ -3082,7 +3115,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
                     "terminal": {
                       "$type": "RuleCall",
                       "rule": {
-                        "$ref": "#/rules@58"
+                        "$ref": "#/rules@60"
                       },
                       "arguments": []
                     }
@@ -3094,7 +3127,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
                     "terminal": {
                       "$type": "RuleCall",
                       "rule": {
-                        "$ref": "#/rules@60"
+                        "$ref": "#/rules@62"
                       },
                       "arguments": []
                     },
@@ -3109,7 +3142,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
                 "terminal": {
                   "$type": "RuleCall",
                   "rule": {
-                    "$ref": "#/rules@62"
+                    "$ref": "#/rules@64"
                   },
                   "arguments": []
                 }
@@ -3123,7 +3156,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@61"
+                "$ref": "#/rules@63"
               },
               "arguments": []
             },
@@ -3145,7 +3178,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
         "terminal": {
           "$type": "RuleCall",
           "rule": {
-            "$ref": "#/rules@59"
+            "$ref": "#/rules@61"
           },
           "arguments": []
         }
@@ -3164,14 +3197,14 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
           {
             "$type": "RuleCall",
             "rule": {
-              "$ref": "#/rules@98"
+              "$ref": "#/rules@100"
             },
             "arguments": []
           },
           {
             "$type": "RuleCall",
             "rule": {
-              "$ref": "#/rules@70"
+              "$ref": "#/rules@72"
             },
             "arguments": []
           }
@@ -3194,20 +3227,6 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
           {
             "$type": "RuleCall",
             "rule": {
-              "$ref": "#/rules@63"
-            },
-            "arguments": []
-          },
-          {
-            "$type": "RuleCall",
-            "rule": {
-              "$ref": "#/rules@64"
-            },
-            "arguments": []
-          },
-          {
-            "$type": "RuleCall",
-            "rule": {
               "$ref": "#/rules@65"
             },
             "arguments": []
@@ -3216,6 +3235,20 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "$type": "RuleCall",
             "rule": {
               "$ref": "#/rules@66"
+            },
+            "arguments": []
+          },
+          {
+            "$type": "RuleCall",
+            "rule": {
+              "$ref": "#/rules@67"
+            },
+            "arguments": []
+          },
+          {
+            "$type": "RuleCall",
+            "rule": {
+              "$ref": "#/rules@68"
             },
             "arguments": []
           }
@@ -3234,20 +3267,6 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
           {
             "$type": "RuleCall",
             "rule": {
-              "$ref": "#/rules@63"
-            },
-            "arguments": []
-          },
-          {
-            "$type": "RuleCall",
-            "rule": {
-              "$ref": "#/rules@64"
-            },
-            "arguments": []
-          },
-          {
-            "$type": "RuleCall",
-            "rule": {
               "$ref": "#/rules@65"
             },
             "arguments": []
@@ -3255,7 +3274,21 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
           {
             "$type": "RuleCall",
             "rule": {
+              "$ref": "#/rules@66"
+            },
+            "arguments": []
+          },
+          {
+            "$type": "RuleCall",
+            "rule": {
               "$ref": "#/rules@67"
+            },
+            "arguments": []
+          },
+          {
+            "$type": "RuleCall",
+            "rule": {
+              "$ref": "#/rules@69"
             },
             "arguments": []
           }
@@ -3278,21 +3311,21 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
           {
             "$type": "RuleCall",
             "rule": {
-              "$ref": "#/rules@63"
+              "$ref": "#/rules@65"
             },
             "arguments": []
           },
           {
             "$type": "RuleCall",
             "rule": {
-              "$ref": "#/rules@64"
+              "$ref": "#/rules@66"
             },
             "arguments": []
           },
           {
             "$type": "RuleCall",
             "rule": {
-              "$ref": "#/rules@68"
+              "$ref": "#/rules@70"
             },
             "arguments": []
           }
@@ -3312,7 +3345,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
         "terminal": {
           "$type": "RuleCall",
           "rule": {
-            "$ref": "#/rules@95"
+            "$ref": "#/rules@97"
           },
           "arguments": []
         }
@@ -3350,7 +3383,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@70"
+                "$ref": "#/rules@72"
               },
               "arguments": []
             }
@@ -3362,7 +3395,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@76"
+                "$ref": "#/rules@78"
               },
               "arguments": []
             },
@@ -3391,7 +3424,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@73"
+                "$ref": "#/rules@75"
               },
               "arguments": []
             }
@@ -3399,7 +3432,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
           {
             "$type": "RuleCall",
             "rule": {
-              "$ref": "#/rules@69"
+              "$ref": "#/rules@71"
             },
             "arguments": [],
             "cardinality": "?"
@@ -3427,7 +3460,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@74"
+                "$ref": "#/rules@76"
               },
               "arguments": []
             }
@@ -3435,7 +3468,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
           {
             "$type": "RuleCall",
             "rule": {
-              "$ref": "#/rules@69"
+              "$ref": "#/rules@71"
             },
             "arguments": [],
             "cardinality": "?"
@@ -3463,7 +3496,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@75"
+                "$ref": "#/rules@77"
               },
               "arguments": []
             }
@@ -3471,7 +3504,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
           {
             "$type": "RuleCall",
             "rule": {
-              "$ref": "#/rules@69"
+              "$ref": "#/rules@71"
             },
             "arguments": [],
             "cardinality": "?"
@@ -3503,7 +3536,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
                 "terminal": {
                   "$type": "RuleCall",
                   "rule": {
-                    "$ref": "#/rules@73"
+                    "$ref": "#/rules@75"
                   },
                   "arguments": []
                 }
@@ -3533,7 +3566,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
                 "terminal": {
                   "$type": "RuleCall",
                   "rule": {
-                    "$ref": "#/rules@73"
+                    "$ref": "#/rules@75"
                   },
                   "arguments": []
                 }
@@ -3725,7 +3758,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
                 "terminal": {
                   "$type": "RuleCall",
                   "rule": {
-                    "$ref": "#/rules@72"
+                    "$ref": "#/rules@74"
                   },
                   "arguments": []
                 }
@@ -3744,7 +3777,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
                     "terminal": {
                       "$type": "RuleCall",
                       "rule": {
-                        "$ref": "#/rules@72"
+                        "$ref": "#/rules@74"
                       },
                       "arguments": []
                     }
@@ -3778,7 +3811,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@60"
+                "$ref": "#/rules@62"
               },
               "arguments": []
             }
@@ -3790,7 +3823,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@61"
+                "$ref": "#/rules@63"
               },
               "arguments": []
             },
@@ -3825,7 +3858,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@78"
+                "$ref": "#/rules@80"
               },
               "arguments": []
             }
@@ -3840,7 +3873,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
                 "terminal": {
                   "$type": "RuleCall",
                   "rule": {
-                    "$ref": "#/rules@77"
+                    "$ref": "#/rules@79"
                   },
                   "arguments": []
                 }
@@ -3852,7 +3885,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
                 "terminal": {
                   "$type": "RuleCall",
                   "rule": {
-                    "$ref": "#/rules@78"
+                    "$ref": "#/rules@80"
                   },
                   "arguments": []
                 }
@@ -3883,7 +3916,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@78"
+                "$ref": "#/rules@80"
               },
               "arguments": []
             }
@@ -3898,7 +3931,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
                 "terminal": {
                   "$type": "RuleCall",
                   "rule": {
-                    "$ref": "#/rules@77"
+                    "$ref": "#/rules@79"
                   },
                   "arguments": []
                 }
@@ -3910,7 +3943,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
                 "terminal": {
                   "$type": "RuleCall",
                   "rule": {
-                    "$ref": "#/rules@78"
+                    "$ref": "#/rules@80"
                   },
                   "arguments": []
                 }
@@ -3941,7 +3974,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@79"
+                "$ref": "#/rules@81"
               },
               "arguments": []
             }
@@ -3956,7 +3989,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
                 "terminal": {
                   "$type": "RuleCall",
                   "rule": {
-                    "$ref": "#/rules@77"
+                    "$ref": "#/rules@79"
                   },
                   "arguments": []
                 }
@@ -3968,7 +4001,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
                 "terminal": {
                   "$type": "RuleCall",
                   "rule": {
-                    "$ref": "#/rules@78"
+                    "$ref": "#/rules@80"
                   },
                   "arguments": []
                 }
@@ -4008,7 +4041,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@78"
+                "$ref": "#/rules@80"
               },
               "arguments": []
             }
@@ -4023,7 +4056,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
                 "terminal": {
                   "$type": "RuleCall",
                   "rule": {
-                    "$ref": "#/rules@77"
+                    "$ref": "#/rules@79"
                   },
                   "arguments": []
                 }
@@ -4035,7 +4068,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
                 "terminal": {
                   "$type": "RuleCall",
                   "rule": {
-                    "$ref": "#/rules@78"
+                    "$ref": "#/rules@80"
                   },
                   "arguments": []
                 }
@@ -4083,7 +4116,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@81"
+                "$ref": "#/rules@83"
               },
               "arguments": []
             }
@@ -4098,7 +4131,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
                 "terminal": {
                   "$type": "RuleCall",
                   "rule": {
-                    "$ref": "#/rules@80"
+                    "$ref": "#/rules@82"
                   },
                   "arguments": []
                 }
@@ -4110,7 +4143,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
                 "terminal": {
                   "$type": "RuleCall",
                   "rule": {
-                    "$ref": "#/rules@83"
+                    "$ref": "#/rules@85"
                   },
                   "arguments": []
                 }
@@ -4141,7 +4174,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@82"
+                "$ref": "#/rules@84"
               },
               "arguments": []
             }
@@ -4156,7 +4189,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
                 "terminal": {
                   "$type": "RuleCall",
                   "rule": {
-                    "$ref": "#/rules@80"
+                    "$ref": "#/rules@82"
                   },
                   "arguments": []
                 }
@@ -4168,7 +4201,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
                 "terminal": {
                   "$type": "RuleCall",
                   "rule": {
-                    "$ref": "#/rules@83"
+                    "$ref": "#/rules@85"
                   },
                   "arguments": []
                 }
@@ -4212,21 +4245,21 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
           {
             "$type": "RuleCall",
             "rule": {
-              "$ref": "#/rules@85"
+              "$ref": "#/rules@87"
             },
             "arguments": []
           },
           {
             "$type": "RuleCall",
             "rule": {
-              "$ref": "#/rules@86"
+              "$ref": "#/rules@88"
             },
             "arguments": []
           },
           {
             "$type": "RuleCall",
             "rule": {
-              "$ref": "#/rules@71"
+              "$ref": "#/rules@73"
             },
             "arguments": []
           }
@@ -4249,14 +4282,14 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
           {
             "$type": "RuleCall",
             "rule": {
-              "$ref": "#/rules@85"
+              "$ref": "#/rules@87"
             },
             "arguments": []
           },
           {
             "$type": "RuleCall",
             "rule": {
-              "$ref": "#/rules@71"
+              "$ref": "#/rules@73"
             },
             "arguments": []
           }
@@ -4279,14 +4312,14 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
           {
             "$type": "RuleCall",
             "rule": {
-              "$ref": "#/rules@84"
+              "$ref": "#/rules@86"
             },
             "arguments": []
           },
           {
             "$type": "RuleCall",
             "rule": {
-              "$ref": "#/rules@81"
+              "$ref": "#/rules@83"
             },
             "arguments": []
           }
@@ -4313,7 +4346,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@81"
+                "$ref": "#/rules@83"
               },
               "arguments": []
             }
@@ -4343,7 +4376,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
                     "terminal": {
                       "$type": "RuleCall",
                       "rule": {
-                        "$ref": "#/rules@97"
+                        "$ref": "#/rules@99"
                       },
                       "arguments": []
                     }
@@ -4355,7 +4388,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
                     "terminal": {
                       "$type": "RuleCall",
                       "rule": {
-                        "$ref": "#/rules@96"
+                        "$ref": "#/rules@98"
                       },
                       "arguments": []
                     },
@@ -4370,7 +4403,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
                 "terminal": {
                   "$type": "RuleCall",
                   "rule": {
-                    "$ref": "#/rules@96"
+                    "$ref": "#/rules@98"
                   },
                   "arguments": []
                 }
@@ -4384,7 +4417,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@94"
+                "$ref": "#/rules@96"
               },
               "arguments": []
             },
@@ -4409,7 +4442,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@87"
+                "$ref": "#/rules@89"
               },
               "arguments": []
             }
@@ -4421,7 +4454,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@71"
+                "$ref": "#/rules@73"
               },
               "arguments": []
             },
@@ -4446,7 +4479,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
             "terminal": {
               "$type": "RuleCall",
               "rule": {
-                "$ref": "#/rules@88"
+                "$ref": "#/rules@90"
               },
               "arguments": []
             }
@@ -4465,7 +4498,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
                 "terminal": {
                   "$type": "RuleCall",
                   "rule": {
-                    "$ref": "#/rules@88"
+                    "$ref": "#/rules@90"
                   },
                   "arguments": []
                 }
@@ -4499,7 +4532,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
         "terminal": {
           "$type": "RuleCall",
           "rule": {
-            "$ref": "#/rules@98"
+            "$ref": "#/rules@100"
           },
           "arguments": []
         }
@@ -4518,7 +4551,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
         "terminal": {
           "$type": "RuleCall",
           "rule": {
-            "$ref": "#/rules@98"
+            "$ref": "#/rules@100"
           },
           "arguments": []
         }
@@ -4537,7 +4570,7 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
         "terminal": {
           "$type": "RuleCall",
           "rule": {
-            "$ref": "#/rules@91"
+            "$ref": "#/rules@93"
           },
           "arguments": []
         }
@@ -4556,14 +4589,14 @@ export const OilwayGrammar = (): Grammar => loadedOilwayGrammar ?? (loadedOilway
           {
             "$type": "RuleCall",
             "rule": {
-              "$ref": "#/rules@98"
+              "$ref": "#/rules@100"
             },
             "arguments": []
           },
           {
             "$type": "RuleCall",
             "rule": {
-              "$ref": "#/rules@70"
+              "$ref": "#/rules@72"
             },
             "arguments": []
           }

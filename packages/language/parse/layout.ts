@@ -82,7 +82,6 @@ class Layouter {
   /** Index of the open statement, -1 between statements. */
   private open = -1;
   private stray: { start: number; end: number } | undefined;
-  private sawBrace = false;
   private last: Raw | undefined;
   /** Where the last `}` without partner stands; -1 if there is none. */
   private readonly lastLoneClosing: number;
@@ -161,13 +160,13 @@ class Layouter {
       }
     }
     this.openStatement(type, raw);
-    this.push(type, raw);
+    // A mistyped head is read as the word it was meant to be.
+    this.push(type, { ...raw, image: type });
   }
 
   private openStatement(head: string, raw: Raw): void {
     this.open = this.statements.length;
     this.statements.push({ head, start: raw.start, end: raw.end });
-    this.sawBrace = false;
     this.brackets = [];
     this.tooDeep = 0;
     this.depthSaid = false;
@@ -225,11 +224,12 @@ class Layouter {
         }
         break;
       case '{':
-        if (!BLOCK_HEADS.has(head) || this.sawBrace) {
+        if (!BLOCK_HEADS.has(head)) {
           this.problems.push({ start: raw.start, end: raw.end, what: 'A `{` does not stand here: only `cycle`, `manual` and `assembly` have braces' });
           return;
         }
         this.closeBrackets();
+        this.insert('EOL', this.last?.end ?? raw.start);
         this.push('{', raw);
         this.enterBlock(raw, !this.lone.has(raw));
         return;
@@ -270,8 +270,8 @@ class Layouter {
       return;
     }
     this.open = brace.statement;
-    this.sawBrace = true;
     this.push('}', raw);
+    this.open = -1;
     const statement = this.statements[brace.statement];
     if (statement !== undefined) statement.end = raw.end;
   }
@@ -291,7 +291,6 @@ class Layouter {
     }
     this.open = brace.statement;
     this.insert('}', at);
-    this.insert('EOL', at);
     this.open = -1;
   }
 
@@ -306,20 +305,21 @@ class Layouter {
       this.brackets = [];
     } else {
       this.closeBrackets();
-      if (statement !== undefined && BLOCK_HEADS.has(statement.head) && !this.sawBrace && this.missingBrace(statement, at, next)) return;
+      if (statement !== undefined && BLOCK_HEADS.has(statement.head) && this.missingBrace(statement, at, next)) return;
     }
     this.insert('EOL', at);
     this.open = -1;
   }
 
-  /** True where a block was entered for a `{` that is not there. */
-  private missingBrace(statement: LayoutStatement, at: number, next: Raw | undefined): boolean {
+  /** A block's head without its `{`: true, with the block entered where lines of it follow, else closed at once. */
+  private missingBrace(statement: LayoutStatement, at: number, next: Raw | undefined): true {
     this.problems.push({
       start: Math.max(statement.start, at - 1),
       end: at,
       what: `A \`{\` is missing after this \`${statement.head}\``,
       change: { start: at, end: at, text: ' {', title: 'Write `{`' },
     });
+    this.insert('EOL', at);
     this.insert('{', at);
     const goesIn = next !== undefined && next.kind === 'word' && (IN_CYCLE.has(next.image) || statement.head === 'assembly');
     if (goesIn && this.lastLoneClosing >= at) {
@@ -327,7 +327,8 @@ class Layouter {
       return true;
     }
     this.insert('}', at);
-    return false;
+    this.open = -1;
+    return true;
   }
 
   private closeBrackets(): void {

@@ -33,6 +33,7 @@ export class MessageProvider implements IParserErrorMessageProvider {
     if (expected.name === 'ID' && !ENDS.has(actual.tokenType.name) && (isReserved(actual.image) || isLineHead(actual.image))) {
       return `\`${actual.image}\` is a word of the notation and cannot be a name`;
     }
+    if (expected.name === 'EOF') return `${seen(actual)} does not fit here`;
     if (expected.name === 'EOL') return `${seen(actual)} does not fit here: after ${this.after(previous)} the line should end, or a \`,\` or \`to\` is missing`;
     if (ENDS.has(actual.tokenType.name)) return `The line ends too soon: ${thing(expected.name)} is missing after ${this.after(previous)}`;
     return `${thing(expected.name)} is missing before ${seen(actual)}`.replace(/^a /, 'A ');

@@ -22,6 +22,19 @@ export function distance(a: string, b: string, limit: number): number {
   return last[b.length] ?? 0;
 }
 
+const CODE = /^(\p{L}+)([0-9]+)$/u;
+
+/** Codes such as `C1` and `R1` differ by one letter and mean different things: of two codes the letters, or nearly them, must agree. */
+function unlikeCodes(a: string, b: string): boolean {
+  const first = CODE.exec(a);
+  const second = CODE.exec(b);
+  if (first === null || second === null) return false;
+  const [, letters = '', digits = ''] = first;
+  const [, others = '', otherDigits = ''] = second;
+  if (letters.toLowerCase() === others.toLowerCase()) return false;
+  return digits !== otherDigits || letters.length < 2 || others.length < 2;
+}
+
 /** The word most like `word`: one change in a short word, two in a long one; case alone counts as none. */
 export function nearest(word: string, words: Iterable<string>): string | undefined {
   if (word.length > 60) return undefined;
@@ -30,7 +43,7 @@ export function nearest(word: string, words: Iterable<string>): string | undefin
   let best: string | undefined;
   let least = limit + 0.5;
   for (const candidate of words) {
-    if (candidate === word) continue;
+    if (candidate === word || unlikeCodes(word, candidate)) continue;
     const away = candidate.toLowerCase() === lower ? 0.25 : distance(word, candidate, limit);
     if (away < least && !(word.length === 1 && away >= 1)) {
       least = away;

@@ -1,5 +1,5 @@
 /** Letters to tokens: names, numbers, units, texts, signs, comments. Knows no statement; never fails, never loses a character. */
-import { matchUnit } from '@oilway/quantity';
+import { matchUnit, nearestUnit } from '@oilway/quantity';
 import { isReserved } from './words.ts';
 
 export type RawKind = 'word' | 'number' | 'fraction' | 'unit' | 'text' | 'sign' | 'comment';
@@ -88,7 +88,7 @@ export function scan(text: string): Scan {
   };
 
   /** A unit stands only directly after a number, spaces and tabs between. */
-  const unit = (): void => {
+  const unit = (afterFraction: boolean): void => {
     let place = offset;
     while (text[place] === ' ' || text[place] === '\t') place++;
     const word = at(PLAIN_WORD, text, place);
@@ -101,6 +101,8 @@ export function scan(text: string): Scan {
     }
     const unknown = at(UNKNOWN_UNIT, text, place);
     if (unknown === undefined) return;
+    // `4/3 centre`: after a shape a word is hardly ever a unit.
+    if (afterFraction && nearestUnit(unknown) === undefined) return;
     offset = place;
     push('unit', unknown);
   };
@@ -135,14 +137,14 @@ export function scan(text: string): Scan {
       const fraction = at(FRACTION, text, offset);
       if (fraction !== undefined) {
         push('fraction', fraction);
-        unit();
+        unit(true);
         continue;
       }
       push('number', at(NUMBER, text, offset) ?? character);
       // `1 1/2 in`: the fraction belongs to the number, and the unit to both.
       let next = offset;
       while (text[next] === ' ' || text[next] === '\t') next++;
-      if (at(FRACTION, text, next) === undefined) unit();
+      if (at(FRACTION, text, next) === undefined) unit(false);
       continue;
     }
     const word = at(WORD, text, offset);

@@ -1,8 +1,10 @@
 /** What all parts of the resolution share: the text, the names, the findings so far. */
-import { type Component, KINDS, type Kind, type NotComputed, type Origin, type PortSpec, type Chain } from '@oilway/circuit';
+import { type Component, KINDS, KIND_NAMES, type Kind, type KindName, type NotComputed, type Origin, type PortSpec, type Chain } from '@oilway/circuit';
 import type { Finding, Fix } from '@oilway/rules';
 import type { Let, Name, Ref } from '../generated/ast.ts';
 import { type FindingParts, finding } from '../parse/finding.ts';
+import type { BrokenStatement } from '../parse/parse.ts';
+import { LINE_FUNCTIONS } from '../parse/words.ts';
 import { nearest } from '../parse/near.ts';
 import type { PortMention, SymbolDeclaration, SymbolKind, SymbolReference } from './symbols.ts';
 
@@ -11,9 +13,9 @@ export interface Placed {
   readonly $cstNode?: { readonly offset: number; readonly end: number } | undefined;
 }
 
-export interface Constants {
-  readonly nodes: Map<string, Let>;
-}
+const LINES: ReadonlySet<string> = new Set(LINE_FUNCTIONS);
+/** Kinds with a `coil` setting. */
+const HAVE_COILS: ReadonlySet<string> = new Set<string>([...KIND_NAMES.filter((kind) => KINDS[kind].properties.some((spec) => spec.name === 'coil'))]);
 
 export class Context {
   readonly uri: string;
@@ -28,11 +30,56 @@ export class Context {
   /** Short step names: `Clamp` -> ids; more than one: the cycle must be written. */
   readonly stepsByName = new Map<string, string[]>();
   readonly steps = new Set<string>();
+  /** Words of statements that do not parse: they may be declared there, so nothing is said of them elsewhere. */
+  private readonly perhaps: ReadonlySet<string>;
+  private readonly broken: readonly BrokenStatement[];
   private readonly said = new Set<string>();
 
-  constructor(uri: string, text: string) {
+  constructor(uri: string, text: string, broken: readonly BrokenStatement[] = []) {
     this.uri = uri;
     this.text = text;
+    this.broken = broken;
+    this.perhaps = new Set(broken.flatMap((statement) => statement.words));
+  }
+
+  /** True where the statement that holds this place does not parse as it stands. */
+  isBroken(origin: Origin): boolean {
+    return this.broken.some((statement) => statement.start <= origin.start && origin.start <= statement.end);
+  }
+
+  /** True where the parser gave up in the statement. */
+  isLost(origin: Origin): boolean {
+    return this.broken.some((statement) => statement.lost && statement.start <= origin.start && origin.start <= statement.end);
+  }
+
+  /** True where the component's own line, or that of its part, does not parse: what it lacks may be in the lost part. */
+  isHalfRead(component: Component): boolean {
+    if (this.broken.length === 0) return false;
+    if (this.isBroken(component.nameOrigin)) return true;
+    const part = component.part === undefined ? undefined : this.names.get(component.part);
+    return component.part !== undefined && (part === undefined || this.isBroken(part.origin));
+  }
+
+  /** A line that could have declared what fits does not parse: its name may be half typed. */
+  private mayBeLost(fits: (declaration: SymbolDeclaration) => boolean): boolean {
+    const nowhere: Origin = { uri: this.uri, start: 0, end: 0 };
+    const could = (what: SymbolKind, kind?: KindName): boolean => fits({ id: '', name: '', what, origin: nowhere, statement: nowhere, ...(kind === undefined ? {} : { kind }) });
+    return this.broken.some(({ head }) => {
+      const kind = KIND_NAMES.find((name) => name === head);
+      if (kind !== undefined) return could('component', kind) || (HAVE_COILS.has(kind) && could('coil'));
+      if (head === 'part') return could('part') || could('coil') || KIND_NAMES.some((name) => could('part', name));
+      if (LINES.has(head)) return could('line');
+      if (head === 'cycle' || head === 'manual') return could('cycle') || could('step');
+      if (head === 'step' || head === 'meanwhile') return could('step');
+      if (head === 'let') return could('constant');
+      // A line whose head is unknown may declare anything.
+      return head === '' || head === 'unit';
+    });
+  }
+
+  /** Components named in lines that do not parse: their ports may be joined there. */
+  get perhapsJoined(): ReadonlySet<string> {
+    return new Set(this.broken.flatMap((statement) => ((LINE_FUNCTIONS as readonly string[]).includes(statement.head) || statement.head === '' || statement.head === 'plug' ? statement.words : [])));
   }
 
   origin(node: Placed | undefined): Origin {
@@ -103,6 +150,7 @@ export class Context {
 
   /** Says that a name is not declared, with the nearest name of those that would fit. */
   unknownName(word: string, origin: Origin, fits: (declaration: SymbolDeclaration) => boolean, wanted: string, place = ''): void {
+    if (this.perhaps.has(word) || this.mayBeLost(fits)) return;
     const candidates: string[] = [];
     for (const declaration of this.names.values()) if (fits(declaration)) candidates.push(declaration.what === 'step' ? declaration.name : declaration.id);
     const near = nearest(word, candidates);

@@ -152,6 +152,7 @@ export class Control {
       }
       default:
     }
+    if (component !== undefined && this.context.isHalfRead(component)) return undefined;
     this.context.report({
       code: 'VALUE',
       what: `\`${id}\` has no figure to compare with: an actuator has a position, a sensor its quantity`,
@@ -213,6 +214,8 @@ export class Control {
     const read = (value: Value | undefined): Quantity | undefined => {
       if (value === undefined) return undefined;
       if (dimensions === undefined) {
+        const valve = context.components.get(coil.component);
+        if (valve !== undefined && context.isHalfRead(valve)) return undefined;
         context.report({
           code: 'VALUE',
           what: `\`${coil.id}\` belongs to a switching valve: it is live or dead, a command has no size`,
@@ -270,11 +273,11 @@ export class Control {
           context.report({ code: 'VALUE', what: `\`${valve.id}\` is shifted to ${positions.map((p) => `\`${p}\``).join(' or ')}, not to \`${word}\``, origin: context.origin(node.position) });
           return undefined;
         }
-        if (!positions.includes(word)) {
+        if (!positions.includes(word) && !context.isHalfRead(valve)) {
           context.report({ code: 'VALUE', what: `\`${valve.id}\` has no centre`, origin: context.origin(node.position) });
           return undefined;
         }
-        if (!valve.properties.some((property) => property.name === 'lever')) {
+        if (!valve.properties.some((property) => property.name === 'lever') && !context.isHalfRead(valve)) {
           context.report({ code: 'VALUE', what: `\`${valve.id}\` has no \`lever\`: \`shift\` moves a valve by hand`, origin: context.origin(node.valve), place: valve.id });
         }
         return { does: 'shift', valve: valve.id, to: word, origin };
@@ -343,7 +346,7 @@ export class Control {
     const name = node.name?.text;
     if (name === undefined) return undefined;
     const meanwhile = node.kind === 'meanwhile';
-    if (meanwhile && above === undefined) {
+    if (meanwhile && above === undefined && !context.isBroken(context.origin(node.name))) {
       context.report({ code: 'VALUE', what: '`meanwhile` runs beside the step above it, and there is none', origin: context.origin(node.name) });
     }
     const actions = (node.actions ?? []).flatMap((action) => this.action(action) ?? []);
@@ -374,6 +377,8 @@ export class Control {
     for (const line of node.lines ?? []) {
       if (line.$type === 'Step') {
         const step = this.step(line, id, above);
+        // A step that has lost its name still is the step above.
+        if (step === undefined && line.kind === 'step') above = `${id}.`;
         if (step === undefined) continue;
         // A second step of one name was said when it was declared.
         if (!steps.some((other) => other.id === step.id)) steps.push(step);

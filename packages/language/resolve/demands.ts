@@ -131,6 +131,7 @@ export class Demands {
     if (port === undefined) return { of: component.id, subject: { is: 'component', component } };
     const names = portsOf(component).map((spec) => spec.name);
     const origin = context.origin(ref?.parts?.[1]);
+    if (!names.includes(port) && context.isHalfRead(component)) return undefined;
     if (!names.includes(port)) {
       const near = nearest(port, names);
       context.report({

@@ -59,9 +59,9 @@ export class Items {
   /** The whole property, or the entry of a group. */
   readonly origin: Origin;
 
-  constructor(context: Context, node: Property | Entry) {
-    this.pieces = piecesOf(context, node.items ?? []);
-    this.origin = context.origin(node);
+  constructor(context: Context, node: Property | Entry | { readonly pieces: readonly Piece[]; readonly origin: Origin }) {
+    this.pieces = 'pieces' in node ? node.pieces : piecesOf(context, node.items ?? []);
+    this.origin = 'pieces' in node ? node.origin : context.origin(node);
   }
 
   peek(ahead = 0): Piece | undefined {

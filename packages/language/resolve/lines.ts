@@ -46,7 +46,8 @@ export class Lines {
     const index = this.statements.length;
     const lineFunction = node.function ?? 'working';
     const origin = context.origin(node);
-    const stations = node.stations ?? [];
+    // Where the parser gave up, the rest of the line may lead elsewhere: nothing is joined by halves.
+    const stations = context.isLost(origin) ? [] : (node.stations ?? []);
     const { properties } = readProperties(context, this.values, node.properties, { name: node.name?.text ?? 'the line', specs: LINE_PROPERTIES, shaped: false, of: 'a line' });
     const hydraulic = this.hydraulics(properties, node);
     const ends = stations.length < 2 ? this.single(node, stations.length) : undefined;
@@ -98,7 +99,7 @@ export class Lines {
 
   /** A line of one station joins what stands in it, if it is named or has several places; else it leads nowhere. */
   private single(node: LineNode, stations: number): Position | undefined {
-    if (stations === 1) {
+    if (stations === 1 && !this.context.isBroken(this.context.origin(node))) {
       this.context.report({
         code: 'CHAIN',
         what: 'This line leads nowhere: `to` and a second place are missing',
@@ -179,8 +180,8 @@ export class Lines {
     }
     const component = context.components.get(name);
     if (declared.what !== 'component' || component === undefined) {
-      const what = declared.what === 'component' ? 'not understood' : `a ${declared.what}`;
-      context.report({ code: 'NAME', what: `\`${name}\` is ${what}: a line joins components and lines`, origin });
+      // A component without content: its kind was not understood, and that was said at its own line.
+      if (declared.what !== 'component') context.report({ code: 'NAME', what: `\`${name}\` is a ${declared.what}: a line joins components and lines`, origin });
       return nowhere;
     }
     if (component.kind === 'reservoir') {
@@ -222,7 +223,8 @@ export class Lines {
     return this.joined(component, spec, origin, lineFunction, true);
   }
 
-  noPort(component: Component, port: string, origin: Origin, names: readonly string[]): void {
+  private noPort(component: Component, port: string, origin: Origin, names: readonly string[]): void {
+    if (this.context.isHalfRead(component)) return;
     const near = nearest(port, names) ?? names.find((name) => name.toLowerCase() === port.toLowerCase());
     this.context.report({
       code: 'PORT',
@@ -279,6 +281,7 @@ export class Lines {
     }
     const port = chain.how === 'through' ? (position === 'start' ? chain.to : chain.from) : chain.how === 'end' ? (position === 'start' ? chain.exit : chain.entry) : chain.how === 'fixed' ? chain.port : undefined;
     const spec = specs.find((candidate) => candidate.name === port);
+    if (spec === undefined && context.isHalfRead(component)) return nowhere;
     if (spec === undefined) {
       const what = names.length === 0 ? `\`${component.id}\` has no ports: no line leads to ${kindOf(component).noun === 'fluid' ? 'a fluid' : `a ${kindOf(component).noun}`}` : `\`${component.id}\` has no natural port: write ${oneOf(names.map((name) => `${component.id}.${name}`))}`;
       context.report({
@@ -365,12 +368,13 @@ export class Lines {
 
   /** The nets, with every required port that nothing joins as an open one. */
   finish(): { readonly nets: Net[]; readonly pieces: Piece[] } {
+    const perhaps = this.context.perhapsJoined;
     for (const component of this.context.components.values()) {
       for (const spec of portsOf(component)) {
         const ref: PortRef = { component: component.id, port: spec.name };
         if (spec.required && !this.ports.has(portKey(ref))) {
           this.touch(ref, component.nameOrigin);
-          this.open.add(portKey(ref));
+          if (!perhaps.has(component.id)) this.open.add(portKey(ref));
         }
       }
     }

@@ -1,6 +1,7 @@
 /** Entries of a load: a constant or a table over position, with the range, direction and steps it holds for. */
 import type { LoadValue } from '@oilway/circuit';
 import type { Dimension, Quantity } from '@oilway/quantity';
+import type { Entry } from '../generated/ast.ts';
 import { Items } from './items.ts';
 import { type Read, type Reading, readQuantity, unknown, wrong } from './shapes.ts';
 import { resolvePlace } from './places.ts';
@@ -65,7 +66,7 @@ export function readLoad(reading: Reading, items: Items, origin: LoadValue['orig
   };
 }
 
-function readTable(reading: Reading, entries: readonly ConstructorParameters<typeof Items>[1][], way: Dimension, size: Dimension): LoadValue['table'] | undefined {
+function readTable(reading: Reading, entries: readonly Entry[], way: Dimension, size: Dimension): LoadValue['table'] | undefined {
   const knots: { at: Quantity; value: Quantity }[] = [];
   for (const entry of entries) {
     const items = new Items(reading.context, entry);

@@ -52,7 +52,7 @@ class Resolution {
 
   constructor(parsed: Parsed) {
     this.parsed = parsed;
-    this.context = new Context(parsed.uri, parsed.text);
+    this.context = new Context(parsed.uri, parsed.text, parsed.broken);
     this.values = new Values(this.context);
     this.components = new Components(this.context, this.values);
     this.statements = parsed.root.statements ?? [];
@@ -347,7 +347,7 @@ class Resolution {
       if (property.name !== 'mass' && property.name !== 'people') continue;
       if (turns || (property.value.type === 'word' && property.value.word === 'never')) continue;
       for (const actuator of actuators) {
-        if (actuator.kind !== 'cylinder' || actuator.properties.some((own) => own.name === 'attitude')) continue;
+        if (actuator.kind !== 'cylinder' || actuator.properties.some((own) => own.name === 'attitude') || context.isHalfRead(actuator)) continue;
         context.report({
           code: 'M08',
           what: `\`${actuator.id}\` carries ${property.name === 'mass' ? 'a mass' : 'a load near people'}, but nothing says how it stands: \`attitude\` is missing`,

@@ -45,6 +45,8 @@ export class Values {
   private readonly context: Context;
   private readonly constants = new Map<string, ConstantState>();
   private path: string[] = [];
+  /** Dimension wanted of the value being read, for "did you mean" of units. */
+  private wanted: Dimension | undefined;
 
   constructor(context: Context) {
     this.context = context;
@@ -84,7 +86,10 @@ export class Values {
   compute(node: Value | undefined, expected?: Dimension): Computed | undefined {
     if (node === undefined) return undefined;
     const from: string[] = [];
+    const before = this.wanted;
+    this.wanted = expected;
     const partial = this.value(node, from);
+    this.wanted = before;
     if (partial === undefined) return undefined;
     const origin = this.context.origin(node);
     const q = quantityOf(partial.amount, expected);
@@ -220,7 +225,7 @@ export class Values {
     if (unit === undefined) {
       const origin = this.context.origin(node);
       const at: Origin = { ...origin, start: origin.end - node.unit.length };
-      const near = nearestUnit(node.unit);
+      const near = (this.wanted === undefined ? undefined : nearestUnit(node.unit, this.wanted)) ?? nearestUnit(node.unit);
       this.context.report({
         code: 'M07',
         what: `\`${node.unit}\` is no unit${near === undefined ? '' : `: did you mean \`${near.symbol}\``}`,

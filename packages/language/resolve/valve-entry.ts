@@ -82,7 +82,8 @@ export function readCoil(reading: Reading, items: Items, origin: Origin): Read {
   }
   items.skip(1);
   let voltage: ReturnType<typeof readQuantity>;
-  if (items.peek() !== undefined) {
+  const next = items.peek();
+  if (next?.is === 'value' || (next?.is === 'name' && reading.context.constants.has(next.words[0] ?? ''))) {
     voltage = readQuantity(reading, items, ['voltage']);
     if (voltage === undefined) return { value: unknown('the voltage is not understood', origin) };
   }
