@@ -1,5 +1,6 @@
 /** Runs all rules over a circuit: hides what follows from another finding, marks what is accepted, puts them in order. */
 import { accept } from './allow.ts';
+import { outcome } from './outcome.ts';
 import type { Finding, Rule, RuleContext } from './rule.ts';
 import { RULES } from './table.ts';
 
@@ -21,7 +22,7 @@ export function runRules(context: RuleContext, rules: readonly Rule[] = RULES): 
       failed.push({ code: rule.code, why: error instanceof Error ? error.message : String(error) });
     }
   }
-  const findings = order(accept(context, hide(found)));
+  const findings = order(accept(context, [...hide(found), ...outcome(context, found)]));
   return failed.length === 0 ? { findings } : { findings, failed };
 }
 

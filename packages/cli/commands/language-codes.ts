@@ -1,4 +1,4 @@
-/** Pages of the findings that the notation itself makes, before any rule speaks. */
+/** Pages of the findings that are no rule's: those of the notation and those of the study. */
 
 export interface CodePage {
   readonly title: string;
@@ -43,5 +43,23 @@ a setting that excludes it. The component counts as unknown where the value is n
     title: 'A permission that accepts nothing',
     severity: 'warning',
     page: `An \`allow\` statement names a finding that is not there. Left standing, it would hide the finding if it came back for another reason.`,
+  },
+  REQUIREMENT: {
+    title: 'A requirement is missed or cannot be decided',
+    severity: 'error',
+    page: `The bound does not hold at every steady point of the places named (start, each change of load or cam, end; pressure and power also in the run between
+them), within 0.1 % of the bound. A requirement that cannot be decided (a component without figures, a range that is never passed, a pressure that
+is not determined) counts as failed and says why.`,
+  },
+  CYCLE: {
+    title: 'The cycle does not run as written',
+    severity: 'error',
+    page: `A step passes its time limit, waits for what never comes, switches to and fro without end, or two lines ask one coil for different things. The message
+names the step, the time and the value that was waited for.`,
+  },
+  'NOT-COMPUTED': {
+    title: 'Understood, but not computed',
+    severity: 'information',
+    page: `The statement or component is read and kept, but no figure is computed for it. What depends on it is marked; nothing is taken as zero or as passed.`,
   },
 };

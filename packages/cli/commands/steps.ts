@@ -214,7 +214,10 @@ export function dutyLines(cycles: readonly CycleResult[], circuit: Circuit, stud
     const work = cycle.work === undefined ? [] : [`work given to the loads ${show(cycle.work, 'power')}`];
     if (heat.length + work.length > 0) lines.push(`  ${cycle.id}: ${[...heat, ...work].join(', ')}`);
   }
+  const reservoirs = circuit.components.filter((one) => one.kind === 'reservoir').map((one) => one.id);
   for (const [of, balance] of Object.entries(study.heat)) {
+    // With one reservoir its balance is the circuit's.
+    if (reservoirs.length === 1 && reservoirs.some((id) => of.endsWith(` ${id}`) && study.heat[of.slice(0, -id.length - 1)] !== undefined)) continue;
     lines.push(
       `  ${of}: oil settles at ${show(balance.temperature.value, balance.temperature.dimension)} with ${show(balance.heat, 'power')} of heat`,
     );
