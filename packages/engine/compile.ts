@@ -50,6 +50,8 @@ export interface Network {
   /** Scale of a force balance: total chamber area, so that its residual is a pressure. */
   readonly forceScale: Float64Array;
   readonly creep: Float64Array;
+  /** 1 where no stop ends the way (motors). */
+  readonly endless: Uint8Array;
   /** Positions where something of the network itself changes, per actuator. */
   readonly knots: readonly Float64Array[];
   /** Nodes of parts that reach no fixed node through any element: one each, tied to atmosphere by the floor. */
@@ -221,6 +223,7 @@ export function compile(spec: NetworkSpec): Network {
     chamberFlowSlot: Int32Array.from(chamberFlowSlot),
     forceScale,
     creep,
+    endless: Uint8Array.from(spec.actuators, (actuator) => (Number.isFinite(actuator.high) ? 0 : 1)),
     knots: spec.actuators.map((_, a) => sortedKnots(ownKnots(spec, a))),
     grounded: groundedNodes(spec, laws, unknownOf),
   };

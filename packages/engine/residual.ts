@@ -83,7 +83,7 @@ export class System {
     this.in1 = new Float64Array(bodies);
     this.friction = new Float64Array(bodies);
     this.area = new Float64Array(net.chamberNodes.length);
-    this.speed = Float64Array.from(net.spec.actuators, (actuator) => (Number.isFinite(actuator.high) ? 1 : 1000));
+    this.speed = Float64Array.from(net.endless, (endless) => (endless ? 1000 : 1));
     this.loads = new Array<LoadState | undefined>(bodies).fill(undefined);
     for (let a = 0; a < bodies; a++) this.enter(a, 0);
   }

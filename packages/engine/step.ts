@@ -17,6 +17,8 @@ const E0 = -E1 - E2;
 /** Newton in a stage: converged below this relative change; most iterations. */
 const STAGE_TIGHT = 1e-7;
 const STAGE_ITERATIONS = 14;
+/** A turning body without stops is followed to this many times the tolerance: 0.001 rad where a rod is followed to 0.01 mm. */
+const ENDLESS = 100;
 /** Weight of a way (m, rad) against a relative change: 1e-10 m is converged. */
 const WAY = 1e3;
 
@@ -160,7 +162,7 @@ export class Stepper {
 
   /** Newton on one stage: base + gamma h (right side) = stored; bodies at xb + gamma h v. */
   private stage(time: number, gh: number): boolean {
-    const { sys, net, d, keep, xb } = this;
+    const { sys, net, d, keep } = this;
     const { y, lu } = sys;
     const n = y.length;
     this.ramps.apply(time, sys.parameters, false);
@@ -174,8 +176,8 @@ export class Stepper {
       let change = 0;
       for (let i = 0; i < n; i++) {
         let size = Math.abs(d[i]!) / (1 + Math.abs(y[i]!));
-        // In a very short step a speed counts by the way it makes: it is ill-determined and harmless.
-        if (i >= net.firstVelocity && i < net.firstVelocity + xb.length) size = Math.min(size, Math.abs(d[i]!) * gh * WAY);
+        // In a very short step a speed or flow counts by the way it makes: it is ill-determined and harmless.
+        if (i >= net.firstVelocity) size = Math.min(size, Math.abs(d[i]!) * gh * WAY);
         if (!(size <= change)) change = size;
       }
       if (!Number.isFinite(change)) return false;
@@ -235,7 +237,7 @@ export class Stepper {
       const error = Math.abs(h * (e0 * y0[v]! + e1 * ya[v]! + E2 * y1[v]!));
       // Relative to the position, of a turning motor to what one step turns.
       const scale = Math.max(Math.min(Math.abs(x1[a]!), 1), Math.abs(x1[a]! - x0[a]!));
-      const size = error / (tolerance.position + tolerance.positionRelative * scale);
+      const size = error / (tolerance.position * (net.endless[a] ? ENDLESS : 1) + tolerance.positionRelative * scale);
       if (size > worst) worst = size;
     }
     for (let i = 0; i < net.size; i++) {
@@ -250,6 +252,7 @@ export class Stepper {
     }
     if (this.dynamics) {
       for (let i = net.firstVelocity; i < net.size; i++) {
+        if (inertia[i] === 0) continue;
         const size = Math.abs(d[i]!) / (tolerance.velocity + tolerance.positionRelative * Math.abs(y1[i]!));
         if (!(size <= worst)) worst = size;
       }

@@ -30,9 +30,9 @@ const SHRINK = 0.2;
 const SAFETY = 0.9;
 /** Net force, MPa of the scaled balance, above which a contact is left at once. */
 const LEAVES = 1e-9;
-/** A knot crossed this often without time passing holds the body (two forces meet there). */
-const CROSSINGS = 3;
-const NO_TIME = 1e-6;
+/** A knot crossed this often, each time within a millisecond of the last, holds the body when the forces on both sides press towards it. */
+const CROSSINGS = 4;
+const NO_TIME = 1e-3;
 const MAX_STEPS = 200_000;
 
 const QUASI_STATIC = { pressure: 0.1, pressureRelative: 0.05 };
