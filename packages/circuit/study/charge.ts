@@ -45,6 +45,11 @@ function joinedThroughOpen(plant: Plant, start: string): ReadonlySet<string> {
   const seen = new Set([start]);
   const queue = [start];
   for (let net = queue.pop(); net !== undefined; net = queue.pop()) {
+    for (const one of plant.at.beyond(net)) {
+      if (seen.has(one.net)) continue;
+      seen.add(one.net);
+      queue.push(one.net);
+    }
     for (const { component } of plant.at.net(net)?.ports ?? []) {
       const part = plant.at.component(component);
       if (!part || !(part.kind === 'shutoff' && part.properties.some((one) => one.name === 'open')) && part.kind !== 'filter') continue;

@@ -103,7 +103,7 @@ function attempt(plant: Plant, cycle: Cycle, oil: Readonly<Record<string, number
     before = { solution: end.solution, states };
   }
   const last = ends.at(-1)!;
-  if (last.completed && !settled) {
+  if (last.completed && !settled && ends.length >= RUNS) {
     faults.push({ kind: 'does not settle', words: `${cycle.id} does not settle in ${RUNS} runs; the figures are those of the last`, origin: cycle.nameOrigin });
   }
   const counted = typeof cycle.repeat === 'number' ? ends.map((one) => one.trace) : [last.trace];

@@ -37,6 +37,7 @@ export function oilGroups(plant: Plant): readonly OilGroup[] {
     const keys = [...net.ports.map((one) => one.component), ...(net.reservoir === undefined ? [] : [net.reservoir])];
     for (const key of keys) parent.set(root(key), root(`net ${net.id}`));
   }
+  for (const piece of plant.circuit.pieces) parent.set(root(`net ${piece.nets[0]}`), root(`net ${piece.nets[1]}`));
   const groups = new Map<string, OilGroup>();
   for (const component of plant.circuit.components) {
     const key = root(component.id);

@@ -5,6 +5,8 @@ import type { Plant } from './scene.ts';
 
 /** Just before and just after a knot, m. */
 const BESIDE = 1e-6;
+/** Places closer than this are one, m. */
+const NEAR = 2e-6;
 
 export interface Knot {
   readonly at: number;
@@ -28,7 +30,8 @@ export function knotsOf(plant: Plant, body: Body, load: BodyLoad): readonly Knot
   for (const { low, high } of requiredRanges(plant, body)) {
     found.push({ at: low, words: 'required range', sides: 'above' }, { at: high, words: 'required range', sides: 'below' });
   }
-  return merged(found);
+  // At the ends of the stroke nothing lies beyond.
+  return merged(found.filter((one) => !Number.isFinite(body.stroke) || (one.at > NEAR && one.at < body.stroke - NEAR)));
 }
 
 /** Ranges that requirements name for this body (or for the only actuator). */
@@ -53,7 +56,7 @@ function merged(knots: readonly Knot[]): readonly Knot[] {
   const result: Knot[] = [];
   for (const one of sorted) {
     const last = result.at(-1);
-    if (last && one.at - last.at < 2e-6) {
+    if (last && one.at - last.at < NEAR) {
       const words = last.words.split(', ').includes(one.words) ? last.words : `${last.words}, ${one.words}`;
       result[result.length - 1] = { at: last.at, words, sides: joint(last.sides, one.sides) };
     } else result.push(one);
@@ -76,9 +79,23 @@ export function besides(knot: Knot, direction: number, turns: boolean): readonly
   return [{ at: knot.at, when: 'at' }];
 }
 
-/** Knots strictly between two places, in the order they are passed. */
+/** Knots from one place to another, those at the two places included, in the order they are passed. */
 export function passed(knots: readonly Knot[], from: number, to: number): readonly Knot[] {
   const [low, high] = from < to ? [from, to] : [to, from];
-  const inside = knots.filter((one) => one.at > low + 2e-6 && one.at < high - 2e-6);
+  const inside = knots.filter((one) => one.at > low - NEAR && one.at < high + NEAR);
   return from <= to ? inside : [...inside].reverse();
+}
+
+/** Places beside a knot that lie on the way from one place to another. */
+export function besidesOnWay(knot: Knot, from: number, to: number, turns: boolean): ReturnType<typeof besides> {
+  const direction = to >= from ? 1 : -1;
+  const atStart = Math.abs(knot.at - from) <= NEAR;
+  const atEnd = Math.abs(knot.at - to) <= NEAR;
+  if (!atStart && !atEnd) return besides(knot, direction, turns);
+  // A knot where the motion begins or ends has one side on the way; where nothing jumps, entry and end say it all.
+  if (knot.sides === 'once' || knot.sides === 'control') return [];
+  const when = atStart ? ('after' as const) : ('before' as const);
+  const at = knot.at + (atStart ? BESIDE : -BESIDE) * direction;
+  if ((knot.sides === 'above' && at < knot.at) || (knot.sides === 'below' && at > knot.at)) return [];
+  return [{ at, when }];
 }

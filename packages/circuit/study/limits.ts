@@ -77,6 +77,11 @@ function reachable(plant: Plant, from: string, solution: Solution): { readonly e
     const joined = plant.at.net(net);
     if (!joined) continue;
     if (joined.reservoir !== undefined) ends = true;
+    for (const one of plant.at.beyond(net)) {
+      if (seen.has(one.net)) continue;
+      seen.add(one.net);
+      queue.push(one.net);
+    }
     for (const { component, port } of joined.ports) {
       const part = plant.at.component(component);
       if (!part) continue;

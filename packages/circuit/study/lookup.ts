@@ -13,6 +13,8 @@ export interface Lookup {
   netOf(component: string, port: string): string | undefined;
   /** Ports of a component that are joined, in text order of the nets. */
   portsOf(component: string): readonly { readonly port: string; readonly net: string }[];
+  /** Nets on the other side of pieces with a loss of their own. */
+  beyond(net: string): readonly { readonly piece: string; readonly net: string }[];
   ofKind(...kinds: readonly string[]): readonly Component[];
   readonly drives: readonly Component[];
   readonly accumulators: readonly Component[];
@@ -42,6 +44,13 @@ export function lookup(circuit: Circuit): Lookup {
       ports.set(component, list);
     }
   }
+  const beyond = new Map<string, { piece: string; net: string }[]>();
+  for (const piece of circuit.pieces) {
+    const [a, b] = piece.nets;
+    if (a === b) continue;
+    beyond.set(a, [...(beyond.get(a) ?? []), { piece: piece.id, net: b }]);
+    beyond.set(b, [...(beyond.get(b) ?? []), { piece: piece.id, net: a }]);
+  }
   const ofKind = (...kinds: readonly string[]) => circuit.components.filter((one) => kinds.includes(one.kind));
   return {
     circuit,
@@ -52,6 +61,7 @@ export function lookup(circuit: Circuit): Lookup {
     net: (id) => nets.get(id),
     netOf: (component, port) => netAt.get(`${component}.${port}`),
     portsOf: (component) => ports.get(component) ?? [],
+    beyond: (net) => beyond.get(net) ?? [],
     ofKind,
     drives: ofKind('drive'),
     accumulators: ofKind('accumulator'),

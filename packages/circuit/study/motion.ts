@@ -1,7 +1,7 @@
 /** Whether an actuator moves, what drives it, and which way its oil takes. */
 import type { Body, BodyLoad, Solution } from '../assembly/machine.ts';
 import { standWords } from './coils.ts';
-import { relaxesWithin } from './loads.ts';
+import { netFixed, relaxesWithin } from './loads.ts';
 import type { Plant } from './scene.ts';
 import type { Variant } from './study.ts';
 
@@ -38,50 +38,62 @@ export function movingIn(plant: Plant, solution: Solution, loads: Readonly<Recor
     if (!moves(body, solution)) return [];
     const velocity = solution.velocities[body.id] ?? 0;
     const direction = velocity > 0 ? 1 : -1;
-    const pressed = solution.forces[body.id] ?? 0;
-    const cause = pressed * direction > 0 ? ('pressure' as const) : ('load' as const);
     const load = loads[body.id];
-    const way = cause === 'load' && load && body.type === 'linear' ? relaxesWithin(load, solution.positions[body.id] ?? 0, direction, RELAXING_WAY) : undefined;
-    const path = wayOfOil(plant, body, solution, cause);
+    const driven = load !== undefined && netFixed(load, solution.positions[body.id] ?? 0) * direction > 0;
+    const inward = wayOfOil(plant, body, solution, 'in');
+    // Oil from a turning pump or an accumulator that enters makes it a motion by pressure, whatever the load does.
+    const cause = driven && !inward.pushed ? ('load' as const) : ('pressure' as const);
+    const way = cause === 'load' && body.type === 'linear' ? relaxesWithin(load!, solution.positions[body.id] ?? 0, direction, RELAXING_WAY) : undefined;
+    const path = (cause === 'load' ? wayOfOil(plant, body, solution, 'out') : inward).words;
     return body.actuators.map((id) => ({ id, velocity, cause, path, ...(way === undefined ? {} : { relaxes: way }) }));
   });
 }
 
-/** The components the oil of a moving actuator passes: out of it where a load drives, to it where a pressure does. */
-export function wayOfOil(plant: Plant, body: Body, solution: Solution, cause: 'load' | 'pressure'): string {
-  const out = cause === 'load';
-  // Flow into the component is positive: oil leaves the chamber where it is negative.
-  const sign = out ? -1 : 1;
+/** The components that the oil of a moving actuator passes, from the chamber outwards (`out`) or from its source to the chamber (`in`). */
+export function wayOfOil(plant: Plant, body: Body, solution: Solution, side: 'in' | 'out'): { readonly words: string; readonly pushed: boolean } {
+  const out = side === 'out';
+  // Flow into a component is positive: oil leaves the chamber where it is negative.
+  const along = (key: string, sign: number) => (solution.flows[key] ?? 0) * sign;
   const start = body.actuators
-    .flatMap((id) => plant.at.portsOf(id).map((one) => ({ ...one, component: id, flow: (solution.flows[`${id}.${one.port}`] ?? 0) * sign })))
+    .flatMap((id) => plant.at.portsOf(id).map((one) => ({ net: one.net, flow: along(`${id}.${one.port}`, out ? -1 : 1) })))
     .sort((a, b) => b.flow - a.flow)[0];
-  if (!start || start.flow <= SEEN_FLOW) return '';
+  if (!start || start.flow <= SEEN_FLOW) return { words: '', pushed: false };
   const words: string[] = [];
-  const seen = new Set(body.actuators);
+  const seen = new Set<string>(body.actuators);
+  let pushed = false;
   let net: string | undefined = start.net;
-  for (let hop = 0; hop < 40 && net !== undefined; hop += 1) {
+  for (let hop = 0; hop < 60 && net !== undefined; hop += 1) {
     const joined = plant.at.net(net);
     if (!joined) break;
-    if (joined.reservoir) {
+    if (joined.reservoir !== undefined) {
       words.push(joined.reservoir);
       break;
     }
     // The next component takes (or gives) the most oil at this net.
     const next: { readonly component: string; readonly port: string; readonly flow: number } | undefined = joined.ports
       .filter((one) => !seen.has(one.component))
-      .map((one) => ({ ...one, flow: (solution.flows[`${one.component}.${one.port}`] ?? 0) * (out ? 1 : -1) }))
+      .map((one) => ({ ...one, flow: along(`${one.component}.${one.port}`, out ? 1 : -1) }))
       .sort((a, b) => b.flow - a.flow)[0];
-    if (!next || next.flow <= SEEN_FLOW) break;
+    const pipe: { readonly piece: string; readonly net: string } | undefined = plant.at.beyond(net).find((one) => !seen.has(one.piece));
+    if (!next || next.flow <= SEEN_FLOW) {
+      if (!pipe) break;
+      seen.add(pipe.piece);
+      net = pipe.net;
+      continue;
+    }
     seen.add(next.component);
+    const kind = plant.at.component(next.component)?.kind;
+    if (!out && (kind === 'pump' || kind === 'accumulator')) pushed = true;
     const exit = plant.at
       .portsOf(next.component)
       .filter((one) => one.port !== next.port)
-      .map((one) => ({ ...one, flow: (solution.flows[`${next.component}.${one.port}`] ?? 0) * (out ? -1 : 1) }))
+      .map((one) => ({ ...one, flow: along(`${next.component}.${one.port}`, out ? -1 : 1) }))
       .sort((a, b) => b.flow - a.flow)[0];
     words.push(passing(plant, next.component, next.port, exit?.port, solution, out));
+    if (pushed) break;
     net = exit && exit.flow > SEEN_FLOW ? exit.net : undefined;
   }
-  return (out ? words : words.reverse()).join(', ');
+  return { words: (out ? words : words.reverse()).join(', '), pushed };
 }
 
 function passing(plant: Plant, id: string, entry: string, exit: string | undefined, solution: Solution, out: boolean): string {

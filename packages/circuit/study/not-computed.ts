@@ -16,6 +16,11 @@ export function spread(plant: Plant, point: Point): Point {
     const joined = plant.at.net(net);
     const why = reasons[net];
     if (!joined || joined.reservoir !== undefined || why === undefined) continue;
+    for (const one of plant.at.beyond(net)) {
+      if (reasons[one.net] !== undefined) continue;
+      reasons[one.net] = why;
+      queue.push(one.net);
+    }
     for (const { component, port } of joined.ports) {
       const part = plant.at.component(component);
       if (!part || reasons[component] !== undefined) continue;

@@ -1,7 +1,7 @@
 /** Steady points of a step: entry, just before and after every knot passed, end. Each is one solution with positions given. */
 import type { Body, Setting, Solution } from '../assembly/machine.ts';
 import { NO_LOAD } from './loads.ts';
-import { besides, knotsOf, passed } from './knots.ts';
+import { besidesOnWay, knotsOf, passed } from './knots.ts';
 import { moves } from './motion.ts';
 import { pointOf } from './point.ts';
 import type { Plant } from './scene.ts';
@@ -22,6 +22,8 @@ interface Wanted {
   readonly time: number | undefined;
   readonly setting: Setting;
   readonly begun: Readonly<Record<string, boolean>>;
+  /** The run at that place: pressures of closed volumes are those it left there. */
+  readonly sample?: Sample;
 }
 
 /** Points of one passage of a step in a run. */
@@ -34,16 +36,16 @@ export function pointsInRun(plant: Plant, trace: Trace, step: string, from: numb
   for (const body of plant.bodies) shift[body.id] = (last.solution.positions[body.id] ?? 0) - (first.solution.positions[body.id] ?? 0);
   const entry = settingAt(snapshot, first);
   const directions = directionsOf(plant, entry, shift, first.solution);
-  const wanted: Wanted[] = [{ label: 'entry', time: from, setting: entry, begun: {} }];
+  const wanted: Wanted[] = [{ label: 'entry', time: from, setting: entry, begun: {}, sample: first }];
   for (const body of plant.bodies) {
     if (!Number.isFinite(body.stroke) || Math.abs(shift[body.id] ?? 0) < MOVED) continue;
     wanted.push(...knotPoints(plant, trace, body, samples, entry));
   }
   const closing = trace.snapshotAt(last.time, true) ?? snapshot;
   if (last !== first && last.time > first.time + 1e-9) {
-    for (const body of plant.bodies) wanted.push(...beforeStop(plant, body, shift[body.id] ?? 0, closing, last));
+    for (const body of plant.bodies) wanted.push(...beforeStop(plant, trace, body, shift[body.id] ?? 0, samples));
     const begun = Object.fromEntries(plant.bodies.map((one) => [one.id, true]));
-    wanted.push({ label: 'end', time: last.time, setting: settingAt(closing, last), begun });
+    wanted.push({ label: 'end', time: last.time, setting: settingAt(closing, last), begun, sample: last });
   }
   wanted.sort((a, b) => (a.time ?? 0) - (b.time ?? 0));
   return solveAll(plant, wanted, directions);
@@ -75,7 +77,8 @@ function knotPoints(plant: Plant, trace: Trace, body: Body, samples: readonly Sa
   const load = entry.loads[body.id] ?? NO_LOAD;
   const wanted: Wanted[] = [];
   for (const knot of passed(knotsOf(plant, body, load), from, to)) {
-    const index = samples.findIndex((one, i) => i > 0 && (x(one) - knot.at) * direction >= 0);
+    const found = samples.findIndex((one, i) => i > 0 && (x(one) - knot.at) * direction >= 0);
+    const index = found < 0 ? samples.length - 1 : found;
     const [before, after] = [samples[index - 1], samples[index]];
     if (!before || !after) continue;
     const way = x(after) - x(before);
@@ -85,10 +88,10 @@ function knotPoints(plant: Plant, trace: Trace, body: Body, samples: readonly Sa
     const begun = Object.fromEntries(plant.bodies.map((one) => [one.id, one.id === body.id || Math.abs((others[one.id] ?? 0) - (samples[0]!.solution.positions[one.id] ?? 0)) > MOVED]));
     const [closing, opening] = [trace.snapshotAt(time, true), trace.snapshotAt(time, false)];
     const turns = closing !== undefined && opening !== undefined && closing !== opening;
-    for (const side of besides(knot, direction, turns)) {
+    for (const side of besidesOnWay(knot, from, to, turns)) {
       // Control that changes at this very place ends the step: what comes after belongs to the next one.
-      const snapshot = side.when === 'after' ? opening : closing;
-      if (!snapshot || (side.when === 'after' && !sameLines(snapshot, closing))) continue;
+      const snapshot = side.when === 'after' ? opening : time <= samples[0]!.time + 1e-9 ? opening : closing;
+      if (!snapshot || (side.when === 'after' && time > samples[0]!.time + 1e-9 && !sameLines(snapshot, closing))) continue;
       const near = side.when === 'after' ? after : before;
       const place = sayPlace(plant.circuit, knot.at, body.type === 'rotating');
       const label = `${side.when === 'at' ? '' : `just ${side.when} `}${place} (${knot.words})`;
@@ -97,6 +100,7 @@ function knotPoints(plant: Plant, trace: Trace, body: Body, samples: readonly Sa
         time: time + (side.when === 'before' ? -1e-9 : side.when === 'after' ? 1e-9 : 0),
         setting: { ...snapshot.setting, positions: { ...others, [body.id]: side.at }, oil: near.solution.oil, bits: near.solution.bits },
         begun,
+        sample: near,
       });
     }
   }
@@ -113,19 +117,22 @@ function between(before: Sample, after: Sample, share: number): Record<string, n
   return positions;
 }
 
-/** The last point with motion where a step ends at a stop. */
-function beforeStop(plant: Plant, body: Body, shift: number, snapshot: Snapshot, last: Sample): Wanted[] {
-  const x = last.solution.positions[body.id] ?? 0;
-  const atStop = Number.isFinite(body.stroke) && (x <= 1e-7 || x >= body.stroke - 1e-7);
-  if (!atStop || Math.abs(shift) < MOVED) return [];
-  const position = x - Math.sign(shift) * OFF_STOP;
-  const setting = settingAt(snapshot, last);
+/** The last point with motion of a body that reaches a stop in the step. */
+function beforeStop(plant: Plant, trace: Trace, body: Body, shift: number, samples: readonly Sample[]): Wanted[] {
+  if (!Number.isFinite(body.stroke) || Math.abs(shift) < MOVED) return [];
+  const x = (one: Sample) => one.solution.positions[body.id] ?? 0;
+  const stop = shift > 0 ? body.stroke : 0;
+  const reached = samples.find((one) => Math.abs(x(one) - stop) <= 1e-7);
+  const snapshot = reached ? trace.snapshotAt(reached.time, true) : undefined;
+  if (!reached || !snapshot) return [];
+  const setting = settingAt(snapshot, reached);
   return [
     {
       label: `${plant.bodies.length > 1 ? `${body.id} ` : ''}just before the stop`,
-      time: last.time - 1e-9,
-      setting: { ...setting, positions: { ...setting.positions, [body.id]: position } },
+      time: reached.time - 1e-9,
+      setting: { ...setting, positions: { ...setting.positions, [body.id]: stop - Math.sign(shift) * OFF_STOP } },
       begun: { [body.id]: true },
+      sample: reached,
     },
   ];
 }
@@ -139,9 +146,17 @@ function solveAll(plant: Plant, wanted: readonly Wanted[], directions: Readonly<
     near = solution.solved ? solution : near;
     const setting = { ...one.setting, bits: solution.bits };
     const point = pointOf(plant, setting, solution, { label: one.label, directions, forces: true, ...(one.time === undefined ? {} : { time: Math.max(0, one.time) }) });
-    points.push({ ...point, actuators: point.actuators.map((actuator) => begunOnly(plant, actuator, one.begun, one.label)) });
+    points.push({ ...left(point, one.sample), actuators: point.actuators.map((actuator) => begunOnly(plant, actuator, one.begun, one.label)) });
   }
   return points;
+}
+
+/** A volume that a step closes keeps the pressure that the run left in it. */
+function left(point: Point, sample: Sample | undefined): Point {
+  if (!sample || Object.keys(point.undetermined).length === 0) return point;
+  const pressures = { ...point.pressures };
+  for (const net of Object.keys(point.undetermined)) pressures[net] = sample.solution.pressures[net] ?? pressures[net] ?? 0;
+  return { ...point, pressures, undetermined: {} };
 }
 
 /** An actuator whose turn has not come yet is not stalled. */
@@ -176,7 +191,7 @@ export function pointsAlone(plant: Plant, given: Setting, entryLabel: string, tu
     const places: { readonly at: number; readonly label: string }[] = [];
     for (const knot of passed(knotsOf(plant, body, setting.loads[body.id] ?? NO_LOAD), from, to)) {
       const words = `${sayPlace(plant.circuit, knot.at, body.type === 'rotating')} (${knot.words})`;
-      for (const side of besides(knot, direction, false)) places.push({ at: side.at, label: side.when === 'at' ? words : `just ${side.when} ${words}` });
+      for (const side of besidesOnWay(knot, from, to, false)) places.push({ at: side.at, label: side.when === 'at' ? words : `just ${side.when} ${words}` });
     }
     const middle = body.stroke / 2;
     if ((middle - from) * direction > 2e-6) places.push({ at: middle, label: 'mid-stroke' });

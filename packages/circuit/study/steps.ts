@@ -109,7 +109,9 @@ function loaders(plant: Plant, coil: string): readonly string[] {
   };
   if (outlet([coil]) >= limit) return [];
   const own = plant.at.coil(coil)?.component;
-  return plant.circuit.coils.filter((one) => one.component !== own && outlet([one.id]) >= limit && outlet([coil, one.id]) >= limit).map((one) => one.id);
+  const found = plant.circuit.coils.filter((one) => one.component !== own && outlet([one.id]) >= limit && outlet([coil, one.id]) >= limit);
+  // One coil a valve: two of one valve would be two voices.
+  return found.filter((one, index) => found.findIndex((other) => other.component === one.component) === index).map((one) => one.id);
 }
 
 export function extremes(points: readonly Point[], samples: readonly Sample[]): { readonly peaks: Record<string, number>; readonly lows: Record<string, number> } {
