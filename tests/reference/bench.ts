@@ -87,10 +87,10 @@ export function shown(si: number, dimension: Dimension, unit: string): string {
   return format(si, dimension, { unit });
 }
 
-/** A lossless supply: pump, relief that holds `set` within a hair, oil of 900 kg/m3 (0.9 of water) at 40 degC. */
+/** A lossless supply: pump, relief that holds `set` within a hair, oil of 900 kg/m3 (0.9 of water) at 40 degC that hardly gives way. */
 export function supply(flow: string, set: string, extra = ''): string {
   return `
-fluid F1 (grade 46, temperature 40 degC, density 900 kg/m3)
+fluid F1 (grade 46, temperature 40 degC, density 900 kg/m3, bulk 100 GPa, air 0 %)
 reservoir R1 (volume 400 L)
 drive M1 (power 500 kW, speed 1000 rpm)
 pump P1 (displacement ${flow} / 1000 rpm, driven by M1, volumetric 100 %, mechanical 100 %, rated 700 bar)

@@ -176,13 +176,14 @@ function sequence(load: string, reducing: boolean): Promise<Bench> {
   return bench(`circuit Bench
 ${supply('20 L/min', '200 bar', ', V1.P')}
 directional V1 (3/2, normally closed, coil a SOL1, passes 6000 L/min at 0.1 bar, takes 1 ms)
-sequence SV1 (set 80 bar, passes 200 L/min at 1 bar, internal drain)
+sequence SV1 (set 80 bar, passes 200 L/min at 1 bar)
 ${reducing ? 'reducing PR1 (set 90 bar, relieving yes, passes 200 L/min at 1 bar)' : ''}
 cylinder C1 (bore 50 mm, stroke 50 mm, begins extended, single cap, spring 1 N to 2 N, ${IDEAL}, attitude level)
 cylinder C2 (bore 80 mm, stroke 500 mm, single cap, spring 1 N to 2 N, ${IDEAL}, attitude level)
 working V1.A to ${reducing ? 'PR1' : 'C1.cap'}
 ${reducing ? 'working PR1.A to C1.cap\ndrain PR1.Y to R1' : ''}
 working V1.A to SV1 to C2.cap
+drain SV1.Y to R1
 return V1.T to R1
 load C2 (${load})
 cycle T {
