@@ -4,7 +4,7 @@ import { join } from 'node:path';
 import { fileURLToPath } from 'node:url';
 import { afterAll, afterEach, beforeAll, describe, expect, test } from 'vitest';
 import { bundleServer } from './support/bundle.ts';
-import { Client } from './support/client.ts';
+import { Client, type Published } from './support/client.ts';
 import { BENCH } from './support/check.ts';
 
 const samples = fileURLToPath(new URL('../../samples', import.meta.url));
@@ -107,6 +107,53 @@ describe('over stdio', () => {
     expect(help.signatures[0]?.label).toContain('cylinder (bore 63 mm, stroke 320 mm');
     const found = await client.connection.sendRequest<{ readonly name: string }[]>('workspace/symbol', { query: 'sol' });
     expect(found.map((one) => one.name)).toContain('SOL1');
+  });
+
+  describe('figures', () => {
+    const uri = 'file:///work/figures.oilway';
+    const text = readFileSync(join(samples, '04-traverse-feed.oilway'), 'utf8');
+    const missed = (one: Published): boolean => one.diagnostics.some((found) => found.code === 'REQUIREMENT');
+
+    test('come in a second wave: requirements, hover, hints', async () => {
+      const low = text.replace('set 1.26 L/min', 'set 2.5 L/min');
+      const first = await client.open(uri, low);
+      expect(missed(first)).toBe(false);
+      const { version, diagnostics } = await client.diagnostics(uri, missed, client.published.indexOf(first) + 1);
+      expect(version).toBe(1);
+      const found = diagnostics.find((one) => one.code === 'REQUIREMENT');
+      expect(found?.message).toContain('Requirement missed');
+      expect(found && client.slice(uri, found.range)).toContain('require');
+      expect((await client.hover(uri, 'cylinder  1A|1'))?.contents).toMatchObject({ value: expect.stringMatching(/\| Out extending \|.*mm\/s/) });
+      expect(client.studied.filter((one) => one.uri === uri)).toHaveLength(1);
+      expect(client.hintRefreshes).toBeGreaterThan(0);
+      expect((await client.hints(uri)).map((one) => String(one.label))).toEqual(expect.arrayContaining([expect.stringMatching(/^out .* mm\/s/), expect.stringMatching(/ s, peak .* bar$/)]));
+    });
+
+    test('a changed setting changes the computed finding', async () => {
+      const since = client.published.length;
+      const version = client.edit(uri, 'set 2.5 L/min', 'set 1.26 L/min');
+      const { diagnostics } = await client.diagnostics(uri, (one) => one.version === version && !missed(one), since);
+      expect(diagnostics.filter((one) => one.severity === 1).map((one) => one.message)).toEqual([]);
+    });
+
+    test('views get circuit, study and findings as they are', async () => {
+      const reply = await client.connection.sendRequest<{ readonly version: number; readonly older: boolean; readonly study: { readonly steps: readonly { readonly id: string }[] } | null }>('oilway/study', { uri });
+      expect(reply.version).toBe(2);
+      expect(reply.study?.steps.map((one) => one.id)).toEqual(['Bore.Out', 'Bore.Back']);
+      expect(await client.connection.sendRequest('oilway/rulePage', { code: 'A01' })).toContain('# A01');
+      expect(await client.connection.sendRequest('oilway/rulePage', { code: 'none' })).toBeNull();
+    });
+
+    test('switched off nothing is computed; on again it is', async () => {
+      let since = client.published.length;
+      void client.connection.sendNotification('workspace/didChangeConfiguration', { settings: { oilway: { compute: { enabled: false } } } });
+      await client.diagnostics(uri, () => true, since);
+      expect((await client.hints(uri)).map((one) => String(one.label))).toEqual(['meters 1A1 extending']);
+      since = client.published.length;
+      void client.connection.sendNotification('workspace/didChangeConfiguration', { settings: { oilway: { compute: { enabled: true } } } });
+      await client.diagnostics(uri, () => true, since);
+      expect((await client.hints(uri)).length).toBeGreaterThan(3);
+    });
   });
 
   test('a closed document shows nothing any more', async () => {

@@ -6,7 +6,9 @@ import { notComputed, restsOn, standing } from './rests.ts';
 import { meteringOf } from './metering.ts';
 import { escape, paragraphs, Show, table } from './show.ts';
 
-const LIFTS: ReadonlySet<string> = new Set(['relief', 'unloading', 'sequence', 'counterbalance']);
+/** Below this a flow is leakage, m3/s (0.005 L/min). */
+const LEAKAGE = 0.005 / 60_000;
+const noLeak = (flow: number): number => (Math.abs(flow) < LEAKAGE ? 0 : flow);
 
 export function hoverValve(analysis: Analysis, component: Component): string {
   const kind = KINDS[component.kind];
@@ -31,7 +33,7 @@ export function hoverValve(analysis: Analysis, component: Component): string {
     words(place, (point) => point.positions[component.id]),
     figures(place, show, 'ratio', (point) => point.openings[component.id]),
     ...(ends ? throughCells(circuit, component.id, ends, place, show) : ports.map((port) => portCell(circuit, component.id, port, place, show))),
-    LIFTS.has(component.kind) ? (place.points.some((point) => point.lifting.includes(component.id)) ? 'yes' : 'no') : '',
+    component.kind === 'relief' ? (place.points.some((point) => point.lifting.includes(component.id)) ? 'yes' : 'no') : '',
   ]);
   const remarks = [...new Set(places.flatMap((place) => place.points.flatMap((point) => point.remarks.filter((one) => one.of === component.id).map((one) => `${place.label}: ${one.words}`))))];
   return paragraphs(title, rows.length > 0 ? table(head, rows) : '', remarks.slice(0, 4).map(escape).join('  \n'), standing(analysis), restsOn(analysis, component.id));
@@ -71,7 +73,7 @@ function throughCells(circuit: Circuit, id: string, ends: readonly [string, stri
     }),
     figures(place, show, 'flow', (point) => {
       const flow = flowInto(point, id, ends[0]) ?? flowInto(point, id, ends[1]);
-      return flow === undefined ? undefined : Math.abs(flow);
+      return flow === undefined ? undefined : Math.abs(noLeak(flow));
     }),
   ];
 }
@@ -82,7 +84,6 @@ function portCell(circuit: Circuit, id: string, port: string, place: Place, show
   const flows = extent(place.points.map((point) => flowInto(point, id, port)));
   if (!flows) return pressure;
   const largest = Math.abs(flows.low) > Math.abs(flows.high) ? flows.low : flows.high;
-  // Less than a drop a second is leakage: not worth a word.
-  if (Math.abs(largest) < 1e-7) return pressure;
+  if (noLeak(largest) === 0) return pressure;
   return `${pressure}, ${show.figure(Math.abs(largest), 'flow')} ${largest > 0 ? 'in' : 'out'}`;
 }
