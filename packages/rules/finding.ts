@@ -26,7 +26,7 @@ export function tell(rule: About, told: Told): Finding {
     code: rule.code,
     severity: told.severity ?? rule.severity,
     what: told.what,
-    why: `${told.why ?? rule.why} (${rule.ground})`,
+    why: `${(told.why ?? rule.why).replace(/\.$/, '')} (${rule.ground}).`,
     mend: told.mend ?? rule.mend,
     ground: rule.ground,
     origin: told.origin,

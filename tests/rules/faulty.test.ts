@@ -6,10 +6,33 @@ import { at, check, FAULTY, short } from './support.ts';
 
 /** What the squiggle stands under. */
 const CHARACTERS: Readonly<Record<string, string>> = {
-  A01: 'P1', A02: 'P1', A03: 'set 200 bar', A04: 'set 60 bar', A06: 'RV1', A09: 'P1', A10: 'P1', A19: 'P1',
-  B01: 'P1', B02: 'UV1.X', B03: 'set 170 bar', B04: 'power 4 kW', B06: 'CV1', C01: 'ACC1', C02: 'ACC1',
-  D01: 'C1', E01: 'FC1', E03: 'FC1', F05: 'SV1.Y', F07: 'set 130 bar', F17: 'SOL2', H14: 'V1', L04: 'Out', L07: 'rises 140 bar',
-  M01: '"1.1"', M07: '110', M08: 'C1',
+  A01: 'P1',
+  A02: 'P1',
+  A03: 'set 200 bar',
+  A04: 'set 60 bar',
+  A06: 'RV1',
+  A09: 'P1',
+  A10: 'P1',
+  A19: 'P1',
+  B01: 'P1',
+  B02: 'UV1.X',
+  B03: 'set 170 bar',
+  B04: 'power 4 kW',
+  B06: 'CV1',
+  C01: 'ACC1',
+  C02: 'ACC1',
+  D01: 'C1',
+  E01: 'FC1',
+  E03: 'FC1',
+  F05: 'SV1.Y',
+  F07: 'set 130 bar',
+  F17: 'SOL2',
+  H14: 'V1',
+  L04: 'Out',
+  L07: 'rises 140 bar',
+  M01: '"1.1"',
+  M07: '110',
+  M08: 'C1',
 };
 const COMPUTED: readonly string[] = RULES.filter((r) => r.needs === 'computed').map((r) => r.code);
 
@@ -50,11 +73,15 @@ describe('faulty samples', () => {
   });
 
   it('figures in messages have units', () => {
-    const messages = readFileSync(new URL('./messages.txt', import.meta.url), 'utf8').split('\n').filter((l) => /^ {2}(?!why|mend|see|fix)/.test(l));
+    const messages = readFileSync(new URL('./messages.txt', import.meta.url), 'utf8')
+      .split('\n')
+      .filter((l) => /^ {2}(?!why|mend|see|fix)/.test(l));
     expect(messages.length).toBeGreaterThanOrEqual(FAULTY.length);
     for (const line of messages) {
       // Numbers that stand alone, not in names (P1, 4/3), quotations or codes.
-      const bare = line.replace(/`[^`]*`|"[^"]*"/g, '').match(/(?<![\w./])\d+(\.\d+)?(?![\w./])(?! ?(%|bar|L\/min|kW|kN|N|mm|s|L|psi|gpm|mm\/s|°C)\b| %)/g);
+      const bare = line
+        .replace(/`[^`]*`|"[^"]*"/g, '')
+        .match(/(?<![\w./])\d+(\.\d+)?(?![\w./])(?! ?(%|bar|L\/min|kW|kN|N|mm|s|L|psi|gpm|mm\/s|°C)\b| %)/g);
       expect(bare, line).toBeNull();
     }
   });

@@ -7,7 +7,7 @@ import { below, freeName, lastLine, reservoirFor, statement, writable } from './
 import { drop, round } from './values.ts';
 
 /** What belongs on the accumulator's side of its shut-off: bleeds and reliefs whose other side leads to the reservoir only. */
-function belongs(graph: Graph, component: Component): boolean {
+function belongs(component: Component): boolean {
   return component.kind === 'relief' || (component.kind === 'shutoff' && component.properties.some((p) => p.name === 'closed'));
 }
 
@@ -41,7 +41,7 @@ function besideOf(graph: Graph, at: Written, store: Component): { readonly at: W
   return (station?.places ?? []).flatMap((place, index) => {
     const ref = place.ports[0];
     const component = ref === undefined ? undefined : graph.component(ref.component);
-    if (ref === undefined || component === undefined || component.id === store.id || !belongs(graph, component)) return [];
+    if (ref === undefined || component === undefined || component.id === store.id || !belongs(component)) return [];
     return [{ at: { line: at.line, station: at.station, index, place }, text: `${component.id}.${ref.port}` }];
   });
 }

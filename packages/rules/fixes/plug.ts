@@ -4,7 +4,13 @@ import type { Fix, RuleContext } from '../rule.ts';
 import { reservoirFor, writable } from './sheet.ts';
 
 /** `plug SV1.Y` becomes `drain SV1.Y to R1`; where several ports are plugged in one statement only this one leaves. */
-export function unplug(context: RuleContext, component: Component, port: string, plugged: Origin, head: 'drain' | 'return'): Fix | undefined {
+export function unplug(
+  context: RuleContext,
+  component: Component,
+  port: string,
+  plugged: Origin,
+  head: 'drain' | 'return',
+): Fix | undefined {
   const reservoir = reservoirFor(context.circuit);
   if (reservoir === undefined || !writable(context, component) || plugged.uri !== context.circuit.uri) return undefined;
   const text = context.text(plugged.uri);

@@ -39,7 +39,13 @@ function settingLike(context: RuleContext, graph: Graph, net: string, like: Comp
   const property = like.properties.find((p) => p.name === 'set' && p.part === undefined);
   const value = property?.value;
   const rating = ratingOf(graph, net);
-  if (property === undefined || value?.type !== 'quantity' || value.origin.uri !== context.circuit.uri || (rating !== undefined && value.q.si * 1.1 > rating.value)) return undefined;
+  if (
+    property === undefined ||
+    value?.type !== 'quantity' ||
+    value.origin.uri !== context.circuit.uri ||
+    (rating !== undefined && value.q.si * 1.1 > rating.value)
+  )
+    return undefined;
   const { uri, start, end } = valueOrigin(context, property);
   const text = context.text(uri).slice(start, end);
   return { text, si: value.q.si, reason: `as ${like.id}` };

@@ -42,7 +42,7 @@ function headWidth(context: RuleContext, origin: Origin): number {
 
 /** `relief    RV2 (...)`: head padded like the statement at `like`. */
 export function statement(context: RuleContext, like: Origin, head: string, rest: string): string {
-  return head.padEnd(headWidth(context, like) - 1) + ' ' + rest;
+  return `${head.padEnd(headWidth(context, like) - 1)} ${rest}`;
 }
 
 export function lastLine(circuit: Circuit): LineStatement | undefined {

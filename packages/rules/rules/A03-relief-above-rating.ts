@@ -52,7 +52,12 @@ function flowOver(graph: Graph, guard: Guard): number {
   const set = settingOf(guard.component)?.set ?? 0;
   const others = graph.ofKind('pump').every((pump) => {
     const outlet = graph.netAt(pump.id, 'P')?.id;
-    return outlet === undefined || guardsReached(graph, outlet, openAlways).some((r) => r.guard.component.id !== guard.component.id && (settingOf(r.guard.component)?.set ?? Infinity) < set);
+    return (
+      outlet === undefined ||
+      guardsReached(graph, outlet, openAlways).some(
+        (r) => r.guard.component.id !== guard.component.id && (settingOf(r.guard.component)?.set ?? Infinity) < set,
+      )
+    );
   });
   return others ? 0 : pumpFlowTo(graph, guard.net);
 }

@@ -1,5 +1,6 @@
 /** A04: the setting that limits the pressure is below what a step needs. */
-import type { ActuatorPoint, LoadValue, Point } from '@oilway/circuit';
+import { type ActuatorPoint, type LoadValue, type Point, read } from '@oilway/circuit';
+import { openAlways, waysFrom } from '../graph/reach.ts';
 import { graphOf, type Graph } from '../graph/graph.ts';
 import { tell } from '../finding.ts';
 import type { Finding, Rule, RuleContext } from '../rule.ts';
@@ -36,6 +37,21 @@ function within(value: LoadValue, position: number): boolean {
   });
 }
 
+/** True where the pressure stands at the setting, or within 5 % of it: else something other than the setting makes it weak. */
+function atLimit(graph: Graph, point: Point, limit: Limit): boolean {
+  const net = graph.netAt(limit.by.id, limit.by.kind === 'reducing' ? 'A' : 'P')?.id;
+  const pressure = net === undefined ? undefined : point.pressures[net];
+  return pressure !== undefined && pressure * MARGIN >= limit.set;
+}
+
+/** True where a relief of the actuator's own line, commanded by a coil, lifts: it holds the force down on purpose. */
+function heldBack(graph: Graph, point: Point, net: string): boolean {
+  const onward = waysFrom(graph, net, openAlways);
+  return graph
+    .ofKind('relief')
+    .some((r) => read.has(r, 'coil') && point.lifting.includes(r.id) && onward.has(graph.netAt(r.id, 'P')?.id ?? ''));
+}
+
 interface Short {
   readonly step: string;
   readonly point: Point;
@@ -56,8 +72,8 @@ function shortfalls(context: RuleContext, graph: Graph): Short[] {
         const kind = graph.component(actuator.id)?.kind;
         const port = kind === 'cylinder' ? (direction > 0 ? 'cap' : 'rod') : direction > 0 ? 'A' : 'B';
         const net = graph.netAt(actuator.id, port);
-        const limit = net === undefined ? undefined : limitOfNet(graph, net.id);
-        if (limit !== undefined) found.push({ step: step.id, point, actuator, limit });
+        const limit = net === undefined || heldBack(graph, point, net.id) ? undefined : limitOfNet(graph, net.id);
+        if (limit !== undefined && atLimit(graph, point, limit)) found.push({ step: step.id, point, actuator, limit });
       }
     }
   }

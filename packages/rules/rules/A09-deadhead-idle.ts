@@ -26,13 +26,21 @@ function worst(context: RuleContext, graph: Graph, pump: Component, limit: numbe
       if (state.state !== name) continue;
       for (const variant of state.variants) {
         const pressure = variant.point.pressures[outlet];
-        if (!variant.point.solved || !variant.drivesOn.includes(drive) || pressure === undefined || pressure <= limit) continue;
+        // Without any way out there is no figure: that pump has no relief (A01, A02).
+        const closed = variant.point.diagnosis.some((d) => d.kind === 'OVERPRESSURE' && d.nets.includes(outlet));
+        if (closed || !variant.point.solved || !variant.drivesOn.includes(drive) || pressure === undefined || pressure <= limit) continue;
         if (found === undefined || pressure > found.pressure) found = { state, variant, pressure };
       }
     }
     if (found !== undefined) return found;
   }
   return undefined;
+}
+
+/** The variant is named where not all are loaded. */
+function variantWords(state: StateResult, variant: Variant, outlet: string, limit: number): string {
+  const all = state.variants.every((v) => (v.point.pressures[outlet] ?? 0) > limit);
+  return all || variant.label === '' ? '' : ` (${variant.label})`;
 }
 
 function say(context: RuleContext, graph: Graph, pump: Component, limit: number, { state, variant, pressure }: Loaded): Finding {
@@ -42,7 +50,7 @@ function say(context: RuleContext, graph: Graph, pump: Component, limit: number,
   const heat = power === undefined ? '' : `; ${show(circuit, power, 'power')} turn into heat`;
   const by = over.length === 0 ? '' : `, all over ${list(over.map((c) => c.id))}`;
   return tell(A09, {
-    what: `${pump.id} works against ${show(circuit, pressure, 'pressure')} in ${state.id}${variant.label === '' ? '' : ` (${variant.label})`}${by}; idle is at most ${show(circuit, limit, 'pressure')}${heat}.`,
+    what: `${pump.id} works against ${show(circuit, pressure, 'pressure')} in ${state.id}${variantWords(state, variant, graph.netAt(pump.id, 'P')?.id ?? '', limit)}${by}; idle is at most ${show(circuit, limit, 'pressure')}${heat}.`,
     origin: pump.nameOrigin,
     place: pump.id,
     state: state.id,
@@ -56,7 +64,7 @@ export const A09: Rule = {
   title: 'Pump works against pressure at rest',
   severity: 'warning',
   why: 'All its power turns into heat while the machine waits.',
-  ground: 'power = pressure x flow (conservation of energy); ISO 4413, oil temperature',
+  ground: 'power = pressure x flow, conservation of energy; ISO 4413, oil temperature',
   mend: 'Unload it at rest: tandem or open centre, a vented relief, an unloading valve, or a compensated pump.',
   needs: 'computed',
   page: `

@@ -37,7 +37,7 @@ export const B01: Rule = {
   title: 'No check valve between low- and high-pressure pump',
   severity: 'error',
   why: 'When the unloading valve opens, the oil of the high-pressure pump goes to the reservoir with the rest: full pressure is never reached.',
-  ground: 'two-pump (high-low) circuit, fluid power textbooks',
+  ground: 'high-low circuit with two pumps, fluid power textbooks',
   mend: 'Put a check valve between the low-pressure pump with its unloading valve and the high-pressure line.',
   needs: 'topology',
   page: `

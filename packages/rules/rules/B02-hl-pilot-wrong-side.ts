@@ -63,7 +63,7 @@ export const B02: Rule = {
   title: 'Unloading valve piloted from its own side of the check',
   severity: 'error',
   why: 'As soon as it opens, its own pilot pressure is gone and it closes again: it chatters and never stays unloaded.',
-  ground: 'two-pump (high-low) circuit, fluid power textbooks',
+  ground: 'high-low circuit with two pumps, fluid power textbooks',
   mend: 'Take the pilot from the high-pressure side of the check.',
   needs: 'topology',
   page: `

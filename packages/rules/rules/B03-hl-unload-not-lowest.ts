@@ -53,7 +53,7 @@ export const B03: Rule = {
   title: 'Unloading valve not set between approach and relief',
   severity: 'error',
   why: 'Set above the relief it never unloads and the motor carries both pumps at full pressure; set below the approach it takes the fast oil away.',
-  ground: 'two-pump (high-low) circuit, fluid power textbooks (unloading about 1.5 times the approach pressure)',
+  ground: 'high-low circuit with two pumps, fluid power textbooks: unloading at about 1.5 times the approach pressure',
   mend: 'Set it above the pressure of the approach and well below the relief.',
   needs: 'topology',
   page: `

@@ -82,7 +82,7 @@ export const B04: Rule = {
   title: 'Drive too small for the two pumps',
   severity: 'warning',
   why: 'The motor trips when the unit switches over or holds full pressure.',
-  ground: 'power = pressure x flow / efficiency (conservation of energy); the two corners of a high-low unit, fluid power textbooks',
+  ground: 'power = pressure x flow / efficiency, conservation of energy; the two corners of a high-low unit, fluid power textbooks',
   mend: 'Choose a larger drive, a smaller low-pressure pump, or a lower unloading setting.',
   needs: 'topology',
   page: `

@@ -25,7 +25,7 @@ export const B06: Rule = {
   title: 'Check between the two pumps faces the wrong way',
   severity: 'error',
   why: 'The low-pressure oil never joins, and the high-pressure oil runs out through the unloading valve.',
-  ground: 'two-pump (high-low) circuit, fluid power textbooks',
+  ground: 'high-low circuit with two pumps, fluid power textbooks',
   mend: 'Turn the check round: free from the low-pressure pump to the high-pressure line.',
   needs: 'topology',
   page: `
@@ -48,7 +48,7 @@ reach of the low-pressure pump) are not repeated.`,
           hidesAt: [
             { code: 'B01', place: unloading.id },
             { code: 'B02', place: unloading.id },
-            ...['A01', 'A02', 'A10', 'A19'].map((code) => ({ code, place: low.id })),
+            ...['A01', 'A02', 'A09', 'A10', 'A19'].map((code) => ({ code, place: low.id })),
             ...['A10', 'A19'].map((code) => ({ code, place: high.id })),
           ],
         }),

@@ -5,6 +5,7 @@ import { type Passing, waysFrom } from '../graph/reach.ts';
 import { type Rating, ratingOf } from '../graph/rating.ts';
 import { tell } from '../finding.ts';
 import type { Finding, Rule, RuleContext } from '../rule.ts';
+import { format } from '@oilway/quantity';
 import { against, show } from '../words.ts';
 import { relatedTo } from './pump-guard.ts';
 
@@ -34,12 +35,27 @@ function meterAt(graph: Graph, nets: ReadonlySet<string>): Component | undefined
 
 function highest(context: RuleContext, graph: Graph, cylinder: Component, nets: ReadonlySet<string>): Over | undefined {
   const cap = graph.netAt(cylinder.id, 'cap')?.id;
-  const points: { readonly state: string; readonly point: Point }[] = [
-    ...(context.study?.steps ?? []).flatMap((s) => s.points.map((point) => ({ state: s.id, point }))),
-    ...(context.study?.states ?? []).flatMap((s) => s.variants.map((v) => ({ state: s.id, point: v.point }))),
-  ];
+  const steps = (context.study?.steps ?? []).flatMap((s) => s.points.map((point) => ({ state: s.id, point, label: point.label })));
+  const states = (context.study?.states ?? []).flatMap((s) => s.variants.map((v) => ({ state: s.id, point: v.point, label: v.label })));
+  // What a declared step does is told before what a stuck coil would do.
+  return worst(graph, cylinder, nets, steps, cap) ?? worst(graph, cylinder, nets, states, cap);
+}
+
+interface Solved {
+  readonly state: string;
+  readonly point: Point;
+  readonly label: string;
+}
+
+function worst(
+  graph: Graph,
+  cylinder: Component,
+  nets: ReadonlySet<string>,
+  points: readonly Solved[],
+  cap: string | undefined,
+): Over | undefined {
   let found: Over | undefined;
-  for (const { state, point } of points) {
+  for (const { state, point, label } of points) {
     if (!point.solved) continue;
     const actuator = point.actuators.find((a) => a.id === cylinder.id);
     if (actuator !== undefined && actuator.velocity < 0) continue;
@@ -50,7 +66,7 @@ function highest(context: RuleContext, graph: Graph, cylinder: Component, nets: 
       // Above the other side: intensified, not merely pumped up.
       if (pressure === undefined || rating === undefined || pressure <= rating.value * 1.001 || pressure <= (opposite ?? 0)) continue;
       if (found === undefined || pressure - rating.value > found.pressure - found.rating.value) {
-        found = { state, label: point.label, position: actuator?.position, pressure, cap: opposite, net, rating };
+        found = { state, label, position: actuator?.position, pressure, cap: opposite, net, rating };
       }
     }
   }
@@ -60,7 +76,11 @@ function highest(context: RuleContext, graph: Graph, cylinder: Component, nets: 
 function say(context: RuleContext, cylinder: Component, meter: Component, over: Over): Finding {
   const { circuit } = context;
   const { value, bound } = against(circuit, over.pressure, over.rating.value, 'pressure', over.rating.unit);
-  const where = over.position === undefined ? over.label : `${over.label}, ${show(circuit, over.position, 'length')}`;
+  const position =
+    over.position === undefined
+      ? undefined
+      : format(over.position, 'length', { display: circuit.display, units: circuit.units, position: true });
+  const where = position === undefined || over.label.includes(position) ? over.label : `${over.label}, ${position}`;
   const from = over.cap === undefined ? '' : ` with ${show(circuit, over.cap, 'pressure', over.rating.unit)} at ${cylinder.id}.cap`;
   return tell(E01, {
     what: `${meter.id} meters the oil out of ${cylinder.id}.rod: ${value} stand there in ${over.state} (${where})${from}; ${over.rating.of} is rated ${bound}.`,
@@ -81,7 +101,7 @@ export const E01: Rule = {
   title: 'Metering out raises the rod side above its rating',
   severity: 'error',
   why: 'With little load, the pressure on the cap side comes out on the smaller rod side multiplied: seals, tube or hose give way.',
-  ground: 'force balance p rod = (p cap x A cap - F) / A annulus; ISO 4413, pressure intensification',
+  ground: 'force balance p cap x A cap = p rod x A annulus + F; ISO 4413, pressure intensification',
   mend: 'Lower the pressure on the cap side, choose parts with a higher rating, meter in, or guard the rod side by a relief.',
   needs: 'computed',
   page: `

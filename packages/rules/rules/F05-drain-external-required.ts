@@ -75,7 +75,7 @@ export const F05: Rule = {
   title: 'Valve without its external drain',
   severity: 'error',
   why: 'The spring chamber of a sequence or reducing valve must stand at reservoir pressure, or its setting is not what it says.',
-  ground: 'pressure-control valves, fluid power textbooks (sequence and reducing valves are drained externally); ISO 4413, drains',
+  ground: 'sequence and reducing valves are drained externally, fluid power textbooks; ISO 4413, drains',
   mend: 'Lead Y to the reservoir by a drain line of its own.',
   needs: 'topology',
   page: `

@@ -77,7 +77,7 @@ export const F07: Rule = {
   title: 'Sequence valve set out of order',
   severity: 'error',
   why: 'Set too high the next motion never begins; set too low it begins before the first has done its work.',
-  ground: 'sequence circuits, fluid power textbooks (working pressure of the first actuator < sequence setting < relief)',
+  ground: 'sequence circuits, fluid power textbooks: working pressure of the first actuator < sequence setting < relief',
   mend: 'Set it above the working pressure of the actuator before it and well below the relief.',
   needs: 'topology',
   page: `

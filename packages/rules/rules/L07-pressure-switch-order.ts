@@ -1,7 +1,7 @@
 /** L07: a pressure switch whose threshold is never reached, or is already passed when its step begins. */
 import { type Component, type Condition, read, type Step, type Study } from '@oilway/circuit';
 import { graphOf, type Graph } from '../graph/graph.ts';
-import { openAlways, waysTo } from '../graph/reach.ts';
+import { openAlways, spreadable, waysTo } from '../graph/reach.ts';
 import { tell } from '../finding.ts';
 import type { Finding, Rule, RuleContext } from '../rule.ts';
 import { against, show } from '../words.ts';
@@ -60,8 +60,14 @@ function needsOn(condition: Condition | undefined, id: string): boolean {
   return condition.op === 'and' && condition.items.some((c) => needsOn(c, id));
 }
 
-function inSteps(context: RuleContext, study: Study, one: Component, at: Threshold): Finding | undefined {
-  if (read.has(one, 'broken')) return undefined;
+/** Without a pump that reaches it the switch is not set wrong: something else is missing. */
+function fed(graph: Graph, net: string): boolean {
+  const ways = waysTo(graph, net, spreadable);
+  return graph.ofKind('pump').some((pump) => ways.has(graph.netAt(pump.id, 'P')?.id ?? ''));
+}
+
+function inSteps(context: RuleContext, study: Study, graph: Graph, one: Component, at: Threshold): Finding | undefined {
+  if (read.has(one, 'broken') || !fed(graph, at.net)) return undefined;
   const steps = new Map<string, Step>(context.circuit.cycles.flatMap((c) => c.steps.map((s) => [s.id, s] as const)));
   for (const result of study.steps) {
     const step = steps.get(result.id);
@@ -77,7 +83,9 @@ function inSteps(context: RuleContext, study: Study, one: Component, at: Thresho
       related: [{ message: `${result.id} waits for ${one.id}`, origin: step!.until!.origin }],
       computed: true,
     };
-    if (highest < at.value * 0.999) {
+    // The run itself must have waited in vain: a step that nobody got to says nothing.
+    const inVain = result.faults.some((f) => f.step === result.id && (f.kind === 'time limit' || f.kind === 'waits for ever'));
+    if (inVain && highest < at.value * 0.999) {
       const { value, bound } = against(context.circuit, highest, at.value, 'pressure', at.unit);
       return tell(L07, {
         ...common,
@@ -104,7 +112,7 @@ export const L07: Rule = {
   title: 'Pressure switch set out of order',
   severity: 'error',
   why: 'A step that waits for it never ends, or ends before the work is done.',
-  ground: 'order of pressure settings, fluid power textbooks (working pressure < switch < relief)',
+  ground: 'order of pressure settings, fluid power textbooks: working pressure < switch < relief',
   mend: 'Set the switch below the relief or compensator and above the pressure of the motion before it.',
   needs: 'topology',
   page: `
@@ -123,7 +131,9 @@ temperature and filter switches.`,
       const at = thresholdOf(graph, one);
       if (at === undefined) return [];
       return (
-        aboveSettings(context, graph, one, at) ?? (context.study === undefined ? undefined : inSteps(context, context.study, one, at)) ?? []
+        aboveSettings(context, graph, one, at) ??
+        (context.study === undefined ? undefined : inSteps(context, context.study, graph, one, at)) ??
+        []
       );
     });
   },
