@@ -1,7 +1,7 @@
 /**
  * Continuous double-acting intensifier of ratio r: p_A <= r (p_P - p_T) + p_T with q_A = q_P/r, q_T = q_P - q_A. As long as p_A is below p_P
- * the oil goes to A through its own check and the piston stands. The piston takes over between 0.2 and 0.1 bar below p_P (the check's
- * crack, common practice, no source), so that a dead-ended A is not left at p_P. Nothing flows from A to P.
+ * the oil goes to A through its own check and the piston stands. The piston takes over between 0.3 and 0.2 bar below p_P, before
+ * the check closes (its crack, 0.2 bar: common practice, no source), so that a dead-ended A is not left where neither gives oil. Nothing flows from A to P.
  */
 import type { IntensifierSpec } from '../network.ts';
 import { positive, positiveSlope, ramp, rampSlope, root, rootSlope } from '../smooth.ts';
@@ -30,7 +30,7 @@ export function intensifierLaw(spec: IntensifierSpec): Law {
       const q1 = FREE * root(positive(over, EPS * blend), DELTA * blend);
       const q1Slope = FREE * rootSlope(positive(over, EPS * blend), DELTA * blend) * positiveSlope(over, EPS * blend);
       const edge = Math.min(0.5, BAND_EDGE * blend);
-      const u = (a - p + CRACK) / TAKES_OVER;
+      const u = (a - p + CRACK) / TAKES_OVER + 1;
       const gate = ramp(u, edge);
       const gateByA = rampSlope(u, edge) / TAKES_OVER;
       const d = ratio * (p - t) + t - a;
