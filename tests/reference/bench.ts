@@ -14,6 +14,8 @@ export interface Bench {
   actuator(step: string, actuator: string): ActuatorPoint;
   /** Pa gauge, of the net that holds this port (or has this name), at the actuator's moving point of the step. */
   pressure(step: string, place: string, actuator?: string): number;
+  /** Pa gauge, highest of the whole step. */
+  peak(step: string, place: string): number;
   /** m3/s, magnitude. */
   flow(step: string, port: string, actuator?: string): number;
   /** A point of a machine state's first variant. */
@@ -29,7 +31,9 @@ export async function bench(text: string): Promise<Bench> {
   const document = analyse([{ uri: BENCH_URI, text }], engines(failures)).documents[0];
   if (document?.failed !== undefined) failures.push(document.failed);
   if (failures.length > 0) throw new Error(failures.join('\n'));
-  const broken = document?.findings.filter((finding) => finding.severity === 'error' && !/^[A-Z]\d\d$/.test(finding.code)) ?? [];
+  const broken =
+    document?.findings.filter((finding) => finding.severity === 'error' && /^(SYNTAX|NAME|PORT|CHAIN|VALUE|M\d\d)$/.test(finding.code)) ??
+    [];
   if (broken.length > 0)
     throw new Error(
       broken.map((finding) => `${finding.code}: ${finding.what} (${text.slice(finding.origin.start, finding.origin.end)})`).join('\n'),
@@ -70,6 +74,7 @@ export async function bench(text: string): Promise<Bench> {
         `no ${id} in ${name}`,
       ),
     pressure: (name, place, id) => must(point(name, id).pressures[netOf(place)], `no pressure at ${place}`),
+    peak: (name, place) => must(step(name).peaks[netOf(place)], `no pressure at ${place}`),
     flow: (name, port, id) => Math.abs(must(point(name, id).flows[port], `no flow at ${port}`)),
     state: (name) => must(study.states.find((one) => one.id === name)?.variants[0]?.point, `no state ${name}`),
     requirement: (index) => must(study.requirements[index], `no requirement ${index}`),

@@ -207,7 +207,7 @@ describe('a sequence valve (common practice, no source)', () => {
   });
   it('a pressure-reducing valve in the first branch caps it', async () => {
     const of = await sequence(ON_80_MM(150), true);
-    near(inUnits(of.pressure('Go', 'C1.cap', 'C2'), 'bar'), 90, 0.03);
+    near(inUnits(of.peak('Go', 'C1.cap'), 'bar'), 90, 0.05);
   });
 });
 
@@ -231,11 +231,11 @@ ${lines}
   it('a sequence valve with remote pilot and its outlet to the reservoir unloads a pump as an unloading valve does', async () => {
     const unloading = await unloaded(
       'unloading U1 (set 50 bar, passes 80 L/min at 4 bar)',
-      'working P1 to U1\npilot high to U1.X\nreturn U1 to R1',
+      'working P1.P to U1\npilot high to U1.X\nreturn U1 to R1',
     );
     const asSequence = await unloaded(
       'sequence U1 (set 50 bar, external pilot, internal drain, passes 80 L/min at 4 bar)',
-      'working P1 to U1.P\npilot high to U1.X\nreturn U1.A to R1',
+      'working P1.P to U1.P\npilot high to U1.X\nreturn U1.A to R1',
     );
     const outlet = (of: Bench) =>
       of.state('REST').pressures[
