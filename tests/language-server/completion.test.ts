@@ -77,6 +77,9 @@ describe('in brackets', () => {
   test('properties of lines and loads', () => {
     expect(offered(`${BENCH}working V1.A to C1.cap (|)`)).toEqual(expect.arrayContaining(['bore', 'length', 'hose']));
     expect(offered(`${BENCH}load C1 (|)`)).toEqual(expect.arrayContaining(['mass', 'resist', 'people']));
+    expect(offered(`${BENCH}limits (|)`)).toEqual(expect.arrayContaining(['velocity', 'idle', 'margin']));
+    expect(offered(`${BENCH}limits (velocity |)`)).toEqual(expect.arrayContaining(['suction', 'return']));
+    expect(offered(`${BENCH}limits (velocity return 3 |)`)).toContain('m/s');
     expect(offered(`${BENCH}load C1 (inward 3 kN in |)`)).toEqual(expect.arrayContaining(['Out', 'Back']));
   });
 });
@@ -126,6 +129,11 @@ describe('control', () => {
   test('requirements: subject, measure, place, bound, unit of the measure', () => {
     expect(offered(`${BENCH}require |`)).toEqual(expect.arrayContaining(['never', 'C1', 'Part', 'pressure']));
     expect(offered(`${BENCH}require C1 |`)).toEqual(expect.arrayContaining(['speed', 'force', 'still']));
+    expect(offered(`${BENCH}require C1 |`)).not.toContain('temperature');
+    expect(offered(`${BENCH}require R1 |`)).toEqual(expect.arrayContaining(['temperature', 'volume']));
+    expect(offered(`${BENCH}require R1 |`)).not.toContain('speed');
+    expect(offered(`${BENCH}require C1.cap |`)).toEqual(expect.arrayContaining(['pressure', 'flow']));
+    expect(offered(`${BENCH}require Part |`)).toEqual(['time']);
     expect(offered(`${BENCH}require C1 speed |`)).toEqual(expect.arrayContaining(['in', 'at least', 'between']));
     expect(offered(`${BENCH}require C1 speed in |`)).toEqual(expect.arrayContaining(['Out', 'Back', 'REST']));
     expect(offered(`${BENCH}require C1 speed in Out at least 20 |`)).toContain('mm/s');
@@ -145,11 +153,22 @@ describe('quiet', () => {
 });
 
 describe('snippets', () => {
+  /** What a snippet stands on that asks for a line `pressure`. */
+  const SUPPLY = `drive M9 (power 4 kW, speed 1450 rpm)
+pump P9 (displacement 16 cm3/rev, driven by M9, rated 250 bar)
+relief RV9 (set 160 bar, passes 40 L/min at 5 bar)
+check CV9 (passes 40 L/min at 3 bar)
+gauge G9 (range 0 bar to 250 bar)
+suction R1 to P9
+working P9 to RV9, CV9
+working pressure: CV9 to G9
+return RV9 to R1
+`;
   const AROUND = 'circuit Sheet\nfluid HM46 (grade 46, temperature 45 degC)\nreservoir R1 (volume 100 L)\n';
-  test.each(SNIPPETS)('$label reads without an error', (snippet) => {
+  test.each(SNIPPETS)('$label stands without an error, of the text or of a rule', (snippet) => {
     const own = plain(snippet);
     const needsLine = /\bpressure to\b/.test(own) && !/pressure:/.test(own);
-    const supply = needsLine ? 'drive M9 (power 4 kW, speed 1450 rpm)\npump P9 (displacement 16 cm3/rev, driven by M9)\nsuction R1 to P9\nworking pressure: P9 to G9\ngauge G9 (range 0 bar to 250 bar)\n' : '';
+    const supply = needsLine ? SUPPLY : '';
     const text = snippet.label === 'pump unit' ? `circuit Sheet\n${own}\n` : `${AROUND}${supply}${own}\n`;
     const errors = analyseText(text).findings.filter((one) => one.severity === 'error');
     expect(errors.map((one) => `${text.slice(one.origin.start, one.origin.end)}: ${one.what}`)).toEqual([]);

@@ -3,6 +3,7 @@ import { readFileSync, readdirSync, rmSync } from 'node:fs';
 import { join } from 'node:path';
 import { fileURLToPath } from 'node:url';
 import { afterAll, afterEach, beforeAll, describe, expect, test } from 'vitest';
+import type { TextEdit } from 'vscode-languageserver-types';
 import { bundleServer } from './support/bundle.ts';
 import { Client, type Published } from './support/client.ts';
 import { BENCH } from './support/check.ts';
@@ -107,6 +108,20 @@ describe('over stdio', () => {
     expect(help.signatures[0]?.label).toContain('cylinder (bore 63 mm, stroke 320 mm');
     const found = await client.connection.sendRequest<{ readonly name: string }[]>('workspace/symbol', { query: 'sol' });
     expect(found.map((one) => one.name)).toContain('SOL1');
+  });
+
+  test('formatting: only lines that change are sent, a range changes only its own', async () => {
+    const crooked = client.edit(URI, 'cylinder  C1 (bore', 'cylinder C1   ( bore');
+    await client.diagnostics(URI, (one) => one.version === crooked);
+    const options = { tabSize: 2, insertSpaces: true };
+    const edits = await client.request<TextEdit[]>('formatting', URI, { options });
+    expect(edits.map((one) => one.range.start.line)).toContain(client.at(URI, '|cylinder C1').line);
+    expect(client.applied(URI, { changes: { [URI]: edits } })).toContain('cylinder  C1 (bore 63 mm');
+    const line = client.at(URI, '|throttle').line;
+    const elsewhere = await client.request<TextEdit[]>('rangeFormatting', URI, { options, range: { start: { line, character: 0 }, end: { line, character: 5 } } });
+    expect(elsewhere.filter((one) => one.range.start.line !== line)).toEqual([]);
+    const back = client.edit(URI, 'cylinder C1   ( bore', 'cylinder  C1 (bore');
+    await client.diagnostics(URI, (one) => one.version === back);
   });
 
   describe('figures', () => {

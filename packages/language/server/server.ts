@@ -34,6 +34,7 @@ import { selectionAt } from '../features/selection.ts';
 import { semanticTokens, TOKEN_MODIFIERS, TOKEN_TYPES } from '../features/semantic-tokens.ts';
 import { signatureAt } from '../features/signature.ts';
 import { Lines } from '../features/text/lines.ts';
+import { format } from '../format/format.ts';
 import type { Analyser } from './analyser.ts';
 import type { Host } from './host.ts';
 import { ReadDirectory, ReadFile, RulePage, Studied, StudyOf, type InitializationOptions, type StudyReply } from './protocol.ts';
@@ -306,11 +307,11 @@ export function startServer(connection: Connection, host: Host, analyser: Analys
   });
   connection.onDocumentFormatting(({ textDocument }) => {
     const analysis = session?.analysis(textDocument.uri);
-    return analysis ? formatEdits(analysis, analysis.text) : [];
+    return analysis ? formatEdits(analysis, format(analysis.text)) : [];
   });
   connection.onDocumentRangeFormatting(({ textDocument, range }) => {
     const analysis = session?.analysis(textDocument.uri);
-    return analysis ? formatEdits(analysis, analysis.text, { start: analysis.lines.offset(range.start), end: analysis.lines.offset(range.end) }) : [];
+    return analysis ? formatEdits(analysis, format(analysis.text), { start: analysis.lines.offset(range.start), end: analysis.lines.offset(range.end) }) : [];
   });
   connection.onRequest(SemanticTokensRequest.type, ({ textDocument }) => {
     const analysis = session?.analysis(textDocument.uri);

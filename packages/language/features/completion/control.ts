@@ -1,26 +1,44 @@
 /** Proposals in the lines that control: steps, while lines, interlocks, emergency, requirements. */
 import { CompletionItemKind } from 'vscode-languageserver-types';
 import type { Dimension } from '@oilway/quantity';
-import type { Circuit } from '@oilway/circuit';
+import type { Circuit, Measure } from '@oilway/circuit';
+import { measureOf, MEASURES, measuresOf, type Subject } from '../../resolve/measures.ts';
 import type { Token } from '../text/scan.ts';
 import { word, type Proposal } from './item.ts';
 import { coils, components, conditionNames, constants, cycles, places, STATES, steps } from './names.ts';
 
-export const MEASURES: Readonly<Record<string, { readonly dimension: Dimension; readonly about: string }>> = {
-  speed: { dimension: 'velocity', about: 'of an actuator, in its direction of motion' },
-  force: { dimension: 'force', about: 'pressed on the load' },
-  torque: { dimension: 'torque', about: 'at the gear output' },
-  pressure: { dimension: 'pressure', about: 'of a port or a line, gauge' },
-  power: { dimension: 'power', about: 'of a drive, pump or actuator; loss of a valve or line' },
-  loading: { dimension: 'ratio', about: 'of a drive, over the cycle' },
-  flow: { dimension: 'flow', about: 'through a component or line' },
-  loss: { dimension: 'pressure', about: 'pressure drop across a component' },
-  temperature: { dimension: 'temperature', about: 'of the oil in a reservoir' },
-  time: { dimension: 'time', about: 'of a cycle or step' },
-  position: { dimension: 'length', about: 'of an actuator' },
-  volume: { dimension: 'volume', about: 'of oil in an accumulator or reservoir' },
-  drift: { dimension: 'length', about: 'moved by leakage; needs `for`' },
+/** What each measure is of, in words; its dimension follows from the subject. */
+const MEASURE_ABOUT: Readonly<Record<Measure, string>> = {
+  speed: 'in its direction of motion',
+  force: 'pressed on the load',
+  torque: 'at the gear output',
+  pressure: 'gauge',
+  power: 'of a drive, pump or actuator; loss of a valve or line',
+  loading: 'of a drive, over the cycle',
+  flow: 'through it',
+  loss: 'pressure drop across it',
+  temperature: 'of the oil',
+  time: 'of the cycle or step',
+  position: 'from retracted',
+  volume: 'of oil in it',
+  drift: 'moved by leakage; needs `for`',
 };
+
+/** What the first words of a requirement name; undefined where they name nothing known. */
+function subjectOf(circuit: Circuit, words: readonly Token[]): Subject | undefined {
+  const name = words.map((token) => token.text).join('');
+  const component = (id: string): Circuit['components'][number] | undefined => circuit.components.find((one) => one.id === id);
+  const whole = component(name);
+  if (whole) return { is: 'component', component: whole };
+  const dot = name.lastIndexOf('.');
+  const owner = dot < 0 ? undefined : component(name.slice(0, dot));
+  if (owner) return { is: 'component', component: owner, port: name.slice(dot + 1) };
+  if (circuit.lines.some((line) => line.name === name)) return { is: 'line' };
+  if (circuit.cycles.some((cycle) => cycle.id === name)) return { is: 'cycle' };
+  return circuit.cycles.some((cycle) => cycle.steps.some((step) => step.id === name || step.name === name)) ? { is: 'step' } : undefined;
+}
+
+const isMeasure = (word: string): word is Measure => word in MEASURE_ABOUT;
 
 const ACTIONS: readonly Proposal[] = [
   word('energise', 'make coils live', 1),
@@ -115,8 +133,13 @@ export function requirement(circuit: Circuit, statement: readonly Token[]): Prop
   const inside = statement.slice(1);
   if (inside.length === 0) return [word('never', 'a condition that must not come about', 2), ...components(circuit, undefined, 3), ...places(circuit).filter((one) => one.kind === CompletionItemKind.Interface), ...cycles(circuit, 3), ...steps(circuit, 4)];
   if (inside[0]?.text === 'never') return condition(circuit, inside.slice(1), []);
-  const at = inside.findIndex((token) => token.text === 'still' || token.text in MEASURES);
-  if (at < 0) return [...Object.entries(MEASURES).map(([name, one]) => word(name, one.about, 1)), word('still', 'no motion but leakage', 1)];
+  const at = inside.findIndex((token) => token.text === 'still' || isMeasure(token.text));
+  if (at < 0) {
+    const subject = subjectOf(circuit, inside);
+    const fitting = subject ? measuresOf(subject) : MEASURES;
+    const moves = !subject || (subject.is === 'component' && ['cylinder', 'motor', 'rotary'].includes(subject.component.kind) && subject.port === undefined);
+    return [...fitting.map((name) => word(name, MEASURE_ABOUT[name], 1)), ...(moves ? [word('still', 'no motion but leakage', 1)] : [])];
+  }
   const rest = inside.slice(at + 1);
   const last = rest.at(-1);
   const bounds: Proposal[] = [word('at least', '', 2), word('at most', '', 2), word('between', '', 2), word('reaches', 'at some point', 2)];
@@ -131,15 +154,18 @@ export function requirement(circuit: Circuit, statement: readonly Token[]): Prop
 }
 
 /** Dimension of a number in a control line. */
-export function controlDimensions(statement: readonly Token[]): readonly Dimension[] {
+export function controlDimensions(circuit: Circuit, statement: readonly Token[]): readonly Dimension[] {
   const head = statement[0]?.text;
   if (head === 'require') {
     const opener = lastOf(statement.slice(0, -1), ['from', 'for', 'within', 'least', 'most', 'between', 'reaches', 'above', 'below', 'at']);
     if (opener?.opener === 'for' || opener?.opener === 'within') return ['time'];
     if (opener?.opener === 'from') return ['length', 'angle'];
-    const measure = statement.map((token) => token.text).find((text) => text in MEASURES);
-    const dimension = measure ? MEASURES[measure]?.dimension : undefined;
-    return dimension ? (dimension === 'velocity' ? ['velocity', 'rotation'] : dimension === 'length' ? ['length', 'angle'] : [dimension]) : ['length', 'pressure', 'temperature', 'angle'];
+    const at = statement.findIndex((token) => isMeasure(token.text));
+    const measure = statement[at]?.text ?? '';
+    if (!isMeasure(measure)) return ['length', 'pressure', 'temperature', 'angle'];
+    const subject = subjectOf(circuit, statement.slice(1, at));
+    const found = subject && measureOf(measure, subject);
+    return found && 'dimension' in found ? [found.dimension] : [];
   }
   const opener = lastOf(statement.slice(0, -1), ['for', 'most', 'over', 'at', 'from', 'above', 'below', 'to']);
   if (opener?.opener === 'for' || opener?.opener === 'most' || opener?.opener === 'over') return ['time'];

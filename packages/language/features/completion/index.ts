@@ -64,9 +64,9 @@ function proposals(analysis: Analysis, cursor: Cursor, options: CompletionOption
     }
     if (head === 'controls') return inside.entry.length === 0 ? [...coils(circuit), ...components(circuit, ['switch', 'sensor'], 2), ...steps(circuit, 3)] : [];
     if (head === 'unit') return parameters(analysis, inside.outside.map((token) => token.text), inside.written, inside.entry.length);
-    if (cursor.afterNumber) return units(circuit, controlDimensions(statement));
+    if (cursor.afterNumber) return units(circuit, controlDimensions(circuit, statement));
   }
-  if (cursor.afterNumber && head !== 'let') return ['step', 'meanwhile', 'while', 'require', 'interlock'].includes(head) ? units(circuit, controlDimensions(statement)) : [];
+  if (cursor.afterNumber && head !== 'let') return ['step', 'meanwhile', 'while', 'require', 'interlock'].includes(head) ? units(circuit, controlDimensions(circuit, statement)) : [];
 
   if ((LINE_FUNCTIONS as readonly string[]).includes(head)) return chain(circuit, last, statement.length);
   switch (head) {

@@ -1,7 +1,7 @@
 /** Proposals inside brackets: properties of the kind, then what a property takes. */
 import { CompletionItemKind } from 'vscode-languageserver-types';
 import { unitsOf, type Dimension } from '@oilway/quantity';
-import { KINDS, KIND_NAMES, LINE_PROPERTIES, LOAD_PROPERTIES, type Circuit, type KindName, type PropertySpec, type Shape } from '@oilway/circuit';
+import { KINDS, KIND_NAMES, LIMITS_PROPERTIES, LINE_PROPERTIES, LOAD_PROPERTIES, type Circuit, type KindName, type PropertySpec, type Shape } from '@oilway/circuit';
 import type { Token } from '../text/scan.ts';
 import { LINE_FUNCTIONS } from '../../parse/words.ts';
 import type { BracketEntry } from './context.ts';
@@ -18,22 +18,8 @@ export function propertyTable(statement: readonly Token[]): readonly PropertySpe
   if (head === 'part' && isKind(second)) return KINDS[second].properties;
   if ((LINE_FUNCTIONS as readonly string[]).includes(head)) return LINE_PROPERTIES;
   if (head === 'load') return LOAD_PROPERTIES;
-  if (head === 'limits') return LIMIT_PROPERTIES;
+  if (head === 'limits') return LIMITS_PROPERTIES;
   return undefined;
-}
-
-/** What the house allows (`limits`). */
-export const LIMIT_PROPERTIES: readonly PropertySpec[] = [
-  limit('velocity', { form: 'portQuantity', dimension: 'pressure' }, 'velocity return 3 m/s', 'Highest oil velocity in lines of a function.', true),
-  limit('temperature', { form: 'quantity', dimensions: ['temperature'] }, 'temperature 60 degC', 'Highest oil temperature.'),
-  limit('viscosity', { form: 'range', dimensions: ['viscosity'] }, 'viscosity 12 mm2/s to 800 mm2/s', 'Allowed span of viscosity.'),
-  limit('cleanliness', { form: 'text' }, 'cleanliness "18/16/13"', 'Wanted cleanliness code (ISO 4406).'),
-  limit('margin', { form: 'quantity', dimensions: ['ratio'] }, 'margin 10 %', 'Margin that requirements shall keep.'),
-  limit('idle', { form: 'quantity', dimensions: ['pressure'] }, 'idle 20 bar', 'Highest pump pressure at rest.'),
-  limit('surge', { form: 'quantity', dimensions: ['pressure'] }, 'surge 30 bar', 'Highest pressure rise when a valve closes.'),
-];
-function limit(name: string, shape: Shape, example: string, about: string, many = false): PropertySpec {
-  return { name, shape, required: false, default: "the rule's own figure", example, about, ...(many ? { many } : {}) };
 }
 
 /** Dimensions a number has behind what is written of the property so far. */
@@ -43,7 +29,6 @@ export function dimensionsOf(spec: PropertySpec, entry: readonly Token[]): reado
     const own = dimensionsBefore(shape, entry);
     return [...own, 'ratio'];
   }
-  if (spec.name === 'velocity') return ['velocity'];
   return dimensionsBefore(shape, entry);
 }
 

@@ -1,9 +1,9 @@
 /** Hover: what stands under the cursor, told from the latest finished study. A pure function; nothing is computed anew here. */
-import { KINDS, LINE_PROPERTIES, LOAD_PROPERTIES, type Component, type LineStatement, type Origin, type PropertySpec } from '@oilway/circuit';
+import { KINDS, LIMITS_PROPERTIES, LINE_PROPERTIES, LOAD_PROPERTIES, type Component, type LineStatement, type Origin, type PropertySpec } from '@oilway/circuit';
 import type { Analysis, Occurrence } from '../analysis.ts';
 import { isLineHead, LINE_FUNCTIONS } from '../../parse/words.ts';
 import { cursorAt } from '../completion/context.ts';
-import { LIMIT_PROPERTIES, propertyTable } from '../completion/properties.ts';
+import { propertyTable } from '../completion/properties.ts';
 import { tokenAt, type Token } from '../text/scan.ts';
 import { hoverActuator } from './actuator.ts';
 import { hoverCoil } from './coil.ts';
@@ -160,7 +160,7 @@ function propertyText(analysis: Analysis, token: Token): string | undefined {
   if (!table || isLineHead(token.text) || (previous !== '(' && previous !== ',')) return undefined;
   const spec: PropertySpec | undefined = table.find((one) => one.name === token.text);
   if (!spec) return undefined;
-  if (table === LINE_PROPERTIES || table === LOAD_PROPERTIES || table === LIMIT_PROPERTIES) return hoverSetting(analysis, spec);
+  if (table === LINE_PROPERTIES || table === LOAD_PROPERTIES || table === LIMITS_PROPERTIES) return hoverSetting(analysis, spec);
   for (const component of analysis.circuit?.components ?? []) {
     const property = component.properties.find((one) => one.nameOrigin.uri === analysis.uri && one.nameOrigin.start === token.start);
     if (property) return hoverSetting(analysis, spec, component, property);

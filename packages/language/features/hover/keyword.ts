@@ -1,8 +1,7 @@
 /** Hover on a word of the notation: what it is, its ports and properties; what each state and condition word means. */
-import { KINDS, KIND_NAMES, LINE_PROPERTIES, LOAD_PROPERTIES, type KindName, type PropertySpec } from '@oilway/circuit';
+import { KINDS, KIND_NAMES, LIMITS_PROPERTIES, LINE_PROPERTIES, LOAD_PROPERTIES, type KindName, type PropertySpec } from '@oilway/circuit';
 import { LINE_FUNCTIONS } from '../../parse/words.ts';
 import { HEAD_ABOUT } from '../completion/heads.ts';
-import { LIMIT_PROPERTIES } from '../completion/properties.ts';
 import { paragraphs, table } from './show.ts';
 
 const FORM: Readonly<Record<string, string>> = {
@@ -64,7 +63,7 @@ export function hoverKeyword(word: string): string | undefined {
   }
   const about = HEAD_ABOUT[word];
   if (about) {
-    const specs = word === 'load' ? LOAD_PROPERTIES : word === 'limits' ? LIMIT_PROPERTIES : undefined;
+    const specs = word === 'load' ? LOAD_PROPERTIES : word === 'limits' ? LIMITS_PROPERTIES : undefined;
     return paragraphs(`**${word}**: ${about}`, FORM[word] ? `\`${FORM[word]}\`` : '', specs ? propertyRows(specs) : '');
   }
   return WORD_ABOUT[word] ? paragraphs(`**${word}**`, WORD_ABOUT[word]) : undefined;
