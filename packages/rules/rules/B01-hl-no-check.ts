@@ -3,6 +3,7 @@ import { graphOf, type Graph } from '../graph/graph.ts';
 import { wayWords } from '../graph/reach.ts';
 import { tell } from '../finding.ts';
 import { checkAtOutlet } from '../fixes/check.ts';
+import { checkInJoint } from '../fixes/joint.ts';
 import { replace, writtenAt } from '../fixes/places.ts';
 import { pumpFlow } from '../fixes/values.ts';
 import type { Rule, RuleContext } from '../rule.ts';
@@ -22,12 +23,10 @@ function joint(graph: Graph, unit: HighLow) {
 function fix(context: RuleContext, graph: Graph, unit: HighLow) {
   // The pilot must sense the high-pressure side; where it is taken from the low-pressure pump's port it moves along.
   const pilots = writtenAt(graph.circuit, unit.low.id, 'P').filter((w) => w.line.function === 'pilot');
-  return checkAtOutlet(
-    context,
-    graph,
-    unit.low,
-    [unit.unloading],
-    pilots.map((w) => replace(w, `${unit.high.id}.P`)),
+  const moved = pilots.map((w) => replace(w, `${unit.high.id}.P`));
+  return (
+    (moved.length === 0 ? checkInJoint(context, graph, unit.low) : undefined) ??
+    checkAtOutlet(context, graph, unit.low, [unit.unloading], moved)
   );
 }
 
