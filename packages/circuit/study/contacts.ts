@@ -5,10 +5,13 @@ import type { Position } from './coils.ts';
 import type { Lookup } from './lookup.ts';
 import { bodyOf, type Scene, type Source, sourceOf, valueIn, watchOf } from './quantities.ts';
 import { flag, range, si, valueOf } from './read.ts';
+import { say, sayPlace } from './words.ts';
 
 export interface Contact {
-  /** Switch id, or the comparison in words: `XT1 above 0.5`. */
+  /** Switch id, or the comparison with its SI value: `XT1 above 0.5`. */
   readonly key: string;
+  /** A comparison as read aloud: `XT1 above 500 mm`. */
+  readonly words?: string;
   readonly source: Source;
   /** `above`: on at q >= rises, off at q <= falls. `inside`: on within from..to. `stands`: the valve stands there. */
   readonly test:
@@ -72,14 +75,15 @@ export function compareKey(of: string, is: string, value: number): string {
 export function atomContact(scene: Scene, atom: Condition): Contact | undefined {
   if (atom.op === 'compare') {
     const key = compareKey(atom.of, atom.is, atom.value.si);
+    const words = `${atom.of} ${atom.is} ${atom.value.dimension === 'length' ? sayPlace(scene.at.circuit, atom.value.si, false) : say(scene.at.circuit, atom.value.si, atom.value.dimension)}`;
     const source = sourceOf(scene, atom.of, atom.value.dimension);
     if (source.what === 'unknown' || source.what === 'outside' || source.what === 'stand') return { key, source, test: { is: 'unknown' }, inverted: false };
     const x = heldInRange(scene.at, atom.of, atom.value.si);
     if (atom.is === 'at') {
       const half = spread(atom.value.dimension);
-      return { key, source, test: { is: 'inside', from: x - half, to: x + half }, inverted: false };
+      return { key, words, source, test: { is: 'inside', from: x - half, to: x + half }, inverted: false };
     }
-    return { key, source, test: { is: 'above', rises: x, falls: x, atStart: false }, inverted: atom.is === 'below' };
+    return { key, words, source, test: { is: 'above', rises: x, falls: x, atStart: false }, inverted: atom.is === 'below' };
   }
   if (atom.op === 'state' && (atom.is === 'extended' || atom.is === 'retracted')) {
     const body = bodyOf(scene, atom.of);

@@ -25,7 +25,7 @@ export function knotsOf(plant: Plant, body: Body, load: BodyLoad): readonly Knot
   for (const contact of plant.contacts) {
     if (contact.source.what !== 'position' || contact.source.body !== body.id) continue;
     const ends = contact.test.is === 'inside' ? [contact.test.from, contact.test.to] : contact.test.is === 'above' ? [contact.test.rises, contact.test.falls] : [];
-    for (const at of ends) if (Number.isFinite(at)) found.push({ at, words: contact.key, sides: 'control' });
+    for (const at of ends) if (Number.isFinite(at)) found.push({ at, words: contact.words ?? contact.key, sides: 'control' });
   }
   for (const { low, high } of requiredRanges(plant, body)) {
     found.push({ at: low, words: 'required range', sides: 'above' }, { at: high, words: 'required range', sides: 'below' });

@@ -3,7 +3,7 @@ import type { Body, BodyLoad, Setting, Solution } from '../assembly/machine.ts';
 import { areasOf, DEFAULT_SEAL } from '../kinds/cylinder-areas.ts';
 import { standWords } from './coils.ts';
 import { limiters } from './limits.ts';
-import { needed } from './loads.ts';
+import { needed, netFixed } from './loads.ts';
 import { moves } from './motion.ts';
 import { reference, si } from './read.ts';
 import type { Plant } from './scene.ts';
@@ -54,7 +54,8 @@ function actuatorPoints(plant: Plant, body: Body, setting: Setting, solution: So
   const position = solution.positions[body.id] ?? body.begins;
   const velocity = solution.velocities[body.id] ?? 0;
   const moving = moves(body, solution);
-  const wanted = asked.directions?.[body.id] ?? (moving ? (velocity > 0 ? 1 : -1) : 0);
+  const along = moving ? (velocity > 0 ? 1 : -1) : 0;
+  const wanted = asked.directions?.[body.id] || along;
   const load: BodyLoad | undefined = setting.loads[body.id];
   const need = load && wanted !== 0 ? needed(load, position, wanted) : 0;
   const atStop = stopAt(body, position, velocity, moving, solution);
@@ -64,7 +65,8 @@ function actuatorPoints(plant: Plant, body: Body, setting: Setting, solution: So
     const force = held.forces[body.id];
     if (held.solved && force !== undefined) available = force * wanted;
   }
-  const short = available !== undefined && !moving && !atStop && available < need && Math.abs(velocity) < CREEP ? need - available : undefined;
+  const stands = !moving && atStop === undefined && Math.abs(velocity) < CREEP;
+  const short = available !== undefined && stands && available < need && !presses(load, position, wanted, available) ? need - available : undefined;
   const limitedBy = asked.forces && wanted !== 0 ? limiters(plant, body, setting, solution, { wanted, moving, atStop, short }) : [];
   const stopForce = solution.stopForces[body.id];
   return body.actuators.map((id) => ({
@@ -80,6 +82,16 @@ function actuatorPoints(plant: Plant, body: Body, setting: Setting, solution: So
     ...(atStop === undefined ? {} : { atStop }),
     ...(stopForce === undefined || stopForce === 0 ? {} : { stopForce }),
   }));
+}
+
+/** Way within which a part that gives way takes up a force, m. */
+const GIVES = 5e-3;
+
+/** Standing against a part that gives way (its force grows along the motion) is pressing, not a stall: a little before, the force was enough. */
+function presses(load: BodyLoad | undefined, x: number, direction: -1 | 0 | 1, available: number): boolean {
+  if (!load || direction === 0) return false;
+  const here = -direction * netFixed(load, x);
+  return here > 0 && -direction * netFixed(load, x - direction * GIVES) < here && needed(load, x - direction * GIVES, direction) <= available;
 }
 
 function stopAt(body: Body, position: number, velocity: number, moving: boolean, solution: Solution): 'retracted' | 'extended' | undefined {

@@ -52,13 +52,23 @@ export function pointsInRun(plant: Plant, trace: Trace, step: string, from: numb
 }
 
 function settingAt(snapshot: Snapshot, sample: Sample): Setting {
-  return { ...snapshot.setting, positions: sample.solution.positions, oil: sample.solution.oil, bits: sample.solution.bits };
+  return { ...snapshot.setting, ...stored(sample), positions: sample.solution.positions };
 }
 
-/** Directions in which a step moves its bodies: as they went; a body that stood as it would go without its load. */
+/** What the run has stored at a place: oil and gas pressure of accumulators, memory bits. */
+function stored(sample: Sample): Pick<Setting, 'oil' | 'bits' | 'gasPressures'> {
+  const { oil, bits, gasPressures } = sample.solution;
+  return { oil, bits, ...(gasPressures === undefined ? {} : { gasPressures }) };
+}
+
+/** Displacement below this share of the stroke may be oil that is compressed or let down: then the pressing counts, not the way. */
+const SMALL_WAY = 0.02;
+
+/** Directions in which a step moves its bodies: as they went; a body that (all but) stood as it would go without its load. */
 function directionsOf(plant: Plant, entry: Setting, shift: Readonly<Record<string, number>>, near: Solution): Record<string, Direction> {
   const result: Record<string, Direction> = {};
-  const standing = plant.bodies.filter((one) => Math.abs(shift[one.id] ?? 0) < MOVED);
+  const stood = (body: Body) => Math.abs(shift[body.id] ?? 0) < Math.max(MOVED, SMALL_WAY * (Number.isFinite(body.stroke) ? body.stroke : 0));
+  const standing = plant.bodies.filter(stood);
   for (const body of plant.bodies) result[body.id] = Math.sign(shift[body.id] ?? 0) as Direction;
   if (standing.length === 0) return result;
   const ids = standing.map((one) => one.id);
@@ -98,7 +108,7 @@ function knotPoints(plant: Plant, trace: Trace, body: Body, samples: readonly Sa
       wanted.push({
         label: plant.bodies.length > 1 ? `${body.id} ${label}` : label,
         time: time + (side.when === 'before' ? -1e-9 : side.when === 'after' ? 1e-9 : 0),
-        setting: { ...snapshot.setting, positions: { ...others, [body.id]: side.at }, oil: near.solution.oil, bits: near.solution.bits },
+        setting: { ...snapshot.setting, ...stored(near), positions: { ...others, [body.id]: side.at } },
         begun,
         sample: near,
       });

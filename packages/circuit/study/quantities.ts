@@ -6,7 +6,8 @@ import type { Lookup } from './lookup.ts';
 import { flag, range, reference, si } from './read.ts';
 
 export type Source =
-  | { readonly what: 'pressure'; readonly net: string; readonly minus?: string }
+  /** `head`: rho g z of the place, taken off the net's pressure, Pa. */
+  | { readonly what: 'pressure'; readonly net: string; readonly minus?: string; readonly head: number }
   | { readonly what: 'position'; readonly body: string; readonly rotating: boolean; readonly stroke: number }
   | { readonly what: 'level'; readonly reservoir: string }
   | { readonly what: 'temperature' }
@@ -18,6 +19,8 @@ export type Source =
 export interface Scene {
   readonly at: Lookup;
   readonly bodies: readonly Body[];
+  /** Component id -> rho g z at its ports, Pa. */
+  readonly heads: Readonly<Record<string, number>>;
   /** Oil temperature, K. */
   readonly temperature: number;
 }
@@ -44,7 +47,7 @@ function onOf(scene: Scene, component: Component, dimension: string | undefined)
   const on = reference(component, 'on');
   if (!on) {
     const net = scene.at.netOf(component.id, 'P');
-    return net === undefined ? { what: 'unknown', why: `${component.id} is joined to nothing` } : { what: 'pressure', net };
+    return net === undefined ? { what: 'unknown', why: `${component.id} is joined to nothing` } : { what: 'pressure', net, head: scene.heads[component.id] ?? 0 };
   }
   const target = scene.at.component(on.id);
   if (!target) return { what: 'unknown', why: `${component.id} is on ${on.id}, which is not declared` };
@@ -55,7 +58,7 @@ function partSource(scene: Scene, target: Component, port: string | undefined, d
   if (dimension === 'temperature') return { what: 'temperature' };
   const pressureAt = (name: string): Source => {
     const net = scene.at.netOf(target.id, name);
-    return net === undefined ? { what: 'unknown', why: `${target.id}.${name} is joined to nothing` } : { what: 'pressure', net };
+    return net === undefined ? { what: 'unknown', why: `${target.id}.${name} is joined to nothing` } : { what: 'pressure', net, head: scene.heads[target.id] ?? 0 };
   };
   if (port !== undefined) return pressureAt(port);
   switch (target.kind) {
@@ -74,7 +77,7 @@ function partSource(scene: Scene, target: Component, port: string | undefined, d
     case 'filter': {
       const [net, minus] = [scene.at.netOf(target.id, 'in'), scene.at.netOf(target.id, 'out')];
       return net !== undefined && minus !== undefined
-        ? { what: 'pressure', net, minus }
+        ? { what: 'pressure', net, minus, head: 0 }
         : { what: 'unknown', why: `${target.id} is joined at one side only` };
     }
     default:
@@ -87,7 +90,7 @@ export function valueIn(scene: Scene, source: Source, solution: Solution): numbe
   switch (source.what) {
     case 'pressure': {
       const p = solution.pressures[source.net];
-      return p === undefined ? undefined : p - (source.minus === undefined ? 0 : (solution.pressures[source.minus] ?? 0));
+      return p === undefined ? undefined : p - source.head - (source.minus === undefined ? 0 : (solution.pressures[source.minus] ?? 0));
     }
     case 'position':
       return solution.positions[source.body];
@@ -125,7 +128,7 @@ export function watchOf(source: Source, threshold: number, edge: 'rising' | 'fal
   switch (source.what) {
     case 'pressure':
       return source.minus === undefined
-        ? { what: 'pressure', net: source.net, threshold, edge }
+        ? { what: 'pressure', net: source.net, threshold: threshold + source.head, edge }
         : { what: 'pressure', net: source.net, minus: source.minus, threshold, edge };
     case 'position':
       return { what: 'position', body: source.body, threshold, edge };

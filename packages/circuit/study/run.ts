@@ -175,7 +175,7 @@ export class Runner {
 
   #instant(sequence: Sequence, time: number, now: Solution, fired: readonly Armed[], trace: Trace, faults: Fault[], manual: boolean): 'goes on' | 'finished' | 'fault' {
     const { at } = this.#plant;
-    for (const turned of this.switches.read(now, this.#run.time, fired)) trace.event(time, turned.key, `${turned.key} ${turned.on ? 'on' : 'off'}`);
+    for (const turned of this.switches.read(now, this.#run.time, fired)) trace.event(time, turned.key, turnedWords(this.#plant, turned.key, turned.on));
     let control = this.#control;
     for (let change = 0; ; change += 1) {
       if (change > CHANGES) {
@@ -318,6 +318,12 @@ export class Runner {
   #originOf(key: string): Origin | undefined {
     return this.#plant.at.component(key.split(' ')[0] ?? '')?.nameOrigin;
   }
+}
+
+function turnedWords(plant: Plant, key: string, on: boolean): string {
+  const words = plant.contact(key)?.words;
+  if (words !== undefined) return on ? words : `${words}: no longer`;
+  return key.includes(' ') ? (on ? key : `${key}: no longer`) : `${key} ${on ? 'on' : 'off'}`;
 }
 
 /** A step that a push button holds: no `until`, or one that only outside switches decide. */

@@ -20,7 +20,7 @@ export interface Plant extends Scene {
 }
 
 export function plantOf(circuit: Circuit, machine: Machine, cancelled: () => boolean = () => false): Plant {
-  const scene: Scene = { at: lookup(circuit), bodies: machine.bodies, temperature: machine.temperature };
+  const scene: Scene = { at: lookup(circuit), bodies: machine.bodies, heads: machine.heads, temperature: machine.temperature };
   const contacts = contactsOf(scene, conditionsOf(circuit));
   const byKey = new Map(contacts.map((one) => [one.key, one]));
   return { ...scene, circuit, machine, contacts, contact: (key) => byKey.get(key), assumptions: [], cancelled };

@@ -66,7 +66,7 @@ describe('a bound', () => {
 
 const above = (key: string, rises: number, falls: number): Contact => ({
   key,
-  source: { what: 'pressure', net: 'n' },
+  source: { what: 'pressure', net: 'n', head: 0 },
   test: { is: 'above', rises, falls, atStart: false },
   inverted: false,
 });

@@ -14,15 +14,15 @@ type Read = (picture: Picture) => { readonly low: number; readonly high: number 
 const exactly = (amount: number | undefined) => (amount === undefined ? undefined : { low: amount, high: amount });
 
 /** Net of a requirement's port or line; or why there is none. */
-export function netAsked(plant: Plant, of: string, port: string | undefined): { readonly net: string } | { readonly why: string } {
+export function netAsked(plant: Plant, of: string, port: string | undefined): { readonly net: string; readonly head: number } | { readonly why: string } {
   const named = plant.circuit.nets.find((one) => one.name === of || one.id === of);
   const component = plant.at.component(of);
-  if (!component && named) return { net: named.id };
+  if (!component && named) return { net: named.id, head: 0 };
   if (!component) return { why: `${of} is no line or component` };
   const name = port ?? (plant.at.netOf(of, 'P') !== undefined ? 'P' : plant.at.portsOf(of).length === 1 ? plant.at.portsOf(of)[0]!.port : undefined);
   if (name === undefined) return { why: `${of} has several ports: name one` };
   const net = plant.at.netOf(of, name);
-  return net === undefined ? { why: `${of}.${name} is joined to nothing` } : { net };
+  return net === undefined ? { why: `${of}.${name} is joined to nothing` } : { net, head: plant.machine.heads[of] ?? 0 };
 }
 
 export function pressure(asked: Asked, place: Place): Observed {
@@ -30,8 +30,13 @@ export function pressure(asked: Asked, place: Place): Observed {
   if ('why' in found) return { place: place.id, values: [], problems: [found.why] };
   const why = asked.plant.machine.notComputed[found.net];
   if (why !== undefined) return { place: place.id, values: [], problems: [why] };
-  const { net } = found;
-  const read: Read = (picture) => picture.undetermined[net] ?? exactly(picture.pressures[net]);
+  const { net, head } = found;
+  const read: Read = (picture) => {
+    const span = picture.undetermined[net];
+    if (span) return { low: span.low - head, high: span.high - head };
+    const p = picture.pressures[net];
+    return exactly(p === undefined ? undefined : p - head);
+  };
   return over(asked, place, read, { run: true });
 }
 
