@@ -40,8 +40,7 @@ const settings = (index: number) => {
 function balance(machine: Machine, s: Solution): { readonly worst: number; readonly net: string; readonly scale: number } {
   let worst = 0;
   let name = '';
-  // The smallest pump's flow: a dead circuit is balanced against what it would carry.
-  let scale = 1.9e-4;
+  let scale = 0;
   for (const net of machine.circuit.nets) {
     if (net.reservoir !== undefined) continue;
     let sum = 0;
@@ -74,7 +73,8 @@ test.each([0, 1, 2])('machine %d: what flows into a line flows out of it', (inde
       for (const p of Object.values(s.pressures)) expect(Number.isFinite(p)).toBe(true);
       if (s.diagnosis.some((d) => d.kind !== 'CLOSED VOLUME')) return;
       const { worst, net, scale } = balance(machine, s);
-      expect(worst / scale, `${net} of ${JSON.stringify(setting)}`).toBeLessThan(1e-9);
+      // 1e-9 of the largest flow, and what the solver leaves over where it stops: 1e-9 L/s a node.
+      expect(worst, `${net} of ${JSON.stringify(setting)}`).toBeLessThan(1e-9 * scale + 3e-12);
     }),
     { numRuns: 60 },
   );
