@@ -35,33 +35,29 @@ async function startWorker(address: string): Promise<WorkerLike> {
   };
 }
 
-/** Tries the worker; the first time it cannot be started, the study moves into this thread for good. */
+/** Tries the worker; where it cannot be started, or ends before it ever answered, the study moves into this thread for good. */
 class WebRunner implements StudyRunner {
   readonly #inline = new InlineRunner(workJob);
   readonly #worker: WorkerRunner | undefined;
   #refused = false;
+  #proved = false;
 
   constructor(address: string | undefined) {
     if (address === undefined) this.#refused = true;
-    else {
-      this.#worker = new WorkerRunner(async () => {
-        try {
-          return await startWorker(address);
-        } catch (reason) {
-          this.#refused = true;
-          throw reason;
-        }
-      });
-    }
+    else this.#worker = new WorkerRunner(() => startWorker(address));
   }
 
   async run(job: StudyJob): Promise<StudyAnswer | undefined> {
     if (this.#refused || !this.#worker) return this.#inline.run(job);
     try {
-      return await this.#worker.run(job);
+      const answer = await this.#worker.run(job);
+      if (answer) this.#proved = true;
+      return answer;
     } catch (reason) {
-      if (this.#refused) return this.#inline.run(job);
-      throw reason;
+      // A study that breaks down in a worker that works would break down here too.
+      if (this.#proved) throw reason;
+      this.#refused = true;
+      return this.#inline.run(job);
     }
   }
 

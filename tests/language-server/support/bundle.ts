@@ -29,3 +29,22 @@ export async function bundleServer(): Promise<string> {
   }
   return folder;
 }
+
+/** The two scripts of the web: server and study worker. Nothing of Node may be in them, or bundling fails. */
+export async function bundleWeb(): Promise<{ readonly server: string; readonly study: string }> {
+  const text = async (from: string): Promise<string> => {
+    const { outputFiles } = await build({
+      entryPoints: [join(root, 'packages/language/server', from)],
+      bundle: true,
+      write: false,
+      platform: 'browser',
+      conditions: ['browser'],
+      mainFields: ['browser', 'module', 'main'],
+      format: 'iife',
+      target: 'es2022',
+      logLevel: 'silent',
+    });
+    return outputFiles[0]?.text ?? '';
+  };
+  return { server: await text('browser.ts'), study: await text('study-worker-browser.ts') };
+}
