@@ -86,7 +86,7 @@ function stepRows(steps: readonly StepResult[], cycle: string, circuit: Circuit,
     const first = [
       step.id.startsWith(`${cycle}.`) ? step.id.slice(cycle.length + 1) : step.id,
       step.entered === undefined ? '' : show(step.entered, 'time'),
-      step.time === undefined ? (cycle === '' ? '' : 'does not end') : show(step.time, 'time'),
+      step.time !== undefined ? show(step.time, 'time') : cycle === '' ? '' : step.entered === undefined ? 'not reached' : 'does not end',
     ];
     const list: readonly Partial<Row>[] = moving.length === 0 ? [{}] : moving;
     list.forEach((row, i) => {
@@ -217,7 +217,8 @@ export function dutyLines(cycles: readonly CycleResult[], circuit: Circuit, stud
   const reservoirs = circuit.components.filter((one) => one.kind === 'reservoir').map((one) => one.id);
   for (const [of, balance] of Object.entries(study.heat)) {
     // With one reservoir its balance is the circuit's.
-    if (reservoirs.length === 1 && reservoirs.some((id) => of.endsWith(` ${id}`) && study.heat[of.slice(0, -id.length - 1)] !== undefined)) continue;
+    if (reservoirs.length === 1 && reservoirs.some((id) => of.endsWith(` ${id}`) && study.heat[of.slice(0, -id.length - 1)] !== undefined))
+      continue;
     lines.push(
       `  ${of}: oil settles at ${show(balance.temperature.value, balance.temperature.dimension)} with ${show(balance.heat, 'power')} of heat`,
     );
@@ -240,7 +241,7 @@ export function restLines(study: Study): string[] {
   if (moves.length > 0) lines.push('', 'moves without a step', ...new Set(moves));
   if (study.assumptions.length > 0) {
     lines.push('', 'assumed, as not declared');
-    for (const one of study.assumptions) lines.push(`  ${one.component} ${one.property}: ${one.value} (${one.source})`);
+    for (const one of study.assumptions) lines.push(`  ${`${one.component} ${one.property}`.trim()}: ${one.value} (${one.source})`);
   }
   return lines;
 }
