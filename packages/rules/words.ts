@@ -38,3 +38,8 @@ export function list(items: readonly string[], word = 'and'): string {
 export function sentence(words: string): string {
   return /^[a-z][a-z]/.test(words) ? words[0]!.toUpperCase() + words.slice(1) : words;
 }
+
+/** Names in the order a person would list them: C2 before C10. */
+export function byName(a: string, b: string): number {
+  return a.localeCompare(b, 'en', { numeric: true });
+}

@@ -5,7 +5,7 @@ import { type Passing, waysFrom, waysTo } from '../graph/reach.ts';
 import { tell } from '../finding.ts';
 import { isolate } from '../fixes/accumulator.ts';
 import type { Rule } from '../rule.ts';
-import { list } from '../words.ts';
+import { byName, list } from '../words.ts';
 import { relatedTo } from './pump-guard.ts';
 
 /** Any way at all, in either direction, but for a shut-off. */
@@ -16,7 +16,7 @@ function systemOf(graph: Graph, store: Component): readonly Component[] {
   const net = graph.netAt(store.id, 'P');
   if (net === undefined || net.open === true) return [];
   const nets = new Set([...waysFrom(graph, net.id, withoutShutoff).keys(), ...waysTo(graph, net.id, withoutShutoff).keys()]);
-  return graph.circuit.components.filter((c) => {
+  const found = graph.circuit.components.filter((c) => {
     const ports =
       c.kind === 'pump'
         ? ['P']
@@ -29,6 +29,8 @@ function systemOf(graph: Graph, store: Component): readonly Component[] {
               : [];
     return ports.some((port) => nets.has(graph.netAt(c.id, port)?.id ?? ''));
   });
+  // Pumps first: they fill it.
+  return found.sort((a, b) => Number(b.kind === 'pump') - Number(a.kind === 'pump') || byName(a.id, b.id));
 }
 
 export const C01: Rule = {

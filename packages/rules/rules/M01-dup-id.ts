@@ -3,6 +3,7 @@ import type { Component, Property } from '@oilway/circuit';
 import { tell } from '../finding.ts';
 import { writable } from '../fixes/sheet.ts';
 import type { Fix, Rule, RuleContext } from '../rule.ts';
+import { byName } from '../words.ts';
 import { relatedTo } from './pump-guard.ts';
 
 interface Coded {
@@ -49,7 +50,8 @@ one statement, and components that take their code from the same \`part\`, share
 
 Stays clean: the same code in two units; components without a code; a name used twice is an error of the language.`,
   detect(context) {
-    const all = coded(context);
+    // By name, so that the order of statements does not decide which of the two is told.
+    const all = coded(context).sort((a, b) => byName(a.component.id, b.component.id));
     const first = new Map<string, Coded>();
     return all.flatMap((one) => {
       const earlier = first.get(one.key);
