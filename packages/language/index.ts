@@ -15,4 +15,5 @@ export * from './resolve/resolve.ts';
 export * from './resolve/symbols.ts';
 export { STATE_NAMES } from './resolve/places.ts';
 export { MEASURES, type Subject, measureOf, measuresOf } from './resolve/measures.ts';
+export { format } from './format/format.ts';
 export * from './service.ts';

@@ -3,7 +3,7 @@ import type { Origin } from '@oilway/circuit';
 import type { Finding, Fix, Related, Severity } from '@oilway/rules';
 
 export interface FindingParts {
-  /** `SYNTAX`, `NAME`, `PORT`, `VALUE`, `CHAIN`, `PLACE`, `M01` duplicate, `M07` units, `M08` settings, `NOT COMPUTED`. */
+  /** `SYNTAX`, `NAME`, `PORT`, `VALUE`, `CHAIN`, `M07` units, `M08` settings missing, `NOT-COMPUTED`. */
   readonly code: string;
   readonly severity?: Severity | undefined;
   readonly what: string;

@@ -126,7 +126,7 @@ export class Components {
     for (const property of properties) {
       if (property.value.type === 'coil') {
         this.context.report({
-          code: 'M01',
+          code: 'NAME',
           what: `\`${property.value.name}\` would be the coil of ${names.length} valves: give ${names.map((name) => `\`${name.text}\``).join(' and ')} a line each`,
           origin: property.value.nameOrigin,
         });
@@ -255,7 +255,8 @@ export class Components {
   private checkShape(component: Component): void {
     const { shape } = component;
     if (shape === undefined) {
-      this.missing(component, `\`${component.id}\` has no shape`, '4/3');
+      // A shape that there is not was said where it is written.
+      if (!/[(,]\s*[0-9]+\/[0-9]+/.test(this.context.slice(component.origin))) this.missing(component, `\`${component.id}\` has no shape`, '4/3');
       this.unknown[component.id] ??= `${component.id} has no shape (\`4/3\`)`;
       return;
     }

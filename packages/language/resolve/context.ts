@@ -125,7 +125,7 @@ export class Context {
     const first = this.names.get(id);
     if (first !== undefined) {
       this.report({
-        code: 'M01',
+        code: 'NAME',
         what: `The name \`${name}\` is given twice: it is a ${WHAT[first.what]} already`,
         mend: 'Give one of the two another name; a name stands for one thing in a circuit.',
         origin,

@@ -92,7 +92,7 @@ class PropertyReader {
     const { context, owner } = this;
     const near = nearest(name, this.specs.keys());
     context.report({
-      code: 'M08',
+      code: 'VALUE',
       what: `\`${name}\` is no setting of ${owner.of}${near === undefined ? '' : `: did you mean \`${near}\``}`,
       mend: near === undefined ? `Settings of ${owner.of}: ${[...this.specs.keys()].join(', ')}.` : undefined,
       origin,

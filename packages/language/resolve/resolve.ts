@@ -245,7 +245,7 @@ class Resolution {
     const origin = context.origin(first.$type === 'Assembly' ? (first.name ?? first) : first);
     const what = 'units of an assembly';
     context.notComputed.push({ what, why: 'not resolved yet', origin });
-    context.report({ code: 'NOT COMPUTED', severity: 'information', what: 'Not resolved yet: units of an assembly are not computed', mend: 'What the rest of the file says is computed; write the unit out to have it computed too.', origin });
+    context.report({ code: 'NOT-COMPUTED', severity: 'information', what: 'Not resolved yet: units of an assembly are not computed', mend: 'What the rest of the file says is computed; write the unit out to have it computed too.', origin });
   }
 
   private constants(): Constant[] {
@@ -417,7 +417,7 @@ class Resolution {
       if (id === undefined) continue;
       const twice = symbols.find((other) => other.of === id);
       if (twice !== undefined) {
-        context.report({ code: 'M01', what: `\`${id}\` has its symbol already`, origin, related: [{ message: 'first here', origin: twice.origin }] });
+        context.report({ code: 'NAME', what: `\`${id}\` has its symbol already`, origin, related: [{ message: 'first here', origin: twice.origin }] });
         continue;
       }
       symbols.push({ of: id, ...(entry.text === undefined ? {} : { symbol: unquoted(entry.text) }), ...(entry.number === undefined ? {} : { number: Number(entry.number) }), origin });

@@ -93,7 +93,7 @@ export class Values {
     if (partial === undefined) return undefined;
     const origin = this.context.origin(node);
     const q = quantityOf(partial.amount, expected);
-    if (!q.ok) return this.wrong(q.problem, node);
+    if (!q.ok) return this.wrong(q.problem, node, 'M07');
     return { q: q.value, from, origin, bare: partial.bare };
   }
 
