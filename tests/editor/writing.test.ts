@@ -74,10 +74,7 @@ it('the outline lists the components and, below their cycle, its steps', async (
     const options = page.locator('.quick-input-widget').getByRole('option');
     for (const name of ['C1', 'Form', 'Back']) {
       await box.fill(`@${name}`);
-      await options
-        .filter({ hasText: new RegExp(`^\\s*${name}\\b`) })
-        .first()
-        .waitFor();
+      await options.filter({ hasText: name }).first().waitFor();
     }
     await page.keyboard.press('Enter');
     await editor.waitForText('.statusbar-item', /Ln 42/);

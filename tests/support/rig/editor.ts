@@ -89,7 +89,8 @@ export class Editor {
         parts.push({ node, from: text.length });
         text += node.textContent ?? '';
       }
-      const at = text.search(new RegExp(`\\b${wanted}\\b`));
+      // A hint may follow without a space: the word ends where no further digit or letter of its kind follows.
+      const at = text.search(new RegExp(`\\b${wanted}(?!\\d)`));
       const part = parts.filter(({ from }) => from <= at).at(-1);
       if (at < 0 || !part) return undefined;
       const range = document.createRange();
