@@ -32,7 +32,12 @@ export async function build() {
   // Written beside and renamed: another process never reads half a bundle.
   const fresh = `${BUNDLE}.${process.pid}`;
   await bundle({
-    stdin: { contents: "import { start } from './main.ts';\nawait start();\n", resolveDir: here, sourcefile: 'entry.ts', loader: 'ts' },
+    stdin: {
+      contents: "import './older-node.ts';\nimport { start } from './main.ts';\nawait start();\n",
+      resolveDir: here,
+      sourcefile: 'entry.ts',
+      loader: 'ts',
+    },
     outfile: fresh,
     bundle: true,
     platform: 'node',

@@ -1,4 +1,4 @@
-/** What the study itself has to tell: requirements missed or undecided, faults of a run, statements and components that are not computed. */
+/** What the study itself has to tell: requirements missed or undecided, faults of a run, components that are not computed. */
 import type { Component, Fault, Origin, RequirementResult, Requirement } from '@oilway/circuit';
 import type { Finding, RuleContext } from './rule.ts';
 
@@ -53,22 +53,29 @@ function ofFault(fault: Fault, cycle: string, told: readonly Finding[], incomple
   ];
 }
 
-function notComputed(of: string, why: string, origin: Origin, computed: boolean): Finding {
-  return { ...plain, code: 'NOT-COMPUTED', severity: 'information', what: `${of} is not computed: ${why}`, origin, place: of, computed };
+function notComputed(of: string, why: string, origin: Origin): Finding {
+  return {
+    ...plain,
+    code: 'NOT-COMPUTED',
+    severity: 'information',
+    what: `${of} is not computed: ${why}`,
+    origin,
+    place: of,
+    computed: true,
+  };
 }
 
 /** Findings of the study and of what it leaves out; `told` are those of the rules. */
 export function outcome(context: RuleContext, told: readonly Finding[]): readonly Finding[] {
   const { circuit, study } = context;
-  const statements = circuit.notComputed.map((one) => notComputed(one.what, one.why, one.origin, false));
-  if (study === undefined) return statements;
+  if (study === undefined) return [];
   const components = new Map<string, Component>(circuit.components.map((one) => [one.id, one]));
   // An unknown component has its error already, at the setting that is missing.
   const left = Object.entries(study.notComputed).flatMap(([id, why]) => {
     const component = components.get(id);
-    return component === undefined || circuit.unknown[id] !== undefined ? [] : [notComputed(id, why, component.nameOrigin, true)];
+    return component === undefined || circuit.unknown[id] !== undefined ? [] : [notComputed(id, why, component.nameOrigin)];
   });
   const incomplete = Object.keys(circuit.unknown).length > 0;
   const faults = study.cycles.flatMap((cycle) => cycle.faults.flatMap((fault) => ofFault(fault, cycle.id, told, incomplete)));
-  return [...statements, ...left, ...faults, ...study.requirements.flatMap((one) => ofRequirement(context, one))];
+  return [...left, ...faults, ...study.requirements.flatMap((one) => ofRequirement(context, one))];
 }

@@ -196,6 +196,26 @@ describe('run', () => {
   });
 });
 
+describe('Node 20', () => {
+  it('is enough: the command brings what that lacks', () => {
+    const older = 'data:text/javascript,delete Object.groupBy;delete Map.groupBy;delete Promise.withResolvers;delete Array.fromAsync;';
+    const path = join(ROOT, 'samples', '01-table.oilway');
+    const child = spawnSync(process.execPath, ['--import', older, COMMAND, 'check', path], { encoding: 'utf8' });
+    expect(child.stdout + child.stderr).toMatch(/^1 circuit: /);
+  });
+});
+
+describe('what rests on something missing', () => {
+  it('is marked, not guessed', () => {
+    write('unknown.oilway', sample('01-table.oilway').replace(', passes 40 L/min at 4 bar', ''));
+    const { status, out } = oilway(['run', 'unknown.oilway']);
+    expect(status).toBe(1);
+    expect(out).toMatch(/not computed.*V1 has no `passes`/);
+    expect(out).toMatch(/not decided/);
+    expect(out).not.toMatch(/NaN|undefined/);
+  });
+});
+
 describe('explain, help, version, mistakes', () => {
   it('prints the page of a rule, whatever the case', () => {
     const { status, out } = oilway(['explain', 'a01']);

@@ -14,8 +14,9 @@ function shower(circuit: Circuit): Show {
 
 export function headLines(circuit: Circuit, study: Study, paint: Paint): string[] {
   const head = paint.strong(`${circuit.name ?? 'circuit'}${circuit.title === undefined ? '' : `  ${circuit.title}`}`);
-  const why = Object.entries(study.notComputed).map(([of, reason]) => `  not computed: ${of}: ${reason}`);
-  return [head, ...why];
+  const byReason = new Map<string, string[]>();
+  for (const [of, reason] of Object.entries(study.notComputed)) byReason.set(reason, [...(byReason.get(reason) ?? []), of]);
+  return [head, ...[...byReason].map(([reason, places]) => `  not computed (${reason}): ${places.join(', ')}`)];
 }
 
 /** `4.00 .. 12.0 mm/s`, or one figure where both are shown alike. */
@@ -89,8 +90,10 @@ function stepRows(steps: readonly StepResult[], cycle: string, circuit: Circuit,
       step.time !== undefined ? show(step.time, 'time') : cycle === '' ? '' : step.entered === undefined ? 'not reached' : 'does not end',
     ];
     const list: readonly Partial<Row>[] = moving.length === 0 ? [{}] : moving;
+    const [unknown] = step.points.flatMap((point) => Object.values(point.notComputed));
+    const nothing = unknown === undefined ? 'nothing moves' : `not computed: ${unknown}`;
     list.forEach((row, i) => {
-      const motion = row.id === undefined ? 'nothing moves' : `${row.id} ${row.motion}`;
+      const motion = row.id === undefined ? nothing : `${row.id} ${row.motion}`;
       rows.push([
         ...(i === 0 ? first : ['', '', '']),
         motion,
