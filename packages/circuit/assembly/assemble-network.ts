@@ -41,13 +41,19 @@ function build(circuit: Circuit, out: ReadonlyMap<string, string>, refused: Map<
   const components = new Map(circuit.components.filter((c) => !out.has(c.id)).map((c) => [c.id, c]));
   const pieces = new Map<string, Piece>(circuit.pieces.map((p) => [p.id, p]));
 
-  const nodes: { storage: number; volume: number; fixed?: number; ceiling: number }[] = [{ storage: LEAST_STORAGE, volume: 0, fixed: 0, ceiling: CEILING }];
+  const nodes: { storage: number; volume: number; fixed?: number; ceiling: number }[] = [
+    { storage: LEAST_STORAGE, volume: 0, fixed: 0, ceiling: CEILING },
+  ];
   const nodeOf = new Map<string, NodeIndex>();
   const netOf = new Map<NodeIndex, string>();
   const netOfPort = new Map<string, { readonly id: string; readonly joined: boolean }>();
   let assumedVolumes = 0;
   for (const net of circuit.nets) {
-    for (const p of net.ports) netOfPort.set(`${p.component}.${p.port}`, { id: net.id, joined: net.pieces.length > 0 || net.ports.length > 1 || net.reservoir !== undefined });
+    for (const p of net.ports)
+      netOfPort.set(`${p.component}.${p.port}`, {
+        id: net.id,
+        joined: net.pieces.length > 0 || net.ports.length > 1 || net.reservoir !== undefined,
+      });
     if (net.reservoir !== undefined) {
       nodeOf.set(net.id, 0);
       continue;
@@ -56,7 +62,7 @@ function build(circuit: Circuit, out: ReadonlyMap<string, string>, refused: Map<
     if (assumed) assumedVolumes++;
     nodeOf.set(net.id, nodes.length);
     netOf.set(nodes.length, net.id);
-    nodes.push({ storage: LEAST_STORAGE + (toLitres(walls) / toMPa(1)), volume: toLitres(volume), ceiling: CEILING });
+    nodes.push({ storage: LEAST_STORAGE + toLitres(walls) / toMPa(1), volume: toLitres(volume), ceiling: CEILING });
   }
 
   const parameters: number[] = [];
@@ -76,7 +82,13 @@ function build(circuit: Circuit, out: ReadonlyMap<string, string>, refused: Map<
 
   const groups = groupBodies(circuit, (c) => components.has(c.id));
   const bodyOf = new Map<string, number>(groups.flatMap((g, i) => g.actuators.map((id) => [id, i] as const)));
-  const drafts = groups.map((group) => ({ group, springs: [] as ForceTable[], seal: 0, pressureFriction: 0, knots: [] as { at: number; words: string }[] }));
+  const drafts = groups.map((group) => ({
+    group,
+    springs: [] as ForceTable[],
+    seal: 0,
+    pressureFriction: 0,
+    knots: [] as { at: number; words: string }[],
+  }));
 
   const head = (component: Component): number => (si(component, 'elevation') ?? 0) * oil.density * GRAVITY;
   const heads: Record<string, number> = {};
@@ -124,8 +136,7 @@ function build(circuit: Circuit, out: ReadonlyMap<string, string>, refused: Map<
       const h = toMPa(head(component));
       // All terminals of a component lie at its elevation; the engine reads as many heads as the law has terminals.
       const withHead = h === 0 ? {} : { heads: [h, h, h, h, h, h] };
-      const withPilots =
-        h !== 0 && law.type === 'piloted' ? { ...law, pilots: law.pilots.map((p) => ({ ...p, head: h })) } : law;
+      const withPilots = h !== 0 && law.type === 'piloted' ? { ...law, pilots: law.pilots.map((p) => ({ ...p, head: h })) } : law;
       specs.push({ ...withPilots, ...withHead, tag: elements.length } as ElementSpec);
       return elements.push({ component: component.id, words, ports }) - 1;
     },
@@ -147,7 +158,15 @@ function build(circuit: Circuit, out: ReadonlyMap<string, string>, refused: Map<
       const body = bodyOf.get(component.id);
       if (body === undefined) return;
       const stages = chamber.areaSteps;
-      chambers.push({ component: component.id, port, body, node: chamber.node, area: chamber.area, ...(stages === undefined ? {} : { stages }), head: toMPa(head(component)) });
+      chambers.push({
+        component: component.id,
+        port,
+        body,
+        node: chamber.node,
+        area: chamber.area,
+        ...(stages === undefined ? {} : { stages }),
+        head: toMPa(head(component)),
+      });
       const node = nodes[chamber.node];
       if (node !== undefined && node.fixed === undefined) node.volume += toLitres(full * DEAD_SHARE);
     },
@@ -190,13 +209,20 @@ function build(circuit: Circuit, out: ReadonlyMap<string, string>, refused: Map<
     elements.push({ component: piece, words: 'line', ports: [undefined, undefined] });
   });
   if (assumedVolumes > 0) {
-    assume({ component: '', property: 'volume', value: '0.2 L a net, 0.01 L a pilot or drain', source: 'memory', note: `${assumedVolumes} nets without bore and length; counts for rise times only` });
+    assume({
+      component: '',
+      property: 'volume',
+      value: '0.2 L a net, 0.01 L a pilot or drain',
+      source: 'memory',
+      note: `${assumedVolumes} nets without bore and length; counts for rise times only`,
+    });
   }
 
   const notComputed: Record<string, string> = {};
   for (const [id, why] of out) {
     notComputed[id] = why;
-    for (const net of circuit.nets) if (net.ports.some((p) => p.component === id) && notComputed[net.id] === undefined) notComputed[net.id] = why;
+    for (const net of circuit.nets)
+      if (net.ports.some((p) => p.component === id) && notComputed[net.id] === undefined) notComputed[net.id] = why;
   }
 
   const bodies: BodyNote[] = drafts.map((d) => bodyNote(d.group, d.seal, d.springs, d.knots));
@@ -204,7 +230,12 @@ function build(circuit: Circuit, out: ReadonlyMap<string, string>, refused: Map<
     tag: i,
     chambers: chambers
       .filter((c) => c.body === i)
-      .map((c) => ({ node: c.node, area: c.area, ...(c.head === 0 ? {} : { head: c.head }), ...(c.stages === undefined ? {} : { areaSteps: c.stages }) })),
+      .map((c) => ({
+        node: c.node,
+        area: c.area,
+        ...(c.head === 0 ? {} : { head: c.head }),
+        ...(c.stages === undefined ? {} : { areaSteps: c.stages }),
+      })),
     low: d.group.stroke === Number.POSITIVE_INFINITY ? Number.NEGATIVE_INFINITY : 0,
     high: d.group.stroke,
     mass: toKilo(d.group.mass),
@@ -263,7 +294,12 @@ function theoreticalFlow(c: Component, components: ReadonlyMap<string, Component
   return (si(c, 'displacement') ?? 0) * ((drive === undefined ? undefined : si(drive, 'speed')) ?? 0);
 }
 
-function bodyNote(group: BodyGroup, seal: number, springs: readonly ForceTable[], knots: readonly { readonly at: number; readonly words: string }[]): BodyNote {
+function bodyNote(
+  group: BodyGroup,
+  seal: number,
+  springs: readonly ForceTable[],
+  knots: readonly { readonly at: number; readonly words: string }[],
+): BodyNote {
   const spring = springs[0] === undefined ? undefined : springs.reduce(addTables);
   return {
     id: group.actuators[0] ?? '',
@@ -273,7 +309,9 @@ function bodyNote(group: BodyGroup, seal: number, springs: readonly ForceTable[]
     begins: group.begins,
     sealFriction: seal,
     ...(spring === undefined ? {} : { spring }),
-    knots: [...knots].sort((x, y) => x.at - y.at).filter((k, i, all) => i === 0 || all[i - 1]?.at !== k.at || all[i - 1]?.words !== k.words),
+    knots: [...knots]
+      .sort((x, y) => x.at - y.at)
+      .filter((k, i, all) => i === 0 || all[i - 1]?.at !== k.at || all[i - 1]?.words !== k.words),
   };
 }
 

@@ -50,14 +50,29 @@ export function assemble(circuit: Circuit, options: MachineOptions = {}): Machin
   };
   return {
     circuit,
-    bodies: assembled.bodies.map(({ id, actuators, type, stroke, begins, sealFriction, knots }) => ({ id, actuators, type, stroke, begins, sealFriction, knots })),
+    bodies: assembled.bodies.map(({ id, actuators, type, stroke, begins, sealFriction, knots }) => ({
+      id,
+      actuators,
+      type,
+      stroke,
+      begins,
+      sealFriction,
+      knots,
+    })),
     assumptions: assembled.assumptions,
     notComputed: assembled.notComputed,
     heads: assembled.heads,
     temperature: assembled.oil.temperature,
     solve,
     settle,
-    sensitivities: (setting, at, body) => sensitivitiesOf(assembled, network, solveEngine, setting, results.get(at), body),
+    sensitivities: (setting, at, body) =>
+      sensitivitiesOf(
+        assembled,
+        network,
+        { ...setting, valves: { ...setting.valves, ...at.stands }, bits: { ...at.bits, ...setting.bits } },
+        results.get(at),
+        body,
+      ),
     start: (setting, at) => {
       // The run starts from where the solution was settled: valves that did not shift, bits that turned.
       const from = { ...setting, valves: { ...setting.valves, ...at.stands }, bits: at.bits };

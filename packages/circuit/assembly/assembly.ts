@@ -19,10 +19,7 @@ export interface Limitation {
   readonly component: string;
   /** "FC1 set", "P1 flow", "V1 P to A". */
   readonly words: string;
-  readonly targets: readonly (
-    | { readonly parameter: Param }
-    | { readonly element: number; readonly size: string }
-  )[];
+  readonly targets: readonly ({ readonly parameter: Param } | { readonly element: number; readonly size: string })[];
 }
 
 /** How a kind's opening is read from the solution. */
@@ -59,7 +56,14 @@ export type Memory =
       readonly pilots: readonly { readonly node: NodeIndex; readonly weight: number }[];
       readonly crack: number;
     }
-  | { readonly kind: 'shut'; readonly component: string; readonly element: number; readonly c: NodeIndex; readonly v: NodeIndex; readonly closes: number };
+  | {
+      readonly kind: 'shut';
+      readonly component: string;
+      readonly element: number;
+      readonly c: NodeIndex;
+      readonly v: NodeIndex;
+      readonly closes: number;
+    };
 
 export interface ValveOf {
   readonly component: string;
@@ -110,12 +114,7 @@ export interface Assembly {
   /** Index of the actuator (body) a cylinder or motor belongs to. */
   body(actuator: string): number | undefined;
   /** A chamber pressing on the body; `port` gets its flow. Area in engine units. `dead`, `full`: m3, for storage. */
-  chamber(
-    component: Component,
-    chamber: Omit<ActuatorSpec['chambers'][number], 'head'>,
-    port: string | undefined,
-    full: number,
-  ): void;
+  chamber(component: Component, chamber: Omit<ActuatorSpec['chambers'][number], 'head'>, port: string | undefined, full: number): void;
   /** Force of a spring on the body, N over m given as kN table. */
   spring(component: Component, table: ForceTable): void;
   /** Coulomb friction of seals on the body, N. */
@@ -127,7 +126,10 @@ export interface Assembly {
   /** Gas charge; volume m3, precharge Pa absolute at the oil's temperature. */
   gas(component: Component, node: NodeIndex, volume: number, precharge: number): void;
   /** Spring-applied brake on an actuator: torque N.m at the body, nothing left at `opens` Pa. */
-  brake(component: Component, brake: { readonly actuator: string; readonly node: NodeIndex; readonly opens: number; readonly torque: number }): void;
+  brake(
+    component: Component,
+    brake: { readonly actuator: string; readonly node: NodeIndex; readonly opens: number; readonly torque: number },
+  ): void;
   /** Extra storage at a node, L/MPa. */
   store(node: NodeIndex, storage: number): void;
   /** Theoretical flow of all pumps together, m3/s. */

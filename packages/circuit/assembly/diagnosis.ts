@@ -32,7 +32,12 @@ export function translate(
       kind: d.kind,
       nets: named,
       flow: fromLitresPerSecond(d.flow),
-      sources: [...new Set([...d.sources.flatMap((tag) => assembled.elements[tag]?.component ?? []), ...d.actuators.flatMap((a) => assembled.bodies[a]?.id ?? [])])],
+      sources: [
+        ...new Set([
+          ...d.sources.flatMap((tag) => assembled.elements[tag]?.component ?? []),
+          ...d.actuators.flatMap((a) => assembled.bodies[a]?.id ?? []),
+        ]),
+      ],
       closed: [...new Set(d.closed.flatMap((tag) => closedWords(assembled, tag, stands)))],
     });
   }
@@ -60,7 +65,8 @@ function letOut(assembled: Assembled, nodes: readonly number[], result: SteadyRe
       const vent = e.x === undefined || inside.has(e.x) ? set : p(e.x) + e.vented;
       lowest = Math.min(lowest, set, vent);
     }
-    if (e.type === 'check' && inside.has(e.a) && !inside.has(e.b) && (e.opening === undefined || (parameters[e.opening] ?? 0) > 0)) lowest = Math.min(lowest, p(e.b) + e.crack);
+    if (e.type === 'check' && inside.has(e.a) && !inside.has(e.b) && (e.opening === undefined || (parameters[e.opening] ?? 0) > 0))
+      lowest = Math.min(lowest, p(e.b) + e.crack);
     if (e.type === 'piloted' && inside.has(e.a) !== inside.has(e.b)) {
       const own = e.pilots.filter((x) => inside.has(x.node)).reduce((sum, x) => sum + x.weight, 0);
       if (own <= 0) continue;

@@ -9,7 +9,12 @@ const HOSE = 2e-5;
 /** Loss of one bend in velocity heads. */
 const BEND = 0.75;
 
-export function addLines(circuit: Circuit, oil: Oil, nodeOf: ReadonlyMap<string, NodeIndex>, add: (spec: Omit<LineSpec, 'tag'>, piece: string) => void): void {
+export function addLines(
+  circuit: Circuit,
+  oil: Oil,
+  nodeOf: ReadonlyMap<string, NodeIndex>,
+  add: (spec: Omit<LineSpec, 'tag'>, piece: string) => void,
+): void {
   for (const piece of circuit.pieces) {
     const [one, other] = piece.nets;
     if (one === other || piece.bore === undefined || piece.length === undefined) continue;

@@ -54,8 +54,15 @@ export class InternalEvents {
       const opens = toMPa(b.opens);
       const step = BRAKE_STEP * opens;
       const terms = [{ of: 'pressure' as const, index: b.node, weight: 1 }];
-      if (at < opens) events.push({ what: 'brake', of: b.component, words: '', watch: { terms, threshold: Math.min(at + step, opens), edge: 'rising' } });
-      if (at > 0) events.push({ what: 'brake', of: b.component, words: '', watch: { terms, threshold: Math.min(Math.max(at - step, 0), opens), edge: 'falling' } });
+      if (at < opens)
+        events.push({ what: 'brake', of: b.component, words: '', watch: { terms, threshold: Math.min(at + step, opens), edge: 'rising' } });
+      if (at > 0)
+        events.push({
+          what: 'brake',
+          of: b.component,
+          words: '',
+          watch: { terms, threshold: Math.min(Math.max(at - step, 0), opens), edge: 'falling' },
+        });
     });
     return events;
   }
@@ -86,15 +93,33 @@ export class InternalEvents {
         { of: 'pressure' as const, index: m.drain, weight: -1 },
       ];
       return on
-        ? { what: 'bit', of: m.component, to: false, words: `${m.component} has closed`, watch: { terms, threshold: toMPa(m.closes), edge: 'falling' } }
-        : { what: 'bit', of: m.component, to: true, words: `${m.component} has lifted`, watch: { terms, threshold: toMPa(m.set + m.band), edge: 'rising' } };
+        ? {
+            what: 'bit',
+            of: m.component,
+            to: false,
+            words: `${m.component} has closed`,
+            watch: { terms, threshold: toMPa(m.closes), edge: 'falling' },
+          }
+        : {
+            what: 'bit',
+            of: m.component,
+            to: true,
+            words: `${m.component} has lifted`,
+            watch: { terms, threshold: toMPa(m.set + m.band), edge: 'rising' },
+          };
     }
     if (on) {
       const terms = [
         { of: 'pressure' as const, index: m.v, weight: 1 },
         { of: 'pressure' as const, index: m.c, weight: -1 },
       ];
-      return { what: 'bit', of: m.component, to: false, words: `${m.component} opens again`, watch: { terms, threshold: 0, edge: 'rising' } };
+      return {
+        what: 'bit',
+        of: m.component,
+        to: false,
+        words: `${m.component} opens again`,
+        watch: { terms, threshold: 0, edge: 'rising' },
+      };
     }
     const spec = this.#assembled.specs[m.element];
     const terminal = this.#network.laws[m.element]?.nodes.indexOf(m.c) ?? 0;
@@ -118,7 +143,15 @@ export class InternalEvents {
       { of: 'pressure' as const, index: v.drain, weight: -1 },
     ];
     if (asked.position !== rest && stands !== asked.position) {
-      return [{ what: 'valve', of: v.component, stand: asked, words: `${v.component} shifts to ${asked.position}`, watch: { terms, threshold: toMPa(v.needs), edge: 'rising' } }];
+      return [
+        {
+          what: 'valve',
+          of: v.component,
+          stand: asked,
+          words: `${v.component} shifts to ${asked.position}`,
+          watch: { terms, threshold: toMPa(v.needs), edge: 'rising' },
+        },
+      ];
     }
     if (stands !== rest) {
       return [

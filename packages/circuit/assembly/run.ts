@@ -39,7 +39,14 @@ export class Run implements MachineRun {
   #brakes: readonly number[];
 
   /** `setting` as the solution was settled; `asked` the stands asked for, which piloted valves may not have reached. */
-  constructor(assembled: Assembled, network: Network, setting: Setting, asked: Readonly<Record<string, Stand>>, start: SteadyResult, dynamics: boolean) {
+  constructor(
+    assembled: Assembled,
+    network: Network,
+    setting: Setting,
+    asked: Readonly<Record<string, Stand>>,
+    start: SteadyResult,
+    dynamics: boolean,
+  ) {
     this.#assembled = assembled;
     this.#network = network;
     // The law alone holds a pilot-operated check from here on: what stands shut stays shut by continuity.
@@ -72,12 +79,16 @@ export class Run implements MachineRun {
       positions: [...this.#engine.positions],
       oil: this.#assembled.gases.map((g, i) => {
         const at = gas[i];
-        return at === undefined || at === 'empty' ? { oil: 0, pressure: g.precharge } : { oil: fromLitres(at.oil), pressure: fromMPa(at.pressure) };
+        return at === undefined || at === 'empty'
+          ? { oil: 0, pressure: g.precharge }
+          : { oil: fromLitres(at.oil), pressure: fromMPa(at.pressure) };
       }),
     };
     const solution = solutionOf(this.#assembled, this.#network, this.#setting, result, this.#brakes, standing, this.#engine.parameters);
     const held = this.#assembled.memories.filter((m) => m.kind === 'held' && (solution.openings[m.component] ?? 0) <= 0);
-    return held.length === 0 ? solution : { ...solution, bits: { ...solution.bits, ...Object.fromEntries(held.map((m) => [m.component, true])) } };
+    return held.length === 0
+      ? solution
+      : { ...solution, bits: { ...solution.bits, ...Object.fromEntries(held.map((m) => [m.component, true])) } };
   }
 
   /** Parameters a setting means, in a scratch array. */
@@ -110,7 +121,8 @@ export class Run implements MachineRun {
     const now = this.time;
     const takes = ramp?.over ?? note.takes;
     const until = now + takes;
-    const at = (stand: Stand): Float64Array => Float64Array.from(this.#parameters({ ...this.#setting, valves: { ...this.#setting.valves, [valve]: stand } }));
+    const at = (stand: Stand): Float64Array =>
+      Float64Array.from(this.#parameters({ ...this.#setting, valves: { ...this.#setting.valves, [valve]: stand } }));
     let moves: readonly Move[];
     let from = 0;
     if (note.proportional) {
@@ -132,7 +144,8 @@ export class Run implements MachineRun {
 
   /** Signed command of a proportional valve now: + towards a. */
   #commandNow(valve: string, rest: Stand['position']): number {
-    const value = (stand: Stand | undefined): number => (stand === undefined || stand.position === rest ? 0 : signOf(rest, stand) * (stand.opening ?? 1));
+    const value = (stand: Stand | undefined): number =>
+      stand === undefined || stand.position === rest ? 0 : signOf(rest, stand) * (stand.opening ?? 1);
     const going = this.#shifting.get(valve);
     if (going === undefined) return value(this.#setting.valves[valve]);
     const share = going.until > going.began ? Math.min(1, (this.time - going.began) / (going.until - going.began)) : 1;
@@ -147,7 +160,10 @@ export class Run implements MachineRun {
     const before = Float64Array.from(this.#parameters(this.#setting));
     const commands: Record<string, number> = { ...this.#setting.commands };
     delete commands[coil];
-    const withValue = (value: number | undefined): Setting => ({ ...this.#setting, commands: value === undefined ? commands : { ...commands, [coil]: value } });
+    const withValue = (value: number | undefined): Setting => ({
+      ...this.#setting,
+      commands: value === undefined ? commands : { ...commands, [coil]: value },
+    });
     const after = Float64Array.from(this.#parameters(withValue(to)));
     const start = ramp?.from === undefined ? undefined : Float64Array.from(this.#parameters(withValue(ramp.from)));
     for (let p = 0; p < after.length; p++) {
@@ -277,9 +293,14 @@ export class Run implements MachineRun {
       return;
     }
     const end = x > body.stroke / 2 ? 'extended' : 'retracted';
-    this.#happened.push({ time: h.time, of: body.id, words: h.what === 'stop reached' ? `${body.id} reaches its stop, ${end}` : `${body.id} leaves its stop` });
+    this.#happened.push({
+      time: h.time,
+      of: body.id,
+      words: h.what === 'stop reached' ? `${body.id} reaches its stop, ${end}` : `${body.id} leaves its stop`,
+    });
   }
 }
 
-const signOf = (rest: Stand['position'], to: Stand): number => (to.position === rest ? 0 : to.position === 'b' && rest === 'centre' ? -1 : 1);
+const signOf = (rest: Stand['position'], to: Stand): number =>
+  to.position === rest ? 0 : to.position === 'b' && rest === 'centre' ? -1 : 1;
 const bar = (pa: number): string => (Math.abs(pa) < 1e6 ? (pa / 1e5).toFixed(1) : (pa / 1e5).toFixed(0));

@@ -18,7 +18,12 @@ const shown = (pa: number): string => {
 };
 
 /** `base` is the solve that `solution` was made of. */
-export function settleMachine(assembled: Assembled, solve: Solve, wanted: Setting, near?: Solution): { readonly solution: Solution; readonly base: Solution } {
+export function settleMachine(
+  assembled: Assembled,
+  solve: Solve,
+  wanted: Setting,
+  near?: Solution,
+): { readonly solution: Solution; readonly base: Solution } {
   const remarks: { of: string; words: string }[] = [];
   let setting = wanted;
   // Piloted valves first stand as they stood; they shift when the pilot pressure seen there is enough.
@@ -53,7 +58,10 @@ export function settleMachine(assembled: Assembled, solve: Solve, wanted: Settin
     if (fallen.length === 0) break;
     const stands: Record<string, Stand> = { ...setting.valves };
     for (const v of fallen) {
-      remarks.push({ of: v.component, words: `${v.component} does not stay shifted: ${shown(pilotOf(assembled, v, solution))} of ${shown(STAYS * v.needs)} bar` });
+      remarks.push({
+        of: v.component,
+        words: `${v.component} does not stay shifted: ${shown(pilotOf(assembled, v, solution))} of ${shown(STAYS * v.needs)} bar`,
+      });
       stands[v.component] = { position: restOf(assembled, v) };
     }
     setting = { ...setting, valves: stands };
@@ -62,14 +70,16 @@ export function settleMachine(assembled: Assembled, solve: Solve, wanted: Settin
   return { solution: remarks.length === 0 ? solution : { ...solution, remarks: [...solution.remarks, ...remarks] }, base: solution };
 }
 
-const restOf = (assembled: Assembled, v: PilotedValve): Stand['position'] => assembled.valves.find((x) => x.component === v.component)?.rest ?? 'centre';
+const restOf = (assembled: Assembled, v: PilotedValve): Stand['position'] =>
+  assembled.valves.find((x) => x.component === v.component)?.rest ?? 'centre';
 
 /** Pressure at a node, Pa, from a solution in net names; a node without a net counts as without pressure. */
 function at(assembled: Assembled, node: number, solution: Solution): number {
   const net = assembled.netOf.get(node);
   return net === undefined ? 0 : (solution.pressures[net] ?? 0);
 }
-export const pilotOf = (assembled: Assembled, v: PilotedValve, solution: Solution): number => at(assembled, v.pilot, solution) - at(assembled, v.drain, solution);
+export const pilotOf = (assembled: Assembled, v: PilotedValve, solution: Solution): number =>
+  at(assembled, v.pilot, solution) - at(assembled, v.drain, solution);
 
 /** Which way a bit wants to turn at this solution; undefined: it stays. */
 export function turned(assembled: Assembled, m: Memory, on: boolean, solution: Solution): boolean | undefined {
@@ -116,8 +126,13 @@ function withBits(
       // On, off, and on again: neither state holds.
       if (n >= 3) {
         frozen.add(m.component);
-        if (m.kind === 'lifted') remarks.push({ of: m.component, words: `${m.component} hunts between ${shown(m.closes)} and ${shown(m.set)} bar` });
-        else if (m.kind === 'shut') remarks.push({ of: m.component, words: `${m.component} shuts and opens again at ${(m.closes / LITRE_PER_MINUTE).toPrecision(3)} L/min` });
+        if (m.kind === 'lifted')
+          remarks.push({ of: m.component, words: `${m.component} hunts between ${shown(m.closes)} and ${shown(m.set)} bar` });
+        else if (m.kind === 'shut')
+          remarks.push({
+            of: m.component,
+            words: `${m.component} shuts and opens again at ${(m.closes / LITRE_PER_MINUTE).toPrecision(3)} L/min`,
+          });
       }
     }
     if (!changed) break;

@@ -12,7 +12,13 @@ export interface Move {
 }
 
 /** Closed crossover: what is open closes in the first half, what shall be open opens in the second. */
-export function crossover(parameters: readonly number[], now: Float64Array, target: Float64Array, start: number, end: number): readonly Move[] {
+export function crossover(
+  parameters: readonly number[],
+  now: Float64Array,
+  target: Float64Array,
+  start: number,
+  end: number,
+): readonly Move[] {
   const middle = (start + end) / 2;
   const moves: Move[] = [];
   for (const parameter of parameters) {
@@ -28,10 +34,16 @@ export function crossover(parameters: readonly number[], now: Float64Array, targ
 const BREAKS = [-0.1, 0, 0.1];
 
 /** A signed command going straight from one value to another: each opening is straight between the breakpoints. */
-export function proportionalMoves(valve: ValveOf, from: number, to: number, start: number, end: number, at: (stand: Stand) => Float64Array): readonly Move[] {
+export function proportionalMoves(
+  valve: ValveOf,
+  from: number,
+  to: number,
+  start: number,
+  end: number,
+  at: (stand: Stand) => Float64Array,
+): readonly Move[] {
   const other: Stand['position'] = valve.rest === 'a' ? 'b' : 'a';
-  const standAt = (c: number): Stand =>
-    c === 0 ? { position: valve.rest } : { position: c > 0 ? other : 'b', opening: Math.abs(c) };
+  const standAt = (c: number): Stand => (c === 0 ? { position: valve.rest } : { position: c > 0 ? other : 'b', opening: Math.abs(c) });
   const stops = [from, ...BREAKS.filter((b) => (b - from) * (b - to) < 0).sort((x, y) => (to > from ? x - y : y - x)), to];
   const moves: Move[] = [];
   for (let i = 1; i < stops.length; i++) {
@@ -41,7 +53,13 @@ export function proportionalMoves(valve: ValveOf, from: number, to: number, star
     for (const parameter of valve.parameters) {
       const a = v0[parameter] ?? 0;
       const b = v1[parameter] ?? 0;
-      moves.push({ parameter, from: a, to: b, start: start + (end - start) * (i === 1 ? 0 : share(c0)), end: start + (end - start) * share(c1) });
+      moves.push({
+        parameter,
+        from: a,
+        to: b,
+        start: start + (end - start) * (i === 1 ? 0 : share(c0)),
+        end: start + (end - start) * share(c1),
+      });
     }
   }
   return moves;

@@ -123,7 +123,8 @@ export function portFlow(network: Network, result: SteadyResult, element: number
 export function terminalPorts(assembled: Assembled, network: Network, element: number): readonly (string | undefined)[] {
   const ports = assembled.elements[element]?.ports ?? [];
   const spec = assembled.specs[element];
-  if (spec?.type === 'pump' && spec.p !== spec.s && network.laws[element]?.nodes[0] === spec.p) return [ports[1], ports[0], ...ports.slice(2)];
+  if (spec?.type === 'pump' && spec.p !== spec.s && network.laws[element]?.nodes[0] === spec.p)
+    return [ports[1], ports[0], ...ports.slice(2)];
   return ports;
 }
 
@@ -135,13 +136,16 @@ function flowsOf(assembled: Assembled, network: Network, standing: Standing, res
     flows[key] = (flows[key] ?? 0) + fromLitresPerSecond(litres);
   };
   assembled.elements.forEach((note, e) => {
-    if (note.words === 'line') flows[note.component] = fromLitresPerSecond(terminalFlow(result, e, 0));
-    else terminalPorts(assembled, network, e).forEach((port, t) => add(note.component, port, terminalFlow(result, e, t)));
+    if (note.words === 'line') {
+      flows[note.component] = fromLitresPerSecond(terminalFlow(result, e, 0));
+      return;
+    }
+    for (const [t, port] of terminalPorts(assembled, network, e).entries()) add(note.component, port, terminalFlow(result, e, t));
   });
   for (const c of assembled.chambers) {
     add(c.component, c.port, areaAt(c, standing.positions[c.body] ?? 0) * (result.velocities[c.body] ?? 0));
   }
-  assembled.gases.forEach((g, i) => add(g.component, 'P', result.gasFlows[i] ?? 0));
+  for (const [i, g] of assembled.gases.entries()) add(g.component, 'P', result.gasFlows[i] ?? 0);
   return flows;
 }
 
@@ -170,7 +174,16 @@ function ownFriction(assembled: Assembled, i: number, result: SteadyResult, brak
 }
 
 /** The part of the friction acting on the body that is the actuator's own, N. In states seal friction is a resistance of one direction. */
-function sealAsResist(assembled: Assembled, i: number, setting: Setting, x: number, v: number, acting: number, own: number, total: number): number {
+function sealAsResist(
+  assembled: Assembled,
+  i: number,
+  setting: Setting,
+  x: number,
+  v: number,
+  acting: number,
+  own: number,
+  total: number,
+): number {
   const body = assembled.bodies[i];
   if (body === undefined) return 0;
   if (setting.sealFriction === 'not with load') {

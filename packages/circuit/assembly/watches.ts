@@ -38,7 +38,11 @@ export function engineWatch(assembled: Assembled, watch: Watch, start: Setting):
  * Content of a reservoir, L: what it holds at the start less what cylinders and accumulators have taken since. Bodies and charges
  * count for the reservoir their oil reaches; `atStart` is the constant part.
  */
-export function levelTerms(assembled: Assembled, reservoir: string, start: Setting): { readonly terms: readonly WatchTerm[]; readonly atStart: number } {
+export function levelTerms(
+  assembled: Assembled,
+  reservoir: string,
+  start: Setting,
+): { readonly terms: readonly WatchTerm[]; readonly atStart: number } {
   const component = assembled.circuit.components.find((c) => c.id === reservoir);
   const group = oilGroup(assembled, reservoir);
   const terms: WatchTerm[] = [];

@@ -8,4 +8,5 @@ export const prechargeAt = (gauge: number, t0: number, t: number): number => ((g
 export const oilAt = (volume: number, p0: number, p: number, n: number): number => (p <= p0 ? 0 : volume * (1 - (p0 / p) ** (1 / n)));
 
 /** Absolute pressure with this much oil in. */
-export const pressureWith = (volume: number, p0: number, oil: number, n: number): number => p0 * (volume / Math.max(volume - oil, volume * 1e-6)) ** n;
+export const pressureWith = (volume: number, p0: number, oil: number, n: number): number =>
+  p0 * (volume / Math.max(volume - oil, volume * 1e-6)) ** n;

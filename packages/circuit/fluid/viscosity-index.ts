@@ -5,7 +5,11 @@ import { FIRST_Y, H, L, STEP_Y } from './viscosity-index-table.ts';
  * Above the table L and H are quadratics in Y, by ranges of Y. The last range is printed in the standard; the others are the standard's
  * equation form from memory, checked by their joints: they meet the table at 20 mm2/s, each other, and the printed range at 70 mm2/s within 0.1 %.
  */
-const ABOVE: readonly { readonly upTo: number; readonly l: readonly [number, number, number]; readonly h: readonly [number, number, number] }[] = [
+const ABOVE: readonly {
+  readonly upTo: number;
+  readonly l: readonly [number, number, number];
+  readonly h: readonly [number, number, number];
+}[] = [
   { upTo: 22, l: [0.97256, 5.25, -0.98], h: [0.24504, 7.416, -16.73] },
   { upTo: 28, l: [0.91413, 7.4759, -21.82], h: [0.20323, 9.1267, -34.23] },
   { upTo: 40, l: [0.87031, 9.7157, -50.77], h: [0.18411, 10.1015, -46.75] },

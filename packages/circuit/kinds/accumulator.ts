@@ -19,11 +19,33 @@ export const accumulator: Kind = {
       example: 'volume 10 L',
       about: 'Gas volume at precharge.',
     },
-    { name: 'precharge', shape: { form: 'precharge' }, required: true, default: '—', example: 'precharge 90 bar at 20 degC', about: 'Gas pressure without oil, and the gas temperature it was filled at.' },
+    {
+      name: 'precharge',
+      shape: { form: 'precharge' },
+      required: true,
+      default: '—',
+      example: 'precharge 90 bar at 20 degC',
+      about: 'Gas pressure without oil, and the gas temperature it was filled at.',
+    },
     { name: 'bladder', shape: { form: 'flag' }, required: false, group: 'form', default: '—', example: 'bladder', about: 'Bladder type.' },
     { name: 'piston', shape: { form: 'flag' }, required: false, group: 'form', default: '—', example: 'piston', about: 'Piston type.' },
-    { name: 'diaphragm', shape: { form: 'flag' }, required: false, group: 'form', default: '—', example: 'diaphragm', about: 'Diaphragm type.' },
-    { name: 'gas', shape: { form: 'word', words: ['nitrogen'] }, required: true, default: '—', example: 'gas nitrogen', about: 'Gas it is filled with; never air or oxygen.' },
+    {
+      name: 'diaphragm',
+      shape: { form: 'flag' },
+      required: false,
+      group: 'form',
+      default: '—',
+      example: 'diaphragm',
+      about: 'Diaphragm type.',
+    },
+    {
+      name: 'gas',
+      shape: { form: 'word', words: ['nitrogen'] },
+      required: true,
+      default: '—',
+      example: 'gas nitrogen',
+      about: 'Gas it is filled with; never air or oxygen.',
+    },
     ...hardware,
   ],
   groups: [{ name: 'form', need: 'exactly one', of: ['bladder', 'piston', 'diaphragm'] }],
@@ -31,7 +53,13 @@ export const accumulator: Kind = {
   assemble(component, into) {
     const volume = si(component, 'volume');
     const charge = precharge(component, 'precharge');
-    if (volume === undefined || charge === undefined) return into.cannot(component, `${component.id} has no \`${volume === undefined ? 'volume' : 'precharge'}\``);
-    into.gas(component, into.nodeOrBlind(component, 'P'), volume, prechargeAt(charge.pressure.si, charge.temperature.si, into.oil.temperature));
+    if (volume === undefined || charge === undefined)
+      return into.cannot(component, `${component.id} has no \`${volume === undefined ? 'volume' : 'precharge'}\``);
+    into.gas(
+      component,
+      into.nodeOrBlind(component, 'P'),
+      volume,
+      prechargeAt(charge.pressure.si, charge.temperature.si, into.oil.temperature),
+    );
   },
 };

@@ -11,7 +11,14 @@ export const brake: Kind = {
   ports: [{ name: 'P', role: 'working', required: true, about: 'Release pressure.' }],
   chain: { how: 'fixed', port: 'P' },
   properties: [
-    { name: 'on', shape: { form: 'reference', kinds: ['motor'] }, required: true, default: '—', example: 'on HM1', about: 'The motor it holds.' },
+    {
+      name: 'on',
+      shape: { form: 'reference', kinds: ['motor'] },
+      required: true,
+      default: '—',
+      example: 'on HM1',
+      about: 'The motor it holds.',
+    },
     {
       name: 'opens',
       shape: { form: 'quantity', dimensions: ['pressure'] },
@@ -45,7 +52,8 @@ export const brake: Kind = {
     const torque = si(component, 'torque');
     const motorId = reference(component, 'on')?.id ?? word(component, 'on');
     const motor = motorId === undefined ? undefined : into.component(motorId);
-    if (opens === undefined || torque === undefined) return into.cannot(component, `${component.id} has no \`${opens === undefined ? 'opens' : 'torque'}\``);
+    if (opens === undefined || torque === undefined)
+      return into.cannot(component, `${component.id} has no \`${opens === undefined ? 'opens' : 'torque'}\``);
     if (motor === undefined) return into.cannot(component, `${component.id}: its motor ${motorId ?? ''} is not computed`);
     const node = into.nodeOrBlind(component, 'P');
     into.brake(component, { actuator: motor.id, node, opens, torque: torque * (si(motor, 'gear') ?? 1) });

@@ -42,7 +42,12 @@ export const burst: Kind = {
     const c = into.nodeOrBlind(component, 'C');
     const open = into.parameter(component, 'open', 1);
     into.onSetting((setting, put) => put(open, setting.bits[component.id] === true ? 0 : 1));
-    const element = into.add(component, { type: 'path', a: c, b: v, k: pathK(passesOf(component, into)), opening: open }, ['C', 'V'], 'C to V');
+    const element = into.add(
+      component,
+      { type: 'path', a: c, b: v, k: pathK(passesOf(component, into)), opening: open },
+      ['C', 'V'],
+      'C to V',
+    );
     addLeak(component, into, { node: c, port: 'C' }, { node: v, port: 'V' }, SEAT_LEAK);
     into.limitation({ component: component.id, words: `${component.id} passes`, targets: [{ element, size: 'k' }] });
     into.memory({ component: component.id, kind: 'shut', element, c, v, closes });

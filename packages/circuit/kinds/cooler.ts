@@ -45,7 +45,13 @@ export const cooler: Kind = {
   assemble(component, into) {
     const element = into.add(
       component,
-      { type: 'path', a: into.nodeOrBlind(component, 'in'), b: into.nodeOrBlind(component, 'out'), k: pathK(passesOf(component, into)) },
+      {
+        type: 'path',
+        a: into.nodeOrBlind(component, 'in'),
+        b: into.nodeOrBlind(component, 'out'),
+        k: pathK(passesOf(component, into)),
+        opening: into.parameter(component, 'passes', 1),
+      },
       ['in', 'out'],
       'in to out',
     );

@@ -18,8 +18,22 @@ export const counterbalance: Kind = {
   ],
   chain: { how: 'none' },
   properties: [
-    { name: 'set', shape: { form: 'quantity', dimensions: ['pressure'] }, required: true, default: '—', example: 'set 210 bar', about: 'Pressure at C that begins to open it without pilot.' },
-    { name: 'ratio', shape: { form: 'ratio' }, required: true, default: '—', example: 'ratio 3:1', about: 'Pilot ratio: 1 bar at X opens like `ratio` bar at C.' },
+    {
+      name: 'set',
+      shape: { form: 'quantity', dimensions: ['pressure'] },
+      required: true,
+      default: '—',
+      example: 'set 210 bar',
+      about: 'Pressure at C that begins to open it without pilot.',
+    },
+    {
+      name: 'ratio',
+      shape: { form: 'ratio' },
+      required: true,
+      default: '—',
+      example: 'ratio 3:1',
+      about: 'Pilot ratio: 1 bar at X opens like `ratio` bar at C.',
+    },
     {
       name: 'passes',
       shape: { form: 'flowAt' },
@@ -35,8 +49,10 @@ export const counterbalance: Kind = {
   assemble(component, into) {
     const set = si(component, 'set');
     const ratio = si(component, 'ratio');
-    if (set === undefined || ratio === undefined) return into.cannot(component, `${component.id} has no \`${set === undefined ? 'set' : 'ratio'}\``);
-    if (!crackFits(component, REVERSE_CRACK)) return into.cannot(component, `${component.id} \`passes\` at less than the crack of its free direction`);
+    if (set === undefined || ratio === undefined)
+      return into.cannot(component, `${component.id} has no \`${set === undefined ? 'set' : 'ratio'}\``);
+    if (!crackFits(component, REVERSE_CRACK))
+      return into.cannot(component, `${component.id} \`passes\` at less than the crack of its free direction`);
     const passes = passesOf(component, into);
     const v = into.nodeOrBlind(component, 'V');
     const c = into.nodeOrBlind(component, 'C');

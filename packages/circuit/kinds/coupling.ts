@@ -39,7 +39,13 @@ export const coupling: Kind = {
     into.onSetting((setting, put) => put(open, setting.contrary?.includes(component.id) === true ? 0 : 1));
     const element = into.add(
       component,
-      { type: 'path', a: into.nodeOrBlind(component, 'A'), b: into.nodeOrBlind(component, 'B'), k: pathK(passesOf(component, into)), opening: open },
+      {
+        type: 'path',
+        a: into.nodeOrBlind(component, 'A'),
+        b: into.nodeOrBlind(component, 'B'),
+        k: pathK(passesOf(component, into)),
+        opening: open,
+      },
       ['A', 'B'],
       'A to B',
     );

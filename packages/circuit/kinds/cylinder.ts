@@ -20,7 +20,14 @@ export const cylinder: Kind = {
   ],
   chain: { how: 'none' },
   properties: [
-    { name: 'bore', shape: { form: 'quantity', dimensions: ['length'] }, required: true, default: '—', example: 'bore 63 mm', about: 'Bore; of a plunger or telescopic cylinder the (largest) plunger diameter.' },
+    {
+      name: 'bore',
+      shape: { form: 'quantity', dimensions: ['length'] },
+      required: true,
+      default: '—',
+      example: 'bore 63 mm',
+      about: 'Bore; of a plunger or telescopic cylinder the (largest) plunger diameter.',
+    },
     {
       name: 'rod',
       shape: { form: 'quantity', dimensions: ['length'] },
@@ -45,7 +52,14 @@ export const cylinder: Kind = {
       example: 'attitude rod down',
       about: 'Rod angle above level: weight of a mass acts inward with the rod up, outward with the rod down.',
     },
-    { name: 'begins', shape: { form: 'place' }, required: false, default: 'retracted', example: 'begins extended', about: 'Position at the start.' },
+    {
+      name: 'begins',
+      shape: { form: 'place' },
+      required: false,
+      default: 'retracted',
+      example: 'begins extended',
+      about: 'Position at the start.',
+    },
     {
       name: 'cushion',
       shape: { form: 'quantity', dimensions: ['length'] },
@@ -71,7 +85,14 @@ export const cylinder: Kind = {
       example: 'spring 200 N to 600 N',
       about: 'Spring of a single-acting cylinder: force at the pressureless end, and at the other.',
     },
-    { name: 'through', shape: { form: 'flag' }, required: false, default: '—', example: 'through', about: 'Rod on both sides: both areas are the annulus.' },
+    {
+      name: 'through',
+      shape: { form: 'flag' },
+      required: false,
+      default: '—',
+      example: 'through',
+      about: 'Rod on both sides: both areas are the annulus.',
+    },
     {
       name: 'telescopic',
       shape: { form: 'list', dimension: 'length' },
@@ -120,7 +141,8 @@ export const cylinder: Kind = {
   assemble(component, into) {
     const areas = areasOf(component);
     const stroke = si(component, 'stroke');
-    if (areas === undefined || stroke === undefined) return into.cannot(component, `${component.id} has no usable \`bore\`, \`rod\` and \`stroke\``);
+    if (areas === undefined || stroke === undefined)
+      return into.cannot(component, `${component.id} has no usable \`bore\`, \`rod\` and \`stroke\``);
     const spring = range(component, 'spring');
     const only = portOfSingle(component);
     if (spring !== undefined && only === undefined) return into.cannot(component, `${component.id} has a spring but is double-acting`);
@@ -155,12 +177,22 @@ export const cylinder: Kind = {
         [undefined, port],
         `cushion, ${port} side`,
       );
-      into.knot(component.id, port === 'cap' ? Math.min(cushion, stroke / 2) : stroke - Math.min(cushion, stroke / 2), `${component.id} cushion begins`);
+      into.knot(
+        component.id,
+        port === 'cap' ? Math.min(cushion, stroke / 2) : stroke - Math.min(cushion, stroke / 2),
+        `${component.id} cushion begins`,
+      );
     };
     addSide('cap', areas.cap);
     addSide('rod', areas.rod);
     if (cushion !== undefined) {
-      into.assume({ component: component.id, property: 'cushion', value: '50 mm/s at the stop for 100 bar, widening with the square of the way left', source: 'memory', note: 'common practice, from memory' });
+      into.assume({
+        component: component.id,
+        property: 'cushion',
+        value: '50 mm/s at the stop for 100 bar, widening with the square of the way left',
+        source: 'memory',
+        note: 'common practice, from memory',
+      });
     }
     for (const at of areas.stages?.at.slice(1) ?? []) into.knot(component.id, at, `${component.id} next stage`);
     if (spring !== undefined) {
@@ -170,7 +202,13 @@ export const cylinder: Kind = {
     }
     into.sealFriction(component, siOr(component, into, 'seal', DEFAULT_SEAL, '3 bar') * areas.bore);
     if (areas.cap !== undefined && areas.rod !== undefined) {
-      addLeak(component, into, { node: into.nodeOrBlind(component, 'cap'), port: 'cap' }, { node: into.nodeOrBlind(component, 'rod'), port: 'rod' }, 0);
+      addLeak(
+        component,
+        into,
+        { node: into.nodeOrBlind(component, 'cap'), port: 'cap' },
+        { node: into.nodeOrBlind(component, 'rod'), port: 'rod' },
+        0,
+      );
     }
   },
 };

@@ -23,7 +23,14 @@ export const deceleration: Kind = {
       example: 'closed by C2 from 250 mm to 265 mm',
       about: 'Actuator and way over which it goes from open to closed.',
     },
-    { name: 'passes', shape: { form: 'flowAt' }, required: true, default: '—', example: 'passes 60 L/min at 4 bar', about: 'Flow at pressure drop, fully open.' },
+    {
+      name: 'passes',
+      shape: { form: 'flowAt' },
+      required: true,
+      default: '—',
+      example: 'passes 60 L/min at 4 bar',
+      about: 'Flow at pressure drop, fully open.',
+    },
     {
       name: 'reverse',
       shape: { form: 'word', words: ['check'] },
@@ -39,10 +46,12 @@ export const deceleration: Kind = {
   assemble(component, into) {
     const passes = flowAt(component, 'passes');
     const cam = cams(component, 'closed')[0];
-    if (passes === undefined || cam === undefined) return into.cannot(component, `${component.id} has no \`${passes === undefined ? 'passes' : 'closed'}\``);
+    if (passes === undefined || cam === undefined)
+      return into.cannot(component, `${component.id} has no \`${passes === undefined ? 'passes' : 'closed'}\``);
     const actuator = into.body(cam.actuator);
     if (actuator === undefined) return into.cannot(component, `${component.id}: its actuator ${cam.actuator} is not computed`);
-    if (!crackFits(component, REVERSE_CRACK) && has(component, 'reverse')) return into.cannot(component, `${component.id} \`passes\` at less than the crack of its reverse check`);
+    if (!crackFits(component, REVERSE_CRACK) && has(component, 'reverse'))
+      return into.cannot(component, `${component.id} \`passes\` at less than the crack of its reverse check`);
     const a = { node: into.nodeOrBlind(component, 'in'), port: 'in' };
     const b = { node: into.nodeOrBlind(component, 'out'), port: 'out' };
     const from = cam.from.si;
@@ -57,6 +66,7 @@ export const deceleration: Kind = {
         actuator,
         at: from <= to ? [from, to] : [to, from],
         opening: from <= to ? [1, 0] : [0, 1],
+        factor: into.parameter(component, 'passes', 1),
       },
       ['in', 'out'],
       'in to out',

@@ -41,7 +41,10 @@ function edgesOf(positions: Positions): Edge[] {
       if (path.passes === undefined) continue;
       const { from, to, passes } = path;
       const there = edges.find(
-        (e) => ((e.from === from && e.to === to) || (e.from === to && e.to === from)) && e.passes.flow === passes.flow && e.passes.drop === passes.drop,
+        (e) =>
+          ((e.from === from && e.to === to) || (e.from === to && e.to === from)) &&
+          e.passes.flow === passes.flow &&
+          e.passes.drop === passes.drop,
       );
       if (there === undefined) edges.push({ from, to, passes, sides: [side] });
       else if (!there.sides.includes(side)) there.sides.push(side);
@@ -57,7 +60,8 @@ export function addDirectional(component: Component, into: Assembly): string | u
     const bare = positions.paths[side].find((p) => p.passes === undefined);
     if (bare !== undefined) return `${component.id} has no \`passes\` for ${bare.from} to ${bare.to}`;
   }
-  if (component.shape !== undefined && component.shape.positions >= 3 && !has(component, 'centre')) return `${component.id} has no \`centre\``;
+  if (component.shape !== undefined && component.shape.positions >= 3 && !has(component, 'centre'))
+    return `${component.id} has no \`centre\``;
   const ofCam = camWeights(component, into, positions);
   if (typeof ofCam === 'string') return ofCam;
   const node = (port: string): NodeIndex => into.nodeOrBlind(component, port);
@@ -84,7 +88,21 @@ export function addDirectional(component: Component, into: Assembly): string | u
     let element: number;
     if (ofCam !== undefined) {
       const opening1 = sumOf(ofCam, edge.sides, positions.rest);
-      element = into.add(component, { type: 'camPath', a: node(from), b: node(to), k, actuator: ofCam.actuator, at: ofCam.at, opening: opening1 }, ports, words);
+      element = into.add(
+        component,
+        {
+          type: 'camPath',
+          a: node(from),
+          b: node(to),
+          k,
+          actuator: ofCam.actuator,
+          at: ofCam.at,
+          opening: opening1,
+          factor: into.parameter(component, `passes ${words}`, 1),
+        },
+        ports,
+        words,
+      );
     } else if (compensator !== undefined && limiting) {
       const limit = toLitresPerSecond(pathFlow(scaled(edge.passes, into), compensator));
       element = into.add(component, { type: 'compensatedEdge', a: node(from), b: node(to), k, opening, limit }, ports, words);
@@ -101,27 +119,57 @@ export function addDirectional(component: Component, into: Assembly): string | u
   addSpoolLeaks(component, into);
   into.onSetting((setting, put) => {
     const weights = weightsOf(component, positions, setting);
-    for (const { parameter, sides } of apply) put(parameter, Math.min(1, sides.reduce((sum, s) => sum + weights[s], 0)));
+    for (const { parameter, sides } of apply)
+      put(
+        parameter,
+        Math.min(
+          1,
+          sides.reduce((sum, s) => sum + weights[s], 0),
+        ),
+      );
   });
-  into.valve({ component: component.id, rest: positions.rest, parameters: apply.map((a) => a.parameter), takes: si(component, 'takes') ?? 0.05, proportional });
+  into.valve({
+    component: component.id,
+    rest: positions.rest,
+    parameters: apply.map((a) => a.parameter),
+    takes: si(component, 'takes') ?? 0.05,
+    proportional,
+  });
   const external = word(component, 'external') === 'pilot';
   if (external || word(component, 'internal') === 'pilot') {
     const pilot = external ? into.node(component, 'X') : into.node(component, 'P');
-    if (pilot !== undefined) into.pilotedValve({ component: component.id, pilot, drain: into.node(component, 'Y') ?? into.node(component, 'T') ?? 0, needs: si(component, 'needs') ?? 5 * BAR });
+    if (pilot !== undefined)
+      into.pilotedValve({
+        component: component.id,
+        pilot,
+        drain: into.node(component, 'Y') ?? into.node(component, 'T') ?? 0,
+        needs: si(component, 'needs') ?? 5 * BAR,
+      });
   }
   return undefined;
 }
 
 /** LS follows the working port that P feeds; with none it is joined to T. */
-function addSignal(component: Component, into: Assembly, positions: Positions, weight: (name: string, sides: readonly Side[]) => Param): void {
+function addSignal(
+  component: Component,
+  into: Assembly,
+  positions: Positions,
+  weight: (name: string, sides: readonly Side[]) => Param,
+): void {
   const ls = into.node(component, 'LS');
   if (ls === undefined) return;
   const fed = (side: Side): string =>
-    positions.paths[side].map((p) => (p.from === 'P' ? p.to : p.to === 'P' ? p.from : undefined)).find((p) => p === 'A' || p === 'B') ?? 'T';
+    positions.paths[side].map((p) => (p.from === 'P' ? p.to : p.to === 'P' ? p.from : undefined)).find((p) => p === 'A' || p === 'B') ??
+    'T';
   for (const port of ['A', 'B', 'T']) {
     const sides = positions.sides.filter((s) => fed(s) === port);
     if (sides.length === 0) continue;
-    into.add(component, { type: 'path', a: into.nodeOrBlind(component, port), b: ls, k: pathK(LS_PATH), opening: weight(`signal ${port}`, sides) }, [port, 'LS'], `${port} to LS`);
+    into.add(
+      component,
+      { type: 'path', a: into.nodeOrBlind(component, port), b: ls, k: pathK(LS_PATH), opening: weight(`signal ${port}`, sides) },
+      [port, 'LS'],
+      `${port} to LS`,
+    );
   }
 }
 
@@ -169,5 +217,10 @@ function camWeights(component: Component, into: Assembly, positions: Positions):
 
 function sumOf(cam: CamWeights, sides: readonly Side[], rest: Side): readonly number[] {
   const total = (i: number): number => Object.values(cam.inside).reduce((sum, of) => sum + (of?.[i] ?? 0), 0);
-  return cam.at.map((_, i) => Math.min(1, sides.reduce((sum, s) => sum + (s === rest ? Math.max(0, 1 - total(i)) : (cam.inside[s]?.[i] ?? 0)), 0)));
+  return cam.at.map((_, i) =>
+    Math.min(
+      1,
+      sides.reduce((sum, s) => sum + (s === rest ? Math.max(0, 1 - total(i)) : (cam.inside[s]?.[i] ?? 0)), 0),
+    ),
+  );
 }

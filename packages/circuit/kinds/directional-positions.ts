@@ -88,14 +88,23 @@ export function positionsOf(component: Component): Positions {
         passes: p.passes === undefined ? passes([p.from, p.to]) : { flow: p.passes.flow.si, drop: p.passes.drop.si },
       }));
     }
-    const pairs = written?.word !== undefined ? pathsOfWord(written.word, ports) : side === 'centre' ? [] : (DEFAULTS[shape.ports]?.[side] ?? []);
+    const pairs =
+      written?.word !== undefined ? pathsOfWord(written.word, ports) : side === 'centre' ? [] : (DEFAULTS[shape.ports]?.[side] ?? []);
     return pairs.map((pair) => ({ from: pair[0], to: pair[1], passes: passes(pair) }));
   };
   const spring = word(component, 'spring');
   const normally = word(component, 'normally');
   const detent = has(component, 'detent');
   const rest: Side =
-    spring === 'a' || spring === 'b' || spring === 'centre' ? spring : normally === 'closed' ? 'b' : normally === 'open' || detent ? 'a' : shape.positions >= 3 ? 'centre' : 'a';
+    spring === 'a' || spring === 'b' || spring === 'centre'
+      ? spring
+      : normally === 'closed'
+        ? 'b'
+        : normally === 'open' || detent
+          ? 'a'
+          : shape.positions >= 3
+            ? 'centre'
+            : 'a';
   return { sides, paths: { a: pathsOf('a'), b: pathsOf('b'), centre: shape.positions >= 3 ? pathsOf('centre') : [] }, rest, detent };
 }
 

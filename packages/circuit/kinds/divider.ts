@@ -16,11 +16,42 @@ export const divider: Kind = {
   ],
   chain: { how: 'none' },
   properties: [
-    { name: 'gear', shape: { form: 'flag' }, required: false, group: 'form', default: '—', example: 'gear', about: 'Rotary: two sections on one shaft; divides and combines.' },
-    { name: 'spool', shape: { form: 'flag' }, required: false, group: 'form', default: '—', example: 'spool', about: 'Spool type: throttles the side that gets too much.' },
-    { name: 'combines', shape: { form: 'flag' }, required: false, default: 'divides only', example: 'combines', about: 'A spool type that also combines the flows coming back.' },
+    {
+      name: 'gear',
+      shape: { form: 'flag' },
+      required: false,
+      group: 'form',
+      default: '—',
+      example: 'gear',
+      about: 'Rotary: two sections on one shaft; divides and combines.',
+    },
+    {
+      name: 'spool',
+      shape: { form: 'flag' },
+      required: false,
+      group: 'form',
+      default: '—',
+      example: 'spool',
+      about: 'Spool type: throttles the side that gets too much.',
+    },
+    {
+      name: 'combines',
+      shape: { form: 'flag' },
+      required: false,
+      default: 'divides only',
+      example: 'combines',
+      about: 'A spool type that also combines the flows coming back.',
+    },
     { name: 'share', shape: { form: 'ratio' }, required: false, default: '1:1', example: 'share 1:1', about: 'Share of A to B.' },
-    { name: 'error', shape: { form: 'quantity', dimensions: ['ratio'] }, required: false, default: '3 %', defaultSource: 'common practice, from memory', example: 'error 2 %', about: 'Difference of a share from its due, at full flow and 100 bar between the outlets (gear).' },
+    {
+      name: 'error',
+      shape: { form: 'quantity', dimensions: ['ratio'] },
+      required: false,
+      default: '3 %',
+      defaultSource: 'common practice, from memory',
+      example: 'error 2 %',
+      about: 'Difference of a share from its due, at full flow and 100 bar between the outlets (gear).',
+    },
     {
       name: 'passes',
       shape: { form: 'flowAt' },
@@ -39,7 +70,13 @@ export const divider: Kind = {
     const shares: readonly [number, number] = [share / (1 + share), 1 / (1 + share)];
     const error = siOr(component, into, 'error', 0.03, '3 %');
     if (passes === undefined) {
-      into.assume({ component: component.id, property: 'passes', value: 'no friction, flow of all pumps', source: 'not counted', note: `no loss declared for ${component.id}` });
+      into.assume({
+        component: component.id,
+        property: 'passes',
+        value: 'no friction, flow of all pumps',
+        source: 'not counted',
+        note: `no loss declared for ${component.id}`,
+      });
     }
     const qN = toLitresPerSecond(passes?.flow ?? into.pumpFlow);
     const drop = passes === undefined ? 0 : toMPa(passes.drop * into.oil.pathDrop);
@@ -47,9 +84,19 @@ export const divider: Kind = {
     const nodes = { p: into.nodeOrBlind(component, 'P'), a: into.nodeOrBlind(component, 'A'), b: into.nodeOrBlind(component, 'B') };
     if (has(component, 'gear')) {
       const g = (i: 0 | 1) => ((error * qN * shares[i]) / toMPa(50 * BAR)) * into.oil.leakage;
-      into.add(component, { type: 'gearDivider', ...nodes, share: shares, g: [g(0), g(1)], friction: drop, qN }, ['P', 'A', 'B'], 'P to A and B');
+      into.add(
+        component,
+        { type: 'gearDivider', ...nodes, share: shares, g: [g(0), g(1)], friction: drop, qN },
+        ['P', 'A', 'B'],
+        'P to A and B',
+      );
     } else {
-      into.add(component, { type: 'spoolDivider', ...nodes, share: shares, error, drop, qN, combines: has(component, 'combines') }, ['P', 'A', 'B'], 'P to A and B');
+      into.add(
+        component,
+        { type: 'spoolDivider', ...nodes, share: shares, error, drop, qN, combines: has(component, 'combines') },
+        ['P', 'A', 'B'],
+        'P to A and B',
+      );
     }
   },
 };

@@ -9,8 +9,22 @@ export const drive: Kind = {
   ports: [],
   chain: { how: 'none' },
   properties: [
-    { name: 'engine', shape: { form: 'flag' }, required: false, default: 'electric motor', example: 'engine', about: 'Combustion engine instead of an electric motor.' },
-    { name: 'power', shape: { form: 'quantity', dimensions: ['power'] }, required: true, default: '—', example: 'power 5.5 kW', about: 'Rated shaft power.' },
+    {
+      name: 'engine',
+      shape: { form: 'flag' },
+      required: false,
+      default: 'electric motor',
+      example: 'engine',
+      about: 'Combustion engine instead of an electric motor.',
+    },
+    {
+      name: 'power',
+      shape: { form: 'quantity', dimensions: ['power'] },
+      required: true,
+      default: '—',
+      example: 'power 5.5 kW',
+      about: 'Rated shaft power.',
+    },
     {
       name: 'speed',
       shape: { form: 'quantity', dimensions: ['rotation'] },

@@ -15,8 +15,22 @@ export const filter: Kind = {
   ],
   chain: { how: 'through', from: 'in', to: 'out' },
   properties: [
-    { name: 'passes', shape: { form: 'flowAt' }, required: true, default: '—', example: 'passes 120 L/min at 0.4 bar', about: 'Flow at pressure drop of the clean filter.' },
-    { name: 'bypass', shape: { form: 'bypass' }, required: true, default: '—', example: 'bypass 1.7 bar | bypass none', about: 'Opening pressure of the bypass valve, or `none`.' },
+    {
+      name: 'passes',
+      shape: { form: 'flowAt' },
+      required: true,
+      default: '—',
+      example: 'passes 120 L/min at 0.4 bar',
+      about: 'Flow at pressure drop of the clean filter.',
+    },
+    {
+      name: 'bypass',
+      shape: { form: 'bypass' },
+      required: true,
+      default: '—',
+      example: 'bypass 1.7 bar | bypass none',
+      about: 'Opening pressure of the bypass valve, or `none`.',
+    },
     {
       name: 'fineness',
       shape: { form: 'quantity', dimensions: ['length'] },
@@ -45,7 +59,12 @@ export const filter: Kind = {
     const k = pathK({ flow: passes.flow, drop: passes.drop * into.oil.filterDrop });
     const a = into.nodeOrBlind(component, 'in');
     const b = into.nodeOrBlind(component, 'out');
-    const element = into.add(component, { type: 'path', a, b, k }, ['in', 'out'], 'in to out');
+    const element = into.add(
+      component,
+      { type: 'path', a, b, k, opening: into.parameter(component, 'passes', 1) },
+      ['in', 'out'],
+      'in to out',
+    );
     if (bypass?.type === 'bypass' && bypass.crack !== undefined) {
       into.add(component, { type: 'check', a, b, k, crack: toMPa(bypass.crack.si) }, ['in', 'out'], 'bypass');
     }

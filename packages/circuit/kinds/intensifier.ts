@@ -13,16 +13,38 @@ export const intensifier: Kind = {
     { name: 'T', role: 'return', required: true, about: 'Return of the driving side.' },
   ],
   chain: { how: 'through', from: 'P', to: 'A' },
-  properties: [{ name: 'ratio', shape: { form: 'ratio' }, required: true, default: '—', example: 'ratio 4:1', about: 'Pressure at A to pressure at P.' }, ...hardware],
+  properties: [
+    {
+      name: 'ratio',
+      shape: { form: 'ratio' },
+      required: true,
+      default: '—',
+      example: 'ratio 4:1',
+      about: 'Pressure at A to pressure at P.',
+    },
+    ...hardware,
+  ],
   groups: [],
   /** Continuous, double-acting, no friction: A up to ratio times P, its flow the ratio-th part. */
   assemble(component, into) {
     const ratio = si(component, 'ratio');
     if (ratio === undefined) return into.cannot(component, `${component.id} has no \`ratio\``);
-    into.assume({ component: component.id, property: 'friction', value: 'none', source: 'not counted', note: 'an intensifier is computed without friction' });
+    into.assume({
+      component: component.id,
+      property: 'friction',
+      value: 'none',
+      source: 'not counted',
+      note: 'an intensifier is computed without friction',
+    });
     into.add(
       component,
-      { type: 'intensifier', p: into.nodeOrBlind(component, 'P'), a: into.nodeOrBlind(component, 'A'), t: into.nodeOrBlind(component, 'T'), ratio },
+      {
+        type: 'intensifier',
+        p: into.nodeOrBlind(component, 'P'),
+        a: into.nodeOrBlind(component, 'A'),
+        t: into.nodeOrBlind(component, 'T'),
+        ratio,
+      },
       ['P', 'A', 'T'],
       'P to A',
     );

@@ -44,7 +44,14 @@ export const motor: Kind = {
       example: 'mechanical 92 %',
       about: 'Hydro-mechanical efficiency.',
     },
-    { name: 'gear', shape: { form: 'ratio' }, required: false, default: '1:1', example: 'gear 20:1', about: 'Reduction gear at the shaft, without loss; speed and load are at its output.' },
+    {
+      name: 'gear',
+      shape: { form: 'ratio' },
+      required: false,
+      default: '1:1',
+      example: 'gear 20:1',
+      about: 'Reduction gear at the shaft, without loss; speed and load are at its output.',
+    },
     {
       name: 'fastest',
       shape: { form: 'quantity', dimensions: ['rotation'] },
@@ -73,13 +80,25 @@ export const motor: Kind = {
     const mechanical = siOr(component, into, 'mechanical', 0.9, '90 %');
     const rated = ratedAt(component, 'A') ?? DEFAULT_RATED;
     if (ratedAt(component, 'A') === undefined) {
-      into.assume({ component: component.id, property: 'rated', value: '210 bar', source: 'default', note: 'pressure at which `volumetric` holds: common practice, no source' });
+      into.assume({
+        component: component.id,
+        property: 'rated',
+        value: '210 bar',
+        source: 'default',
+        note: 'pressure at which `volumetric` holds: common practice, no source',
+      });
     }
     const gear = si(component, 'gear') ?? 1;
     const fastest = si(component, 'fastest');
     const flow = fastest === undefined ? into.pumpFlow : displacement * fastest;
     if (fastest === undefined) {
-      into.assume({ component: component.id, property: 'fastest', value: 'flow of all pumps', source: 'derived', note: 'flow at which `volumetric` holds' });
+      into.assume({
+        component: component.id,
+        property: 'fastest',
+        value: 'flow of all pumps',
+        source: 'derived',
+        note: 'flow at which `volumetric` holds',
+      });
     }
     const area = toArea(displacement) * gear;
     const a = into.nodeOrBlind(component, 'A');

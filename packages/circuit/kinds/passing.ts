@@ -2,7 +2,7 @@
 import type { NodeIndex, Param } from '@oilway/engine';
 import type { Assembly, FlowAt } from '../assembly/assembly.ts';
 import { behindCrack, laminarG, NO_LOSS, pathK, REVERSE_CRACK } from '../assembly/laws.ts';
-import { BAR, CM3_PER_MINUTE } from '../assembly/units.ts';
+import { BAR, CM3_PER_MINUTE, toMPa } from '../assembly/units.ts';
 import type { Component } from '../model/circuit.ts';
 import { flowAt, si, word } from './read.ts';
 
@@ -13,7 +13,13 @@ export const scaled = (at: FlowAt, into: Assembly): FlowAt => ({ flow: at.flow, 
 export function passesOf(component: Component, into: Assembly): FlowAt {
   const declared = flowAt(component, 'passes');
   if (declared !== undefined) return scaled(declared, into);
-  into.assume({ component: component.id, property: 'passes', value: 'no loss', source: 'not counted', note: `no loss declared for ${component.id}` });
+  into.assume({
+    component: component.id,
+    property: 'passes',
+    value: 'no loss',
+    source: 'not counted',
+    note: `no loss declared for ${component.id}`,
+  });
   return NO_LOSS;
 }
 
@@ -28,7 +34,9 @@ export function addCheck(
 ): boolean {
   const k = checkK(component, into, crack);
   if (k === undefined) return false;
-  into.add(component, { type: 'check', a: from.node, b: to.node, k, crack: crack * 1e-6 }, [from.port, to.port], words);
+  const opening = into.parameter(component, `passes ${words}`, 1);
+  into.add(component, { type: 'check', a: from.node, b: to.node, k, crack: toMPa(crack), opening }, [from.port, to.port], words);
+  into.limitation({ component: component.id, words: `${component.id} passes ${words}`, targets: [{ parameter: opening }] });
   return true;
 }
 
@@ -111,7 +119,14 @@ export function settingParameter(
 export const coilOf = (component: Component, into: Assembly): string | undefined =>
   into.circuit.coils.find((c) => c.component === component.id)?.id;
 
-export const siOr = (component: Component, into: Assembly, name: string, otherwise: number, shown: string, source: 'default' | 'memory' = 'default'): number => {
+export const siOr = (
+  component: Component,
+  into: Assembly,
+  name: string,
+  otherwise: number,
+  shown: string,
+  source: 'default' | 'memory' = 'default',
+): number => {
   const v = si(component, name);
   if (v !== undefined) return v;
   into.assume({ component: component.id, property: name, value: shown, source, note: 'common practice, no source' });

@@ -17,7 +17,12 @@ export const pilotcheck: Kind = {
     { name: 'V', role: 'working', required: true, about: 'Valve side.' },
     { name: 'C', role: 'holding', required: true, about: 'Cylinder side: the holding chamber.' },
     { name: 'X', role: 'pilot', required: true, about: 'Pilot that opens C to V.' },
-    { name: 'Y', role: 'drain', required: false, about: 'Drain of the pilot piston; joined, back pressure at V does not act against the pilot.' },
+    {
+      name: 'Y',
+      role: 'drain',
+      required: false,
+      about: 'Drain of the pilot piston; joined, back pressure at V does not act against the pilot.',
+    },
   ],
   chain: { how: 'none' },
   properties: [
@@ -31,7 +36,14 @@ export const pilotcheck: Kind = {
       example: 'crack 1 bar',
       about: 'Pressure drop at which it opens from V to C.',
     },
-    { name: 'decompressing', shape: { form: 'flag' }, required: false, default: 'none', example: 'decompressing', about: 'A small poppet opens first and lets trapped pressure down.' },
+    {
+      name: 'decompressing',
+      shape: { form: 'flag' },
+      required: false,
+      default: 'none',
+      example: 'decompressing',
+      about: 'A small poppet opens first and lets trapped pressure down.',
+    },
     {
       name: 'passes',
       shape: { form: 'flowAt' },
@@ -88,7 +100,13 @@ export const pilotcheck: Kind = {
       );
     const element = opened(ratio, pathK(passes), 'C to V', true);
     if (has(component, 'decompressing')) {
-      into.assume({ component: component.id, property: 'decompressing', value: 'poppet of 5 % of `passes`, four times the ratio', source: 'memory', note: 'common practice, from memory' });
+      into.assume({
+        component: component.id,
+        property: 'decompressing',
+        value: 'poppet of 5 % of `passes`, four times the ratio',
+        source: 'memory',
+        note: 'common practice, from memory',
+      });
       opened(4 * ratio, pathK({ flow: 0.05 * passes.flow, drop: passes.drop }), 'C to V, decompressing', false);
     }
     into.limitation({ component: component.id, words: `${component.id} passes`, targets: [{ element, size: 'k' }] });

@@ -122,17 +122,27 @@ export const pump: Kind = {
     const driveId = reference(component, 'driven')?.id ?? word(component, 'driven');
     const drive = driveId === undefined ? undefined : into.component(driveId);
     const speed = drive === undefined ? undefined : si(drive, 'speed');
-    if (drive === undefined || speed === undefined) return into.cannot(component, `${component.id}: its drive ${driveId ?? ''} is not computed`);
+    if (drive === undefined || speed === undefined)
+      return into.cannot(component, `${component.id}: its drive ${driveId ?? ''} is not computed`);
     const sensing = si(component, 'sensing');
     const ls = into.node(component, 'LS');
     if ((sensing === undefined) !== (ls === undefined)) {
-      return into.cannot(component, sensing === undefined ? `${component.id} has LS joined but no \`sensing\`` : `${component.id} is load-sensing but LS is not joined`);
+      return into.cannot(
+        component,
+        sensing === undefined ? `${component.id} has LS joined but no \`sensing\`` : `${component.id} is load-sensing but LS is not joined`,
+      );
     }
     const volumetric = siOr(component, into, 'volumetric', 0.92, '92 % at rated pressure');
     siOr(component, into, 'mechanical', DEFAULT_MECHANICAL, '92 %');
     const rated = ratedAt(component, 'P') ?? DEFAULT_RATED;
     if (ratedAt(component, 'P') === undefined) {
-      into.assume({ component: component.id, property: 'rated', value: '210 bar', source: 'default', note: 'pressure at which `volumetric` holds: common practice, no source' });
+      into.assume({
+        component: component.id,
+        property: 'rated',
+        value: '210 bar',
+        source: 'default',
+        note: 'pressure at which `volumetric` holds: common practice, no source',
+      });
     }
     const qth = displacement * speed;
     const s = into.nodeOrBlind(component, 'S');
@@ -169,7 +179,13 @@ export const pump: Kind = {
       l === undefined ? ['S', 'P'] : ['S', 'P', 'L'],
       'outlet',
     );
-    if (remote !== undefined) into.add(component, { type: 'path', a: p, b: remote, k: pathK({ flow: LITRE_PER_MINUTE, drop: 20 * BAR }) }, ['P', 'X'], 'remote pilot');
+    if (remote !== undefined)
+      into.add(
+        component,
+        { type: 'path', a: p, b: remote, k: pathK({ flow: LITRE_PER_MINUTE, drop: 20 * BAR }) },
+        ['P', 'X'],
+        'remote pilot',
+      );
     const inside = si(component, 'reliefs');
     if (inside !== undefined) {
       into.add(
@@ -191,7 +207,8 @@ export const pump: Kind = {
     }
     into.pump({ component: component.id, drive: drive.id, element });
     into.limitation({ component: component.id, words: `pump flow ${component.id}`, targets: [{ element, size: 'qth' }] });
-    if (set !== undefined) into.limitation({ component: component.id, words: `${component.id} compensator`, targets: [{ parameter: set }] });
+    if (set !== undefined)
+      into.limitation({ component: component.id, words: `${component.id} compensator`, targets: [{ parameter: set }] });
     into.opening({ component: component.id, element });
   },
 };

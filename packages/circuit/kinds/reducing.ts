@@ -17,8 +17,22 @@ export const reducing: Kind = {
   ],
   chain: { how: 'through', from: 'P', to: 'A' },
   properties: [
-    { name: 'set', shape: { form: 'quantity', dimensions: ['pressure'] }, required: true, default: '—', example: 'set 70 bar', about: 'Pressure at A without flow; with flow A sags by up to 5 %.' },
-    { name: 'relieving', shape: { form: 'word', words: ['yes', 'no'] }, required: true, default: '—', example: 'relieving yes', about: '`yes`: pressure above the setting at A is let out to Y; `no`: it is trapped.' },
+    {
+      name: 'set',
+      shape: { form: 'quantity', dimensions: ['pressure'] },
+      required: true,
+      default: '—',
+      example: 'set 70 bar',
+      about: 'Pressure at A without flow; with flow A sags by up to 5 %.',
+    },
+    {
+      name: 'relieving',
+      shape: { form: 'word', words: ['yes', 'no'] },
+      required: true,
+      default: '—',
+      example: 'relieving yes',
+      about: '`yes`: pressure above the setting at A is let out to Y; `no`: it is trapped.',
+    },
     {
       name: 'reverse',
       shape: { form: 'word', words: ['check'] },
@@ -53,13 +67,21 @@ export const reducing: Kind = {
     if (set === undefined) return into.cannot(component, `${component.id} has no \`set\``);
     const y = into.node(component, 'Y');
     if (y === undefined) return into.cannot(component, `${component.id} has its drain Y not joined`);
-    if (has(component, 'reverse') && !crackFits(component, REVERSE_CRACK)) return into.cannot(component, `${component.id} \`passes\` at less than the crack of its reverse check`);
+    if (has(component, 'reverse') && !crackFits(component, REVERSE_CRACK))
+      return into.cannot(component, `${component.id} \`passes\` at less than the crack of its reverse check`);
     const p = into.nodeOrBlind(component, 'P');
     const a = into.nodeOrBlind(component, 'A');
     const passes = passesOf(component, into);
     const coil = coilOf(component, into);
     const lowest = 3 * BAR;
-    if (coil !== undefined) into.assume({ component: component.id, property: 'coil', value: '3 bar with a dead coil', source: 'memory', note: 'lowest setting: common practice, from memory' });
+    if (coil !== undefined)
+      into.assume({
+        component: component.id,
+        property: 'coil',
+        value: '3 bar with a dead coil',
+        source: 'memory',
+        note: 'lowest setting: common practice, from memory',
+      });
     const range = { lowest: Math.min(lowest, set), set };
     // y = clamp((set + p_Y - p_A)/band): the engine's pilot sum is p_Y - p_A, its setting -set.
     const closing = settingParameter(component, into, coil, 'set', range, (v) => -toMPa(v));

@@ -36,8 +36,22 @@ export const relief: Kind = {
       example: 'override 8 %',
       about: 'Rise above `set` at the flow of `passes`; it grows in proportion to the flow.',
     },
-    { name: 'passes', shape: { form: 'flowAt' }, required: true, default: '—', example: 'passes 100 L/min at 5 bar', about: 'Flow at pressure drop of the fully open valve: sets the override and the lowest pressure.' },
-    { name: 'piloted', shape: { form: 'flag' }, required: false, default: 'direct', example: 'piloted', about: 'Pilot-operated; has a vent port X.' },
+    {
+      name: 'passes',
+      shape: { form: 'flowAt' },
+      required: true,
+      default: '—',
+      example: 'passes 100 L/min at 5 bar',
+      about: 'Flow at pressure drop of the fully open valve: sets the override and the lowest pressure.',
+    },
+    {
+      name: 'piloted',
+      shape: { form: 'flag' },
+      required: false,
+      default: 'direct',
+      example: 'piloted',
+      about: 'Pilot-operated; has a vent port X.',
+    },
     {
       name: 'vented',
       shape: { form: 'quantity', dimensions: ['pressure'] },
@@ -56,7 +70,14 @@ export const relief: Kind = {
       example: 'coil a SOL1, coil b SOL2 24 V',
       about: 'Solenoid on the setting: command in % of it, or directly in its dimension. Dead coil = lowest setting.',
     },
-    { name: 'certified', shape: { form: 'flag' }, required: false, default: '—', example: 'certified', about: 'Safety valve with certificate (accumulators).' },
+    {
+      name: 'certified',
+      shape: { form: 'flag' },
+      required: false,
+      default: '—',
+      example: 'certified',
+      about: 'Safety valve with certificate (accumulators).',
+    },
     ...hardware,
   ],
   groups: [],
@@ -67,7 +88,8 @@ export const relief: Kind = {
   assemble(component, into) {
     const set = si(component, 'set');
     const passes = flowAt(component, 'passes');
-    if (set === undefined || passes === undefined) return into.cannot(component, `${component.id} has no \`${set === undefined ? 'set' : 'passes'}\``);
+    if (set === undefined || passes === undefined)
+      return into.cannot(component, `${component.id} has no \`${set === undefined ? 'set' : 'passes'}\``);
     const piloted = has(component, 'piloted');
     const vent = into.node(component, 'X');
     if (vent !== undefined && !piloted) return into.cannot(component, `${component.id} has its X joined but is not \`piloted\``);
@@ -98,7 +120,13 @@ export const relief: Kind = {
       'P to T',
     );
     if (vent !== undefined) {
-      into.assume({ component: component.id, property: 'X', value: '1 L/min at 50 bar', source: 'memory', note: 'flow the pilot stage takes from P: common practice, from memory' });
+      into.assume({
+        component: component.id,
+        property: 'X',
+        value: '1 L/min at 50 bar',
+        source: 'memory',
+        note: 'flow the pilot stage takes from P: common practice, from memory',
+      });
       into.add(component, { type: 'path', a: p, b: vent, k: pathK({ flow: LITRE_PER_MINUTE, drop: 50 * BAR }) }, ['P', 'X'], 'pilot stage');
     }
     addLeak(component, into, { node: p, port: 'P' }, { node: t, port: 'T' }, piloted ? 5 : 0);

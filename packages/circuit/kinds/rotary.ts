@@ -46,7 +46,13 @@ export const rotary: Kind = {
     into.chamber(component, { node: a, area }, 'A', displacement * angle);
     into.chamber(component, { node: b, area: -area }, 'B', displacement * angle);
     into.pressureFriction(component, 0.1 * area);
-    into.assume({ component: component.id, property: 'friction', value: '10 % of the torque', source: 'memory', note: 'common practice, from memory' });
+    into.assume({
+      component: component.id,
+      property: 'friction',
+      value: '10 % of the torque',
+      source: 'memory',
+      note: 'common practice, from memory',
+    });
     addLeak(component, into, { node: a, port: 'A' }, { node: b, port: 'B' }, 5);
   },
 };

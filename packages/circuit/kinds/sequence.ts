@@ -19,7 +19,14 @@ export const sequence: Kind = {
   ],
   chain: { how: 'through', from: 'P', to: 'A' },
   properties: [
-    { name: 'set', shape: { form: 'quantity', dimensions: ['pressure'] }, required: true, default: '—', example: 'set 90 bar', about: 'Pressure at which it begins to open; fully open 10 % above.' },
+    {
+      name: 'set',
+      shape: { form: 'quantity', dimensions: ['pressure'] },
+      required: true,
+      default: '—',
+      example: 'set 90 bar',
+      about: 'Pressure at which it begins to open; fully open 10 % above.',
+    },
     {
       name: 'reverse',
       shape: { form: 'word', words: ['check'] },
@@ -72,7 +79,8 @@ export const sequence: Kind = {
     if (y === undefined) return into.cannot(component, `${component.id} has its drain Y not joined`);
     const x = external ? into.node(component, 'X') : p;
     if (x === undefined) return into.cannot(component, `${component.id} has an external pilot but X is not joined`);
-    if (has(component, 'reverse') && !crackFits(component, REVERSE_CRACK)) return into.cannot(component, `${component.id} \`passes\` at less than the crack of its reverse check`);
+    if (has(component, 'reverse') && !crackFits(component, REVERSE_CRACK))
+      return into.cannot(component, `${component.id} \`passes\` at less than the crack of its reverse check`);
     const parameter = into.parameter(component, 'set', toMPa(set));
     const element = into.add(
       component,

@@ -16,7 +16,15 @@ export const shutoff: Kind = {
   chain: { how: 'through', from: 'A', to: 'B' },
   properties: [
     { name: 'open', shape: { form: 'flag' }, required: false, group: 'position', default: '—', example: 'open', about: 'Stands open.' },
-    { name: 'closed', shape: { form: 'flag' }, required: false, group: 'position', default: '—', example: 'closed', about: 'Stands closed.' },
+    {
+      name: 'closed',
+      shape: { form: 'flag' },
+      required: false,
+      group: 'position',
+      default: '—',
+      example: 'closed',
+      about: 'Stands closed.',
+    },
     { name: 'locked', shape: { form: 'flag' }, required: false, default: '—', example: 'locked', about: 'Secured in its position.' },
     {
       name: 'passes',
@@ -36,7 +44,12 @@ export const shutoff: Kind = {
     into.onSetting((setting, put) => put(open, setting.contrary?.includes(component.id) === true ? 1 - declared : declared));
     const a = { node: into.nodeOrBlind(component, 'A'), port: 'A' };
     const b = { node: into.nodeOrBlind(component, 'B'), port: 'B' };
-    const element = into.add(component, { type: 'path', a: a.node, b: b.node, k: pathK(passesOf(component, into)), opening: open }, ['A', 'B'], 'A to B');
+    const element = into.add(
+      component,
+      { type: 'path', a: a.node, b: b.node, k: pathK(passesOf(component, into)), opening: open },
+      ['A', 'B'],
+      'A to B',
+    );
     if (declared === 0) addLeak(component, into, a, b, SEAT_LEAK);
     into.limitation({ component: component.id, words: `${component.id} passes`, targets: [{ element, size: 'k' }] });
   },

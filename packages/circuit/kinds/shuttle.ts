@@ -19,7 +19,13 @@ export const shuttle: Kind = {
   assemble(component, into) {
     into.add(
       component,
-      { type: 'shuttle', a: into.nodeOrBlind(component, 'A'), b: into.nodeOrBlind(component, 'B'), c: into.nodeOrBlind(component, 'C'), k: pathK(NO_LOSS) },
+      {
+        type: 'shuttle',
+        a: into.nodeOrBlind(component, 'A'),
+        b: into.nodeOrBlind(component, 'B'),
+        c: into.nodeOrBlind(component, 'C'),
+        k: pathK(NO_LOSS),
+      },
       ['A', 'B', 'C'],
       'A or B to C',
     );

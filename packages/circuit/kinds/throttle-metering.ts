@@ -22,7 +22,18 @@ export function addMetering(component: Component, into: Assembly, a: End, b: End
   const coil = coilOf(component, into);
   const orifice = si(component, 'orifice');
   if (orifice !== undefined) {
-    const element = into.add(component, { type: 'path', a: a.node, b: b.node, k: pathK(orificeAt(orifice, into.oil.density)) }, [a.port, b.port], 'in to out');
+    const element = into.add(
+      component,
+      {
+        type: 'path',
+        a: a.node,
+        b: b.node,
+        k: pathK(orificeAt(orifice, into.oil.density)),
+        opening: into.parameter(component, 'orifice', 1),
+      },
+      [a.port, b.port],
+      'in to out',
+    );
     return { component: id, words: `${id} orifice`, targets: [{ element, size: 'k' }] };
   }
   const passes = flowAt(component, 'passes');
@@ -43,7 +54,13 @@ export function addMetering(component: Component, into: Assembly, a: End, b: End
   if (set === undefined) return `${id} has none of \`set\`, \`orifice\`, \`passes\``;
   const needs = si(component, 'needs') ?? DEFAULT_NEEDS;
   if (si(component, 'needs') === undefined) {
-    into.assume({ component: id, property: 'needs', value: '6 bar', source: 'default', note: 'drop at which the setting holds: common practice, no source' });
+    into.assume({
+      component: id,
+      property: 'needs',
+      value: '6 bar',
+      source: 'default',
+      note: 'drop at which the setting holds: common practice, no source',
+    });
   }
   const t = into.node(component, 'T');
   if (!has(component, 'compensated') && t === undefined) {
@@ -61,7 +78,12 @@ export function addMetering(component: Component, into: Assembly, a: End, b: End
   const dense = 1 / Math.sqrt(into.oil.densityRatio);
   const parameter = settingParameter(component, into, coil, 'set', { lowest: 0, set }, (v) => Math.max(toLitresPerSecond(v) * dense, SHUT));
   if (t !== undefined) {
-    into.add(component, { type: 'bypassRegulator', a: a.node, b: b.node, t, set: parameter, needs: toMPa(needs) }, [a.port, b.port, 'T'], 'in to out');
+    into.add(
+      component,
+      { type: 'bypassRegulator', a: a.node, b: b.node, t, set: parameter, needs: toMPa(needs) },
+      [a.port, b.port, 'T'],
+      'in to out',
+    );
   } else {
     into.add(component, { type: 'regulator', a: a.node, b: b.node, set: parameter, needs: toMPa(needs) }, [a.port, b.port], 'in to out');
   }

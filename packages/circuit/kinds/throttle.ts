@@ -75,7 +75,8 @@ export const throttle: Kind = {
       many: true,
       default: '—',
       example: 'coil a SOL1, coil b SOL2 24 V',
-      about: 'Solenoid on the setting: command in % of it, or directly in its dimension. Dead coil = lowest setting. For a throttle dead is shut.',
+      about:
+        'Solenoid on the setting: command in % of it, or directly in its dimension. Dead coil = lowest setting. For a throttle dead is shut.',
     },
     {
       name: 'passes',
@@ -93,7 +94,8 @@ export const throttle: Kind = {
   assemble(component, into) {
     const a = { node: into.nodeOrBlind(component, 'in'), port: 'in' };
     const b = { node: into.nodeOrBlind(component, 'out'), port: 'out' };
-    if (has(component, 'reverse') && !crackFits(component, REVERSE_CRACK)) return into.cannot(component, `${component.id} \`passes\` at less than the crack of its reverse check`);
+    if (has(component, 'reverse') && !crackFits(component, REVERSE_CRACK))
+      return into.cannot(component, `${component.id} \`passes\` at less than the crack of its reverse check`);
     const metering = addMetering(component, into, a, b);
     if (typeof metering === 'string') return into.cannot(component, metering);
     if (has(component, 'reverse')) {

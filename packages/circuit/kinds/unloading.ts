@@ -18,7 +18,14 @@ export const unloading: Kind = {
   ],
   chain: { how: 'end', entry: 'P', exit: 'T' },
   properties: [
-    { name: 'set', shape: { form: 'quantity', dimensions: ['pressure'] }, required: true, default: '—', example: 'set 45 bar', about: 'Pilot pressure at which it begins to open; fully open (lifted) 10 % above.' },
+    {
+      name: 'set',
+      shape: { form: 'quantity', dimensions: ['pressure'] },
+      required: true,
+      default: '—',
+      example: 'set 45 bar',
+      about: 'Pilot pressure at which it begins to open; fully open (lifted) 10 % above.',
+    },
     {
       name: 'closes',
       shape: { form: 'quantity', dimensions: ['pressure'] },
@@ -28,7 +35,14 @@ export const unloading: Kind = {
       example: 'closes 38 bar',
       about: 'Pilot pressure at which a lifted valve has closed again; below `set`.',
     },
-    { name: 'passes', shape: { form: 'flowAt' }, required: true, default: '—', example: 'passes 80 L/min at 3 bar', about: 'Flow at pressure drop, fully open.' },
+    {
+      name: 'passes',
+      shape: { form: 'flowAt' },
+      required: true,
+      default: '—',
+      example: 'passes 80 L/min at 3 bar',
+      about: 'Flow at pressure drop, fully open.',
+    },
     ...hardware,
   ],
   groups: [],
@@ -36,7 +50,8 @@ export const unloading: Kind = {
   assemble(component, into) {
     const set = si(component, 'set');
     const passes = flowAt(component, 'passes');
-    if (set === undefined || passes === undefined) return into.cannot(component, `${component.id} has no \`${set === undefined ? 'set' : 'passes'}\``);
+    if (set === undefined || passes === undefined)
+      return into.cannot(component, `${component.id} has no \`${set === undefined ? 'set' : 'passes'}\``);
     const closes = siOr(component, into, 'closes', 0.9 * set, '90 % of set');
     if (closes >= set) return into.cannot(component, `${component.id} closes at or above its \`set\``);
     const p = into.nodeOrBlind(component, 'P');

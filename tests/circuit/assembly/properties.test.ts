@@ -5,14 +5,18 @@ import { expect, test } from 'vitest';
 import { HEAD_AND_FEED, LIFT, TWO_CYLINDERS } from '../support/machines.ts';
 import { blank, load, machineOf } from '../support/text.ts';
 
-const MACHINES: readonly { readonly machine: Machine; readonly valves: readonly string[]; readonly stroke: Readonly<Record<string, number>> }[] = [
+const MACHINES: readonly {
+  readonly machine: Machine;
+  readonly valves: readonly string[];
+  readonly stroke: Readonly<Record<string, number>>;
+}[] = [
   { machine: machineOf(HEAD_AND_FEED), valves: ['V2'], stroke: { C2: 0.32 } },
   { machine: machineOf(LIFT), valves: ['V1'], stroke: { C1: 1.2 } },
   { machine: machineOf(TWO_CYLINDERS), valves: ['V1'], stroke: { C1: 0.05, C2: 0.2 } },
 ];
 
 const settings = (index: number) => {
-  const { valves, stroke } = MACHINES[index] ?? { valves: [], stroke: {} };
+  const { valves, stroke } = MACHINES[index] as (typeof MACHINES)[number];
   return fc
     .record({
       stand: fc.constantFrom('a' as const, 'b' as const, 'centre' as const),
@@ -109,14 +113,18 @@ return V1.T, RV1 to R1`;
 test('metric and US text of one circuit give the same answer', () => {
   const [us, metric] = [machineOf(US + JOINED), machineOf(METRIC + JOINED)];
   fc.assert(
-    fc.property(fc.constantFrom('a' as const, 'b' as const, 'centre' as const), fc.double({ min: 0, max: 20000, noNaN: true }), (position, resist) => {
-      const setting = { ...blank, valves: { V1: { position } }, positions: { C1: 0.1 }, loads: { C1: load(0, resist, 100) } };
-      const [x, y] = [us.settle(setting), metric.settle(setting)];
-      for (const [net, p] of Object.entries(x.pressures)) {
-        expect(Math.abs(p - (y.pressures[net] ?? Number.NaN))).toBeLessThan(1e-12 * Math.max(2e7, Math.abs(p)));
-      }
-      expect(Math.abs((x.velocities['C1'] ?? 0) - (y.velocities['C1'] ?? 1))).toBeLessThan(1e-12);
-    }),
+    fc.property(
+      fc.constantFrom('a' as const, 'b' as const, 'centre' as const),
+      fc.double({ min: 0, max: 20000, noNaN: true }),
+      (position, resist) => {
+        const setting = { ...blank, valves: { V1: { position } }, positions: { C1: 0.1 }, loads: { C1: load(0, resist, 100) } };
+        const [x, y] = [us.settle(setting), metric.settle(setting)];
+        for (const [net, p] of Object.entries(x.pressures)) {
+          expect(Math.abs(p - (y.pressures[net] ?? Number.NaN))).toBeLessThan(1e-12 * Math.max(2e7, Math.abs(p)));
+        }
+        expect(Math.abs((x.velocities.C1 ?? 0) - (y.velocities.C1 ?? 1))).toBeLessThan(1e-12);
+      },
+    ),
     { numRuns: 20 },
   );
 });
@@ -147,7 +155,7 @@ test('a circuit with cap and rod side exchanged moves the other way', () => {
         const at = { ...blank, valves: { V1: { position } } };
         const s = one.settle({ ...at, positions: { C1: x }, loads: { C1: load(force) } });
         const m = other.settle({ ...at, positions: { C1: 0.4 - x }, loads: { C1: load(-force) } });
-        expect(Math.abs((s.velocities['C1'] ?? 0) + (m.velocities['C1'] ?? 1))).toBeLessThan(1e-9);
+        expect(Math.abs((s.velocities.C1 ?? 0) + (m.velocities.C1 ?? 1))).toBeLessThan(1e-9);
         expect(Math.abs((s.pressures['V1.A'] ?? 0) - (m.pressures['V1.A'] ?? -1e9))).toBeLessThan(1);
       },
     ),
@@ -156,17 +164,23 @@ test('a circuit with cap and rod side exchanged moves the other way', () => {
 });
 
 test('a higher relief setting never lowers the pressure, a larger flow setting never the speed', () => {
-  const circuit = (set: number, flow: number) => machineOf(HEAD_AND_FEED.replace('set 160 bar', `set ${set} bar`).replace('set 1.26 L/min', `set ${flow} L/min`));
-  const feed: Setting = { ...blank, valves: { V0: { position: 'b' }, V2: { position: 'a' } }, positions: { C2: 0.3 }, loads: { C2: load(0, 9000, 250) } };
+  const circuit = (set: number, flow: number) =>
+    machineOf(HEAD_AND_FEED.replace('set 160 bar', `set ${set} bar`).replace('set 1.26 L/min', `set ${flow} L/min`));
+  const feed: Setting = {
+    ...blank,
+    valves: { V0: { position: 'b' }, V2: { position: 'a' } },
+    positions: { C2: 0.3 },
+    loads: { C2: load(0, 9000, 250) },
+  };
   let before: Solution | undefined;
   for (const set of [60, 90, 120, 160, 200]) {
     const s = circuit(set, 1.26).settle(feed);
     if (before !== undefined) {
-      expect(s.pressures['pressure']).toBeGreaterThan(before.pressures['pressure'] ?? Number.NaN);
-      expect(s.velocities['C2']).toBeGreaterThanOrEqual((before.velocities['C2'] ?? Number.NaN) * (1 - 1e-6));
+      expect(s.pressures.pressure).toBeGreaterThan(before.pressures.pressure ?? Number.NaN);
+      expect(s.velocities.C2).toBeGreaterThanOrEqual((before.velocities.C2 ?? Number.NaN) * (1 - 1e-6));
     }
     before = s;
   }
-  const speeds = [0.3, 0.6, 1.26, 2.5, 5].map((flow) => circuit(160, flow).settle(feed).velocities['C2'] ?? 0);
+  const speeds = [0.3, 0.6, 1.26, 2.5, 5].map((flow) => circuit(160, flow).settle(feed).velocities.C2 ?? 0);
   expect([...speeds].sort((x, y) => x - y)).toEqual(speeds);
 });

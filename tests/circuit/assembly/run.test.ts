@@ -21,7 +21,7 @@ test('a cylinder goes out and back: time by flow over area, stop at the end, pre
   const out = run.advance(10, [{ what: 'position', body: 'C1', threshold: 0.2, edge: 'rising' }]);
   expect(out.failed).toBeUndefined();
   expect(out.fired).toEqual([0]);
-  expect(run.now().positions['C1']).toBeCloseTo(0.2, 6);
+  expect(run.now().positions.C1).toBeCloseTo(0.2, 6);
   // 30 L/min into the cap once the valve is over, and a little that the oil at 107 bar gives when it expands.
   const stroke = (0.2 * A) / (30 / 60000);
   expect(out.time).toBeGreaterThan(stroke + 0.035);
@@ -47,10 +47,10 @@ test('the valve is closed in the middle of its shift: all flow over the relief',
   run.advance(0.04, []);
   const middle = run.now();
   expect(middle.flows['V1.P']).toBeCloseTo(0, 8);
-  expect(middle.stands['V1']?.position).toBe('a');
+  expect(middle.stands.V1?.position).toBe('a');
   run.advance(0.2, []);
-  expect(run.now().stands['V1']?.position).toBe('b');
-  expect(run.now().velocities['C1']).toBeLessThan(-0.1);
+  expect(run.now().stands.V1?.position).toBe('b');
+  expect(run.now().velocities.C1).toBeLessThan(-0.1);
 });
 
 test('a pressure watch fires on the way', () => {
@@ -61,7 +61,7 @@ test('a pressure watch fires on the way', () => {
   const report = run.advance(10, [{ what: 'pressure', net: 'V1.A', threshold: 60e5, edge: 'rising' }]);
   expect(report.fired).toEqual([0]);
   expect(toBar(run.now().pressures['V1.A'])).toBeCloseTo(60, 3);
-  expect(run.now().positions['C1']).toBeCloseTo(0.3, 9);
+  expect(run.now().positions.C1).toBeCloseTo(0.3, 9);
 });
 
 test('an unloading valve lifts when the high-pressure pump has filled the store, and throttles when it is drawn down', () => {
@@ -82,7 +82,7 @@ return UV1, FC1.out, FC2.out to R1`);
   const up = run.advance(60, [{ what: 'pressure', net: 'store', threshold: 100e5, edge: 'rising' }]);
   expect(up.fired).toEqual([0]);
   expect(up.happened.at(-1)?.words).toBe('UV1 has lifted');
-  expect(run.now().bits['UV1']).toBe(true);
+  expect(run.now().bits.UV1).toBe(true);
   run.shift('V1', { position: 'a' });
   const down = run.advance(up.time + 60, [{ what: 'pressure', net: 'store', threshold: 75e5, edge: 'falling' }]);
   expect(down.fired).toEqual([0]);
@@ -92,24 +92,26 @@ return UV1, FC1.out, FC2.out to R1`);
   expect(Math.abs((down.time - up.time) / ((taken / 8) * 60) - 1)).toBeLessThan(0.03);
   // Lower down the valve throttles: the big pump makes up what is drawn, between `closes` and a band above it.
   run.advance(down.time + 20, []);
-  expect(toBar(run.now().pressures['store'])).toBeGreaterThan(70);
-  expect(toBar(run.now().pressures['store'])).toBeLessThan(75);
-  expect(run.now().openings['UV1']).toBeGreaterThan(0);
+  expect(toBar(run.now().pressures.store)).toBeGreaterThan(70);
+  expect(toBar(run.now().pressures.store)).toBeLessThan(75);
+  expect(run.now().openings.UV1).toBeGreaterThan(0);
 });
 
 test('a piloted valve waits for its pilot pressure and shifts when it comes', () => {
-  const m = machineOf(`${HEAD}${delivers('P1', 20, 'V2.P, V1.P, RV1')}
+  const m = machineOf(
+    `${HEAD}${delivers('P1', 20, 'V2.P, V1.P, RV1')}
 relief RV1 (set 100 bar, passes 40 L/min at 5 bar)
 directional V2 (2/2, normally open, coil a SOL2, passes 40 L/min at 1 bar)
 directional V1 (4/2, spring to b, internal pilot, needs 15 bar, coil a SOL1, passes 40 L/min at 5 bar, centre closed)
 cylinder C1 (bore 50 mm, rod 28 mm, stroke 300 mm, begins retracted)
 working V1.A to C1.cap
 working V1.B to C1.rod
-return V1.T, RV1, V2.A to R1`.replace(', centre closed', ''));
+return V1.T, RV1, V2.A to R1`.replace(', centre closed', ''),
+  );
   const asked = { ...blank, valves: { V1: { position: 'a' as const } } };
   const settled = m.settle(asked);
   expect(settled.remarks[0]?.words).toMatch(/^V1 cannot shift: 0\.\d of 15 bar$/);
-  expect(settled.stands['V1']?.position).toBe('b');
+  expect(settled.stands.V1?.position).toBe('b');
   const loaded = { ...blank, loads: { C1: load(0, 6000) } };
   const run = m.start(loaded, m.settle(loaded));
   run.shift('V1', { position: 'a' });
@@ -118,7 +120,7 @@ return V1.T, RV1, V2.A to R1`.replace(', centre closed', ''));
   run.shift('V2', { position: 'b' });
   const goes = run.advance(1.5, []);
   expect(goes.happened.map((h) => h.words)).toContain('V1 shifts to a');
-  expect(run.now().velocities['C1']).toBeGreaterThan(0);
+  expect(run.now().velocities.C1).toBeGreaterThan(0);
 });
 
 test('a proportional command is followed along its ramp', () => {
@@ -132,12 +134,12 @@ return V1.T, RV1 to R1`);
   const run = m.start(blank, m.settle(blank));
   run.shift('V1', { position: 'a', opening: 0.8 }, { over: 1 });
   run.advance(0.5, []);
-  expect((run.now().velocities['C1'] ?? 0) * A * 60000).toBeCloseTo(0.4 * 30, 1);
+  expect((run.now().velocities.C1 ?? 0) * A * 60000).toBeCloseTo(0.4 * 30, 1);
   run.advance(1.5, []);
-  expect((run.now().velocities['C1'] ?? 0) * A * 60000).toBeCloseTo(0.8 * 30, 1);
+  expect((run.now().velocities.C1 ?? 0) * A * 60000).toBeCloseTo(0.8 * 30, 1);
   run.shift('V1', { position: 'b', opening: 0.5 }, { over: 1.3 });
   run.advance(1.5 + 0.8, []);
-  expect(Math.abs(run.now().velocities['C1'] ?? 1)).toBeLessThan(1e-4);
+  expect(Math.abs(run.now().velocities.C1 ?? 1)).toBeLessThan(1e-4);
   run.advance(3, []);
-  expect(run.now().velocities['C1']).toBeLessThan(-0.1);
+  expect(run.now().velocities.C1).toBeLessThan(-0.1);
 });

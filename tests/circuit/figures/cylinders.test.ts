@@ -8,7 +8,7 @@ const CYLINDER = 'cylinder C1 (bore 63 mm, rod 36 mm, stroke 320 mm, attitude le
 test('10 cap 70, rod side 2 bar, seal 3: (70 x 3117.2 - 2 x 2099.4 - 3 x 3117.2)/10 = 20.47 kN', () => {
   const m = machineOf(`${HEAD}${CYLINDER}${holds('cap', 70, 1, 1, 'C1.cap')}${holds('rod', 2, 1, 1, 'C1.rod')}`);
   const s = m.solve({ ...blank, locked: ['C1'], positions: { C1: 0.1 } });
-  expect((s.forces['C1'] ?? 0) / 1e3).toBeCloseTo(20.47, 2);
+  expect((s.forces.C1 ?? 0) / 1e3).toBeCloseTo(20.47, 2);
 });
 
 test('11 seal friction 3 bar: bore 63 0.935 kN; bore 200 9.42 kN', () => {
@@ -24,7 +24,7 @@ throttle FC1 (set 1.26 L/min, compensated)
 working C1.rod to FC1 to R1`);
   const s = m.settle({ ...blank, positions: { C1: 0.1 }, loads: { C1: load(0, 9000, 250) } });
   // The core lets a floor of 0.6 cm3/min at 100 bar pass every element: a thousandth here.
-  expect(Math.abs((s.velocities['C1'] ?? 0) * 1e2 - 1)).toBeLessThan(2e-3);
+  expect(Math.abs((s.velocities.C1 ?? 0) * 1e2 - 1)).toBeLessThan(2e-3);
   expect(toBar(s.pressures['C1.rod'])).toBeCloseTo(189.1, 0);
 });
 
@@ -40,7 +40,7 @@ working C1.cap to BV1 to R1`).settle({ ...blank, positions: { C1: 0.6 }, loads: 
     positions: { C1: 0.6 },
     loads: { C1: load(weight, 0, 500) },
   });
-  expect(lifts.velocities['C1']).toBeGreaterThan(0.03);
+  expect(lifts.velocities.C1).toBeGreaterThan(0.03);
   expect(toBar(lifts.pressures['P1.P'])).toBeCloseTo(77.1, 0);
 });
 
@@ -55,11 +55,11 @@ test.each([
   const m = machineOf(`${HEAD}${TABLE}${holds('cap', cap, 30, 30 - (expected * 1347.7 * 60) / 1e6, 'C1.cap')}
 working C1.rod to R1`);
   const s = m.settle({ ...blank, positions: { C1: 0.4 - left / 1e3 } });
-  expect(Math.abs((s.velocities['C1'] ?? 0) * 1e3 - expected)).toBeLessThan(0.005 * expected);
+  expect(Math.abs((s.velocities.C1 ?? 0) * 1e3 - expected)).toBeLessThan(0.005 * expected);
 });
 
 test('38 spring 200 N to 600 N at a quarter of the stroke: 300 N inward', () => {
   const m = machineOf(`${HEAD}cylinder C1 (bore 40 mm, single cap, rod 18 mm, spring 200 N to 600 N, stroke 100 mm, seal 0 bar)
 working C1.cap to R1`);
-  expect(m.solve({ ...blank, locked: ['C1'], positions: { C1: 0.025 } }).forces['C1']).toBeCloseTo(-300, 3);
+  expect(m.solve({ ...blank, locked: ['C1'], positions: { C1: 0.025 } }).forces.C1).toBeCloseTo(-300, 3);
 });

@@ -50,16 +50,16 @@ const station = machineOf(STATION);
 test('39 both pumps at rest: P2 4.40 bar, P1 6.22 bar, 69.2 L/min over RV1', () => {
   const s = station.settle(clamped);
   expect(s.solved).toBe(true);
-  near(toBar(s.pressures['pressure']), 4.4, 2e-3);
+  near(toBar(s.pressures.pressure), 4.4, 2e-3);
   near(toBar(s.pressures['P1.P']), 6.22, 2e-3);
   near(-toLpm(s.flows['RV1.T']), 69.2, 1e-3);
 });
 
 test('40 fast out: 371 mm/s, P2 8.60, P1 10.41, cap 6.19, rod 3.51 bar', () => {
   const s = station.settle({ ...out, loads: { C2: load(0, 0, 250) } });
-  near((s.velocities['C2'] ?? 0) * 1e3, 371, 2e-3);
+  near((s.velocities.C2 ?? 0) * 1e3, 371, 2e-3);
   // Cap pressure by the balance of forces is (3.506 x 2099.4 + 2500 + 9351.7)/3117.2 = 6.163: the hand figures of cap and rod differ by 0.4 %.
-  near(toBar(s.pressures['pressure']), 8.6, 5e-3);
+  near(toBar(s.pressures.pressure), 8.6, 5e-3);
   near(toBar(s.pressures['P1.P']), 10.41, 5e-3);
   near(toBar(s.pressures['V2.A']), 6.19, 5e-3);
   near(toBar(s.pressures['C2.rod']), 3.51, 5e-3);
@@ -68,21 +68,21 @@ test('40 fast out: 371 mm/s, P2 8.60, P1 10.41, cap 6.19, rod 3.51 bar', () => {
 test('41 feed against 9 kN, then 0: 10.0 mm/s, P2 161.3, P1 1.58, rod 191.0 and 233.9 bar, shaft 3.56 kW, 9.2 L/min over RV1', () => {
   const feed = (resist: number) => station.settle({ ...out, positions: { C1: 0.06, C2: 0.28 }, loads: { C2: load(0, resist, 250) } });
   const s = feed(9000);
-  expect(s.bits['UV1']).toBe(true);
-  near((s.velocities['C2'] ?? 0) * 1e3, 10.0, 5e-3);
-  near(toBar(s.pressures['pressure']), 161.3, 1e-3);
+  expect(s.bits.UV1).toBe(true);
+  near((s.velocities.C2 ?? 0) * 1e3, 10.0, 5e-3);
+  near(toBar(s.pressures.pressure), 161.3, 1e-3);
   near(toBar(s.pressures['P1.P']), 1.58, 5e-3);
   near(toBar(s.pressures['C2.rod']), 191.0, 1e-3);
-  near((s.shaft['M1'] ?? 0) / 1e3, 3.56, 3e-3);
+  near((s.shaft.M1 ?? 0) / 1e3, 3.56, 3e-3);
   near(-toLpm(s.flows['RV1.T']), 9.2, 5e-3);
   near(toBar(feed(0).pressures['C2.rod']), 233.9, 1e-3);
 });
 
 test('42 cam valve 0.2 open: UV1 throttles at 0.014 open, not lifted; P2 40.05, P1 41.66 bar, 346 mm/s', () => {
   const s = station.settle({ ...out, positions: { C1: 0.06, C2: 0.262 }, loads: { C2: load(0, 0, 250) } });
-  expect(s.bits['UV1']).toBe(false);
-  expect(s.openings['UV1']).toBeCloseTo(0.014, 3);
-  near(toBar(s.pressures['pressure']), 40.05, 1e-3);
+  expect(s.bits.UV1).toBe(false);
+  expect(s.openings.UV1).toBeCloseTo(0.014, 3);
+  near(toBar(s.pressures.pressure), 40.05, 1e-3);
   near(toBar(s.pressures['P1.P']), 41.66, 1e-3);
-  near((s.velocities['C2'] ?? 0) * 1e3, 346, 2e-3);
+  near((s.velocities.C2 ?? 0) * 1e3, 346, 2e-3);
 });

@@ -16,8 +16,8 @@ plug HM1.L`);
   const s = m.settle({ ...blank, loads: { HM1: load(0, 920) } });
   expect(toBar(s.pressures['BV1.B'])).toBeCloseTo(32.11, 1);
   expect(toBar(s.pressures['P1.P'])).toBeCloseTo(40, 1);
-  expect(((s.velocities['HM1'] ?? 0) * 60) / (2 * Math.PI)).toBeCloseTo(19.7, 1);
-  expect(s.forces['HM1']).toBeCloseTo(920, 0);
+  expect(((s.velocities.HM1 ?? 0) * 60) / (2 * Math.PI)).toBeCloseTo(19.7, 1);
+  expect(s.forces.HM1).toBeCloseTo(920, 0);
 });
 
 test('27 brake 180 N.m, opens 20 bar, at 8 bar: holds 108 N.m at the motor shaft', () => {
@@ -26,7 +26,7 @@ brake BR1 (on HM1, opens 20 bar, torque 180 N.m)
 working HM1.A to R1
 working HM1.B to R1
 ${holds('br', 8, 1, 1, 'BR1')}`);
-  const turns = (torque: number) => Math.abs(m.settle({ ...blank, loads: { HM1: load(torque) } }).velocities['HM1'] ?? Number.NaN);
+  const turns = (torque: number) => Math.abs(m.settle({ ...blank, loads: { HM1: load(torque) } }).velocities.HM1 ?? Number.NaN);
   expect(turns(107)).toBeLessThan(1e-3);
   expect(turns(109)).toBeGreaterThan(0.01);
   expect(turns(-107)).toBeLessThan(1e-3);

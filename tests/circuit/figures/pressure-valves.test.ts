@@ -34,7 +34,7 @@ working SV1.A to RV1
 drain SV1.Y to R1
 return RV1 to R1`).settle(blank);
   expect(toBar(s.pressures['P1.P'])).toBeCloseTo(82.22, 1);
-  expect(s.openings['SV1']).toBeCloseTo(0.278, 2);
+  expect(s.openings.SV1).toBeCloseTo(0.278, 2);
 });
 
 const reducing = (rest: string) => `${HEAD}${holds('p', 160, 60, 40, 'PR1.P')}

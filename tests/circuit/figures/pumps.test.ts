@@ -14,8 +14,8 @@ working P1 to RV1
 return RV1 to R1`).settle(blank);
   expect(toBar(s.pressures['P1.P'])).toBeCloseTo(40, 2);
   expect(-toLpm(s.flows['P1.P'])).toBeCloseTo(57.34, 2);
-  expect((s.shaft['P1'] ?? 0) / 1e3).toBeCloseTo(4.203, 2);
-  expect(s.shaft['M1']).toBe(s.shaft['P1']);
+  expect((s.shaft.P1 ?? 0) / 1e3).toBeCloseTo(4.203, 2);
+  expect(s.shaft.M1).toBe(s.shaft.P1);
 });
 
 test('8 compensator 140 bar at 137 bar: (140 - 137)/4.2 of 81.2 = 58.0 L/min', () => {

@@ -65,17 +65,26 @@ test('the equation form above the table meets it at 20 and the printed range at 
 
 test('grade and index give the index back', () => {
   fc.assert(
-    fc.property(fc.constantFrom(15, 22, 32, 46, 68, 100, 150, 220, 320, 460, 680, 1000), fc.integer({ min: 0, max: 220 }), (grade, index) => {
-      const back = viscosityIndex(grade, viscosityAt100(grade, index));
-      expect(Math.abs((back ?? Number.NaN) - index)).toBeLessThan(0.01);
-    }),
+    fc.property(
+      fc.constantFrom(15, 22, 32, 46, 68, 100, 150, 220, 320, 460, 680, 1000),
+      fc.integer({ min: 0, max: 220 }),
+      (grade, index) => {
+        const back = viscosityIndex(grade, viscosityAt100(grade, index));
+        expect(Math.abs((back ?? Number.NaN) - index)).toBeLessThan(0.01);
+      },
+    ),
   );
 });
 
 test('viscosity falls with temperature, for every grade', () => {
   fc.assert(
-    fc.property(fc.constantFrom(2, 5, 10, 32, 68, 320), fc.integer({ min: 50, max: 160 }), fc.double({ min: 255, max: 390, noNaN: true }), (grade, index, t) => {
-      expect(viscosityOf(grade, index, t + 2)).toBeLessThan(viscosityOf(grade, index, t));
-    }),
+    fc.property(
+      fc.constantFrom(2, 5, 10, 32, 68, 320),
+      fc.integer({ min: 50, max: 160 }),
+      fc.double({ min: 255, max: 390, noNaN: true }),
+      (grade, index, t) => {
+        expect(viscosityOf(grade, index, t + 2)).toBeLessThan(viscosityOf(grade, index, t));
+      },
+    ),
   );
 });

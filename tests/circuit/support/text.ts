@@ -8,7 +8,8 @@ export function circuitOf(text: string): Circuit {
   if (errors.length > 0) throw new Error(errors.map((f) => f.what).join('\n'));
   return circuit;
 }
-export const machineOf = (text: string, temperature?: number): Machine => assemble(circuitOf(text), temperature === undefined ? {} : { temperature });
+export const machineOf = (text: string, temperature?: number): Machine =>
+  assemble(circuitOf(text), temperature === undefined ? {} : { temperature });
 
 /** Drives on, valves sprung, commands dead, no load, accumulators empty. */
 export const blank: Setting = { drives: {}, valves: {}, commands: {}, bits: {}, positions: {}, oil: {}, loads: {} };
