@@ -47,7 +47,7 @@ describe('colouring', () => {
     expect(scopeOf(text, 'cylinder')).toBe('storage.type.kind.oilway');
     expect(scopeOf(text, 'C1')).toBe('entity.name.type.component.oilway');
     expect(scopeOf(text, '1A2')).toBe('entity.name.type.component.oilway');
-    expect(scopeOf(text, 'bore')).toBe('support.type.property-name.oilway');
+    expect(scopeOf(text, 'bore')).toBe('support.variable.property.oilway');
     expect(scopeOf(text, '63')).toBe('constant.numeric.oilway');
     expect(scopeOf(text, 'mm')).toBe('keyword.other.unit.oilway');
     expect(scopeOf(text, 'down')).toBe('constant.language.oilway');

@@ -74,7 +74,7 @@ export function textmateGrammar() {
         endCaptures: { 1: { name: 'punctuation.section.brackets.end.oilway' } },
         patterns: [
           { include: '#comments' },
-          { match: `(?:(?<=[(,])|^)\\s*(${properties})${END}`, captures: { 1: { name: 'support.type.property-name.oilway' } } },
+          { match: `(?:(?<=[(,])|^)\\s*(${properties})${END}`, captures: { 1: { name: 'support.variable.property.oilway' } } },
           { include: '#brackets' },
           { name: 'constant.language.oilway', match: `${START}(?:${values})${END}` },
           { include: '#rest' },
