@@ -15,3 +15,4 @@ export { areasOf, beginsAt, portOfSingle } from './kinds/cylinder-areas.ts';
 export { type Positions, positionsOf, type Side, sideOfCoil } from './kinds/directional-positions.ts';
 export { ratedAt } from './kinds/read.ts';
 export { study, type StudyOptions } from './study/run-study.ts';
+export { type Explained, explain, type ExplainRequest } from './study/working/explain.ts';

@@ -1,25 +1,16 @@
 /** How much oil an accumulator holds at a pressure, and the pressure to which its net can charge it. */
+import { ATMOSPHERE } from '../fluid/density.ts';
+import { oilAt as chargedWith, prechargeAt } from '../fluid/gas.ts';
 import type { Component } from '../model/circuit.ts';
 import { si, valueOf } from './read.ts';
 import type { Plant } from './scene.ts';
 
-/** 1.01325 bar, Pa: standard atmosphere (ISO 2533). */
-export const ATMOSPHERE = 101325;
-
-/** Precharge at the fluid's temperature, Pa absolute: p0 (T / T given). Boyle and Charles, ideal gas. */
-export function prechargeAt(accumulator: Component, temperature: number): number | undefined {
-  const value = valueOf(accumulator, 'precharge');
-  if (value?.type !== 'precharge') return undefined;
-  return ((value.pressure.si + ATMOSPHERE) * temperature) / value.temperature.si;
-}
-
-/** Oil (m3) that an accumulator holds at a gauge pressure, filled isothermally: V0 (1 - p0/p). */
+/** Oil (m3) that an accumulator holds at a gauge pressure, filled isothermally: V0 (1 - p0/p), absolute, p0 at the fluid's temperature. */
 export function oilAt(accumulator: Component, pressure: number, temperature: number): number {
   const volume = si(accumulator, 'volume');
-  const p0 = prechargeAt(accumulator, temperature);
-  if (volume === undefined || p0 === undefined) return 0;
-  const p = pressure + ATMOSPHERE;
-  return p <= p0 ? 0 : volume * (1 - p0 / p);
+  const value = valueOf(accumulator, 'precharge');
+  if (volume === undefined || value?.type !== 'precharge') return 0;
+  return chargedWith(volume, prechargeAt(value.pressure.si, value.temperature.si, temperature), pressure + ATMOSPHERE, 1);
 }
 
 /** With no cycle to tell: the lowest of compensators, reliefs and switch thresholds on nets joined to the accumulator, Pa gauge. */

@@ -19,6 +19,8 @@ export interface Asked {
   readonly directions?: Readonly<Record<string, -1 | 0 | 1>>;
   /** Solve also with each wanted actuator held, and say what limits it. */
   readonly forces?: boolean;
+  /** Held solutions of earlier points by body: where the next one starts from. */
+  readonly held?: Map<string, Solution>;
 }
 
 export function pointOf(plant: Plant, setting: Setting, solution: Solution, asked: Asked): Point {
@@ -61,8 +63,9 @@ function actuatorPoints(plant: Plant, body: Body, setting: Setting, solution: So
   const atStop = stopAt(body, position, velocity, moving, solution);
   let available: number | undefined;
   if (asked.forces && wanted !== 0) {
-    const held = plant.machine.solve({ ...setting, locked: [...(setting.locked ?? []), body.id] }, solution);
+    const held = plant.machine.solve({ ...setting, locked: [...(setting.locked ?? []), body.id] }, asked.held?.get(body.id) ?? solution);
     const force = held.forces[body.id];
+    if (held.solved) asked.held?.set(body.id, held);
     if (held.solved && force !== undefined) available = force * wanted;
   }
   const stands = !moving && atStop === undefined && Math.abs(velocity) < CREEP;

@@ -149,13 +149,14 @@ function beforeStop(plant: Plant, trace: Trace, body: Body, shift: number, sampl
 
 function solveAll(plant: Plant, wanted: readonly Wanted[], directions: Readonly<Record<string, Direction>>): readonly Point[] {
   const points: Point[] = [];
+  const held = new Map<string, Solution>();
   let near: Solution | undefined;
   for (const one of wanted) {
     if (plant.cancelled()) break;
     const solution = plant.machine.settle(one.setting, near);
     near = solution.solved ? solution : near;
     const setting = { ...one.setting, bits: solution.bits };
-    const point = pointOf(plant, setting, solution, { label: one.label, directions, forces: true, ...(one.time === undefined ? {} : { time: Math.max(0, one.time) }) });
+    const point = pointOf(plant, setting, solution, { label: one.label, directions, forces: true, held, ...(one.time === undefined ? {} : { time: Math.max(0, one.time) }) });
     points.push({ ...left(point, one.sample), actuators: point.actuators.map((actuator) => begunOnly(plant, actuator, one.begun, one.label)) });
   }
   return points;
