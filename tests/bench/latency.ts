@@ -37,12 +37,18 @@ export function longCircuit(lines: number): string {
   return `${[...head, ...body].slice(0, lines).join('\n')}\n`;
 }
 
-const quantile = (values: readonly number[], share: number): number => [...values].sort((a, b) => a - b)[Math.min(values.length - 1, Math.floor(share * values.length))] ?? Number.NaN;
-const line = (name: string, values: readonly number[]): void => console.log(`${name.padEnd(42)} median ${quantile(values, 0.5).toFixed(1)} ms, p95 ${quantile(values, 0.95).toFixed(1)} ms (${values.length})`);
+const quantile = (values: readonly number[], share: number): number =>
+  [...values].sort((a, b) => a - b)[Math.min(values.length - 1, Math.floor(share * values.length))] ?? Number.NaN;
+const line = (name: string, values: readonly number[]): void =>
+  console.log(
+    `${name.padEnd(42)} median ${quantile(values, 0.5).toFixed(1)} ms, p95 ${quantile(values, 0.95).toFixed(1)} ms (${values.length})`,
+  );
 
 const folder = await bundleServer();
 const began = performance.now();
-const client = await Client.start(join(folder, 'server.cjs'), { initializationOptions: { settings: { compute: { enabled: process.argv.includes('--study') } } } });
+const client = await Client.start(join(folder, 'server.cjs'), {
+  initializationOptions: { settings: { compute: { enabled: process.argv.includes('--study') } } },
+});
 const uri = 'file:///bench/long.oilway';
 await client.open(uri, longCircuit(Number(process.argv.find((one) => /^\d+$/.test(one)) ?? 1000)));
 console.log(`start to first diagnostics                 ${(performance.now() - began).toFixed(0)} ms`);

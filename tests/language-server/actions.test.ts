@@ -23,7 +23,10 @@ const finding = (more: Partial<Finding> = {}): Finding => ({
   ...more,
 });
 const analysis = (findings: readonly Finding[]): Analysis => new Analysis({ uri: URI, version: 1, text: TEXT, findings, occurrences: [] });
-const context: DiagnosticContext = { range: (origin) => (origin.uri === URI ? analysis([]).lines.range(origin) : undefined), page: (code) => `oilway-rule:/${code}.md` };
+const context: DiagnosticContext = {
+  range: (origin) => (origin.uri === URI ? analysis([]).lines.range(origin) : undefined),
+  page: (code) => `oilway-rule:/${code}.md`,
+};
 
 describe('diagnostics', () => {
   test('all of a finding is told', () => {
@@ -34,7 +37,12 @@ describe('diagnostics', () => {
       codeDescription: { href: 'oilway-rule:/A01.md' },
       source: 'oilway',
       message: 'P1 has no relief\nNothing limits its pressure (ISO 4413).\nMend: Put a relief at P1.P.',
-      relatedInformation: [{ message: 'the nearest relief', location: { uri: URI, range: { start: { line: 1, character: 7 }, end: { line: 1, character: 10 } } } }],
+      relatedInformation: [
+        {
+          message: 'the nearest relief',
+          location: { uri: URI, range: { start: { line: 1, character: 7 }, end: { line: 1, character: 10 } } },
+        },
+      ],
       data: { code: 'A01', place: 'P1.P', state: 'REST', fixes: ['Insert a relief'] },
     });
   });
@@ -45,9 +53,12 @@ describe('diagnostics', () => {
 });
 
 describe('quick fixes', () => {
-  const ask = (findings: readonly Finding[], only?: readonly string[]) => codeActions(analysis(findings), { start: 6, end: 6, shown: [], ...(only ? { only } : {}) }, context);
+  const ask = (findings: readonly Finding[], only?: readonly string[]) =>
+    codeActions(analysis(findings), { start: 6, end: 6, shown: [], ...(only ? { only } : {}) }, context);
   test('at the finding, preferred where safe', () => {
-    expect(ask([finding()])).toMatchObject([{ title: 'Insert a relief', kind: 'quickfix', isPreferred: true, edit: { changes: { [URI]: [{ newText: '\nrelief RV2 ()' }] } } }]);
+    expect(ask([finding()])).toMatchObject([
+      { title: 'Insert a relief', kind: 'quickfix', isPreferred: true, edit: { changes: { [URI]: [{ newText: '\nrelief RV2 ()' }] } } },
+    ]);
     expect(ask([finding({ fixes: [{ title: 'Guess', safe: false, changes: [] }] })])[0]?.isPreferred).toBeUndefined();
   });
   test('none elsewhere, none of accepted findings', () => {
@@ -55,9 +66,16 @@ describe('quick fixes', () => {
     expect(ask([finding({ accepted: 'yes' })])).toEqual([]);
   });
   test('fix all: only where asked for, only safe ones, no two at the same characters', () => {
-    const other = finding({ place: 'P2', origin: { uri: URI, start: 1, end: 2 }, fixes: [{ title: 'Other', safe: true, changes: [{ uri: URI, start: 0, end: 4, text: 'drive' }] }] });
+    const other = finding({
+      place: 'P2',
+      origin: { uri: URI, start: 1, end: 2 },
+      fixes: [{ title: 'Other', safe: true, changes: [{ uri: URI, start: 0, end: 4, text: 'drive' }] }],
+    });
     const clash = finding({ place: 'P3', fixes: [{ title: 'Clash', safe: true, changes: [{ uri: URI, start: 2, end: 6, text: '' }] }] });
-    const unsafe = finding({ place: 'P4', fixes: [{ title: 'Unsafe', safe: false, changes: [{ uri: URI, start: 20, end: 21, text: '' }] }] });
+    const unsafe = finding({
+      place: 'P4',
+      fixes: [{ title: 'Unsafe', safe: false, changes: [{ uri: URI, start: 20, end: 21, text: '' }] }],
+    });
     expect(safeFixes([finding(), other, clash, unsafe]).fixes.map((fix) => fix.title)).toEqual(['Other', 'Insert a relief']);
     expect(ask([finding(), other], [FIX_ALL])).toMatchObject([{ kind: FIX_ALL, title: 'Apply all safe fixes (2)' }]);
     expect(ask([finding(), other]).some((action) => action.kind === FIX_ALL)).toBe(false);

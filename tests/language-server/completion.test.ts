@@ -23,7 +23,19 @@ function taken(marked: string, label: string): string {
 
 describe('at a line start', () => {
   test('kinds, lines, heads and snippets', () => {
-    expect(offered(`${BENCH}|`)).toEqual(expect.arrayContaining(['cylinder', 'pump', 'working', 'load', 'cycle', 'require', 'two-pump unit', 'accumulator block', 'clamp with reducing valve']));
+    expect(offered(`${BENCH}|`)).toEqual(
+      expect.arrayContaining([
+        'cylinder',
+        'pump',
+        'working',
+        'load',
+        'cycle',
+        'require',
+        'two-pump unit',
+        'accumulator block',
+        'clamp with reducing valve',
+      ]),
+    );
   });
   test('half a word is replaced', () => {
     expect(taken('cyl|', 'cylinder')).toBe('cylinder ');
@@ -142,9 +154,12 @@ describe('control', () => {
 });
 
 describe('quiet', () => {
-  test.each(['// cyl|', '/* pu| */', `${BENCH}circuit X "ta|ble"`, 'let a = 3 bar // |'])('nothing is offered in comments and texts: %s', (marked) => {
-    expect(offered(marked)).toEqual([]);
-  });
+  test.each(['// cyl|', '/* pu| */', `${BENCH}circuit X "ta|ble"`, 'let a = 3 bar // |'])(
+    'nothing is offered in comments and texts: %s',
+    (marked) => {
+      expect(offered(marked)).toEqual([]);
+    },
+  );
   test('without snippets in the client none are offered', () => {
     const labels = check(`${BENCH}|`, (analysis, cursor) => completionAt(analysis, cursor, { snippets: false })).map((one) => one.label);
     expect(labels).not.toContain('two-pump unit');

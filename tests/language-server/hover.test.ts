@@ -82,7 +82,8 @@ describe('figures', () => {
     const analysis = circuits.get('04-traverse-feed');
     if (!analysis) throw new Error('no circuit');
     const off = { actuators: false, steps: false, requirements: false, metering: false };
-    const labels = (on: object): string[] => inlayHints(analysis, { start: 0, end: analysis.text.length }, { ...off, ...on }).map((one) => String(one.label));
+    const labels = (on: object): string[] =>
+      inlayHints(analysis, { start: 0, end: analysis.text.length }, { ...off, ...on }).map((one) => String(one.label));
     expect(labels({})).toEqual([]);
     expect(labels({ metering: true })).toEqual(['meters 1A1 extending']);
     expect(labels({ steps: true })).toHaveLength(2);
@@ -118,7 +119,12 @@ describe('standing', () => {
 
 describe('metered motion', () => {
   const words = (line: string): string | undefined => {
-    const { circuit } = analyseText(BENCH.replace('working C1.rod to FC1 to V1.B', line).replace('working V1.A to C1.cap\n', line.includes('V1.A') ? '' : 'working V1.A to C1.cap\n'));
+    const { circuit } = analyseText(
+      BENCH.replace('working C1.rod to FC1 to V1.B', line).replace(
+        'working V1.A to C1.cap\n',
+        line.includes('V1.A') ? '' : 'working V1.A to C1.cap\n',
+      ),
+    );
     const throttle = circuit?.components.find((one) => one.id === 'FC1');
     const metering = circuit && throttle ? meteringOf(circuit, throttle) : undefined;
     return metering && `${metering.how}: ${metering.words}`;

@@ -14,7 +14,11 @@ function marked(text: string): string {
   return places.reduce((now, one) => `${now.slice(0, one.start)}«${now.slice(one.start, one.end)}»${now.slice(one.end)}`, plain);
 }
 /** Lines of a marked text that hold a mark. */
-const lines = (text: string): string[] => text.split('\n').filter((line) => line.includes('«')).map((line) => line.trim());
+const lines = (text: string): string[] =>
+  text
+    .split('\n')
+    .filter((line) => line.includes('«'))
+    .map((line) => line.trim());
 
 describe('references', () => {
   test('a component: declaration, line, load', () => {
@@ -34,22 +38,35 @@ describe('references', () => {
     ]);
   });
   test('a line and a constant', () => {
-    expect(lines(marked(`${BENCH.replace('working pressure:', 'working pr|essure:')}working pressure to G1\ngauge G1 (range 0 bar to 250 bar)`))).toEqual(['working «pressure»: P1 to RV1, V1.P', 'working «pressure» to G1']);
-    expect(lines(marked(BENCH.replace('set system', 'set sys|tem')))).toEqual(['let «system» = 120 bar', 'relief    RV1 (set «system», passes 20 L/min at 4 bar)']);
+    expect(
+      lines(marked(`${BENCH.replace('working pressure:', 'working pr|essure:')}working pressure to G1\ngauge G1 (range 0 bar to 250 bar)`)),
+    ).toEqual(['working «pressure»: P1 to RV1, V1.P', 'working «pressure» to G1']);
+    expect(lines(marked(BENCH.replace('set system', 'set sys|tem')))).toEqual([
+      'let «system» = 120 bar',
+      'relief    RV1 (set «system», passes 20 L/min at 4 bar)',
+    ]);
   });
   test('a step by its short and its long name', () => {
     const text = `${BENCH.replace('step Out', 'step O|ut')}require C1 speed in Out at least 20 mm/s\nrequire C1 force in Part.Out at least 1 kN`;
-    expect(lines(marked(text))).toEqual(['step «Out»  energise SOL1 until LS1 on, at most 8 s', 'require C1 speed in «Out» at least 20 mm/s', 'require C1 force in Part.«Out» at least 1 kN']);
+    expect(lines(marked(text))).toEqual([
+      'step «Out»  energise SOL1 until LS1 on, at most 8 s',
+      'require C1 speed in «Out» at least 20 mm/s',
+      'require C1 force in Part.«Out» at least 1 kN',
+    ]);
   });
 });
 
 describe('definition and highlights', () => {
   test('definition goes to the name', () => {
-    const found = check(BENCH.replace('until LS1', 'until L|S1'), (analysis, cursor) => definitionAt(analysis, cursor).map((one) => analysis.lines.position(one.start).line));
+    const found = check(BENCH.replace('until LS1', 'until L|S1'), (analysis, cursor) =>
+      definitionAt(analysis, cursor).map((one) => analysis.lines.position(one.start).line),
+    );
     expect(found).toEqual([BENCH.split('\n').findIndex((line) => line.includes('switch    LS1'))]);
   });
   test('the declaration is a write, uses are reads', () => {
-    const found = check(BENCH.replace('driven by M1', 'driven by M|1'), (analysis, cursor) => highlightsAt(analysis, cursor).map((one) => one.write));
+    const found = check(BENCH.replace('driven by M1', 'driven by M|1'), (analysis, cursor) =>
+      highlightsAt(analysis, cursor).map((one) => one.write),
+    );
     expect(found).toEqual([true, false]);
   });
   test('nothing at a word of the notation or a number', () => {
@@ -65,7 +82,9 @@ describe('rename', () => {
     check(marks, (analysis, cursor) => {
       const answer = renameAt(analysis, cursor, name);
       if (!answer.ok) return answer.problem;
-      return [...answer.value].sort((a, b) => b.start - a.start).reduce((text, one) => text.slice(0, one.start) + one.text + text.slice(one.end), analysis.text);
+      return [...answer.value]
+        .sort((a, b) => b.start - a.start)
+        .reduce((text, one) => text.slice(0, one.start) + one.text + text.slice(one.end), analysis.text);
     });
 
   test.each([
@@ -80,7 +99,9 @@ describe('rename', () => {
     const after = renamed(before.replace(mark.replace('|', ''), mark), name);
     expect(after).not.toMatch(gone);
     expect(after.replaceAll(new RegExp(`\\b${name}\\b`, 'g'), '#')).toBe(before.replaceAll(new RegExp(gone.source, 'g'), '#'));
-    expect(analyseText(after).findings.filter((one) => one.severity === 'error').length).toBe(analyseText(before).findings.filter((one) => one.severity === 'error').length);
+    expect(analyseText(after).findings.filter((one) => one.severity === 'error').length).toBe(
+      analyseText(before).findings.filter((one) => one.severity === 'error').length,
+    );
   });
   test('words of the notation, positions, ports cannot be new or old names', () => {
     const mark = BENCH.replace('cylinder  C1', 'cylinder  C|1');

@@ -7,7 +7,8 @@ import { selectionAt } from '../../packages/language/features/selection.ts';
 import { analyseText, BENCH, check } from './support/check.ts';
 
 describe('outline', () => {
-  const tree = (symbols: readonly DocumentSymbol[], depth = 0): string[] => symbols.flatMap((one) => [`${'  '.repeat(depth)}${one.name}: ${one.detail}`, ...tree(one.children ?? [], depth + 1)]);
+  const tree = (symbols: readonly DocumentSymbol[], depth = 0): string[] =>
+    symbols.flatMap((one) => [`${'  '.repeat(depth)}${one.name}: ${one.detail}`, ...tree(one.children ?? [], depth + 1)]);
 
   test('in text order, coils under their valve, steps under their cycle', () => {
     expect(tree(outline(analyseText(`${BENCH}require C1 speed in Out\n   at least 20 mm/s`)))).toMatchInlineSnapshot(`
@@ -38,8 +39,9 @@ describe('outline', () => {
       const check = (symbols: readonly DocumentSymbol[]): void => {
         for (const { range, selectionRange, name, children } of symbols) {
           expect(name.length).toBeGreaterThan(0);
-          const before = (a: { line: number; character: number }, b: { line: number; character: number }): boolean => a.line < b.line || (a.line === b.line && a.character <= b.character);
-          expect(before(range.start, selectionRange.start) && before(selectionRange.end, range.end), `${name} at ${cut}`).toBe(true);
+          const notAfter = (a: { line: number; character: number }, b: { line: number; character: number }): boolean =>
+            a.line < b.line || (a.line === b.line && a.character <= b.character);
+          expect(notAfter(range.start, selectionRange.start) && notAfter(selectionRange.end, range.end), `${name} at ${cut}`).toBe(true);
           check(children ?? []);
         }
       };
@@ -59,9 +61,16 @@ describe('outline', () => {
 });
 
 describe('folding', () => {
-  const folds = (text: string): string[] => foldingRanges(analyseText(text)).map((one) => `${one.startLine}-${one.endLine}${one.kind ? ` ${one.kind}` : ''}`).sort();
+  const folds = (text: string): string[] =>
+    foldingRanges(analyseText(text))
+      .map((one) => `${one.startLine}-${one.endLine}${one.kind ? ` ${one.kind}` : ''}`)
+      .sort();
   test('blocks of remarks, cycles, brackets over lines, regions', () => {
-    expect(folds('// a\n// b\ncircuit T\ncycle A {\n  step S for 1 s\n  step T for 1 s\n}\npump P1 (\n  displacement 8 cm3/rev,\n  driven by M1\n)\n/* x\n y */')).toEqual(['0-1 comment', '11-12 comment', '3-5', '7-9']);
+    expect(
+      folds(
+        '// a\n// b\ncircuit T\ncycle A {\n  step S for 1 s\n  step T for 1 s\n}\npump P1 (\n  displacement 8 cm3/rev,\n  driven by M1\n)\n/* x\n y */',
+      ),
+    ).toEqual(['0-1 comment', '11-12 comment', '3-5', '7-9']);
     expect(folds('// region Supply\npump P1 ()\n// endregion')).toEqual(['0-2 region']);
   });
   test('single lines and remarks behind statements do not fold', () => {

@@ -21,10 +21,19 @@ import { workJob } from '../../packages/language/server/study-job.ts';
 import { analyseText, BENCH, URI } from './support/check.ts';
 
 const samples = fileURLToPath(new URL('../../samples', import.meta.url));
-const texts = [BENCH, ...readdirSync(samples).filter((name) => name.endsWith('.oilway')).map((name) => readFileSync(join(samples, name), 'utf8'))];
+const texts = [
+  BENCH,
+  ...readdirSync(samples)
+    .filter((name) => name.endsWith('.oilway'))
+    .map((name) => readFileSync(join(samples, name), 'utf8')),
+];
 /** A study of the whole text: the broken one is shown with it as an editor does, older. */
 const bench = analyseText(BENCH);
-const study = bench.circuit && { study: workJob({ circuit: bench.circuit, texts: { [URI]: BENCH } }).study, circuit: bench.circuit, older: true };
+const study = bench.circuit && {
+  study: workJob({ circuit: bench.circuit, texts: { [URI]: BENCH } }).study,
+  circuit: bench.circuit,
+  older: true,
+};
 
 function inside(analysis: Analysis, start: number, end: number): void {
   expect(start).toBeGreaterThanOrEqual(0);
@@ -33,7 +42,10 @@ function inside(analysis: Analysis, start: number, end: number): void {
 }
 
 function everything(analysis: Analysis, offset: number): void {
-  const context: DiagnosticContext = { range: (origin) => (origin.uri === URI ? analysis.lines.range(origin) : undefined), page: () => undefined };
+  const context: DiagnosticContext = {
+    range: (origin) => (origin.uri === URI ? analysis.lines.range(origin) : undefined),
+    page: () => undefined,
+  };
   for (const finding of analysis.findings) {
     inside(analysis, finding.origin.start, finding.origin.end);
     toDiagnostic(finding, context);
@@ -45,7 +57,12 @@ function everything(analysis: Analysis, offset: number): void {
     expect(hover.markdown).not.toMatch(/NaN|undefined|\[object/);
   }
   for (const item of completionAt(analysis, offset, { snippets: true })) expect(item.label.length).toBeGreaterThan(0);
-  for (const origin of [...definitionAt(analysis, offset), ...referencesAt(analysis, offset, true), ...highlightsAt(analysis, offset).map((one) => one.origin)]) inside(analysis, origin.start, origin.end);
+  for (const origin of [
+    ...definitionAt(analysis, offset),
+    ...referencesAt(analysis, offset, true),
+    ...highlightsAt(analysis, offset).map((one) => one.origin),
+  ])
+    inside(analysis, origin.start, origin.end);
   const target = renameTarget(analysis, offset);
   if (target.ok) {
     inside(analysis, target.value.start, target.value.end);
@@ -71,21 +88,53 @@ test('texts cut off anywhere', () => {
       const cut = text.slice(0, Math.floor(share * text.length));
       const analysis = analyseText(cut, study);
       whole(analysis);
-      for (const offset of [0, cut.length, Math.max(0, cut.length - 1), Math.floor(cut.length / 2), cut.lastIndexOf('\n') + 1]) everything(analysis, offset);
+      for (const offset of [0, cut.length, Math.max(0, cut.length - 1), Math.floor(cut.length / 2), cut.lastIndexOf('\n') + 1])
+        everything(analysis, offset);
     }),
     { numRuns: 60 },
   );
 }, 120_000);
 
 test('texts with pieces of others and signs strewn in', () => {
-  const piece = fc.constantFrom('(', ')', '{', '}', ',', ':', '.', '"', '//', '/*', 'to', 'pump', 'step', 'until', '5', 'bar', '±', '?', '\n', '\r\n', '\u0000', '\uD800', 'é', 'require ', 'C1.', 'cylinder C9 (');
+  const piece = fc.constantFrom(
+    '(',
+    ')',
+    '{',
+    '}',
+    ',',
+    ':',
+    '.',
+    '"',
+    '//',
+    '/*',
+    'to',
+    'pump',
+    'step',
+    'until',
+    '5',
+    'bar',
+    '±',
+    '?',
+    '\n',
+    '\r\n',
+    '\u0000',
+    '\uD800',
+    'é',
+    'require ',
+    'C1.',
+    'cylinder C9 (',
+  );
   fc.assert(
-    fc.property(fc.array(fc.record({ at: fc.nat(BENCH.length), gone: fc.nat(8), put: piece }), { minLength: 1, maxLength: 8 }), fc.nat(BENCH.length), (strewn, place) => {
-      const text = strewn.reduce((now, { at, gone, put }) => now.slice(0, at) + put + now.slice(at + gone), BENCH);
-      const analysis = analyseText(text, study);
-      whole(analysis);
-      for (const offset of [place, ...strewn.map((one) => one.at)]) everything(analysis, Math.min(offset, text.length));
-    }),
+    fc.property(
+      fc.array(fc.record({ at: fc.nat(BENCH.length), gone: fc.nat(8), put: piece }), { minLength: 1, maxLength: 8 }),
+      fc.nat(BENCH.length),
+      (strewn, place) => {
+        const text = strewn.reduce((now, { at, gone, put }) => now.slice(0, at) + put + now.slice(at + gone), BENCH);
+        const analysis = analyseText(text, study);
+        whole(analysis);
+        for (const offset of [place, ...strewn.map((one) => one.at)]) everything(analysis, Math.min(offset, text.length));
+      },
+    ),
     { numRuns: 60 },
   );
 }, 120_000);

@@ -30,7 +30,13 @@ describe('over stdio', () => {
   test('says what it can do', () => {
     expect(client.capabilities).toMatchObject({
       serverInfo: { name: 'oilway' },
-      capabilities: { hoverProvider: true, renameProvider: { prepareProvider: true }, inlayHintProvider: true, documentFormattingProvider: true, completionProvider: {} },
+      capabilities: {
+        hoverProvider: true,
+        renameProvider: { prepareProvider: true },
+        inlayHintProvider: true,
+        documentFormattingProvider: true,
+        completionProvider: {},
+      },
     });
   });
 
@@ -56,14 +62,17 @@ describe('over stdio', () => {
     const { diagnostics } = await client.diagnostics(URI, (one) => one.version === version);
     const lines = new Set(diagnostics.filter((one) => one.severity === 1).map((one) => one.range.start.line));
     expect([...lines]).toEqual([client.at(URI, '|working V1.A to (').line]);
-    expect((await client.hover(URI, 'cylinder  C|1'))?.contents).toMatchObject({ value: expect.stringContaining('**C1** cylinder, Slide') });
+    expect((await client.hover(URI, 'cylinder  C|1'))?.contents).toMatchObject({
+      value: expect.stringContaining('**C1** cylinder, Slide'),
+    });
     const back = client.edit(URI, 'working V1.A to (\n', '');
     await client.diagnostics(URI, (one) => one.version === back);
   });
 
   test('a burst of keys ends with the findings of the last text', async () => {
     let version = 0;
-    for (const digit of ['2', '3', '4', '5']) version = client.edit(URI, /stroke \d+/.exec(client.text(URI))?.[0] ?? '', `stroke ${digit}00`);
+    for (const digit of ['2', '3', '4', '5'])
+      version = client.edit(URI, /stroke \d+/.exec(client.text(URI))?.[0] ?? '', `stroke ${digit}00`);
     expect((await client.diagnostics(URI, (one) => one.version === version)).version).toBe(version);
     const back = client.edit(URI, 'stroke 500', 'stroke 200');
     await client.diagnostics(URI, (one) => one.version === back);
@@ -102,9 +111,13 @@ describe('over stdio', () => {
     const tokens = await client.request<{ readonly data: readonly number[] }>('semanticTokens/full', URI);
     expect(tokens.data.length % 5).toBe(0);
     expect(tokens.data.length).toBeGreaterThan(100);
-    const [selection] = await client.request<{ readonly range: never }[]>('selectionRange', URI, { positions: [client.at(URI, 'bore 6|3')] });
+    const [selection] = await client.request<{ readonly range: never }[]>('selectionRange', URI, {
+      positions: [client.at(URI, 'bore 6|3')],
+    });
     expect(selection && client.slice(URI, selection.range)).toBe('63');
-    const help = await client.request<{ readonly signatures: { readonly label: string }[] }>('signatureHelp', URI, { position: client.at(URI, 'bore 63 mm,| rod') });
+    const help = await client.request<{ readonly signatures: { readonly label: string }[] }>('signatureHelp', URI, {
+      position: client.at(URI, 'bore 63 mm,| rod'),
+    });
     expect(help.signatures[0]?.label).toContain('cylinder (bore 63 mm, stroke 320 mm');
     const found = await client.connection.sendRequest<{ readonly name: string }[]>('workspace/symbol', { query: 'sol' });
     expect(found.map((one) => one.name)).toContain('SOL1');
@@ -118,7 +131,10 @@ describe('over stdio', () => {
     expect(edits.map((one) => one.range.start.line)).toContain(client.at(URI, '|cylinder C1').line);
     expect(client.applied(URI, { changes: { [URI]: edits } })).toContain('cylinder  C1 (bore 63 mm');
     const line = client.at(URI, '|throttle').line;
-    const elsewhere = await client.request<TextEdit[]>('rangeFormatting', URI, { options, range: { start: { line, character: 0 }, end: { line, character: 5 } } });
+    const elsewhere = await client.request<TextEdit[]>('rangeFormatting', URI, {
+      options,
+      range: { start: { line, character: 0 }, end: { line, character: 5 } },
+    });
     expect(elsewhere.filter((one) => one.range.start.line !== line)).toEqual([]);
     const back = client.edit(URI, 'cylinder C1   ( bore', 'cylinder  C1 (bore');
     await client.diagnostics(URI, (one) => one.version === back);
@@ -138,10 +154,14 @@ describe('over stdio', () => {
       const found = diagnostics.find((one) => one.code === 'REQUIREMENT');
       expect(found?.message).toContain('Requirement missed');
       expect(found && client.slice(uri, found.range)).toContain('require');
-      expect((await client.hover(uri, 'cylinder  1A|1'))?.contents).toMatchObject({ value: expect.stringMatching(/\| Out extending \|.*mm\/s/) });
+      expect((await client.hover(uri, 'cylinder  1A|1'))?.contents).toMatchObject({
+        value: expect.stringMatching(/\| Out extending \|.*mm\/s/),
+      });
       expect(client.studied.filter((one) => one.uri === uri)).toHaveLength(1);
       expect(client.hintRefreshes).toBeGreaterThan(0);
-      expect((await client.hints(uri)).map((one) => String(one.label))).toEqual(expect.arrayContaining([expect.stringMatching(/^out .* mm\/s/), expect.stringMatching(/ s, peak .* bar$/)]));
+      expect((await client.hints(uri)).map((one) => String(one.label))).toEqual(
+        expect.arrayContaining([expect.stringMatching(/^out .* mm\/s/), expect.stringMatching(/ s, peak .* bar$/)]),
+      );
     });
 
     test('a changed setting changes the computed finding', async () => {
@@ -152,7 +172,11 @@ describe('over stdio', () => {
     });
 
     test('views get circuit, study and findings as they are', async () => {
-      const reply = await client.connection.sendRequest<{ readonly version: number; readonly older: boolean; readonly study: { readonly steps: readonly { readonly id: string }[] } | null }>('oilway/study', { uri });
+      const reply = await client.connection.sendRequest<{
+        readonly version: number;
+        readonly older: boolean;
+        readonly study: { readonly steps: readonly { readonly id: string }[] } | null;
+      }>('oilway/study', { uri });
       expect(reply.version).toBe(2);
       expect(reply.study?.steps.map((one) => one.id)).toEqual(['Bore.Out', 'Bore.Back']);
       expect(await client.connection.sendRequest('oilway/rulePage', { code: 'A01' })).toContain('# A01');
@@ -161,7 +185,9 @@ describe('over stdio', () => {
 
     test('switched off nothing is computed; on again it is', async () => {
       let since = client.published.length;
-      void client.connection.sendNotification('workspace/didChangeConfiguration', { settings: { oilway: { compute: { enabled: false } } } });
+      void client.connection.sendNotification('workspace/didChangeConfiguration', {
+        settings: { oilway: { compute: { enabled: false } } },
+      });
       await client.diagnostics(uri, () => true, since);
       expect((await client.hints(uri)).map((one) => String(one.label))).toEqual(['meters 1A1 extending']);
       since = client.published.length;
@@ -179,7 +205,16 @@ describe('over stdio', () => {
   });
 
   test('hostile texts are answered, none with an error of the tool itself', async () => {
-    const texts = ['', '\u0000\uD800 \uFEFF', '('.repeat(2000), 'circuit X\n'.repeat(200), `pump P1 (${'displacement 8 cm3/rev, '.repeat(500)})`, 'cycle A {'.repeat(600), BENCH.replaceAll('\n', '\r\n'), 'let a = 999999999999999999999999999 bar'];
+    const texts = [
+      '',
+      '\u0000\uD800 \uFEFF',
+      '('.repeat(2000),
+      'circuit X\n'.repeat(200),
+      `pump P1 (${'displacement 8 cm3/rev, '.repeat(500)})`,
+      'cycle A {'.repeat(600),
+      BENCH.replaceAll('\n', '\r\n'),
+      'let a = 999999999999999999999999999 bar',
+    ];
     for (const [index, text] of texts.entries()) {
       const { diagnostics } = await client.open(`file:///work/hostile${index}.oilway`, text);
       for (const one of diagnostics) expect(one.message).not.toMatch(/TypeError|RangeError|undefined|NaN|Cannot read|at Object/);

@@ -48,7 +48,17 @@ class Runner implements StudyRunner {
     this.cancel();
   }
   async answer(findings: readonly Finding[]): Promise<void> {
-    const study: Study = { uri: URI, states: [], steps: [], cycles: [], requirements: [], assumptions: [], heat: {}, spent: 0, notComputed: {} };
+    const study: Study = {
+      uri: URI,
+      states: [],
+      steps: [],
+      cycles: [],
+      requirements: [],
+      assumptions: [],
+      heat: {},
+      spent: 0,
+      notComputed: {},
+    };
     this.#resolve?.({ study, findings });
     this.#resolve = undefined;
     for (let i = 0; i < 5; i += 1) await Promise.resolve();
@@ -87,11 +97,31 @@ const computed = (text: string, word: string): Finding => ({
   fixes: [],
   computed: true,
 });
-const told = (findings: readonly Finding[]): string[] => findings.map((one) => `${one.code} ${one.origin.start}-${one.origin.end} ${one.what}`);
+const told = (findings: readonly Finding[]): string[] =>
+  findings.map((one) => `${one.code} ${one.origin.start}-${one.origin.end} ${one.what}`);
 
 describe('session', () => {
   test('after any edits the state is that of a fresh start', () => {
-    const words = ['C1', 'V1.A', ' to ', '(', ')', '{', '}', ',', '\n', 'bar', '12', 'pump P9 ()', '// x\n', '"', 'energise SOL1', 'step Z', ' ', ''];
+    const words = [
+      'C1',
+      'V1.A',
+      ' to ',
+      '(',
+      ')',
+      '{',
+      '}',
+      ',',
+      '\n',
+      'bar',
+      '12',
+      'pump P9 ()',
+      '// x\n',
+      '"',
+      'energise SOL1',
+      'step Z',
+      ' ',
+      '',
+    ];
     const edit = fc.record({ at: fc.nat(BENCH.length), gone: fc.nat(12), put: fc.constantFrom(...words) });
     fc.assert(
       fc.property(fc.array(edit, { minLength: 1, maxLength: 6 }), (edits) => {

@@ -2,7 +2,15 @@
 import { describe, expect, test } from 'vitest';
 import type { Circuit, Study } from '@oilway/circuit';
 import { StudyQueue, type QueuedStudy } from '../../packages/language/server/study-queue.ts';
-import { InlineRunner, WorkerRunner, type StudyAnswer, type StudyJob, type WorkerLike, type WorkerReply, type WorkerRequest } from '../../packages/language/server/study-runner.ts';
+import {
+  InlineRunner,
+  WorkerRunner,
+  type StudyAnswer,
+  type StudyJob,
+  type WorkerLike,
+  type WorkerReply,
+  type WorkerRequest,
+} from '../../packages/language/server/study-runner.ts';
 
 const job = (name: string): StudyJob => ({ circuit: { name } as unknown as Circuit, texts: {} });
 const answer = (name: string): StudyAnswer => ({ study: { uri: name } as unknown as Study, findings: [] });
@@ -135,7 +143,13 @@ test('in the own thread: an overtaken job is never begun', async () => {
 });
 
 describe('queue of documents', () => {
-  function queue(): { workers: Scripted[]; queue: StudyQueue; done: string[]; failed: string[]; study: (uri: string, empty?: boolean) => QueuedStudy } {
+  function queue(): {
+    workers: Scripted[];
+    queue: StudyQueue;
+    done: string[];
+    failed: string[];
+    study: (uri: string, empty?: boolean) => QueuedStudy;
+  } {
     const { workers, runner: run } = runner();
     const done: string[] = [];
     const failed: string[] = [];
@@ -144,7 +158,12 @@ describe('queue of documents', () => {
       queue: new StudyQueue(run, () => 0),
       done,
       failed,
-      study: (uri, empty = false) => ({ uri, job: () => (empty ? undefined : job(uri)), done: (one) => done.push(one.study.uri), failed: (reason) => failed.push(`${uri}: ${reason}`) }),
+      study: (uri, empty = false) => ({
+        uri,
+        job: () => (empty ? undefined : job(uri)),
+        done: (one) => done.push(one.study.uri),
+        failed: (reason) => failed.push(`${uri}: ${reason}`),
+      }),
     };
   }
 

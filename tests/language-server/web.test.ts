@@ -6,7 +6,10 @@ import { beforeAll, describe, expect, test } from 'vitest';
 import type { Diagnostic } from 'vscode-languageserver-types';
 import { bundleWeb } from './support/bundle.ts';
 
-const TEXT = readFileSync(fileURLToPath(new URL('../../samples/04-traverse-feed.oilway', import.meta.url)), 'utf8').replace('set 1.26 L/min', 'set 2.5 L/min');
+const TEXT = readFileSync(fileURLToPath(new URL('../../samples/04-traverse-feed.oilway', import.meta.url)), 'utf8').replace(
+  'set 1.26 L/min',
+  'set 2.5 L/min',
+);
 const URI = 'vscode-vfs://room/feed.oilway';
 
 interface Message {
@@ -78,7 +81,17 @@ class WebClient {
       }
     }
     const fetch = async (): Promise<object> => ({ ok: true, text: async () => scripts.study });
-    this.#server = room(scripts.server, (message) => cross(() => ({ data }) => this.#take(data as Message), message), { fetch, ...(allowsWorkers ? { Worker } : {}) });
+    this.#server = room(
+      scripts.server,
+      (message) =>
+        cross(
+          () =>
+            ({ data }) =>
+              this.#take(data as Message),
+          message,
+        ),
+      { fetch, ...(allowsWorkers ? { Worker } : {}) },
+    );
   }
 
   #take(message: Message): void {
@@ -108,14 +121,25 @@ describe.each([
 ])('%s', (_, allowsWorkers) => {
   test('opens, finds, computes, hovers', async () => {
     const client = new WebClient(allowsWorkers);
-    const answer = await client.ask(1, 'initialize', { processId: null, rootUri: null, capabilities: {}, initializationOptions: { studyWorker: 'https://room/study-worker.js' } });
+    const answer = await client.ask(1, 'initialize', {
+      processId: null,
+      rootUri: null,
+      capabilities: {},
+      initializationOptions: { studyWorker: 'https://room/study-worker.js' },
+    });
     expect(answer).toMatchObject({ serverInfo: { name: 'oilway' } });
     client.send('initialized', {});
     client.send('textDocument/didOpen', { textDocument: { uri: URI, languageId: 'oilway', version: 1, text: TEXT } });
-    const shown = await client.when((one) => one.method === 'textDocument/publishDiagnostics' && (one.params?.diagnostics ?? []).some((found) => found.code === 'REQUIREMENT'));
+    const shown = await client.when(
+      (one) =>
+        one.method === 'textDocument/publishDiagnostics' && (one.params?.diagnostics ?? []).some((found) => found.code === 'REQUIREMENT'),
+    );
     expect(shown.params?.uri).toBe(URI);
     const before = TEXT.slice(0, TEXT.indexOf('cylinder  1A1') + 'cylinder  1A'.length).split('\n');
-    const hover = await client.ask(2, 'textDocument/hover', { textDocument: { uri: URI }, position: { line: before.length - 1, character: before.at(-1)?.length ?? 0 } });
+    const hover = await client.ask(2, 'textDocument/hover', {
+      textDocument: { uri: URI },
+      position: { line: before.length - 1, character: before.at(-1)?.length ?? 0 },
+    });
     expect(hover).toMatchObject({ contents: { value: expect.stringContaining('| Out extending |') } });
     expect(client.workers).toBe(allowsWorkers ? 1 : 0);
     expect(client.seen.filter((one) => one.method === 'window/logMessage').map((one) => one.params?.message)).toEqual([]);

@@ -4,7 +4,19 @@ import type { Finding } from '@oilway/rules';
 import { Lines } from './text/lines.ts';
 import { scan, type Token } from './text/scan.ts';
 
-export type SymbolKind = 'circuit' | 'component' | 'coil' | 'line' | 'constant' | 'cycle' | 'step' | 'part' | 'assembly' | 'parameter' | 'port' | 'property';
+export type SymbolKind =
+  | 'circuit'
+  | 'component'
+  | 'coil'
+  | 'line'
+  | 'constant'
+  | 'cycle'
+  | 'step'
+  | 'part'
+  | 'assembly'
+  | 'parameter'
+  | 'port'
+  | 'property';
 
 /** One place where a name stands. */
 export interface Occurrence {

@@ -1,22 +1,13 @@
 /** Quick fixes of the findings at a range, and the one action that applies every safe fix of the file. */
-import { CodeActionKind, type CodeAction, type Diagnostic, type TextEdit, type WorkspaceEdit } from 'vscode-languageserver-types';
+import { CodeActionKind, type CodeAction, type Diagnostic } from 'vscode-languageserver-types';
 import type { TextChange } from '@oilway/circuit';
 import type { Finding, Fix } from '@oilway/rules';
 import type { Analysis } from './analysis.ts';
+import { workspaceEdit } from './edits.ts';
 import { sameFinding, toDiagnostic, type DiagnosticContext, type DiagnosticData } from './diagnostics.ts';
 
 /** All safe fixes of a file at once. */
 export const FIX_ALL = `${CodeActionKind.SourceFixAll}.oilway`;
-
-function toEdit(changes: readonly TextChange[], context: DiagnosticContext): WorkspaceEdit | undefined {
-  const byFile: Record<string, TextEdit[]> = {};
-  for (const change of changes) {
-    const range = context.range({ uri: change.uri, start: change.start, end: change.end });
-    if (!range) return undefined;
-    (byFile[change.uri] ??= []).push({ range, newText: change.text });
-  }
-  return { changes: byFile };
-}
 
 function overlaps(a: TextChange, b: TextChange): boolean {
   if (a.uri !== b.uri) return false;
@@ -32,7 +23,11 @@ export function safeFixes(findings: readonly Finding[]): { readonly fixes: reado
   for (const finding of ordered) {
     const fix = finding.fixes.find((one) => one.safe);
     if (!fix) continue;
-    const known = fix.changes.every((change) => changes.some((other) => other.uri === change.uri && other.start === change.start && other.end === change.end && other.text === change.text));
+    const known = fix.changes.every((change) =>
+      changes.some(
+        (other) => other.uri === change.uri && other.start === change.start && other.end === change.end && other.text === change.text,
+      ),
+    );
     if (known) continue;
     if (fix.changes.some((change) => changes.some((other) => overlaps(change, other)))) continue;
     fixes.push(fix);
@@ -61,16 +56,22 @@ export function codeActions(analysis: Analysis, question: CodeActionQuestion, co
       const own = toDiagnostic(finding, context);
       const diagnostics = shown.length > 0 ? shown : own ? [own] : [];
       finding.fixes.forEach((fix, index) => {
-        const edit = toEdit(fix.changes, context);
+        const edit = workspaceEdit(fix.changes, context);
         if (!edit) return;
-        actions.push({ title: fix.title, kind: CodeActionKind.QuickFix, diagnostics, edit, ...(index === 0 && fix.safe ? { isPreferred: true } : {}) });
+        actions.push({
+          title: fix.title,
+          kind: CodeActionKind.QuickFix,
+          diagnostics,
+          edit,
+          ...(index === 0 && fix.safe ? { isPreferred: true } : {}),
+        });
       });
     }
   }
   // Only where asked for: an editor that runs it on saving must not wait for it otherwise.
   if (wants(FIX_ALL) && question.only) {
     const { fixes, changes } = safeFixes(analysis.findings);
-    const edit = fixes.length > 0 ? toEdit(changes, context) : undefined;
+    const edit = fixes.length > 0 ? workspaceEdit(changes, context) : undefined;
     if (edit) actions.push({ title: `Apply all safe fixes (${fixes.length})`, kind: FIX_ALL, edit });
   }
   return actions;

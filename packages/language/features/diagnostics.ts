@@ -1,5 +1,11 @@
 /** A finding as an editor shows it: the one converter; nothing is decided here. */
-import { DiagnosticSeverity, DiagnosticTag, type Diagnostic, type DiagnosticRelatedInformation, type Range } from 'vscode-languageserver-types';
+import {
+  DiagnosticSeverity,
+  DiagnosticTag,
+  type Diagnostic,
+  type DiagnosticRelatedInformation,
+  type Range,
+} from 'vscode-languageserver-types';
 import type { Origin } from '@oilway/circuit';
 import type { Finding } from '@oilway/rules';
 
@@ -19,7 +25,11 @@ export interface DiagnosticData {
   readonly fixes: readonly string[];
 }
 
-const SEVERITY = { error: DiagnosticSeverity.Error, warning: DiagnosticSeverity.Warning, information: DiagnosticSeverity.Information } as const;
+const SEVERITY = {
+  error: DiagnosticSeverity.Error,
+  warning: DiagnosticSeverity.Warning,
+  information: DiagnosticSeverity.Information,
+} as const;
 
 /** Findings that say "this does nothing": shown faded. */
 const UNNECESSARY: ReadonlySet<string> = new Set(['UNUSED', 'ALLOW-UNUSED']);

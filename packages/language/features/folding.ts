@@ -9,7 +9,8 @@ export function foldingRanges(analysis: Analysis): FoldingRange[] {
   const regions: number[] = [];
   let comments: { first: number; last: number } | undefined;
   const endComments = (): void => {
-    if (comments && comments.last > comments.first) found.push({ startLine: comments.first, endLine: comments.last, kind: FoldingRangeKind.Comment });
+    if (comments && comments.last > comments.first)
+      found.push({ startLine: comments.first, endLine: comments.last, kind: FoldingRangeKind.Comment });
     comments = undefined;
   };
   let lastCodeLine = -1;

@@ -9,7 +9,9 @@ export function formatEdits(analysis: Analysis, formatted: string, range?: { rea
   // Formatting keeps lines: where it does not, the text is replaced as a whole.
   if (before.length !== after.length) {
     if (range) return [];
-    return analysis.text === formatted ? [] : [{ range: analysis.lines.range({ start: 0, end: analysis.text.length }), newText: formatted }];
+    return analysis.text === formatted
+      ? []
+      : [{ range: analysis.lines.range({ start: 0, end: analysis.text.length }), newText: formatted }];
   }
   const edits: TextEdit[] = [];
   for (let line = 0; line < before.length; line += 1) {

@@ -22,7 +22,11 @@ interface Hint {
   readonly tip?: string;
 }
 
-export function inlayHints(analysis: Analysis, range: { readonly start: number; readonly end: number }, settings: HintSettings = ALL_HINTS): InlayHint[] {
+export function inlayHints(
+  analysis: Analysis,
+  range: { readonly start: number; readonly end: number },
+  settings: HintSettings = ALL_HINTS,
+): InlayHint[] {
   const found: Hint[] = [];
   const add = (origin: Origin, label: string, tip?: string): void => {
     if (origin.uri !== analysis.uri || origin.end < range.start || origin.end > range.end || label === '') return;
@@ -43,14 +47,18 @@ export function inlayHints(analysis: Analysis, range: { readonly start: number; 
     const show = new Show(studied.circuit);
     if (settings.actuators) {
       const places = placesOf(studied);
-      for (const component of circuit.components) if (isActuator(component)) add(component.nameOrigin, prefix(age, actuatorHint(component, places, show)), tip);
+      for (const component of circuit.components)
+        if (isActuator(component)) add(component.nameOrigin, prefix(age, actuatorHint(component, places, show)), tip);
     }
     if (settings.steps) {
       for (const step of circuit.cycles.flatMap((cycle) => cycle.steps)) {
         const result = studied.study.steps.find((one) => one.id === step.id);
         if (!result) continue;
         const peak = extent(Object.values(result.peaks))?.high;
-        const parts = [result.time === undefined ? 'does not end' : show.figure(result.time, 'time'), peak === undefined ? '' : `peak ${show.figure(peak, 'pressure')}`];
+        const parts = [
+          result.time === undefined ? 'does not end' : show.figure(result.time, 'time'),
+          peak === undefined ? '' : `peak ${show.figure(peak, 'pressure')}`,
+        ];
         add(step.nameOrigin, prefix(age, parts.filter(Boolean).join(', ')), tip);
       }
     }
@@ -59,7 +67,10 @@ export function inlayHints(analysis: Analysis, range: { readonly start: number; 
         const result = resultOf(analysis, requirement);
         if (!result) continue;
         const worst = result.worst ? show.figure(result.worst.value, result.worst.dimension) : '';
-        const verdict = result.verdict === 'undecidable' ? 'cannot be decided' : [result.verdict, worst, marginText(result, show)].filter(Boolean).join(', ');
+        const verdict =
+          result.verdict === 'undecidable'
+            ? 'cannot be decided'
+            : [result.verdict, worst, marginText(result, show)].filter(Boolean).join(', ');
         add(requirement.origin, prefix(age, verdict), tip ?? result.words);
       }
     }
@@ -76,7 +87,8 @@ export function inlayHints(analysis: Analysis, range: { readonly start: number; 
 }
 
 const prefix = (age: string, text: string): string => (text === '' ? '' : `${age}${text}`);
-const isActuator = (component: Component): boolean => component.kind === 'cylinder' || component.kind === 'motor' || component.kind === 'rotary';
+const isActuator = (component: Component): boolean =>
+  component.kind === 'cylinder' || component.kind === 'motor' || component.kind === 'rotary';
 
 /** Greatest speed each way, greatest force pressed: `out 371 mm/s, in 112 mm/s, 17.3 kN`. */
 export function actuatorHint(component: Component, places: readonly Place[], show: Show): string {
@@ -84,10 +96,16 @@ export function actuatorHint(component: Component, places: readonly Place[], sho
   const rows = rowsOf(places, component.id);
   const names = component.kind === 'cylinder' ? (['in', 'out'] as const) : (['backward', 'forward'] as const);
   const speed = (direction: -1 | 1): string => {
-    const fastest = extent(rows.filter((row) => row.direction === direction).flatMap((row) => row.points.map((one) => Math.abs(one.at.velocity))))?.high;
-    return fastest === undefined || fastest <= STILL[units.speed] ? '' : `${names[direction < 0 ? 0 : 1]} ${show.figure(fastest, units.speed)}`;
+    const fastest = extent(
+      rows.filter((row) => row.direction === direction).flatMap((row) => row.points.map((one) => Math.abs(one.at.velocity))),
+    )?.high;
+    return fastest === undefined || fastest <= STILL[units.speed]
+      ? ''
+      : `${names[direction < 0 ? 0 : 1]} ${show.figure(fastest, units.speed)}`;
   };
   const stalled = rows.some((row) => (tightest(row)?.at.shortBy ?? 0) > 0);
   const force = extent(rows.flatMap((row) => row.points.map((one) => Math.abs(one.at.force))))?.high;
-  return [speed(1), speed(-1), force === undefined || force < 1 ? '' : show.figure(force, units.force), stalled ? 'stalls' : ''].filter(Boolean).join(', ');
+  return [speed(1), speed(-1), force === undefined || force < 1 ? '' : show.figure(force, units.force), stalled ? 'stalls' : '']
+    .filter(Boolean)
+    .join(', ');
 }

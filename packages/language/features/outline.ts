@@ -38,7 +38,14 @@ class Builder {
     this.#analysis = analysis;
   }
 
-  symbol(name: string, detail: string, kind: SymbolKind, origin: Origin, nameOrigin: Origin, children: DocumentSymbol[] = []): DocumentSymbol[] {
+  symbol(
+    name: string,
+    detail: string,
+    kind: SymbolKind,
+    origin: Origin,
+    nameOrigin: Origin,
+    children: DocumentSymbol[] = [],
+  ): DocumentSymbol[] {
     if (origin.uri !== this.#analysis.uri) return [];
     const { lines } = this.#analysis;
     // The name must lie inside the whole, or an editor refuses the list.
@@ -71,26 +78,49 @@ export function outline(analysis: Analysis): DocumentSymbol[] {
 
 function ofCircuit(circuit: Circuit, analysis: Analysis, build: Builder): DocumentSymbol[] {
   const all: DocumentSymbol[] = [];
-  for (const constant of circuit.constants) all.push(...build.symbol(constant.name, 'constant', SymbolKind.Constant, constant.origin, constant.nameOrigin));
+  for (const constant of circuit.constants)
+    all.push(...build.symbol(constant.name, 'constant', SymbolKind.Constant, constant.origin, constant.nameOrigin));
   for (const component of circuit.components) {
     const coils = circuit.coils
       .filter((coil) => coil.component === component.id)
       .flatMap((coil) => build.symbol(coil.id, coil.side ? `coil ${coil.side}` : 'coil', SymbolKind.Event, coil.origin, coil.origin));
     // Twins of one statement share its range: each is shown at its own name.
-    const twins = circuit.components.some((other) => other !== component && other.origin.start === component.origin.start && other.origin.uri === component.origin.uri);
+    const twins = circuit.components.some(
+      (other) => other !== component && other.origin.start === component.origin.start && other.origin.uri === component.origin.uri,
+    );
     all.push(
-      ...build.symbol(component.id, nounOf(component), ICON[component.kind] ?? SymbolKind.Field, twins ? component.nameOrigin : component.origin, component.nameOrigin, twins ? [] : coils),
+      ...build.symbol(
+        component.id,
+        nounOf(component),
+        ICON[component.kind] ?? SymbolKind.Field,
+        twins ? component.nameOrigin : component.origin,
+        component.nameOrigin,
+        twins ? [] : coils,
+      ),
     );
   }
   for (const line of circuit.lines) {
     if (line.name) all.push(...build.symbol(line.name, `${line.function} line`, SymbolKind.Interface, line.origin, line.origin));
   }
   for (const cycle of circuit.cycles) {
-    const steps = cycle.steps.flatMap((step) => build.symbol(step.name, step.beside ? 'meanwhile' : 'step', SymbolKind.Function, step.origin, step.nameOrigin));
-    all.push(...build.symbol(cycle.id, cycle.mode === 'manual' ? 'manual function' : 'cycle', SymbolKind.Namespace, cycle.origin, cycle.nameOrigin, steps));
+    const steps = cycle.steps.flatMap((step) =>
+      build.symbol(step.name, step.beside ? 'meanwhile' : 'step', SymbolKind.Function, step.origin, step.nameOrigin),
+    );
+    all.push(
+      ...build.symbol(
+        cycle.id,
+        cycle.mode === 'manual' ? 'manual function' : 'cycle',
+        SymbolKind.Namespace,
+        cycle.origin,
+        cycle.nameOrigin,
+        steps,
+      ),
+    );
   }
   for (const requirement of circuit.requirements) {
-    all.push(...build.symbol(requirementText(analysis, requirement), 'requirement', SymbolKind.Property, requirement.origin, requirement.origin));
+    all.push(
+      ...build.symbol(requirementText(analysis, requirement), 'requirement', SymbolKind.Property, requirement.origin, requirement.origin),
+    );
   }
   return all;
 }
@@ -101,7 +131,12 @@ export function workspaceSymbols(analysis: Analysis, query: string): SymbolInfor
   const walk = (symbols: readonly DocumentSymbol[], container: string): void => {
     for (const symbol of symbols) {
       if (matches(symbol.name, query)) {
-        found.push({ name: symbol.name, kind: symbol.kind, location: { uri: analysis.uri, range: symbol.selectionRange }, ...(container ? { containerName: container } : {}) });
+        found.push({
+          name: symbol.name,
+          kind: symbol.kind,
+          location: { uri: analysis.uri, range: symbol.selectionRange },
+          ...(container ? { containerName: container } : {}),
+        });
       }
       walk(symbol.children ?? [], symbol.name);
     }

@@ -11,21 +11,33 @@ const NAME = /^(?:[\p{L}_][\p{L}\p{N}_]*|[0-9]+[A-DF-Z]+[0-9]+)$/u;
 const FIXED: ReadonlySet<string> = new Set(['port', 'property']);
 
 /** Span that would be renamed, with the present name. */
-export function renameTarget(analysis: Analysis, offset: number): RenameAnswer<{ readonly start: number; readonly end: number; readonly name: string }> {
+export function renameTarget(
+  analysis: Analysis,
+  offset: number,
+): RenameAnswer<{ readonly start: number; readonly end: number; readonly name: string }> {
   const here = analysis.occurrenceAt(offset);
   if (!here) {
     const token = tokenAt(analysis.tokens, offset);
-    if (token?.type === 'word' && isLineHead(token.text)) return { ok: false, problem: `\`${token.text}\` is a word of the notation: it has no other name` };
+    if (token?.type === 'word' && isLineHead(token.text))
+      return { ok: false, problem: `\`${token.text}\` is a word of the notation: it has no other name` };
     return { ok: false, problem: 'Nothing here has a name that could be changed' };
   }
-  if (FIXED.has(here.kind)) return { ok: false, problem: `${analysis.text.slice(here.origin.start, here.origin.end)} is the name of a port: ISO 1219 gives it` };
-  return { ok: true, value: { start: here.origin.start, end: here.origin.end, name: analysis.text.slice(here.origin.start, here.origin.end) } };
+  if (FIXED.has(here.kind))
+    return { ok: false, problem: `${analysis.text.slice(here.origin.start, here.origin.end)} is the name of a port: ISO 1219 gives it` };
+  return {
+    ok: true,
+    value: { start: here.origin.start, end: here.origin.end, name: analysis.text.slice(here.origin.start, here.origin.end) },
+  };
 }
 
 export function renameAt(analysis: Analysis, offset: number, name: string): RenameAnswer<readonly TextChange[]> {
   const target = renameTarget(analysis, offset);
   if (!target.ok) return target;
-  if (!NAME.test(name)) return { ok: false, problem: `\`${name}\` is no name: a letter or _ first, then letters, digits, _ (or digits, capitals, digits: 1V1)` };
+  if (!NAME.test(name))
+    return {
+      ok: false,
+      problem: `\`${name}\` is no name: a letter or _ first, then letters, digits, _ (or digits, capitals, digits: 1V1)`,
+    };
   if (isNoName(name)) return { ok: false, problem: `\`${name}\` is a word of the notation and cannot be a name` };
   const places = sameAs(analysis, offset);
   const here = places[0];
@@ -46,5 +58,7 @@ export function renameAt(analysis: Analysis, offset: number, name: string): Rena
 function taker(analysis: Analysis, here: Occurrence, name: string): Occurrence | undefined {
   const scope = here.id.includes('.') ? here.id.slice(0, here.id.lastIndexOf('.') + 1) : '';
   const wanted = `${scope}${name}`;
-  return analysis.occurrences.find((one) => one.role === 'declaration' && one.id === wanted && one.symbol !== here.symbol && !FIXED.has(one.kind));
+  return analysis.occurrences.find(
+    (one) => one.role === 'declaration' && one.id === wanted && one.symbol !== here.symbol && !FIXED.has(one.kind),
+  );
 }

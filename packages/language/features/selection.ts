@@ -12,7 +12,8 @@ interface Span {
 export function selectionAt(analysis: Analysis, offset: number): SelectionRange {
   const spans: Span[] = [{ start: 0, end: analysis.text.length }];
   const tokens = analysis.tokens.filter((token) => token.type !== 'comment');
-  for (const block of brackets(tokens, '{', '}')) if (block.start <= offset && offset <= block.end) spans.push(block, { start: block.start + 1, end: block.end - 1 });
+  for (const block of brackets(tokens, '{', '}'))
+    if (block.start <= offset && offset <= block.end) spans.push(block, { start: block.start + 1, end: block.end - 1 });
   const statement = statementAt(analysis, tokens, offset);
   if (statement) spans.push(statement);
   for (const bracket of brackets(tokens, '(', ')')) {

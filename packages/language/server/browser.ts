@@ -5,7 +5,16 @@ import { languageAnalyser } from './language-analyser.ts';
 import type { InitializationOptions } from './protocol.ts';
 import { startServer } from './server.ts';
 import { workJob } from './study-job.ts';
-import { InlineRunner, WorkerRunner, type StudyAnswer, type StudyJob, type StudyRunner, type WorkerLike, type WorkerReply, type WorkerRequest } from './study-runner.ts';
+import {
+  InlineRunner,
+  WorkerRunner,
+  type StudyAnswer,
+  type StudyJob,
+  type StudyRunner,
+  type WorkerLike,
+  type WorkerReply,
+  type WorkerRequest,
+} from './study-runner.ts';
 
 interface WebWorker {
   onmessage: ((event: { readonly data: WorkerReply }) => void) | null;

@@ -39,6 +39,7 @@ export function editBetween(before: string, after: string): Edit | undefined {
   let start = 0;
   while (start < most && before.charCodeAt(start) === after.charCodeAt(start)) start += 1;
   let behind = 0;
-  while (behind < most - start && before.charCodeAt(before.length - 1 - behind) === after.charCodeAt(after.length - 1 - behind)) behind += 1;
+  while (behind < most - start && before.charCodeAt(before.length - 1 - behind) === after.charCodeAt(after.length - 1 - behind))
+    behind += 1;
   return { start, end: before.length - behind, length: after.length - behind - start };
 }

@@ -53,7 +53,8 @@ const host: Host = {
 /** With no transport named on the command line (`--stdio`, `--node-ipc`, `--socket`, `--pipe`) stdio is taken. */
 export function run(): void {
   const named = process.argv.some((one) => /^--(stdio|node-ipc|socket|pipe|clientProcessId)/.test(one));
-  const connection = named || process.send ? createConnection(ProposedFeatures.all) : createConnection(ProposedFeatures.all, process.stdin, process.stdout);
+  const connection =
+    named || process.send ? createConnection(ProposedFeatures.all) : createConnection(ProposedFeatures.all, process.stdin, process.stdout);
   startServer(connection, host, languageAnalyser());
 }
 

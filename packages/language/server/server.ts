@@ -1,44 +1,28 @@
-/** The server's side of the connection: every request is answered by a pure feature; here are only positions, capabilities and timing. */
+/** The server's side of the connection: hello, settings, documents and files, findings out. Requests are answered in requests.ts. */
 import {
   CodeActionKind,
   DidChangeConfigurationNotification,
-  ErrorCodes,
   FileChangeType,
-  ResponseError,
-  SemanticTokensRequest,
   TextDocuments,
   TextDocumentSyncKind,
   type Connection,
   type InitializeParams,
   type InitializeResult,
-  type Location,
   type Range,
-  type TextEdit,
-  type WorkspaceEdit,
 } from 'vscode-languageserver';
 import { TextDocument } from 'langium';
-import type { Origin, TextChange } from '@oilway/circuit';
+import type { Origin } from '@oilway/circuit';
 import type { Finding } from '@oilway/rules';
 import type { Analysis } from '../features/analysis.ts';
-import { codeActions, FIX_ALL } from '../features/code-actions.ts';
-import { completionAt } from '../features/completion/index.ts';
+import { FIX_ALL } from '../features/code-actions.ts';
 import { toDiagnostic, type DiagnosticContext } from '../features/diagnostics.ts';
-import { foldingRanges } from '../features/folding.ts';
-import { formatEdits } from '../features/format.ts';
-import { hoverAt } from '../features/hover/index.ts';
-import { inlayHints } from '../features/inlay-hints.ts';
-import { definitionAt, highlightsAt, referencesAt } from '../features/navigation.ts';
-import { outline, workspaceSymbols } from '../features/outline.ts';
-import { renameAt, renameTarget } from '../features/rename.ts';
-import { selectionAt } from '../features/selection.ts';
-import { semanticTokens, TOKEN_MODIFIERS, TOKEN_TYPES } from '../features/semantic-tokens.ts';
-import { signatureAt } from '../features/signature.ts';
+import { TOKEN_MODIFIERS, TOKEN_TYPES } from '../features/semantic-tokens.ts';
 import { Lines } from '../features/text/lines.ts';
-import { format } from '../format/format.ts';
 import type { Analyser } from './analyser.ts';
 import type { Host } from './host.ts';
-import { ReadDirectory, ReadFile, RulePage, Studied, StudyOf, type InitializationOptions, type StudyReply } from './protocol.ts';
-import { ruleList, rulePage } from './rules.ts';
+import { ReadDirectory, ReadFile, Studied, type InitializationOptions } from './protocol.ts';
+import { answerRequests } from './requests.ts';
+import { rulePage } from './rules.ts';
 import { Session } from './session.ts';
 import { DEFAULT_SETTINGS, readSettings, type Settings } from './settings.ts';
 
@@ -133,7 +117,8 @@ export function startServer(connection: Connection, host: Host, analyser: Analys
   });
 
   connection.onInitialized(() => {
-    if (client.workspace?.didChangeConfiguration?.dynamicRegistration) void connection.client.register(DidChangeConfigurationNotification.type, { section: SERVER_NAME });
+    if (client.workspace?.didChangeConfiguration?.dynamicRegistration)
+      void connection.client.register(DidChangeConfigurationNotification.type, { section: SERVER_NAME });
     if (client.workspace?.configuration) void askSettings();
     if (client.workspace?.workspaceFolders) {
       connection.workspace.onDidChangeWorkspaceFolders((event) => {
@@ -218,111 +203,13 @@ export function startServer(connection: Connection, host: Host, analyser: Analys
     }
   });
 
-  /** The document's analysis and the offset asked about, or nothing where it is not known. */
-  const at = (uri: string, position: { readonly line: number; readonly character: number }): { readonly analysis: Analysis; readonly offset: number } | undefined => {
-    const analysis = session?.analysis(uri);
-    return analysis ? { analysis, offset: analysis.lines.offset(position) } : undefined;
-  };
-  const locations = (origins: readonly Origin[], context: DiagnosticContext): Location[] =>
-    origins.flatMap((origin) => {
-      const range = context.range(origin);
-      return range ? [{ uri: origin.uri, range }] : [];
-    });
-  const workspaceEdit = (changes: readonly TextChange[], context: DiagnosticContext): WorkspaceEdit => {
-    const byFile: Record<string, TextEdit[]> = {};
-    for (const change of changes) {
-      const range = context.range(change);
-      if (range) (byFile[change.uri] ??= []).push({ range, newText: change.text });
-    }
-    return { changes: byFile };
-  };
-
-  connection.onHover(({ textDocument, position }) => {
-    const here = at(textDocument.uri, position);
-    const found = here && hoverAt(here.analysis, here.offset);
-    return found && here ? { contents: { kind: 'markdown', value: found.markdown }, range: here.analysis.lines.range(found) } : null;
+  answerRequests(connection, {
+    analysis: (uri) => session?.analysis(uri),
+    uris: () => session?.uris ?? [],
+    context: contextOf,
+    hints: () => (settings.hints.enabled ? settings.hints : undefined),
+    snippets: () => client.textDocument?.completion?.completionItem?.snippetSupport === true,
   });
-  connection.onCompletion(({ textDocument, position }) => {
-    const here = at(textDocument.uri, position);
-    if (!here) return [];
-    return completionAt(here.analysis, here.offset, { snippets: client.textDocument?.completion?.completionItem?.snippetSupport === true, rules: ruleList() });
-  });
-  connection.onSignatureHelp(({ textDocument, position }) => {
-    const here = at(textDocument.uri, position);
-    return (here && signatureAt(here.analysis, here.offset)) ?? null;
-  });
-  connection.onDefinition(({ textDocument, position }) => {
-    const here = at(textDocument.uri, position);
-    return here ? locations(definitionAt(here.analysis, here.offset), contextOf(here.analysis)) : [];
-  });
-  connection.onReferences(({ textDocument, position, context }) => {
-    const here = at(textDocument.uri, position);
-    return here ? locations(referencesAt(here.analysis, here.offset, context.includeDeclaration), contextOf(here.analysis)) : [];
-  });
-  connection.onDocumentHighlight(({ textDocument, position }) => {
-    const here = at(textDocument.uri, position);
-    return here ? highlightsAt(here.analysis, here.offset).map((one) => ({ range: here.analysis.lines.range(one.origin), kind: one.write ? 3 : 2 })) : [];
-  });
-  connection.onPrepareRename(({ textDocument, position }) => {
-    const here = at(textDocument.uri, position);
-    const target = here && renameTarget(here.analysis, here.offset);
-    if (!here || !target) return null;
-    if (!target.ok) return refuse(target.problem);
-    return { range: here.analysis.lines.range(target.value), placeholder: target.value.name };
-  });
-  connection.onRenameRequest(({ textDocument, position, newName }) => {
-    const here = at(textDocument.uri, position);
-    const answer = here && renameAt(here.analysis, here.offset, newName);
-    if (!here || !answer) return null;
-    return answer.ok ? workspaceEdit(answer.value, contextOf(here.analysis)) : refuse(answer.problem);
-  });
-  connection.onDocumentSymbol(({ textDocument }) => {
-    const analysis = session?.analysis(textDocument.uri);
-    return analysis ? outline(analysis) : [];
-  });
-  connection.onWorkspaceSymbol(({ query }) => (session?.uris ?? []).flatMap((uri) => {
-    const analysis = session?.analysis(uri);
-    return analysis ? workspaceSymbols(analysis, query) : [];
-  }));
-  connection.onFoldingRanges(({ textDocument }) => {
-    const analysis = session?.analysis(textDocument.uri);
-    return analysis ? foldingRanges(analysis) : [];
-  });
-  connection.onSelectionRanges(({ textDocument, positions }) => {
-    const analysis = session?.analysis(textDocument.uri);
-    return analysis ? positions.map((position) => selectionAt(analysis, analysis.lines.offset(position))) : [];
-  });
-  connection.onCodeAction(({ textDocument, range, context }) => {
-    const analysis = session?.analysis(textDocument.uri);
-    if (!analysis) return [];
-    return codeActions(
-      analysis,
-      { start: analysis.lines.offset(range.start), end: analysis.lines.offset(range.end), shown: context.diagnostics, ...(context.only ? { only: context.only } : {}) },
-      contextOf(analysis),
-    );
-  });
-  connection.languages.inlayHint.on(({ textDocument, range }) => {
-    const analysis = settings.hints.enabled ? session?.analysis(textDocument.uri) : undefined;
-    return analysis ? inlayHints(analysis, { start: analysis.lines.offset(range.start), end: analysis.lines.offset(range.end) }, settings.hints) : [];
-  });
-  connection.onDocumentFormatting(({ textDocument }) => {
-    const analysis = session?.analysis(textDocument.uri);
-    return analysis ? formatEdits(analysis, format(analysis.text)) : [];
-  });
-  connection.onDocumentRangeFormatting(({ textDocument, range }) => {
-    const analysis = session?.analysis(textDocument.uri);
-    return analysis ? formatEdits(analysis, format(analysis.text), { start: analysis.lines.offset(range.start), end: analysis.lines.offset(range.end) }) : [];
-  });
-  connection.onRequest(SemanticTokensRequest.type, ({ textDocument }) => {
-    const analysis = session?.analysis(textDocument.uri);
-    return analysis ? semanticTokens(analysis) : { data: [] };
-  });
-  connection.onRequest(StudyOf, ({ uri }): StudyReply | null => {
-    const analysis = session?.analysis(uri);
-    if (!analysis) return null;
-    return { version: analysis.version, circuit: analysis.circuit ?? null, study: analysis.studied?.study ?? null, older: analysis.studied?.older ?? false, findings: analysis.findings };
-  });
-  connection.onRequest(RulePage, ({ code }) => rulePage(code) ?? null);
 
   connection.onShutdown(() => {
     session?.dispose();
@@ -334,6 +221,3 @@ export function startServer(connection: Connection, host: Host, analyser: Analys
 
 /** As many circuits as a workspace is read for. */
 const MOST_FILES = 2000;
-
-/** A refusal that the editor shows as it is. */
-const refuse = (problem: string): ResponseError<void> => new ResponseError<void>(ErrorCodes.InvalidRequest, problem);

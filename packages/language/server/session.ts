@@ -209,7 +209,9 @@ export class Session {
           document.studied = { study: answer.study, circuit, findings: answer.findings, text: serial };
           // It may have ended between a key and the next resolution: its findings then follow the edit.
           const edit = editBetween(studiedText, document.text);
-          document.moved = answer.findings.filter((one) => one.computed).flatMap((one) => (edit ? (moveFinding(one, uri, edit) ?? []) : one));
+          document.moved = answer.findings
+            .filter((one) => one.computed)
+            .flatMap((one) => (edit ? (moveFinding(one, uri, edit) ?? []) : one));
           document.analysis = undefined;
           if (document.serial !== serial) return;
           this.#publish(document);

@@ -48,7 +48,8 @@ export function check<T>(marked: string, feature: (analysis: Analysis, cursor: n
 }
 
 /** Rows of `kind: text between the marks` as the document has them. */
-export const sliced = (analysis: Analysis, origins: readonly { readonly start: number; readonly end: number }[]): string[] => origins.map((one) => analysis.text.slice(one.start, one.end));
+export const sliced = (analysis: Analysis, origins: readonly { readonly start: number; readonly end: number }[]): string[] =>
+  origins.map((one) => analysis.text.slice(one.start, one.end));
 
 /** A circuit that the tests put lines into. */
 export const BENCH = `circuit Bench "Test bench"

@@ -1,7 +1,18 @@
 /** A plain client: starts the bundled server, speaks JSON-RPC over stdio, waits for diagnostics by document. No sleeps. */
 import { spawn, type ChildProcess } from 'node:child_process';
 import { createMessageConnection, StreamMessageReader, StreamMessageWriter, type MessageConnection } from 'vscode-jsonrpc/node';
-import type { CodeAction, CompletionItem, Diagnostic, Hover, InlayHint, Location, Position, Range, TextEdit, WorkspaceEdit } from 'vscode-languageserver-types';
+import type {
+  CodeAction,
+  CompletionItem,
+  Diagnostic,
+  Hover,
+  InlayHint,
+  Location,
+  Position,
+  Range,
+  TextEdit,
+  WorkspaceEdit,
+} from 'vscode-languageserver-types';
 
 export interface Published {
   readonly uri: string;
@@ -51,7 +62,10 @@ export class Client {
     connection.listen();
   }
 
-  static async start(server: string, options: { readonly initializationOptions?: unknown; readonly folders?: readonly string[] } = {}): Promise<Client> {
+  static async start(
+    server: string,
+    options: { readonly initializationOptions?: unknown; readonly folders?: readonly string[] } = {},
+  ): Promise<Client> {
     const child = spawn(process.execPath, [server, '--stdio'], { stdio: ['pipe', 'pipe', 'inherit'] });
     if (!child.stdout || !child.stdin) throw new Error('the server has no streams');
     const client = new Client(child, createMessageConnection(new StreamMessageReader(child.stdout), new StreamMessageWriter(child.stdin)));
@@ -62,7 +76,10 @@ export class Client {
       initializationOptions: options.initializationOptions ?? {},
       capabilities: {
         workspace: { inlayHint: { refreshSupport: true } },
-        textDocument: { completion: { completionItem: { snippetSupport: true } }, publishDiagnostics: { relatedInformation: true, versionSupport: true } },
+        textDocument: {
+          completion: { completionItem: { snippetSupport: true } },
+          publishDiagnostics: { relatedInformation: true, versionSupport: true },
+        },
       },
     });
     await client.connection.sendNotification('initialized', {});
@@ -104,7 +121,10 @@ export class Client {
     const range: Range = { start: this.position(uri, start), end: this.position(uri, start + from.length) };
     document.text = document.text.slice(0, start) + to + document.text.slice(start + from.length);
     document.version += 1;
-    void this.connection.sendNotification('textDocument/didChange', { textDocument: { uri, version: document.version }, contentChanges: [{ range, text: to }] });
+    void this.connection.sendNotification('textDocument/didChange', {
+      textDocument: { uri, version: document.version },
+      contentChanges: [{ range, text: to }],
+    });
     return document.version;
   }
 

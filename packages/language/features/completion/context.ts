@@ -28,14 +28,35 @@ export interface Cursor {
 const isFirstOnLine = (analysis: Analysis, tokens: readonly Token[], index: number): boolean => {
   const token = tokens[index];
   const previous = tokens[index - 1];
-  return token !== undefined && (previous === undefined || analysis.lines.lineOf(previous.end) < analysis.lines.lineOf(token.start) || previous.text === '{' || previous.text === '}');
+  return (
+    token !== undefined &&
+    (previous === undefined ||
+      analysis.lines.lineOf(previous.end) < analysis.lines.lineOf(token.start) ||
+      previous.text === '{' ||
+      previous.text === '}')
+  );
 };
 
 export function cursorAt(analysis: Analysis, offset: number): Cursor {
   const all = analysis.tokens;
-  const within = all.find((token) => token.start < offset && (offset < token.end || (offset === token.end && (token.type !== 'string' || !/^".*"$/.test(token.text)))));
-  const unclosed = within?.type === 'comment' ? !(within.text.startsWith('/*') && within.text.endsWith('*/') && offset === within.end) : within?.type === 'string';
-  const none: Cursor = { prefix: '', replace: { start: offset, end: offset }, block: 'file', before: [], after: [], afterNumber: false, owner: undefined, quiet: true };
+  const within = all.find(
+    (token) =>
+      token.start < offset && (offset < token.end || (offset === token.end && (token.type !== 'string' || !/^".*"$/.test(token.text)))),
+  );
+  const unclosed =
+    within?.type === 'comment'
+      ? !(within.text.startsWith('/*') && within.text.endsWith('*/') && offset === within.end)
+      : within?.type === 'string';
+  const none: Cursor = {
+    prefix: '',
+    replace: { start: offset, end: offset },
+    block: 'file',
+    before: [],
+    after: [],
+    afterNumber: false,
+    owner: undefined,
+    quiet: true,
+  };
   if (unclosed) return none;
 
   const tokens = all.filter((token) => token.type !== 'comment');
@@ -53,7 +74,8 @@ export function cursorAt(analysis: Analysis, offset: number): Cursor {
     const token = earlier[i];
     if (!token) continue;
     if (token.type === 'word' && isLineHead(token.text) && isFirstOnLine(analysis, earlier, i)) lastHead = token.text;
-    if (token.text === '{' && token.type === 'mark') blocks.push(lastHead === 'assembly' ? 'assembly' : lastHead === 'cycle' || lastHead === 'manual' ? 'cycle' : 'file');
+    if (token.text === '{' && token.type === 'mark')
+      blocks.push(lastHead === 'assembly' ? 'assembly' : lastHead === 'cycle' || lastHead === 'manual' ? 'cycle' : 'file');
     if (token.text === '}' && token.type === 'mark') blocks.pop();
   }
   const block = blocks.at(-1) ?? 'file';

@@ -49,7 +49,10 @@ const ACTIONS: readonly Proposal[] = [
 const CONDITION_VERBS: readonly Proposal[] = ['on', 'off', 'extended', 'retracted', 'at', 'above', 'below'].map((one) => word(one, '', 2));
 
 /** The last word of the statement that opens a part: what follows it decides what may stand here. */
-function lastOf(tokens: readonly Token[], words: readonly string[]): { readonly opener: string; readonly rest: readonly Token[] } | undefined {
+function lastOf(
+  tokens: readonly Token[],
+  words: readonly string[],
+): { readonly opener: string; readonly rest: readonly Token[] } | undefined {
   for (let i = tokens.length - 1; i >= 0; i -= 1) {
     const token = tokens[i];
     if (token?.type === 'word' && words.includes(token.text)) return { opener: token.text, rest: tokens.slice(i + 1) };
@@ -68,17 +71,26 @@ function condition(circuit: Circuit, rest: readonly Token[], follow: readonly Pr
   if (wantsName(rest, ['and', 'or', '('])) return conditionNames(circuit);
   const last = rest.at(-1);
   if (last && ['at', 'above', 'below'].includes(last.text)) return constants(circuit);
-  if (last && (['on', 'off', 'extended', 'retracted', ')'].includes(last.text) || last.type === 'unit')) return [word('and'), word('or'), ...follow];
+  if (last && (['on', 'off', 'extended', 'retracted', ')'].includes(last.text) || last.type === 'unit'))
+    return [word('and'), word('or'), ...follow];
   return isName(last) ? [...CONDITION_VERBS, word('and'), word('or'), ...follow] : [];
 }
 
-function actionParts(circuit: Circuit, found: { readonly opener: string; readonly rest: readonly Token[] }, follow: readonly Proposal[]): Proposal[] {
+function actionParts(
+  circuit: Circuit,
+  found: { readonly opener: string; readonly rest: readonly Token[] },
+  follow: readonly Proposal[],
+): Proposal[] {
   const { opener, rest } = found;
   const last = rest.at(-1);
   switch (opener) {
     case 'energise':
       if (wantsName(rest, [','])) return coils(circuit);
-      return isName(last) ? [word('at', 'command'), word('from', 'ramp'), word('over', 'ramp time'), ...follow] : last?.type === 'unit' ? [word('to'), word('over'), ...follow] : [];
+      return isName(last)
+        ? [word('at', 'command'), word('from', 'ramp'), word('over', 'ramp time'), ...follow]
+        : last?.type === 'unit'
+          ? [word('to'), word('over'), ...follow]
+          : [];
     case 'shift':
       if (wantsName(rest, [','])) return components(circuit, ['directional'], 1);
       if (last?.text === 'to') return ['a', 'b', 'centre'].map((one) => word(one, 'position', 1));
@@ -92,7 +104,12 @@ function actionParts(circuit: Circuit, found: { readonly opener: string; readonl
   }
 }
 
-const STEP_FOLLOW: readonly Proposal[] = [word('until', 'ends when'), word('for', 'lasts'), word('at most', 'time limit', 6), ...ACTIONS.map((one) => ({ ...one, rank: 7 }))];
+const STEP_FOLLOW: readonly Proposal[] = [
+  word('until', 'ends when'),
+  word('for', 'lasts'),
+  word('at most', 'time limit', 6),
+  ...ACTIONS.map((one) => ({ ...one, rank: 7 })),
+];
 
 export function step(circuit: Circuit, statement: readonly Token[]): Proposal[] {
   // "step" and its name.
@@ -107,7 +124,8 @@ export function step(circuit: Circuit, statement: readonly Token[]): Proposal[] 
     const limit: Proposal = word('at most', 'time limit', 4);
     return found.opener === 'until' || found.opener === 'for' ? [limit] : [...actionParts(circuit, found, []), limit];
   }
-  if (found.opener === 'until') return condition(circuit, found.rest, [{ ...word('at most', 'time limit', 6), label: ', at most', insert: ', at most ' }]);
+  if (found.opener === 'until')
+    return condition(circuit, found.rest, [{ ...word('at most', 'time limit', 6), label: ', at most', insert: ', at most ' }]);
   if (found.opener === 'for') return found.rest.at(-1)?.type === 'unit' ? [word('and until'), word('until')] : constants(circuit, ['time']);
   if (found.opener === 'most') return constants(circuit, ['time']);
   return actionParts(circuit, found, STEP_FOLLOW);
@@ -131,25 +149,49 @@ export function emergency(circuit: Circuit, statement: readonly Token[]): Propos
 
 export function requirement(circuit: Circuit, statement: readonly Token[]): Proposal[] {
   const inside = statement.slice(1);
-  if (inside.length === 0) return [word('never', 'a condition that must not come about', 2), ...components(circuit, undefined, 3), ...places(circuit).filter((one) => one.kind === CompletionItemKind.Interface), ...cycles(circuit, 3), ...steps(circuit, 4)];
+  if (inside.length === 0)
+    return [
+      word('never', 'a condition that must not come about', 2),
+      ...components(circuit, undefined, 3),
+      ...places(circuit).filter((one) => one.kind === CompletionItemKind.Interface),
+      ...cycles(circuit, 3),
+      ...steps(circuit, 4),
+    ];
   if (inside[0]?.text === 'never') return condition(circuit, inside.slice(1), []);
   const at = inside.findIndex((token) => token.text === 'still' || isMeasure(token.text));
   if (at < 0) {
     const subject = subjectOf(circuit, inside);
     const fitting = subject ? measuresOf(subject) : MEASURES;
-    const moves = !subject || (subject.is === 'component' && ['cylinder', 'motor', 'rotary'].includes(subject.component.kind) && subject.port === undefined);
+    const moves =
+      !subject ||
+      (subject.is === 'component' && ['cylinder', 'motor', 'rotary'].includes(subject.component.kind) && subject.port === undefined);
     return [...fitting.map((name) => word(name, MEASURE_ABOUT[name], 1)), ...(moves ? [word('still', 'no motion but leakage', 1)] : [])];
   }
   const rest = inside.slice(at + 1);
   const last = rest.at(-1);
   const bounds: Proposal[] = [word('at least', '', 2), word('at most', '', 2), word('between', '', 2), word('reaches', 'at some point', 2)];
-  const where: Proposal[] = [word('in', 'step, cycle or state', 1), word('from', 'range of the stroke', 3), word('extending', '', 3), word('retracting', '', 3)];
-  if (last?.text === 'in' || (last?.text === 'and' && rest.some((token) => token.text === 'in') && !rest.some((token) => token.text === 'between'))) return [...steps(circuit, 1), ...cycles(circuit, 2), ...STATES];
+  const where: Proposal[] = [
+    word('in', 'step, cycle or state', 1),
+    word('from', 'range of the stroke', 3),
+    word('extending', '', 3),
+    word('retracting', '', 3),
+  ];
+  if (
+    last?.text === 'in' ||
+    (last?.text === 'and' && rest.some((token) => token.text === 'in') && !rest.some((token) => token.text === 'between'))
+  )
+    return [...steps(circuit, 1), ...cycles(circuit, 2), ...STATES];
   if (last?.text === 'at') return [word('least'), word('most')];
   if (last && ['least', 'most', 'between', 'reaches', 'from', 'to', 'for', 'within'].includes(last.text)) return constants(circuit);
   const bounded = rest.some((token) => ['least', 'most', 'between', 'reaches'].includes(token.text));
-  if (bounded) return last?.type === 'unit' ? (rest.some((token) => token.text === 'between') && !rest.some((token) => token.text === 'and') ? [word('and')] : [word('for', 'held so long'), ...(rest.some((token) => token.text === 'reaches') ? [word('within')] : [])]) : [];
-  if (last?.type === 'unit' && rest.some((token) => token.text === 'from') && !rest.some((token) => token.text === 'to')) return [word('to', '', 1)];
+  if (bounded)
+    return last?.type === 'unit'
+      ? rest.some((token) => token.text === 'between') && !rest.some((token) => token.text === 'and')
+        ? [word('and')]
+        : [word('for', 'held so long'), ...(rest.some((token) => token.text === 'reaches') ? [word('within')] : [])]
+      : [];
+  if (last?.type === 'unit' && rest.some((token) => token.text === 'from') && !rest.some((token) => token.text === 'to'))
+    return [word('to', '', 1)];
   return [...where, ...(inside[at]?.text === 'still' ? [word('and', 'another place'), word('for', 'held so long')] : bounds)];
 }
 

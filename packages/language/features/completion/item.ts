@@ -19,7 +19,13 @@ export interface Proposal {
 
 export const word = (label: string, detail = '', rank = 5): Proposal => ({ label, kind: CompletionItemKind.Keyword, detail, rank });
 
-export function toItem(proposal: Proposal, order: number, analysis: Analysis, cursor: Cursor, snippets: boolean): CompletionItem | undefined {
+export function toItem(
+  proposal: Proposal,
+  order: number,
+  analysis: Analysis,
+  cursor: Cursor,
+  snippets: boolean,
+): CompletionItem | undefined {
   const text = proposal.insert ?? proposal.label;
   if (proposal.snippet && !snippets) return undefined;
   const rank = String(proposal.rank ?? 5).padStart(2, '0');

@@ -44,11 +44,21 @@ export function places(circuit: Circuit): Proposal[] {
     const ports = portsOf(component);
     if (ports.length === 0) continue;
     const open = ports.filter((port) => !joined.has(`${component.id}.${port.name}`) && port.required);
-    const detail = open.length > 0 && component.kind !== 'reservoir' ? `${describe(component)}, open: ${open.map((port) => port.name).join(', ')}` : describe(component);
+    const detail =
+      open.length > 0 && component.kind !== 'reservoir'
+        ? `${describe(component)}, open: ${open.map((port) => port.name).join(', ')}`
+        : describe(component);
     const rank = component.kind === 'reservoir' ? 2 : open.length > 0 ? 1 : 3;
-    found.push({ label: component.id, kind: CompletionItemKind.Variable, detail, rank, ...(writesPort(component) ? { insert: `${component.id}.`, again: true } : {}) });
+    found.push({
+      label: component.id,
+      kind: CompletionItemKind.Variable,
+      detail,
+      rank,
+      ...(writesPort(component) ? { insert: `${component.id}.`, again: true } : {}),
+    });
   }
-  for (const line of circuit.lines) if (line.name) found.push({ label: line.name, kind: CompletionItemKind.Interface, detail: `${line.function} line`, rank: 2 });
+  for (const line of circuit.lines)
+    if (line.name) found.push({ label: line.name, kind: CompletionItemKind.Interface, detail: `${line.function} line`, rank: 2 });
   return found;
 }
 
@@ -88,25 +98,46 @@ export function members(circuit: Circuit, owner: string): Proposal[] {
 export function coils(circuit: Circuit): Proposal[] {
   return circuit.coils.map((coil) => {
     const valve = circuit.components.find((one) => one.id === coil.component);
-    return { label: coil.id, kind: CompletionItemKind.Event, detail: `${coil.side ? `${coil.side} of ` : ''}${coil.component}${valve?.title ? `, ${valve.title}` : ''}`, rank: 1 };
+    return {
+      label: coil.id,
+      kind: CompletionItemKind.Event,
+      detail: `${coil.side ? `${coil.side} of ` : ''}${coil.component}${valve?.title ? `, ${valve.title}` : ''}`,
+      rank: 1,
+    };
   });
 }
 
 /** What a condition may ask about. */
 export function conditionNames(circuit: Circuit): Proposal[] {
-  return [...components(circuit, ['switch', 'sensor'], 1), ...components(circuit, ['cylinder', 'motor', 'rotary'], 2), ...coils(circuit).map((one) => ({ ...one, rank: 3 })), ...steps(circuit, 4), ...cycles(circuit, 4)];
+  return [
+    ...components(circuit, ['switch', 'sensor'], 1),
+    ...components(circuit, ['cylinder', 'motor', 'rotary'], 2),
+    ...coils(circuit).map((one) => ({ ...one, rank: 3 })),
+    ...steps(circuit, 4),
+    ...cycles(circuit, 4),
+  ];
 }
 
 export function steps(circuit: Circuit, rank = 2): Proposal[] {
   const names = new Map<string, number>();
   for (const cycle of circuit.cycles) for (const step of cycle.steps) names.set(step.name, (names.get(step.name) ?? 0) + 1);
   return circuit.cycles.flatMap((cycle) =>
-    cycle.steps.map((step) => ({ label: names.get(step.name) === 1 ? step.name : step.id, kind: CompletionItemKind.Function, detail: step.title ?? `step of ${cycle.id}`, rank })),
+    cycle.steps.map((step) => ({
+      label: names.get(step.name) === 1 ? step.name : step.id,
+      kind: CompletionItemKind.Function,
+      detail: step.title ?? `step of ${cycle.id}`,
+      rank,
+    })),
   );
 }
 
 export function cycles(circuit: Circuit, rank = 2): Proposal[] {
-  return circuit.cycles.map((cycle) => ({ label: cycle.id, kind: CompletionItemKind.Module, detail: cycle.title ?? (cycle.mode === 'manual' ? 'manual function' : 'cycle'), rank }));
+  return circuit.cycles.map((cycle) => ({
+    label: cycle.id,
+    kind: CompletionItemKind.Module,
+    detail: cycle.title ?? (cycle.mode === 'manual' ? 'manual function' : 'cycle'),
+    rank,
+  }));
 }
 
 export function constants(circuit: Circuit, dimensions: readonly string[] = []): Proposal[] {

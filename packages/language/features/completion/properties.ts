@@ -1,7 +1,17 @@
 /** Proposals inside brackets: properties of the kind, then what a property takes. */
 import { CompletionItemKind } from 'vscode-languageserver-types';
 import { unitsOf, type Dimension } from '@oilway/quantity';
-import { KINDS, KIND_NAMES, LIMITS_PROPERTIES, LINE_PROPERTIES, LOAD_PROPERTIES, type Circuit, type KindName, type PropertySpec, type Shape } from '@oilway/circuit';
+import {
+  KINDS,
+  KIND_NAMES,
+  LIMITS_PROPERTIES,
+  LINE_PROPERTIES,
+  LOAD_PROPERTIES,
+  type Circuit,
+  type KindName,
+  type PropertySpec,
+  type Shape,
+} from '@oilway/circuit';
 import type { Token } from '../text/scan.ts';
 import { LINE_FUNCTIONS } from '../../parse/words.ts';
 import type { BracketEntry } from './context.ts';
@@ -61,7 +71,10 @@ function dimensionsBefore(shape: Shape, entry: readonly Token[]): readonly Dimen
     case 'load': {
       const inTable = entry.at(1)?.text === '(';
       if (inTable) {
-        const cut = Math.max(entry.findLastIndex((token) => token.text === ','), entry.findLastIndex((token) => token.text === '('));
+        const cut = Math.max(
+          entry.findLastIndex((token) => token.text === ','),
+          entry.findLastIndex((token) => token.text === '('),
+        );
         return entry.slice(cut).some((token) => token.text === ':') ? ['force', 'torque'] : ['length', 'angle'];
       }
       return has('from') || has('to') ? ['length', 'angle'] : ['force', 'torque'];
@@ -95,7 +108,14 @@ export function propertyNames(table: readonly PropertySpec[], written: readonly 
       detail: spec.required ? `required, e.g. ${spec.example}` : `e.g. ${spec.example}`,
       about: propertyAbout(spec),
       insert: spec.shape.form === 'flag' ? spec.name : `${spec.name} `,
-      rank: spec.required && !taken.has(spec.name) ? 0 : spec.group && !groupTaken.has(spec.group) ? 1 : spec.name === 'code' || spec.name === 'elevation' ? 4 : 2,
+      rank:
+        spec.required && !taken.has(spec.name)
+          ? 0
+          : spec.group && !groupTaken.has(spec.group)
+            ? 1
+            : spec.name === 'code' || spec.name === 'elevation'
+              ? 4
+              : 2,
     }));
 }
 
@@ -131,14 +151,22 @@ export function propertyValues(circuit: Circuit | undefined, spec: PropertySpec,
       if (entry.length === 2) return actuators();
       return has('from') ? (afterValue && !has('to') ? [word('to')] : []) : [word('from')];
     case 'position': {
-      if (first) return [...(spec.name === 'centre' ? ['closed', 'open', 'tandem', 'float'].map((one) => word(one, 'all positions of this name', 1)) : []), { ...word('(', 'own paths', 2), insert: '(' }];
+      if (first)
+        return [
+          ...(spec.name === 'centre' ? ['closed', 'open', 'tandem', 'float'].map((one) => word(one, 'all positions of this name', 1)) : []),
+          { ...word('(', 'own paths', 2), insert: '(' },
+        ];
       const own = ownPorts(circuit, place);
       if (last === '(' || last === ',' || last === 'to') return own.map((port) => word(port, 'port', 1));
       if (own.includes(last)) return [word(entry.at(-2)?.text === 'to' ? 'passes' : 'to')];
       return afterValue && has('passes') && !has('at') ? [word('at')] : [];
     }
     case 'attitude':
-      return first ? [word('rod', 'rod up, rod down', 1), word('level', 'no weight along the rod', 1)] : last === 'rod' ? [word('up', 'weight acts inward', 1), word('down', 'weight acts outward', 1)] : [];
+      return first
+        ? [word('rod', 'rod up, rod down', 1), word('level', 'no weight along the rod', 1)]
+        : last === 'rod'
+          ? [word('up', 'weight acts inward', 1), word('down', 'weight acts outward', 1)]
+          : [];
     case 'bypass':
       return first ? [word('none', 'no bypass valve')] : [];
     case 'precharge':
@@ -153,7 +181,9 @@ export function propertyValues(circuit: Circuit | undefined, spec: PropertySpec,
     case 'span':
       return afterValue && !has('to') ? [word('to')] : values;
     case 'place':
-      return first ? (spec.name === 'begins' ? ['retracted', 'extended'] : ['a', 'b', 'centre', 'open', 'closed']).map((one) => word(one, '', 1)) : [];
+      return first
+        ? (spec.name === 'begins' ? ['retracted', 'extended'] : ['a', 'b', 'centre', 'open', 'closed']).map((one) => word(one, '', 1))
+        : [];
     case 'portQuantity':
       if (spec.name === 'velocity' && first) return LINE_FUNCTIONS.map((one) => word(one, 'lines of this function', 1));
       return first ? [...ownPorts(circuit, place).map((port) => word(port, 'for this port only', 3)), ...values] : afterValue ? [] : values;
@@ -163,7 +193,11 @@ export function propertyValues(circuit: Circuit | undefined, spec: PropertySpec,
       if (last === 'in') return circuit ? steps(circuit, 1) : [];
       if (first) return values;
       if (!afterValue && last !== ')') return values;
-      const words = [...span(), ...(has('extending') || has('retracting') ? [] : [word('extending'), word('retracting')]), ...(has('in') || spec.name === 'resist' ? [] : [word('in', 'only in a step')])];
+      const words = [
+        ...span(),
+        ...(has('extending') || has('retracting') ? [] : [word('extending'), word('retracting')]),
+        ...(has('in') || spec.name === 'resist' ? [] : [word('in', 'only in a step')]),
+      ];
       return spec.name === 'resist' ? words : words.filter((one) => one.label !== 'extending' && one.label !== 'retracting');
     }
     case 'quantity':

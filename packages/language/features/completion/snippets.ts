@@ -1,4 +1,5 @@
 /** Snippets for the usual sub-circuits; each stands for itself and resolves once its names are filled in. */
+// biome-ignore-all lint/suspicious/noTemplateCurlyInString: the places of a snippet are written so
 import { CompletionItemKind } from 'vscode-languageserver-types';
 import type { Proposal } from './item.ts';
 
@@ -11,7 +12,8 @@ interface Snippet {
 export const SNIPPETS: readonly Snippet[] = [
   {
     label: 'two-pump unit',
-    about: 'Large flow for the fast way, small flow at high pressure for the work; the large pump is unloaded by the pressure of the small one.',
+    about:
+      'Large flow for the fast way, small flow at high pressure for the work; the large pump is unloaded by the pressure of the small one.',
     lines: [
       'drive     ${1:M1} (power ${2:5.5} kW, speed 1450 rpm)',
       'pump      ${3:P1} (displacement ${4:40} cm3/rev, driven by ${1:M1}, rated 210 bar) "Low pressure"',
@@ -44,7 +46,8 @@ export const SNIPPETS: readonly Snippet[] = [
   },
   {
     label: 'clamp with reducing valve',
-    about: 'Clamping cylinder at reduced pressure behind a detented valve: it stays clamped when current is lost; a switch proves the pressure.',
+    about:
+      'Clamping cylinder at reduced pressure behind a detented valve: it stays clamped when current is lost; a switch proves the pressure.',
     lines: [
       'reducing  ${1:PR1} (set ${2:70} bar, relieving yes, reverse check, passes ${3:40} L/min at 5 bar)',
       'directional ${4:V1} (4/2, detent, coil a ${5:SOL1}, coil b ${6:SOL2}, passes ${3:40} L/min at 5 bar) "Clamp"',
@@ -92,11 +95,33 @@ export const SNIPPETS: readonly Snippet[] = [
 ];
 
 export const sheetSnippets = (): Proposal[] =>
-  SNIPPETS.map((one) => ({ label: one.label, kind: CompletionItemKind.Snippet, detail: 'sub-circuit', about: `${one.about}\n\n\`\`\`oilway\n${plain(one)}\n\`\`\``, insert: one.lines.join('\n'), snippet: true, rank: 8 }));
+  SNIPPETS.map((one) => ({
+    label: one.label,
+    kind: CompletionItemKind.Snippet,
+    detail: 'sub-circuit',
+    about: `${one.about}\n\n\`\`\`oilway\n${plain(one)}\n\`\`\``,
+    insert: one.lines.join('\n'),
+    snippet: true,
+    rank: 8,
+  }));
 
 export const cycleSnippets = (): Proposal[] => [
-  { label: 'step with switch and limit', kind: CompletionItemKind.Snippet, detail: 'step', insert: 'step ${1:Out} energise ${2:SOL1} until ${3:LS1} on, at most ${4:10} s', snippet: true, rank: 8 },
-  { label: 'step for a time', kind: CompletionItemKind.Snippet, detail: 'step', insert: 'step ${1:Hold} energise ${2:SOL1} for ${3:2} s', snippet: true, rank: 8 },
+  {
+    label: 'step with switch and limit',
+    kind: CompletionItemKind.Snippet,
+    detail: 'step',
+    insert: 'step ${1:Out} energise ${2:SOL1} until ${3:LS1} on, at most ${4:10} s',
+    snippet: true,
+    rank: 8,
+  },
+  {
+    label: 'step for a time',
+    kind: CompletionItemKind.Snippet,
+    detail: 'step',
+    insert: 'step ${1:Hold} energise ${2:SOL1} for ${3:2} s',
+    snippet: true,
+    rank: 8,
+  },
 ];
 
 /** The snippet with its example values, as one would read it. */

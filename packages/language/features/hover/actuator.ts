@@ -4,7 +4,7 @@ import { KINDS, type ActuatorPoint, type Component, type Point } from '@oilway/c
 import type { Analysis } from '../analysis.ts';
 import { actuatorAt, extent, flowInto, placesOf, pressureAt, STILL, type Place } from './places.ts';
 import { notComputed, restsOn, standing } from './rests.ts';
-import { escape, paragraphs, Show, table } from './show.ts';
+import { literal, paragraphs, Show, table } from './show.ts';
 import { forceWorking, speedWorking, torqueWorking, workingText } from './working.ts';
 
 interface Row {
@@ -21,7 +21,8 @@ export interface ActuatorUnits {
   readonly ports: readonly [string, string];
 }
 export function unitsOfActuator(component: Component): ActuatorUnits {
-  if (component.kind === 'cylinder') return { force: 'force', speed: 'velocity', position: 'length', words: ['retracting', 'stands', 'extending'], ports: ['cap', 'rod'] };
+  if (component.kind === 'cylinder')
+    return { force: 'force', speed: 'velocity', position: 'length', words: ['retracting', 'stands', 'extending'], ports: ['cap', 'rod'] };
   return { force: 'torque', speed: 'rotation', position: 'angle', words: ['backward', 'stands', 'forward'], ports: ['A', 'B'] };
 }
 
@@ -33,7 +34,11 @@ export function rowsOf(places: readonly Place[], id: string): Row[] {
       const at = actuatorAt(point, id);
       return at && point.solved ? [{ point, at }] : [];
     });
-    const of = (direction: -1 | 0 | 1): Row => ({ place, direction, points: points.filter((one) => (one.at.direction || Math.sign(one.at.velocity)) === direction) });
+    const of = (direction: -1 | 0 | 1): Row => ({
+      place,
+      direction,
+      points: points.filter((one) => (one.at.direction || Math.sign(one.at.velocity)) === direction),
+    });
     const moving = [of(1), of(-1)].filter((row) => row.points.length > 0);
     const standing = of(0);
     rows.push(...moving);
@@ -44,7 +49,8 @@ export function rowsOf(places: readonly Place[], id: string): Row[] {
 
 /** The point with the least of force available against needed; without such, the one that presses most. */
 export function tightest(row: Row): Row['points'][number] | undefined {
-  const ratio = (one: ActuatorPoint): number => (one.available !== undefined && one.needed > 0 ? one.available / one.needed : Number.POSITIVE_INFINITY);
+  const ratio = (one: ActuatorPoint): number =>
+    one.available !== undefined && one.needed > 0 ? one.available / one.needed : Number.POSITIVE_INFINITY;
   return [...row.points].sort((a, b) => ratio(a.at) - ratio(b.at) || Math.abs(b.at.force) - Math.abs(a.at.force))[0];
 }
 
@@ -56,7 +62,7 @@ export function limits(row: Row): string {
 
 export function hoverActuator(analysis: Analysis, component: Component): string {
   const kind = KINDS[component.kind];
-  const title = `**${escape(component.id)}** ${kind.noun}${component.title ? `, ${escape(component.title)}` : ''}`;
+  const title = `**${literal(component.id)}** ${kind.noun}${component.title ? `, ${literal(component.title)}` : ''}`;
   const why = notComputed(analysis, component.id);
   const { studied } = analysis;
   if (why || !studied) return paragraphs(title, why, standing(analysis));
@@ -66,8 +72,23 @@ export function hoverActuator(analysis: Analysis, component: Component): string 
   if (rows.length === 0) return paragraphs(title, 'Does not move in any step.', standing(analysis), restsOn(analysis, component.id));
 
   const cells = rows.map((row) => cellsOf(row, studied.circuit, component.id, units, show));
-  const head = ['Step', units.force === 'force' ? 'Force available of needed' : 'Torque available of needed', 'Speed', `Pressure ${units.ports[0]}`, `Pressure ${units.ports[1]}`, 'Flow in', 'Time', 'Limited by'];
-  return paragraphs(title, table(head, cells), working(rows, studied.circuit, component.id, units, show), standing(analysis), restsOn(analysis, component.id));
+  const head = [
+    'Step',
+    units.force === 'force' ? 'Force available of needed' : 'Torque available of needed',
+    'Speed',
+    `Pressure ${units.ports[0]}`,
+    `Pressure ${units.ports[1]}`,
+    'Flow in',
+    'Time',
+    'Limited by',
+  ];
+  return paragraphs(
+    title,
+    table(head, cells),
+    working(rows, studied.circuit, component.id, units, show),
+    standing(analysis),
+    restsOn(analysis, component.id),
+  );
 }
 
 function cellsOf(row: Row, circuit: Parameters<typeof pressureAt>[0], id: string, units: ActuatorUnits, show: Show): string[] {

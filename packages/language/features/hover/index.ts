@@ -1,5 +1,14 @@
 /** Hover: what stands under the cursor, told from the latest finished study. A pure function; nothing is computed anew here. */
-import { KINDS, LIMITS_PROPERTIES, LINE_PROPERTIES, LOAD_PROPERTIES, type Component, type LineStatement, type Origin, type PropertySpec } from '@oilway/circuit';
+import {
+  KINDS,
+  LIMITS_PROPERTIES,
+  LINE_PROPERTIES,
+  LOAD_PROPERTIES,
+  type Component,
+  type LineStatement,
+  type Origin,
+  type PropertySpec,
+} from '@oilway/circuit';
 import type { Analysis, Occurrence } from '../analysis.ts';
 import { isLineHead, LINE_FUNCTIONS } from '../../parse/words.ts';
 import { cursorAt } from '../completion/context.ts';
@@ -23,7 +32,8 @@ export interface HoverText {
   readonly end: number;
 }
 
-const holds = (origin: Origin, uri: string, offset: number): boolean => origin.uri === uri && origin.start <= offset && offset <= origin.end;
+const holds = (origin: Origin, uri: string, offset: number): boolean =>
+  origin.uri === uri && origin.start <= offset && offset <= origin.end;
 
 export function hoverAt(analysis: Analysis, offset: number): HoverText | undefined {
   const token = tokenAt(analysis.tokens, offset);
@@ -131,7 +141,10 @@ function hoverPort(analysis: Analysis, component: Component, port: string): stri
 /** On the head: every piece; on a `to`: the piece that it is. */
 function lineText(analysis: Analysis, line: LineStatement, token: Token): string | undefined {
   if (token.text !== 'to') return hoverLine(analysis, line);
-  const index = line.stations.findIndex((station, i) => i + 1 < line.stations.length && station.origin.end <= token.start && (line.stations[i + 1]?.origin.start ?? 0) >= token.end);
+  const index = line.stations.findIndex(
+    (station, i) =>
+      i + 1 < line.stations.length && station.origin.end <= token.start && (line.stations[i + 1]?.origin.start ?? 0) >= token.end,
+  );
   const piece = line.pieces[index];
   return piece ? hoverLine(analysis, line, piece) : undefined;
 }

@@ -48,18 +48,35 @@ const isKind = (word: string): word is KindName => (KIND_NAMES as readonly strin
 export function propertyRows(specs: readonly PropertySpec[]): string {
   return table(
     ['Property', 'Example', 'Unsaid', 'Meaning'],
-    specs.map((spec) => [spec.required ? `**${spec.name}**` : spec.name, `\`${spec.example}\``, spec.required ? 'required' : spec.default === '—' ? '' : spec.default, spec.about]),
+    specs.map((spec) => [
+      spec.required ? `**${spec.name}**` : spec.name,
+      `\`${spec.example}\``,
+      spec.required ? 'required' : spec.default === '—' ? '' : spec.default,
+      spec.about,
+    ]),
   );
 }
 
 export function hoverKeyword(word: string): string | undefined {
   if (isKind(word)) {
     const kind = KINDS[word];
-    const ports = kind.ports.map((port) => `- ${port.name}: ${port.role === 'any' ? 'any line' : port.role}${port.required ? '' : ', if used'}${port.about ? ` (${port.about})` : ''}`);
-    return paragraphs(`**${word}**: ${kind.about || kind.noun}`, ports.length > 0 ? `Ports\n${ports.join('\n')}` : 'No ports.', chainWords(word), propertyRows(kind.properties));
+    const ports = kind.ports.map(
+      (port) =>
+        `- ${port.name}: ${port.role === 'any' ? 'any line' : port.role}${port.required ? '' : ', if used'}${port.about ? ` (${port.about})` : ''}`,
+    );
+    return paragraphs(
+      `**${word}**: ${kind.about || kind.noun}`,
+      ports.length > 0 ? `Ports\n${ports.join('\n')}` : 'No ports.',
+      chainWords(word),
+      propertyRows(kind.properties),
+    );
   }
   if ((LINE_FUNCTIONS as readonly string[]).includes(word)) {
-    return paragraphs(`**${word}**: ${HEAD_ABOUT[word] ?? 'line'}`, `\`${word} V1.A to FC1 to C1.cap (bore 12 mm)\``, propertyRows(LINE_PROPERTIES));
+    return paragraphs(
+      `**${word}**: ${HEAD_ABOUT[word] ?? 'line'}`,
+      `\`${word} V1.A to FC1 to C1.cap (bore 12 mm)\``,
+      propertyRows(LINE_PROPERTIES),
+    );
   }
   const about = HEAD_ABOUT[word];
   if (about) {
@@ -73,7 +90,8 @@ function chainWords(name: KindName): string {
   const { chain, ports } = KINDS[name];
   if (ports.length === 0) return '';
   if (chain.how === 'through') return `In a line: passed from ${chain.from} to ${chain.to}.`;
-  if (chain.how === 'end') return `In a line: ${chain.entry} where the line comes to it, ${chain.exit} where one starts; never passed through.`;
+  if (chain.how === 'end')
+    return `In a line: ${chain.entry} where the line comes to it, ${chain.exit} where one starts; never passed through.`;
   if (chain.how === 'fixed') return `In a line: ends at ${chain.port}.`;
   if (chain.how === 'none') return 'In a line: write the port.';
   return 'In a line: at an end only; any number of lines.';

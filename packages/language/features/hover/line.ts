@@ -3,7 +3,7 @@ import { oilOf, ratedAt, type Circuit, type LineStatement, type Piece, type Poin
 import type { Analysis } from '../analysis.ts';
 import { componentOf, extent, placesOf, type Place } from './places.ts';
 import { notComputed, restsOn, standing } from './rests.ts';
-import { escape, paragraphs, Show, table } from './show.ts';
+import { literal, paragraphs, Show, table } from './show.ts';
 
 const NO_FLOW: ReadonlySet<string> = new Set(['gauge', 'sensor', 'switch']);
 const key = (port: PortRef): string => `${port.component}.${port.port}`;
@@ -69,7 +69,7 @@ export function ratingOf(circuit: Circuit, netId: string): { readonly rating: nu
 }
 
 export function hoverLine(analysis: Analysis, line: LineStatement, pieceId?: string): string {
-  const title = `**${line.name ? escape(line.name) : line.function}** ${line.name ? `${line.function} ` : ''}line`;
+  const title = `**${line.name ? literal(line.name) : line.function}** ${line.name ? `${line.function} ` : ''}line`;
   const { studied } = analysis;
   if (!studied || !analysis.circuit) return paragraphs(title, standing(analysis));
   // The study's own circuit has the same pieces as long as the lines before this one stand.
@@ -78,13 +78,20 @@ export function hoverLine(analysis: Analysis, line: LineStatement, pieceId?: str
   const pieces = circuit.pieces.filter((piece) => wanted.includes(piece.id));
   const show = new Show(circuit);
   const why = notComputed(analysis, ...pieces.flatMap((piece) => piece.nets));
-  return paragraphs(title, ...pieces.map((piece) => pieceText(circuit, piece, placesOf(studied), show, pieces.length > 1)), why, standing(analysis), restsOn(analysis));
+  return paragraphs(
+    title,
+    ...pieces.map((piece) => pieceText(circuit, piece, placesOf(studied), show, pieces.length > 1)),
+    why,
+    standing(analysis),
+    restsOn(analysis),
+  );
 }
 
 function pieceText(circuit: Circuit, piece: Piece, places: readonly Place[], show: Show, several: boolean): string {
   const { oil } = oilOf(circuit);
   const area = piece.bore === undefined ? undefined : (Math.PI / 4) * piece.bore ** 2;
-  const flows = (place: Place): (number | undefined)[] => place.points.filter((point) => point.solved).map((point) => flowThrough(circuit, piece, point));
+  const flows = (place: Place): (number | undefined)[] =>
+    place.points.filter((point) => point.solved).map((point) => flowThrough(circuit, piece, point));
   const highest = (place: Place): number | undefined => {
     const peaks = piece.nets.map((net) => place.step?.peaks[net]);
     return extent([...peaks, ...place.points.flatMap((point) => piece.nets.map((net) => point.pressures[net]))])?.high;
@@ -92,11 +99,16 @@ function pieceText(circuit: Circuit, piece: Piece, places: readonly Place[], sho
   const rows = places.map((place) => {
     const span = extent(flows(place).map((flow) => (flow === undefined ? undefined : Math.abs(flow))));
     const velocity = span && area ? span.high / area : undefined;
-    const loss = piece.nets[0] === piece.nets[1] ? undefined : extent(place.points.map((point) => {
-      const a = point.pressures[piece.nets[0]];
-      const b = point.pressures[piece.nets[1]];
-      return a === undefined || b === undefined ? undefined : Math.abs(a - b);
-    }))?.high;
+    const loss =
+      piece.nets[0] === piece.nets[1]
+        ? undefined
+        : extent(
+            place.points.map((point) => {
+              const a = point.pressures[piece.nets[0]];
+              const b = point.pressures[piece.nets[1]];
+              return a === undefined || b === undefined ? undefined : Math.abs(a - b);
+            }),
+          )?.high;
     const peak = highest(place);
     return [
       place.label,
@@ -107,13 +119,33 @@ function pieceText(circuit: Circuit, piece: Piece, places: readonly Place[], sho
       peak === undefined ? '—' : show.figure(peak, 'pressure'),
     ];
   });
-  const worst = places.map((place) => ({ place, peak: highest(place) })).filter((one) => one.peak !== undefined).sort((a, b) => (b.peak ?? 0) - (a.peak ?? 0))[0];
-  const rating = piece.nets.map((net) => ratingOf(circuit, net)).filter((one) => one !== undefined).sort((a, b) => a.rating - b.rating)[0];
-  const against = worst?.peak === undefined ? '' : rating ? `Highest ${show.of(worst.peak, rating.rating, 'pressure')} rated (${rating.of}), in ${worst.place.label}.` : `Highest ${show.figure(worst.peak, 'pressure')} in ${worst.place.label}; no rating is declared here.`;
+  const worst = places
+    .map((place) => ({ place, peak: highest(place) }))
+    .filter((one) => one.peak !== undefined)
+    .sort((a, b) => (b.peak ?? 0) - (a.peak ?? 0))[0];
+  const rating = piece.nets
+    .map((net) => ratingOf(circuit, net))
+    .filter((one) => one !== undefined)
+    .sort((a, b) => a.rating - b.rating)[0];
+  const against =
+    worst?.peak === undefined
+      ? ''
+      : rating
+        ? `Highest ${show.of(worst.peak, rating.rating, 'pressure')} rated (${rating.of}), in ${worst.place.label}.`
+        : `Highest ${show.figure(worst.peak, 'pressure')} in ${worst.place.label}; no rating is declared here.`;
   const notCounted = piece.nets[0] === piece.nets[1] ? 'Loss not counted: bore and length are not both given.' : '';
-  const name = several ? `${side(piece, 0)} to ${side(piece, 1)}${piece.bore ? `, bore ${show.figure(piece.bore, 'length')}` : ''}` : piece.bore ? `Bore ${show.figure(piece.bore, 'length')}` : '';
-  return paragraphs(name, table(['Step', 'Flow', 'Velocity', 'Reynolds number', 'Loss', 'Highest pressure'], rows), [against, notCounted].filter(Boolean).join(' '));
+  const name = several
+    ? `${side(piece, 0)} to ${side(piece, 1)}${piece.bore ? `, bore ${show.figure(piece.bore, 'length')}` : ''}`
+    : piece.bore
+      ? `Bore ${show.figure(piece.bore, 'length')}`
+      : '';
+  return paragraphs(
+    name,
+    table(['Step', 'Flow', 'Velocity', 'Reynolds number', 'Loss', 'Highest pressure'], rows),
+    [against, notCounted].filter(Boolean).join(' '),
+  );
 }
 
-const reynolds = (value: number): string => `${Math.round(value)}${value < 2300 ? ' (laminar)' : value < 4000 ? ' (between)' : ' (turbulent)'}`;
+const reynolds = (value: number): string =>
+  `${Math.round(value)}${value < 2300 ? ' (laminar)' : value < 4000 ? ' (between)' : ' (turbulent)'}`;
 const side = (piece: Piece, index: 0 | 1): string => piece.sides[index].map(key).join(', ') || 'the line';

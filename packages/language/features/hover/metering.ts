@@ -3,7 +3,20 @@ import { KINDS, read, type Circuit, type Component } from '@oilway/circuit';
 import { componentOf, netOf } from './places.ts';
 
 /** Oil passes these from one side to the other without choosing a way. */
-const PASSED: ReadonlySet<string> = new Set(['check', 'pilotcheck', 'counterbalance', 'burst', 'throttle', 'deceleration', 'shutoff', 'coupling', 'filter', 'cooler', 'sequence', 'reducing']);
+const PASSED: ReadonlySet<string> = new Set([
+  'check',
+  'pilotcheck',
+  'counterbalance',
+  'burst',
+  'throttle',
+  'deceleration',
+  'shutoff',
+  'coupling',
+  'filter',
+  'cooler',
+  'sequence',
+  'reducing',
+]);
 const SIGNAL: ReadonlySet<string> = new Set(['pilot', 'drain', 'vent', 'return']);
 
 interface Reach {

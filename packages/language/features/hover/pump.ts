@@ -3,7 +3,7 @@ import { KINDS, read, type Component, type Point } from '@oilway/circuit';
 import type { Analysis } from '../analysis.ts';
 import { componentOf, extent, flowInto, placesOf, pressureAt, type Place } from './places.ts';
 import { notComputed, restsOn, standing } from './rests.ts';
-import { escape, paragraphs, Show, table } from './show.ts';
+import { literal, paragraphs, Show, table } from './show.ts';
 import { shaftWorking, workingText } from './working.ts';
 
 const delivered = (point: Point, id: string): number | undefined => {
@@ -11,13 +11,18 @@ const delivered = (point: Point, id: string): number | undefined => {
   return flow === undefined ? undefined : -flow;
 };
 
-function spanOf(place: Place, show: Show, dimension: 'flow' | 'pressure' | 'power' | 'ratio', value: (point: Point) => number | undefined): string {
+function spanOf(
+  place: Place,
+  show: Show,
+  dimension: 'flow' | 'pressure' | 'power' | 'ratio',
+  value: (point: Point) => number | undefined,
+): string {
   const span = extent(place.points.filter((point) => point.solved).map(value));
   return span ? show.span(span.low, span.high, dimension) : '—';
 }
 
 export function hoverPump(analysis: Analysis, pump: Component): string {
-  const title = `**${escape(pump.id)}** ${KINDS.pump.noun}${pump.title ? `, ${escape(pump.title)}` : ''}`;
+  const title = `**${literal(pump.id)}** ${KINDS.pump.noun}${pump.title ? `, ${literal(pump.title)}` : ''}`;
   const why = notComputed(analysis, pump.id);
   const { studied } = analysis;
   if (why || !studied) return paragraphs(title, why, standing(analysis));
@@ -27,7 +32,10 @@ export function hoverPump(analysis: Analysis, pump: Component): string {
   const power = drive ? read.si(drive, 'power') : undefined;
   const places = placesOf(studied);
   const rest = studied.study.states.find((state) => state.state === 'REST');
-  const all = rest && places.every((place) => place.label !== 'REST') ? [...places, { label: 'REST', points: rest.variants.map((one) => one.point) }] : places;
+  const all =
+    rest && places.every((place) => place.label !== 'REST')
+      ? [...places, { label: 'REST', points: rest.variants.map((one) => one.point) }]
+      : places;
   const rows = all.map((place) => [
     place.label,
     spanOf(place, show, 'flow', (point) => delivered(point, pump.id)),
@@ -38,7 +46,9 @@ export function hoverPump(analysis: Analysis, pump: Component): string {
       return flow === undefined || outlet === undefined ? undefined : flow * (outlet - (pressureAt(circuit, point, pump.id, 'S') ?? 0));
     }),
     spanOf(place, show, 'power', (point) => point.power[pump.id]),
-    drive && power ? spanOf(place, show, 'ratio', (point) => (point.power[drive.id] === undefined ? undefined : (point.power[drive.id] ?? 0) / power)) : '—',
+    drive && power
+      ? spanOf(place, show, 'ratio', (point) => (point.power[drive.id] === undefined ? undefined : (point.power[drive.id] ?? 0) / power))
+      : '—',
   ]);
   const hardest = all
     .flatMap((place) => place.points.map((point) => ({ place, point })))
@@ -48,14 +58,16 @@ export function hoverPump(analysis: Analysis, pump: Component): string {
   return paragraphs(
     title,
     table(['Step', 'Flow', 'Pressure', 'Hydraulic power', 'Shaft power', drive ? `Load of ${drive.id}` : 'Load of drive'], rows),
-    working && hardest ? paragraphs(`**Working**, ${hardest.place.label} (${hardest.point.label})`, workingText(working, show, 'Shaft power')) : '',
+    working && hardest
+      ? paragraphs(`**Working**, ${hardest.place.label} (${hardest.point.label})`, workingText(working, show, 'Shaft power'))
+      : '',
     standing(analysis),
     restsOn(analysis, pump.id),
   );
 }
 
 export function hoverDrive(analysis: Analysis, drive: Component): string {
-  const title = `**${escape(drive.id)}** ${KINDS.drive.noun}${drive.title ? `, ${escape(drive.title)}` : ''}`;
+  const title = `**${literal(drive.id)}** ${KINDS.drive.noun}${drive.title ? `, ${literal(drive.title)}` : ''}`;
   const why = notComputed(analysis, drive.id);
   const { studied } = analysis;
   if (why || !studied) return paragraphs(title, why, standing(analysis));
@@ -64,13 +76,23 @@ export function hoverDrive(analysis: Analysis, drive: Component): string {
   const rows = placesOf(studied).map((place) => [
     place.label,
     spanOf(place, show, 'power', (point) => point.power[drive.id]),
-    power ? spanOf(place, show, 'ratio', (point) => (point.power[drive.id] === undefined ? undefined : (point.power[drive.id] ?? 0) / power)) : '—',
+    power
+      ? spanOf(place, show, 'ratio', (point) => (point.power[drive.id] === undefined ? undefined : (point.power[drive.id] ?? 0) / power))
+      : '—',
   ]);
   const duty = studied.study.cycles.flatMap((cycle) => {
     const one = cycle.duty[drive.id];
     if (!one) return [];
     const share = power ? ` (${show.figure(one.rms / power, 'ratio')} of ${show.figure(power, 'power')})` : '';
-    return [`${cycle.id}: mean ${show.figure(one.mean, 'power')}, rms ${show.figure(one.rms, 'power')}${share}, highest ${show.figure(one.highest, 'power')}`];
+    return [
+      `${cycle.id}: mean ${show.figure(one.mean, 'power')}, rms ${show.figure(one.rms, 'power')}${share}, highest ${show.figure(one.highest, 'power')}`,
+    ];
   });
-  return paragraphs(title, table(['Step', 'Shaft power', 'Load'], rows), duty.join('  \n'), standing(analysis), restsOn(analysis, drive.id));
+  return paragraphs(
+    title,
+    table(['Step', 'Shaft power', 'Load'], rows),
+    duty.join('  \n'),
+    standing(analysis),
+    restsOn(analysis, drive.id),
+  );
 }

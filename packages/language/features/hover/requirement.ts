@@ -3,7 +3,7 @@ import type { Requirement, RequirementResult } from '@oilway/circuit';
 import type { Analysis } from '../analysis.ts';
 import { requirementText } from '../outline.ts';
 import { restsOn, standing } from './rests.ts';
-import { escape, paragraphs, Show } from './show.ts';
+import { literal, paragraphs, Show } from './show.ts';
 import { workingText } from './working.ts';
 
 const VERDICT = { met: 'Met', missed: 'Missed', undecidable: 'Cannot be decided' } as const;
@@ -30,7 +30,7 @@ export function hoverRequirement(analysis: Analysis, requirement: Requirement): 
   const facts = [worst, marginText(result, show), result.at ? `at ${result.at}` : ''].filter(Boolean).join(', ');
   return paragraphs(
     title,
-    `**${VERDICT[result.verdict]}**${result.words ? `: ${escape(result.words)}` : ''}`,
+    `**${VERDICT[result.verdict]}**${result.words ? `: ${literal(result.words)}` : ''}`,
     facts,
     result.worst?.working ? workingText(result.worst.working, show, '**Working**') : '',
     standing(analysis),

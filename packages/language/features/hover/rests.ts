@@ -1,7 +1,7 @@
 /** The last lines of a hover: what the figures rest on, and whether they are of the text as it stands. */
 import type { Assumption } from '@oilway/circuit';
 import type { Analysis } from '../analysis.ts';
-import { escape } from './show.ts';
+import { literal } from './show.ts';
 
 /** "rests on 3 assumptions: P1 volumetric 92 % ..": those of the component first. */
 export function restsOn(analysis: Analysis, component?: string): string {
@@ -11,7 +11,7 @@ export function restsOn(analysis: Analysis, component?: string): string {
   const ordered = [...own, ...all.filter((one) => one.component !== component)];
   const shown = ordered.slice(0, 3).map(words);
   const more = ordered.length > shown.length ? ` and ${ordered.length - shown.length} more` : '';
-  return `_Rests on ${all.length} assumption${all.length === 1 ? '' : 's'}: ${shown.map(escape).join('; ')}${more}._`;
+  return `_Rests on ${all.length} assumption${all.length === 1 ? '' : 's'}: ${shown.map(literal).join('; ')}${more}._`;
 }
 
 function words(one: Assumption): string {

@@ -4,14 +4,22 @@ import type { Analysis } from '../analysis.ts';
 import { propertyAbout } from '../completion/properties.ts';
 import { placesOf } from './places.ts';
 import { standing } from './rests.ts';
-import { escape, list, paragraphs, Show } from './show.ts';
+import { literal, list, paragraphs, Show } from './show.ts';
 import { conditionNames } from './conditions.ts';
 
 export function hoverSetting(analysis: Analysis, spec: PropertySpec, component?: Component, property?: Property): string {
-  const title = `**${spec.name}**${component ? ` of ${escape(component.id)}` : ''}`;
-  const from = property?.value.type === 'quantity' && property.value.from && property.value.from.length > 0 ? `Computed from ${list(property.value.from.map(escape))}.` : '';
-  const part = property?.part ? `Taken from part ${escape(property.part)}.` : '';
-  return paragraphs(title, propertyAbout(spec), [from, part].filter(Boolean).join(' '), component ? dependsOn(analysis, component, spec.name) : '');
+  const title = `**${spec.name}**${component ? ` of ${literal(component.id)}` : ''}`;
+  const from =
+    property?.value.type === 'quantity' && property.value.from && property.value.from.length > 0
+      ? `Computed from ${list(property.value.from.map(literal))}.`
+      : '';
+  const part = property?.part ? `Taken from part ${literal(property.part)}.` : '';
+  return paragraphs(
+    title,
+    propertyAbout(spec),
+    [from, part].filter(Boolean).join(' '),
+    component ? dependsOn(analysis, component, spec.name) : '',
+  );
 }
 
 /** "Decides: speed of C2 extending in Out" and the like, from the latest study. */
@@ -30,16 +38,19 @@ export function dependsOn(analysis: Analysis, component: Component, property: st
       }
       for (const [id, one] of moved) {
         const share = one.share === undefined ? '' : `: ${show.figure(one.share * 0.1, 'ratio')} of speed for 10 % of it`;
-        lines.push(`- speed of ${escape(id)} in ${escape(place.label)}${share}`);
+        lines.push(`- speed of ${literal(id)} in ${literal(place.label)}${share}`);
       }
-      if (property === 'set' && place.points.some((point) => point.lifting.includes(component.id))) lines.push(`- highest pressure in ${escape(place.label)}: it lifts there`);
+      if (property === 'set' && place.points.some((point) => point.lifting.includes(component.id)))
+        lines.push(`- highest pressure in ${literal(place.label)}: it lifts there`);
     }
   }
   if (component.kind === 'switch' || component.kind === 'sensor') {
     for (const cycle of analysis.circuit?.cycles ?? []) {
-      for (const step of cycle.steps) if (step.until && conditionNames(step.until).includes(component.id)) lines.push(`- end of step ${escape(step.id)}`);
+      for (const step of cycle.steps)
+        if (step.until && conditionNames(step.until).includes(component.id)) lines.push(`- end of step ${literal(step.id)}`);
     }
-    for (const one of analysis.circuit?.interlocks ?? []) if (conditionNames(one.needs).includes(component.id)) lines.push(`- interlock of ${list(one.coils.map(escape))}`);
+    for (const one of analysis.circuit?.interlocks ?? [])
+      if (conditionNames(one.needs).includes(component.id)) lines.push(`- interlock of ${list(one.coils.map(literal))}`);
     for (const one of analysis.circuit?.whiles ?? []) if (conditionNames(one.when).includes(component.id)) lines.push('- a `while` line');
   }
   if (lines.length === 0) return standing(analysis);
@@ -49,15 +60,21 @@ export function dependsOn(analysis: Analysis, component: Component, property: st
 /** A limiter's words name the property ("FC1 set"), or no property at all ("pump flow P1"). */
 function names(words: string, property: string): boolean {
   const known = words.split(/\W+/);
-  return known.includes(property) || !['set', 'passes', 'opening', 'orifice', 'displacement', 'compensator', 'closes'].some((one) => known.includes(one));
+  return (
+    known.includes(property) ||
+    !['set', 'passes', 'opening', 'orifice', 'displacement', 'compensator', 'closes'].some((one) => known.includes(one))
+  );
 }
 
 export function hoverConstant(analysis: Analysis, constant: Constant): string {
   const { circuit } = analysis;
   const show = circuit ? new Show(circuit) : undefined;
-  const value = constant.value && show ? show.figure(constant.value.si, constant.value.dimension, { unit: constant.value.unit }) : 'not known yet';
+  const value =
+    constant.value && show ? show.figure(constant.value.si, constant.value.dimension, { unit: constant.value.unit }) : 'not known yet';
   const users = (circuit?.components ?? []).flatMap((component) =>
-    component.properties.filter((one) => one.value.type === 'quantity' && one.value.from?.includes(constant.name)).map((one) => `- ${escape(component.id)} ${one.name}`),
+    component.properties
+      .filter((one) => one.value.type === 'quantity' && one.value.from?.includes(constant.name))
+      .map((one) => `- ${literal(component.id)} ${one.name}`),
   );
-  return paragraphs(`**${escape(constant.name)}** = ${value}`, users.length > 0 ? `Used by:\n${users.slice(0, 10).join('\n')}` : '');
+  return paragraphs(`**${literal(constant.name)}** = ${value}`, users.length > 0 ? `Used by:\n${users.slice(0, 10).join('\n')}` : '');
 }

@@ -20,7 +20,8 @@ export class Show {
 
   /** `9.9 to 10.1 mm/s`; one value where the two are within 1 %. */
   span(low: number, high: number, dimension: Dimension): string {
-    if (Math.abs(high - low) <= 0.01 * Math.max(Math.abs(low), Math.abs(high))) return this.figure(Math.abs(low) > Math.abs(high) ? low : high, dimension);
+    if (Math.abs(high - low) <= 0.01 * Math.max(Math.abs(low), Math.abs(high)))
+      return this.figure(Math.abs(low) > Math.abs(high) ? low : high, dimension);
     const number = formatNumber(low, dimension, this.#options);
     const most = this.figure(high, dimension);
     // What reads alike is one value.
@@ -34,14 +35,18 @@ export class Show {
 }
 
 /** Text that Markdown must not read as marks. */
-export function escape(text: string): string {
+export function literal(text: string): string {
   return text.replace(/[\\`*_[\]<>|]/g, (mark) => `\\${mark}`);
 }
 
 /** A table; a column that is empty in every row is left out. */
 export function table(head: readonly string[], rows: readonly (readonly string[])[]): string {
   const used = head.map((_, column) => column === 0 || rows.some((row) => (row[column] ?? '') !== '' && row[column] !== '—'));
-  const line = (cells: readonly string[]): string => `| ${cells.filter((_, column) => used[column]).map((cell) => cell.replace(/\|/g, '\\|')).join(' | ')} |`;
+  const line = (cells: readonly string[]): string =>
+    `| ${cells
+      .filter((_, column) => used[column])
+      .map((cell) => cell.replace(/\|/g, '\\|'))
+      .join(' | ')} |`;
   return [line(head), line(head.map(() => '---')), ...rows.map(line)].join('\n');
 }
 

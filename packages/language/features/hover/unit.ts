@@ -27,7 +27,9 @@ export function hoverUnit(number: string, unitToken: Token | undefined): string 
     .slice(0, MOST)
     .filter((one) => one.offset === 0 || unit.dimension === 'temperature')
     .map((one) => format(parsed.value.si, unit.dimension, { unit: one.symbol, digits: 4 }));
-  return [`**${number} ${unit.symbol}**${others.length > 0 ? ` = ${others.join(' = ')}` : ''}`, `${unit.about} (${unit.dimension})`].join('  \n');
+  return [`**${number} ${unit.symbol}**${others.length > 0 ? ` = ${others.join(' = ')}` : ''}`, `${unit.about} (${unit.dimension})`].join(
+    '  \n',
+  );
 }
 
 const rank = (symbol: string, wanted: readonly string[]): number => {

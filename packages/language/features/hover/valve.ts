@@ -4,7 +4,7 @@ import type { Analysis } from '../analysis.ts';
 import { extent, flowInto, netOf, placesOf, pressureAt, type Place } from './places.ts';
 import { notComputed, restsOn, standing } from './rests.ts';
 import { meteringOf } from './metering.ts';
-import { escape, paragraphs, Show, table } from './show.ts';
+import { literal, paragraphs, Show, table } from './show.ts';
 
 /** Below this a flow is leakage, m3/s (0.005 L/min). */
 const LEAKAGE = 0.005 / 60_000;
@@ -15,7 +15,7 @@ export function hoverValve(analysis: Analysis, component: Component): string {
   const shape = component.shape ? `${component.shape.ports}/${component.shape.positions} ` : '';
   const metering = analysis.circuit ? meteringOf(analysis.circuit, component) : undefined;
   const title = paragraphs(
-    `**${escape(component.id)}** ${shape}${kind.noun}${component.title ? `, ${escape(component.title)}` : ''}`,
+    `**${literal(component.id)}** ${shape}${kind.noun}${component.title ? `, ${literal(component.title)}` : ''}`,
     metering ? `${capital(metering.words)} (${metering.how}); the other way is free.` : '',
   );
   const why = notComputed(analysis, component.id);
@@ -32,17 +32,37 @@ export function hoverValve(analysis: Analysis, component: Component): string {
     place.label,
     words(place, (point) => point.positions[component.id]),
     figures(place, show, 'ratio', (point) => point.openings[component.id]),
-    ...(ends ? throughCells(circuit, component.id, ends, place, show) : ports.map((port) => portCell(circuit, component.id, port, place, show))),
+    ...(ends
+      ? throughCells(circuit, component.id, ends, place, show)
+      : ports.map((port) => portCell(circuit, component.id, port, place, show))),
     component.kind === 'relief' ? (place.points.some((point) => point.lifting.includes(component.id)) ? 'yes' : 'no') : '',
   ]);
-  const remarks = [...new Set(places.flatMap((place) => place.points.flatMap((point) => point.remarks.filter((one) => one.of === component.id).map((one) => `${place.label}: ${one.words}`))))];
-  return paragraphs(title, rows.length > 0 ? table(head, rows) : '', remarks.slice(0, 4).map(escape).join('  \n'), standing(analysis), restsOn(analysis, component.id));
+  const remarks = [
+    ...new Set(
+      places.flatMap((place) =>
+        place.points.flatMap((point) =>
+          point.remarks.filter((one) => one.of === component.id).map((one) => `${place.label}: ${one.words}`),
+        ),
+      ),
+    ),
+  ];
+  return paragraphs(
+    title,
+    rows.length > 0 ? table(head, rows) : '',
+    remarks.slice(0, 4).map(literal).join('  \n'),
+    standing(analysis),
+    restsOn(analysis, component.id),
+  );
 }
 
 const capital = (text: string): string => text.charAt(0).toUpperCase() + text.slice(1);
 
 /** The two ports that oil passes between; undefined for parts with more ways than one. */
-function endsOf(component: Component, chain: (typeof KINDS)['check']['chain'], ports: readonly string[]): readonly [string, string] | undefined {
+function endsOf(
+  component: Component,
+  chain: (typeof KINDS)['check']['chain'],
+  ports: readonly string[],
+): readonly [string, string] | undefined {
   if (component.kind === 'directional' && (component.shape?.ports ?? 4) > 2) return undefined;
   if (component.kind === 'divider' || component.kind === 'shuttle') return undefined;
   if (chain.how === 'through') return [chain.from, chain.to];

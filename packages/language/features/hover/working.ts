@@ -6,7 +6,11 @@ import type { Show } from './show.ts';
 /** The working as Markdown: the formula, then each input with where it comes from, then the published ground. */
 export function workingText(working: Working, show: Show, title: string): string {
   const inputs = working.inputs.map((one) => `- ${one.symbol} = ${show.figure(one.value, one.dimension)} (${one.source})`);
-  return [`${title}: \`${working.formula}\` = **${show.figure(working.result, working.dimension)}**`, ...inputs, `- ${working.source}`].join('\n');
+  return [
+    `${title}: \`${working.formula}\` = **${show.figure(working.result, working.dimension)}**`,
+    ...inputs,
+    `- ${working.source}`,
+  ].join('\n');
 }
 
 /** Seal friction as a pressure on the bore area where none is declared, Pa (common practice, no source). */
@@ -40,13 +44,20 @@ export function forceWorking(circuit: Circuit, id: string, point: Point): Workin
           { symbol: `p ${port}`, value: pressure, dimension: 'pressure', source: 'solved' },
           { symbol: `A ${port}`, value: area, dimension: 'area', source: sizesOf(cylinder, port) },
         ];
-  const terms = [areas.cap === undefined ? '' : 'p cap x A cap', areas.rod === undefined ? '' : '- p rod x A rod'].filter(Boolean).join(' ');
+  const terms = [areas.cap === undefined ? '' : 'p cap x A cap', areas.rod === undefined ? '' : '- p rod x A rod']
+    .filter(Boolean)
+    .join(' ');
   return {
     formula: `F = ${terms} ${moving < 0 ? '+' : '-'} seal friction`,
     inputs: [
       ...side('cap', cap, areas.cap),
       ...side('rod', rod, areas.rod),
-      { symbol: 'seal friction', value: seal, dimension: 'force', source: said !== undefined ? `${id} seal x bore area` : 'default: 3 bar x bore area (common practice, no source)' },
+      {
+        symbol: 'seal friction',
+        value: seal,
+        dimension: 'force',
+        source: said !== undefined ? `${id} seal x bore area` : 'default: 3 bar x bore area (common practice, no source)',
+      },
     ],
     result,
     dimension: 'force',
@@ -109,7 +120,12 @@ export function torqueWorking(circuit: Circuit, id: string, point: Point): Worki
       { symbol: 'V', value: displacement, dimension: 'displacement', source: `${id} displacement` },
       { symbol: 'p A', value: a, dimension: 'pressure', source: 'solved' },
       { symbol: 'p B', value: b, dimension: 'pressure', source: 'solved' },
-      { symbol: 'mechanical', value: mechanical, dimension: 'ratio', source: said === undefined ? 'default: 90 % (common practice, no source)' : `${id} mechanical` },
+      {
+        symbol: 'mechanical',
+        value: mechanical,
+        dimension: 'ratio',
+        source: said === undefined ? 'default: 90 % (common practice, no source)' : `${id} mechanical`,
+      },
       ...(gear === 1 ? [] : [{ symbol: 'gear', value: gear, dimension: 'ratio' as const, source: `${id} gear` }]),
     ],
     result,
@@ -142,7 +158,12 @@ export function shaftWorking(circuit: Circuit, id: string, point: Point): Workin
       { symbol: 'n', value: speed, dimension: 'rotation', source: `${drive.id} speed` },
       ...(stroke < 1 ? [{ symbol: 'stroke', value: stroke, dimension: 'ratio' as const, source: 'solved' }] : []),
       { symbol: 'dp', value: rise, dimension: 'pressure', source: 'solved, outlet less inlet' },
-      { symbol: 'mechanical', value: mechanical, dimension: 'ratio', source: read.si(pump, 'mechanical') === undefined ? 'default: 92 % (common practice, no source)' : `${id} mechanical` },
+      {
+        symbol: 'mechanical',
+        value: mechanical,
+        dimension: 'ratio',
+        source: read.si(pump, 'mechanical') === undefined ? 'default: 92 % (common practice, no source)' : `${id} mechanical`,
+      },
     ],
     result,
     dimension: 'power',
