@@ -1,5 +1,6 @@
 /** Runs all rules over a circuit: hides what follows from another finding, marks what is accepted, puts them in order. */
 import { accept } from './allow.ts';
+import { knownFigures } from './known.ts';
 import { outcome } from './outcome.ts';
 import type { Finding, Rule, RuleContext } from './rule.ts';
 import { RULES } from './table.ts';
@@ -11,7 +12,8 @@ export interface RulesResult {
   readonly failed?: readonly { readonly code: string; readonly why: string }[];
 }
 
-export function runRules(context: RuleContext, rules: readonly Rule[] = RULES): RulesResult {
+export function runRules(given: RuleContext, rules: readonly Rule[] = RULES): RulesResult {
+  const context = given.study === undefined ? given : { ...given, study: knownFigures(given.study) };
   const found: Finding[] = [];
   const failed: { code: string; why: string }[] = [];
   for (const rule of rules) {

@@ -67,14 +67,15 @@ function actuatorRow(id: string, step: StepResult, turns: boolean, show: Show): 
   };
 }
 
-function peakOf(step: StepResult, show: Show): string {
+function peakOf(step: StepResult, unknown: Readonly<Record<string, string>>, show: Show): string {
   let best: readonly [string, number] | undefined;
-  for (const [net, value] of Object.entries(step.peaks)) if (best === undefined || value > best[1]) best = [net, value];
+  for (const [net, value] of Object.entries(step.peaks))
+    if (unknown[net] === undefined && (best === undefined || value > best[1])) best = [net, value];
   return best === undefined ? '' : `${show(best[1], 'pressure')} ${best[0]}`;
 }
 
 /** One line a step and moving actuator. */
-function stepRows(steps: readonly StepResult[], cycle: string, circuit: Circuit, show: Show): string[][] {
+function stepRows(steps: readonly StepResult[], cycle: string, circuit: Circuit, study: Study, show: Show): string[][] {
   const turns = turning(circuit.components);
   const named = (step: StepResult) => [
     ...step.points.flatMap((point) => point.actuators.map((one) => one.id)),
@@ -99,7 +100,7 @@ function stepRows(steps: readonly StepResult[], cycle: string, circuit: Circuit,
         motion,
         row.speed ?? '',
         row.force ?? '',
-        i === 0 ? peakOf(step, show) : '',
+        i === 0 ? peakOf(step, study.notComputed, show) : '',
         row.limits ?? '',
       ]);
     });
@@ -125,14 +126,14 @@ export function coilLines(circuit: Circuit, study: Study, paint: Paint): string[
   return [
     '',
     paint.strong('each coil alone (no cycle is declared)'),
-    ...table(STEP_COLUMNS, stepRows(steps, '', circuit, shower(circuit)), paint.strong),
+    ...table(STEP_COLUMNS, stepRows(steps, '', circuit, study, shower(circuit)), paint.strong),
   ];
 }
 
 export function cycleLines(cycle: CycleResult, circuit: Circuit, study: Study, paint: Paint): string[] {
   const show = shower(circuit);
   const steps = study.steps.filter((step) => step.cycle === cycle.id);
-  const rows = stepRows(steps, cycle.id, circuit, show);
+  const rows = stepRows(steps, cycle.id, circuit, study, show);
   const time = cycle.time === undefined ? 'does not end' : show(cycle.time, 'time');
   const first =
     cycle.firstTime !== undefined && cycle.time !== undefined && show(cycle.firstTime, 'time') !== time
