@@ -2,7 +2,8 @@
 import type { Law } from './laws/law.ts';
 import { inputsOf, outputsOf } from './laws/law.ts';
 import { lawOf } from './laws/index.ts';
-import type { NetworkSpec } from './network.ts';
+import { Batch } from './laws/batch.ts';
+import type { CheckSpec, NetworkSpec, PathSpec } from './network.ts';
 import { minimumDegree } from './sparse/order.ts';
 import { sortedKnots } from './tables.ts';
 import { CEILING, CREEP } from './tolerances.ts';
@@ -54,6 +55,9 @@ export interface Network {
   readonly endless: Uint8Array;
   /** Positions where something of the network itself changes, per actuator. */
   readonly knots: readonly Float64Array[];
+  /** Passages and checks, stamped in loops; the other elements by number. */
+  readonly batches: readonly Batch[];
+  readonly general: Int32Array;
   /** Nodes of parts that reach no fixed node through any element: one each, tied to atmosphere by the floor. */
   readonly grounded: Int32Array;
 }
@@ -190,8 +194,27 @@ export function compile(spec: NetworkSpec): Network {
     chamberStart[a + 1] = chamberNodes.length;
   });
 
+  // Elements stamped in loops are those whose rows and slots are the plain two by four.
+  const batches: Batch[] = [];
+  const looped = new Set<number>();
+  for (const type of ['path', 'check'] as const) {
+    const specs: (PathSpec | CheckSpec)[] = [];
+    const rowsOf: number[] = [];
+    const slotsOf: number[] = [];
+    spec.elements.forEach((element, e) => {
+      if (element.type !== type) return;
+      looped.add(e);
+      specs.push(element);
+      rowsOf.push(flowRows[flowStart[e]!]!, flowRows[flowStart[e]! + 1]!);
+      slotsOf.push(...slotList.slice(slotStart[e]!, slotStart[e]! + 4));
+    });
+    batches.push(new Batch(specs, type === 'check', rowsOf, slotsOf));
+  }
+
   return {
     spec,
+    batches,
+    general: Int32Array.from(laws.keys()).filter((e) => !looped.has(e)),
     parameters: new Float64Array(spec.parameters),
     laws,
     size,

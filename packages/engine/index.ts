@@ -3,5 +3,6 @@ export { compile, problemsOf, type CompileProblem, type Network } from './compil
 export { chargeOf, gasOil, gasPressure } from './gas.ts';
 export * from './network.ts';
 export * from './results.ts';
+export { sensitivities } from './sensitivity.ts';
 export { solveSteady } from './steady.ts';
 export { Transient } from './transient.ts';

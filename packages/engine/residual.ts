@@ -149,12 +149,14 @@ export class System {
   /** Residual and Jacobian at `y`. */
   evaluate(): void {
     const { net, y, p, r, j, z, out, gradient, x, xv, floor, blend, parameters } = this;
-    const { laws, inputStart, inputNodes, inputHeads, slotStart, slots, flowStart, flowRows, ownOf, nodeOf } = net;
+    const { laws, general, inputStart, inputNodes, inputHeads, slotStart, slots, flowStart, flowRows, ownOf, nodeOf } = net;
     r.fill(0);
     j.fill(0);
     for (let i = 0; i < net.free; i++) p[nodeOf[i]!] = y[i]!;
 
-    for (let e = 0; e < laws.length; e++) {
+    for (const batch of net.batches) batch.stamp(p, parameters, blend, floor, r, j);
+    for (let k = 0; k < general.length; k++) {
+      const e = general[k]!;
       const law = laws[e]!;
       const first = inputStart[e]!;
       const pressures = inputStart[e + 1]! - first;

@@ -25,20 +25,14 @@ function solverOf(net: Network): Solver {
   return solver;
 }
 
-/**
- * Solves the network at given positions, loads and charges. Never throws and never returns NaN: when nothing converges the
- * result says so (`converged` false, NO EQUILIBRIUM) and holds the best state found.
- */
-export function solveSteady(net: Network, request: SteadyRequest): SteadyResult {
-  const solver = solverOf(net);
-  const { sys } = solver;
-  const bodies = net.spec.actuators.length;
-  solver.iterations = 0;
+/** Puts a system where a request says: positions, loads, charges; contacts are left to the caller. */
+export function prepare(sys: System, request: SteadyRequest): void {
+  const { net } = sys;
   sys.xv = 0;
   sys.floor = request.floor ?? FLOOR_STEADY;
   sys.parameters = net.parameters;
   sys.soft.fill(0);
-  for (let a = 0; a < bodies; a++) {
+  for (let a = 0; a < net.spec.actuators.length; a++) {
     sys.load(a, request.loads?.[a]);
     sys.place(a, request.positions[a] ?? 0, request.side?.[a] ?? 1);
   }
@@ -52,6 +46,18 @@ export function solveSteady(net: Network, request: SteadyRequest): SteadyResult 
     const before = sys.pinned[unknown]!;
     if (Number.isNaN(before) || gauge > before) sys.pin(unknown, gauge);
   });
+}
+
+/**
+ * Solves the network at given positions, loads and charges. Never throws and never returns NaN: when nothing converges the
+ * result says so (`converged` false, NO EQUILIBRIUM) and holds the best state found.
+ */
+export function solveSteady(net: Network, request: SteadyRequest): SteadyResult {
+  const solver = solverOf(net);
+  const { sys } = solver;
+  const bodies = net.spec.actuators.length;
+  solver.iterations = 0;
+  prepare(sys, request);
 
   const contacts: ActuatorContact[] = [];
   const atStop: ActuatorContact[] = [];

@@ -8,6 +8,7 @@ import type { Storage } from './charge.ts';
 import type { Network } from './compile.ts';
 import type { Ramps } from './ramps.ts';
 import type { System } from './residual.ts';
+import { PRESSURE_CAP } from './tolerances.ts';
 
 const GAMMA = 1 - Math.SQRT1_2;
 /** Quadrature through 0, gamma, 1 less the method's own weights. */
@@ -15,10 +16,12 @@ const E1 = 1 / (6 * GAMMA * (1 - GAMMA)) - (1 - GAMMA);
 const E2 = (1 / 3 - GAMMA / 2) / (1 - GAMMA) - GAMMA;
 const E0 = -E1 - E2;
 /** Newton in a stage: converged below this relative change; most iterations. */
-const STAGE_TIGHT = 1e-7;
-const STAGE_ITERATIONS = 14;
+const STAGE_TIGHT = 1e-5;
+const STAGE_ITERATIONS = 12;
 /** A turning body without stops is followed to this many times the tolerance: 0.001 rad where a rod is followed to 0.01 mm. */
 const ENDLESS = 100;
+/** Widening of blends on the way to a stage that is not reached directly. */
+const SOFT_BLEND = 10;
 /** Weight of a way (m, rad) against a relative change: 1e-10 m is converged. */
 const WAY = 1e3;
 
@@ -56,8 +59,6 @@ export class Stepper {
   private readonly keep: Float64Array;
   /** Inertia of rows: bodies (scaled) and lines; 0: algebraic. */
   private readonly inertia: Float64Array;
-  /** Change per second over the last accepted step, for the first guess. */
-  private readonly trend: Float64Array;
   newtons = 0;
   /** Weighted error of the last trial; <= 1 is accepted. */
   error = 0;
@@ -81,7 +82,6 @@ export class Stepper {
     this.s0 = new Float64Array(n);
     this.d = new Float64Array(n);
     this.keep = new Float64Array(n);
-    this.trend = new Float64Array(n);
     this.x0 = new Float64Array(sys.x.length);
     this.x1 = new Float64Array(sys.x.length);
     this.xb = new Float64Array(sys.x.length);
@@ -98,42 +98,34 @@ export class Stepper {
     }
   }
 
-  /** Forgets slopes and trend: after a jump of anything. */
+  /** Forgets the slopes: after a jump of anything. */
   restart(): void {
     this.smooth = false;
-    this.trend.fill(0);
   }
 
-  /** Tries a step of length h from (y0, x0) at `time`; false: no convergence. Leaves (y1, x1) and `error`. */
-  trial(time: number, h: number): boolean {
-    const { sys, net, storage, y0, y1, ya, x0, x1, xb, base, s0, kg, k1, trend } = this;
+  /** Tries a step of length h from (y0, x0) at `time`; false: no convergence (`patient` tries harder). Leaves (y1, x1) and `error`. */
+  trial(time: number, h: number, patient = false): boolean {
+    const { sys, net, storage, y0, y1, ya, x0, x1, xb, base, s0, kg, k1 } = this;
     const n = net.size;
     const gh = GAMMA * h;
     const bodies = x0.length;
     for (let a = 0; a < bodies; a++) xb[a] = x0[a]! + gh * y0[net.firstVelocity + a]!;
     storage.setPositions(xb, sys.area);
     for (let i = 0; i < n; i++) {
-      sys.y[i] = y0[i]! + gh * trend[i]!;
+      sys.y[i] = y0[i]!;
       s0[i] = this.stored(i, y0[i]!);
     }
     base.set(s0);
     xb.set(x0);
-    if (!this.stage(time + gh, gh)) {
-      // The trend misleads when something has turned over: once more from the state itself.
-      sys.y.set(y0);
-      if (!this.stage(time + gh, gh)) return false;
-    }
+    if (!this.stage(time + gh, gh) && !(patient && this.softened(time + gh, gh, y0))) return false;
     ya.set(sys.y);
     for (let i = 0; i < n; i++) {
       kg[i] = (this.stored(i, ya[i]!) - s0[i]!) / gh;
       base[i] = s0[i]! + (1 - GAMMA) * h * kg[i]!;
-      sys.y[i] = ya[i]! + (1 - GAMMA) * h * trend[i]!;
+      sys.y[i] = ya[i]!;
     }
     for (let a = 0; a < bodies; a++) xb[a] = x0[a]! + (1 - GAMMA) * h * ya[net.firstVelocity + a]!;
-    if (!this.stage(time + h, gh)) {
-      sys.y.set(ya);
-      if (!this.stage(time + h, gh)) return false;
-    }
+    if (!this.stage(time + h, gh) && !(patient && this.softened(time + h, gh, ya))) return false;
     y1.set(sys.y);
     x1.set(sys.x);
     for (let i = 0; i < n; i++) k1[i] = (this.stored(i, y1[i]!) - base[i]!) / gh;
@@ -141,10 +133,9 @@ export class Stepper {
     return Number.isFinite(this.error);
   }
 
-  /** Takes the trial as the new state. `still`: bodies whose speed jumped are set by the caller. */
-  accept(h: number): void {
-    const { y0, y1, x0, x1, k0, k1, trend } = this;
-    for (let i = 0; i < y0.length; i++) trend[i] = (y1[i]! - y0[i]!) / h;
+  /** Takes the trial as the new state. */
+  accept(): void {
+    const { y0, y1, x0, x1, k0, k1 } = this;
     y0.set(y1);
     x0.set(x1);
     k0.set(k1);
@@ -158,6 +149,16 @@ export class Stepper {
       return this.storage.value;
     }
     return this.inertia[i]! * value;
+  }
+
+  /** A stage by way of softened laws, from `start`: valves that open and close in turn are met half-way. */
+  private softened(time: number, gh: number, start: Float64Array): boolean {
+    const { sys } = this;
+    sys.y.set(start);
+    sys.blend = SOFT_BLEND;
+    const near = this.stage(time, gh);
+    sys.blend = 1;
+    return near && this.stage(time, gh);
   }
 
   /** Newton on one stage: base + gamma h (right side) = stored; bodies at xb + gamma h v. */
@@ -182,11 +183,17 @@ export class Stepper {
       }
       if (!Number.isFinite(change)) return false;
       keep.set(y);
-      let share = 1;
+      let largest = 0;
+      for (let i = 0; i < net.free; i++) {
+        const size = d[i]! < 0 ? -d[i]! : d[i]!;
+        if (size > largest) largest = size;
+      }
+      const cap = largest > PRESSURE_CAP ? PRESSURE_CAP / largest : 1;
+      let share = cap;
       for (let halvings = 0; ; halvings++) {
         for (let i = 0; i < n; i++) y[i] = keep[i]! + share * d[i]!;
         const now = this.evaluate(gh);
-        if (now < norm || limited || change < 1e-4 || halvings >= 5) {
+        if (now < norm || (limited && now < 10 * norm) || change < 1e-4 || halvings >= 10) {
           norm = now;
           break;
         }

@@ -235,7 +235,7 @@ export class Transient {
       const left = edge - this.time;
       if (h > left * 0.999) h = left;
       else if (2 * h > left) h = 0.5 * left;
-      if (!this.trial(h)) {
+      if (!this.trial(h, failures > 2)) {
         this.counts.rejected++;
         this.h = 0.25 * h;
         stepper.smooth = false;
@@ -307,8 +307,8 @@ export class Transient {
     sys.held[a] = 0;
   }
 
-  private trial(h: number): boolean {
-    if (!this.stepper.trial(this.time, h)) return false;
+  private trial(h: number, patient = false): boolean {
+    if (!this.stepper.trial(this.time, h, patient)) return false;
     this.events.evaluate(this.stepper.x1, this.events.values);
     return true;
   }
@@ -382,7 +382,7 @@ export class Transient {
     const end = this.time + h;
     const atEdge = Math.abs(end - edge) < 1e-12 * Math.max(1, Math.abs(edge));
     this.time = atEdge ? edge : end;
-    this.stepper.accept(h);
+    this.stepper.accept();
     this.parameters.set(this.sys.parameters);
     this.counts.steps++;
     // The event values as they stand now are the start of the next step.

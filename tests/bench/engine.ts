@@ -42,7 +42,16 @@ const base = Math.min(...cycles.map((c) => c.ms));
 {
   const { made, net, request } = prepared(1);
   const commands = made.commands[0]!;
-  const states = [[], [commands.feedOut], [commands.feedIn], [commands.liftUp], [commands.liftDown], [commands.clamp], [commands.release], [commands.turn]];
+  const states = [
+    [],
+    [commands.feedOut],
+    [commands.feedIn],
+    [commands.liftUp],
+    [commands.liftDown],
+    [commands.clamp],
+    [commands.release],
+    [commands.turn],
+  ];
   const cold: number[] = [];
   const warm: number[] = [];
   const positions = made.positions.map((x, i) => (Number.isFinite(made.spec.actuators[i]!.high) ? 0.03 : x));
@@ -70,6 +79,8 @@ for (const [copies, target] of [
 }
 for (const row of rows) {
   const verdict = row.value <= row.target ? 'reached' : 'missed';
-  console.log(`${row.what.padEnd(46)} ${row.value.toPrecision(3).padStart(8)} ${row.unit.padEnd(3)} target ${String(row.target).padEnd(5)} ${verdict}`);
+  console.log(
+    `${row.what.padEnd(46)} ${row.value.toPrecision(3).padStart(8)} ${row.unit.padEnd(3)} target ${String(row.target).padEnd(5)} ${verdict}`,
+  );
 }
 console.log('cycle:', firstCycle.statistics);

@@ -2,7 +2,7 @@
  * A machine tool of about thirty components for measurements: two pumps with unloading, a feed cylinder with traverse cam, a lift with
  * counterbalance, a clamp behind a reducing valve and a pilot check, a spindle motor, an accumulator. `copies` of it stand beside each other.
  */
-import { type ActuatorSpec, type ElementSpec, type GasSpec, type LoadState, type NetworkSpec, type NodeSpec, type Transient, type TransientWatch } from '@oilway/engine';
+import type { ActuatorSpec, ElementSpec, GasSpec, LoadState, NetworkSpec, NodeSpec, Transient, TransientWatch } from '@oilway/engine';
 
 export const COMPONENTS = 30;
 const BODIES = 4;
@@ -64,13 +64,46 @@ export function machine(copies = 1): Machine {
     elements.push({ type: 'pump', tag: tag++, s: 0, p: low, qth: 0.967, leak: 0.003, running: on });
     const lifted = parameter(0);
     elements.push({
-      type: 'piloted', tag: tag++, a: low, b: back, k: k(80, 3),
-      pilots: [{ node: high, weight: 1 }, { node: back, weight: -1 }],
-      set: parameter(4.5), band: parameter(0.45), bit: lifted, setWhenOn: parameter(3.8), oneWay: false,
+      type: 'piloted',
+      tag: tag++,
+      a: low,
+      b: back,
+      k: k(80, 3),
+      pilots: [
+        { node: high, weight: 1 },
+        { node: back, weight: -1 },
+      ],
+      set: parameter(4.5),
+      band: parameter(0.45),
+      bit: lifted,
+      setWhenOn: parameter(3.8),
+      oneWay: false,
     });
     check(low, high, 80, 3);
-    elements.push({ type: 'relief', tag: tag++, p: high, t: back, ref: back, set: parameter(16), vented: 0.4, override: 0.08, qN: 1.5, k: k(90, 6) });
-    elements.push({ type: 'relief', tag: tag++, p: low, t: back, ref: back, set: parameter(6), vented: 0.4, override: 0.1, qN: 1.5, k: k(90, 6) });
+    elements.push({
+      type: 'relief',
+      tag: tag++,
+      p: high,
+      t: back,
+      ref: back,
+      set: parameter(16),
+      vented: 0.4,
+      override: 0.08,
+      qN: 1.5,
+      k: k(90, 6),
+    });
+    elements.push({
+      type: 'relief',
+      tag: tag++,
+      p: low,
+      t: back,
+      ref: back,
+      set: parameter(6),
+      vented: 0.4,
+      override: 0.1,
+      qN: 1.5,
+      k: k(90, 6),
+    });
     // Return: filter with bypass, cooler.
     path(back, cooled, 160, 0.4);
     check(back, cooled, 160, 5, 0.2);
@@ -90,7 +123,16 @@ export function machine(copies = 1): Machine {
     elements.push({ type: 'camPath', tag: tag++, a: feedB, b: feedM, k: k(60, 4), actuator: first, at: [0.25, 0.265], opening: [1, 0] });
     elements.push({ type: 'regulator', tag: tag++, a: feedB, b: feedM, set: parameter(0.021), needs: 0.6 });
     check(feedM, feedB, 60, 4);
-    actuators.push({ tag: first, chambers: [{ node: feedA, area: 3.1172 }, { node: feedB, area: -2.0994 }], low: 0, high: 0.4, mass: 0.3 });
+    actuators.push({
+      tag: first,
+      chambers: [
+        { node: feedA, area: 3.1172 },
+        { node: feedB, area: -2.0994 },
+      ],
+      low: 0,
+      high: 0.4,
+      mass: 0.3,
+    });
     positions.push(0);
     loads.push({ fixed: [], resistOut: [{ at: [0.265, 0.265, 0.35, 0.35], force: [0, 9, 9, 0] }], resistIn: [], friction: 1.2 });
 
@@ -105,12 +147,31 @@ export function machine(copies = 1): Machine {
     path(high, liftB, 60, 5, liftDown);
     path(liftA, back, 60, 5, liftDown);
     elements.push({
-      type: 'piloted', tag: tag++, a: liftC, b: liftA, k: k(60, 6),
-      pilots: [{ node: liftC, weight: 1 }, { node: liftB, weight: 3 }, { node: liftA, weight: -4 }],
-      set: parameter(11), band: parameter(1.1), oneWay: true,
+      type: 'piloted',
+      tag: tag++,
+      a: liftC,
+      b: liftA,
+      k: k(60, 6),
+      pilots: [
+        { node: liftC, weight: 1 },
+        { node: liftB, weight: 3 },
+        { node: liftA, weight: -4 },
+      ],
+      set: parameter(11),
+      band: parameter(1.1),
+      oneWay: true,
     });
     check(liftA, liftC, 60, 3);
-    actuators.push({ tag: first + 1, chambers: [{ node: liftC, area: 5.0265 }, { node: liftB, area: -3.4361 }], low: 0, high: 0.3, mass: 1.2 });
+    actuators.push({
+      tag: first + 1,
+      chambers: [
+        { node: liftC, area: 5.0265 },
+        { node: liftB, area: -3.4361 },
+      ],
+      low: 0,
+      high: 0.3,
+      mass: 1.2,
+    });
     positions.push(0);
     loads.push({ fixed: [{ at: [0], force: [-11.77] }], resistOut: [], resistIn: [], friction: 1.5 });
 
@@ -122,8 +183,18 @@ export function machine(copies = 1): Machine {
     const clamp = parameter(0);
     const release = parameter(0);
     elements.push({
-      type: 'piloted', tag: tag++, a: high, b: reduced, k: k(40, 5),
-      pilots: [{ node: reduced, weight: -1 }, { node: 0, weight: 1 }], set: parameter(-5), band: parameter(0.25), oneWay: true,
+      type: 'piloted',
+      tag: tag++,
+      a: high,
+      b: reduced,
+      k: k(40, 5),
+      pilots: [
+        { node: reduced, weight: -1 },
+        { node: 0, weight: 1 },
+      ],
+      set: parameter(-5),
+      band: parameter(0.25),
+      oneWay: true,
     });
     path(reduced, clampA, 40, 4, clamp);
     path(clampB, back, 40, 4, clamp);
@@ -131,11 +202,30 @@ export function machine(copies = 1): Machine {
     path(clampA, back, 40, 4, release);
     check(clampA, clampC, 40, 3);
     elements.push({
-      type: 'piloted', tag: tag++, a: clampC, b: clampA, k: k(40, 4),
-      pilots: [{ node: clampB, weight: 4 }, { node: clampA, weight: -3 }, { node: clampC, weight: -1 }],
-      set: parameter(0.1), band: parameter(0.5), oneWay: false,
+      type: 'piloted',
+      tag: tag++,
+      a: clampC,
+      b: clampA,
+      k: k(40, 4),
+      pilots: [
+        { node: clampB, weight: 4 },
+        { node: clampA, weight: -3 },
+        { node: clampC, weight: -1 },
+      ],
+      set: parameter(0.1),
+      band: parameter(0.5),
+      oneWay: false,
     });
-    actuators.push({ tag: first + 2, chambers: [{ node: clampC, area: 1.2566 }, { node: clampB, area: -0.7658 }], low: 0, high: 0.05, mass: 0.02 });
+    actuators.push({
+      tag: first + 2,
+      chambers: [
+        { node: clampC, area: 1.2566 },
+        { node: clampB, area: -0.7658 },
+      ],
+      low: 0,
+      high: 0.05,
+      mass: 0.02,
+    });
     positions.push(0);
     loads.push({ fixed: [{ at: [0.04, 0.041], force: [0, -20] }], resistOut: [], resistIn: [], friction: 0.3 });
 
@@ -151,8 +241,15 @@ export function machine(copies = 1): Machine {
     elements.push({ type: 'laminar', tag: tag++, a: motorA, b: back, g: 4e-4 });
     actuators.push({
       tag: first + 3,
-      chambers: [{ node: motorA, area: 0.05 / (2 * Math.PI) }, { node: back, area: -0.05 / (2 * Math.PI) }],
-      low: Number.NEGATIVE_INFINITY, high: Number.POSITIVE_INFINITY, mass: 2e-5, pressureFriction: 0.0008, creep: 1e-3,
+      chambers: [
+        { node: motorA, area: 0.05 / (2 * Math.PI) },
+        { node: back, area: -0.05 / (2 * Math.PI) },
+      ],
+      low: Number.NEGATIVE_INFINITY,
+      high: Number.POSITIVE_INFINITY,
+      mass: 2e-5,
+      pressureFriction: 0.0008,
+      creep: 1e-3,
     });
     positions.push(0);
     loads.push({ fixed: [], resistOut: [{ at: [0], force: [0.012] }], resistIn: [{ at: [0], force: [0.012] }], friction: 0.001 });
@@ -160,7 +257,12 @@ export function machine(copies = 1): Machine {
   }
   return {
     spec: { nodes, elements, actuators, gas, parameters: values.length, oil: { bulk: 1400, air: 0.005, exponent: 1.4 } },
-    values, commands, positions, loads, lowNode, highNode,
+    values,
+    commands,
+    positions,
+    loads,
+    lowNode,
+    highNode,
   };
 }
 
@@ -171,7 +273,11 @@ export function runCycle(made: Machine, run: Transient): string | undefined {
   const go = (name: keyof Commands, to: number): void => {
     for (const of of made.commands) run.ramp(of[name], run.parameters[of[name]]!, to, run.time, run.time + RAMP);
   };
-  const at = (body: number, threshold: number, edge: 'rising' | 'falling'): TransientWatch => ({ terms: [{ of: 'position', index: body, weight: 1 }], threshold, edge });
+  const at = (body: number, threshold: number, edge: 'rising' | 'falling'): TransientWatch => ({
+    terms: [{ of: 'position', index: body, weight: 1 }],
+    threshold,
+    edge,
+  });
   const bit = (value: number): TransientWatch => ({
     terms: [{ of: 'pressure', index: made.highNode, weight: 1 }],
     threshold: value > 0 ? 4.95 : 3.8,
