@@ -16,4 +16,5 @@ export * from './resolve/symbols.ts';
 export { STATE_NAMES } from './resolve/places.ts';
 export { MEASURES, type Subject, measureOf, measuresOf } from './resolve/measures.ts';
 export { format } from './format/format.ts';
+export { LANGUAGE_CODES, type CodePage } from './code-pages.ts';
 export * from './service.ts';

@@ -56,7 +56,7 @@ describe('quick fixes', () => {
   const ask = (findings: readonly Finding[], only?: readonly string[]) =>
     codeActions(analysis(findings), { start: 6, end: 6, shown: [], ...(only ? { only } : {}) }, context);
   test('at the finding, preferred where safe', () => {
-    expect(ask([finding()])).toMatchObject([
+    expect(ask([finding()]).slice(0, 1)).toMatchObject([
       { title: 'Insert a relief', kind: 'quickfix', isPreferred: true, edit: { changes: { [URI]: [{ newText: '\nrelief RV2 ()' }] } } },
     ]);
     expect(ask([finding({ fixes: [{ title: 'Guess', safe: false, changes: [] }] })])[0]?.isPreferred).toBeUndefined();
@@ -64,6 +64,12 @@ describe('quick fixes', () => {
   test('none elsewhere, none of accepted findings', () => {
     expect(ask([finding({ origin: { uri: URI, start: 18, end: 21 } })])).toEqual([]);
     expect(ask([finding({ accepted: 'yes' })])).toEqual([]);
+  });
+  test('a finding of a rule can be accepted; the reason stays open', () => {
+    const accept = ask([finding({ fixes: [] })])[0];
+    expect(accept?.title).toBe('Accept A01 here: adds an `allow` statement, the reason is yours to write');
+    expect(accept?.edit?.changes?.[URI]?.[0]?.newText).toBe('allow A01 in REST ""\n');
+    expect(ask([finding({ code: 'NAME', fixes: [] })])).toEqual([]);
   });
   test('fix all: only where asked for, only safe ones, no two at the same characters', () => {
     const other = finding({

@@ -53,6 +53,7 @@ describe('over stdio', () => {
     const found = diagnostics.find((one) => one.severity === 1);
     expect(found && client.slice(URI, found.range)).toBe('M7');
     expect(found?.message).toContain('M7');
+    expect(found?.codeDescription?.href).toBe('oilway-rule:/NAME.md');
     const right = client.edit(URI, 'driven by M7', 'driven by M1');
     expect((await client.diagnostics(URI, (one) => one.version === right)).diagnostics.filter((one) => one.severity === 1)).toEqual([]);
   });
@@ -180,6 +181,7 @@ describe('over stdio', () => {
       expect(reply.version).toBe(2);
       expect(reply.study?.steps.map((one) => one.id)).toEqual(['Bore.Out', 'Bore.Back']);
       expect(await client.connection.sendRequest('oilway/rulePage', { code: 'A01' })).toContain('# A01');
+      expect(await client.connection.sendRequest('oilway/rulePage', { code: 'NAME' })).toContain('# NAME');
       expect(await client.connection.sendRequest('oilway/rulePage', { code: 'none' })).toBeNull();
     });
 

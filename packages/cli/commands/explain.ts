@@ -2,7 +2,7 @@
 import { RULES, codePages, ruleOf } from '@oilway/rules';
 import type { Paint } from '../text/colour.ts';
 import { table } from '../text/table.ts';
-import { LANGUAGE_CODES } from './language-codes.ts';
+import { LANGUAGE_CODES } from '@oilway/language';
 import type { Exit, Output } from './outcome.ts';
 
 export function explain(code: string | undefined, output: Output, paint: Paint): Exit {

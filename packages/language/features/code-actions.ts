@@ -36,6 +36,23 @@ export function safeFixes(findings: readonly Finding[]): { readonly fixes: reado
   return { fixes, changes };
 }
 
+/** Codes of rules: those of the language itself are mended, never accepted. */
+const RULE = /^[A-L]\d\d$/;
+const STATES: ReadonlySet<string> = new Set(['REST', 'OFF', 'STOP', 'IDLE']);
+
+/** An `allow` statement at the end of the file. Its reason is left empty on purpose: until it is written, the statement itself is a finding. */
+function allowance(analysis: Analysis, finding: Finding): readonly TextChange[] {
+  const { circuit, text } = analysis;
+  const owner = finding.place.split('.')[0] ?? '';
+  const known =
+    circuit?.components.some((one) => one.id === finding.place || one.id === owner) ||
+    circuit?.lines.some((one) => one.name === finding.place);
+  const on = known ? ` on ${finding.place}` : '';
+  const where = finding.state !== undefined && STATES.has(finding.state) ? ` in ${finding.state}` : '';
+  const gap = text === '' || text.endsWith('\n') ? '' : '\n';
+  return [{ uri: analysis.uri, start: text.length, end: text.length, text: `${gap}allow ${finding.code}${on}${where} ""\n` }];
+}
+
 export interface CodeActionQuestion {
   readonly start: number;
   readonly end: number;
@@ -48,24 +65,30 @@ export interface CodeActionQuestion {
 export function codeActions(analysis: Analysis, question: CodeActionQuestion, context: DiagnosticContext): CodeAction[] {
   const wants = (kind: string): boolean => !question.only || question.only.some((one) => kind === one || kind.startsWith(`${one}.`));
   const actions: CodeAction[] = [];
+  const here = analysis.findings.filter(
+    (one) =>
+      one.accepted === undefined && one.origin.uri === analysis.uri && one.origin.start <= question.end && one.origin.end >= question.start,
+  );
+  const shownFor = (finding: Finding): Diagnostic[] => {
+    const shown = question.shown.filter((one) => sameFinding(finding, (one.data ?? {}) as Partial<DiagnosticData>));
+    const own = toDiagnostic(finding, context);
+    return shown.length > 0 ? shown : own ? [own] : [];
+  };
   if (wants(CodeActionKind.QuickFix)) {
-    for (const finding of analysis.findings) {
-      if (finding.accepted !== undefined || finding.origin.uri !== analysis.uri) continue;
-      if (finding.origin.start > question.end || finding.origin.end < question.start) continue;
-      const shown = question.shown.filter((one) => sameFinding(finding, (one.data ?? {}) as Partial<DiagnosticData>));
-      const own = toDiagnostic(finding, context);
-      const diagnostics = shown.length > 0 ? shown : own ? [own] : [];
+    for (const finding of here) {
       finding.fixes.forEach((fix, index) => {
         const edit = workspaceEdit(fix.changes, context);
         if (!edit) return;
-        actions.push({
-          title: fix.title,
-          kind: CodeActionKind.QuickFix,
-          diagnostics,
-          edit,
-          ...(index === 0 && fix.safe ? { isPreferred: true } : {}),
-        });
+        const preferred = index === 0 && fix.safe ? { isPreferred: true } : {};
+        actions.push({ title: fix.title, kind: CodeActionKind.QuickFix, diagnostics: shownFor(finding), edit, ...preferred });
       });
+    }
+  }
+  if (wants(CodeActionKind.QuickFix)) {
+    for (const finding of here) {
+      const edit = workspaceEdit(allowance(analysis, finding), context);
+      const title = `Accept ${finding.code} here: adds an \`allow\` statement, the reason is yours to write`;
+      if (RULE.test(finding.code) && edit) actions.push({ title, kind: CodeActionKind.QuickFix, diagnostics: shownFor(finding), edit });
     }
   }
   // Only where asked for: an editor that runs it on saving must not wait for it otherwise.

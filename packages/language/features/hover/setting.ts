@@ -37,7 +37,10 @@ export function dependsOn(analysis: Analysis, component: Component, property: st
         }
       }
       for (const [id, one] of moved) {
-        const share = one.share === undefined ? '' : `: ${show.figure(one.share * 0.1, 'ratio')} of speed for 10 % of it`;
+        const share =
+          one.share === undefined
+            ? ''
+            : `: 10 % more gives ${show.figure(Math.abs(one.share) * 0.1, 'ratio')} ${one.share < 0 ? 'less' : 'more'}`;
         lines.push(`- speed of ${literal(id)} in ${literal(place.label)}${share}`);
       }
       if (property === 'set' && place.points.some((point) => point.lifting.includes(component.id)))
