@@ -14,7 +14,7 @@ const THIN_AIR = 0.02;
  */
 export function compression(oil: OilSpec, gauge: number): { value: number; slope: number } {
   const absolute = gauge + ATMOSPHERE;
-  const at = absolute < THIN_AIR ? THIN_AIR : absolute;
+  const at = Math.max(absolute, THIN_AIR);
   const air = oil.air > 0 ? oil.air * (ATMOSPHERE / at) ** (1 / oil.exponent) : 0;
   const liquid = (1 - oil.air) * Math.exp((ATMOSPHERE - at) / oil.bulk);
   const volume = air + liquid;

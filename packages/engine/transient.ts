@@ -35,8 +35,9 @@ const CROSSINGS = 4;
 const NO_TIME = 1e-3;
 const MAX_STEPS = 200_000;
 
+/** Pressures: loosely where inertia is off; as multiples of the relative tolerance where it is on. */
 const QUASI_STATIC = { pressure: 0.1, pressureRelative: 0.05 };
-const DYNAMIC = { pressure: 1e-3, pressureRelative: 1e-3 };
+const DYNAMIC = { pressure: 3, pressureRelative: 3 };
 
 type Happening = AdvanceReport['happened'][number];
 
@@ -78,12 +79,12 @@ export class Transient {
         : { spec, pressure: spec.precharge, volume: spec.volume, exponent };
     });
     this.storage = new Storage(network, charges);
-    const relative = options.tolerance ?? 1e-4;
+    const relative = options.tolerance ?? (options.dynamics ? 3e-5 : 1e-4);
     const tolerance: StepTolerance = {
       position: 0.1 * relative,
       positionRelative: relative,
       velocity: relative,
-      ...(options.dynamics ? DYNAMIC : QUASI_STATIC),
+      ...(options.dynamics ? { pressure: DYNAMIC.pressure * relative, pressureRelative: DYNAMIC.pressureRelative * relative } : QUASI_STATIC),
     };
     this.stepper = new Stepper(this.sys, this.storage, this.ramps, options.dynamics ?? false, tolerance);
     this.events = new Events(this.sys, this.stepper, this.contacts);
@@ -407,7 +408,7 @@ export class Transient {
 
   /** A body has passed a knot: a stop holds it, else the next cell begins. */
   private cross(a: number, direction: 1 | -1, happened: Happening[]): void {
-    const { sys, stepper, network } = this;
+    const { sys, network } = this;
     const spec = network.spec.actuators[a]!;
     const cell = sys.cell[a]!;
     const knot = sys.knots[a]![direction > 0 ? cell : cell - 1]!;

@@ -1,6 +1,6 @@
 /**
- * Three worked circuits with laws of their own (hyperbolic blends, viscous friction), solved independently with SciPy 1.10
- * (Radau, rtol 1e-9), ngspice 39 and SUNDIALS 6.4, which agreed. Units MPa, L/s, 1e-3 m2, kN, m, s, t.
+ * Three worked circuits with laws of their own (hyperbolic blends, viscous friction), to be solved independently: the expected figures are
+ * those of SciPy 1.17 on the same equations. Units MPa, L/s, 1e-3 m2, kN, m, s, t.
  */
 import { type ActuatorSpec, compile, type CustomSpec, type Network, type NodeSpec } from '@oilway/engine';
 
@@ -99,8 +99,8 @@ export function oneCylinder(): Reference {
   });
   return {
     net,
-    extend: { pressures: [5.662978, 4.999563, 0.180239, 0.026296], velocity: 0.156777 },
-    retract: { pressures: [15.083133, 2.080806, 14.667638, 0.287154], velocity: -0.2577984 },
+    extend: { pressures: [5.662968389, 4.999553273, 0.180239066, 0.026296291], velocity: 0.156777041 },
+    retract: { pressures: [15.083130621, 2.080833325, 14.66762985, 0.287157616], velocity: -0.257800074 },
   };
 }
 
@@ -151,8 +151,8 @@ export function twoPumps(): Reference {
   });
   return {
     net,
-    extend: { pressures: [1.457295, 2.120605, 0.564159, 0.260156], velocity: 0.0770195 },
-    retract: { pressures: [5.076737, 5.296986, 1.833601, 4.736307], velocity: -0.0987035 },
+    extend: { pressures: [1.457445088, 2.120754126, 0.564309153, 0.260156054, 0.052721908], velocity: 0.077019485 },
+    retract: { pressures: [5.076732139, 5.297000436, 1.833739974, 4.736276525, 0.366850153], velocity: -0.09870727 },
   };
 }
 
@@ -211,5 +211,5 @@ export function traverseAndFeed(): Reference {
     gas: [],
     parameters: 2,
   });
-  return { net, extend: { pressures: [3.651685, 3.102704, 0.3209, 0.614713], velocity: 0.1901497 } };
+  return { net, extend: { pressures: [3.651670881, 3.102690323, 0.320900206, 0.614712838, 0.071556221], velocity: 0.190149701 } };
 }

@@ -38,7 +38,7 @@ export function reliefLaw(spec: ReliefSpec): Law {
         effective -= positive(overSet, EPS * blend);
       }
       const wanted = override * effective;
-      const band = wanted > LEAST_RELIEF_BAND ? wanted : LEAST_RELIEF_BAND;
+      const band = Math.max(wanted, LEAST_RELIEF_BAND);
       const bandByX = wanted > LEAST_RELIEF_BAND ? override * effectiveByX : 0;
       const lift = z[0]! - opens;
       const share = positive(lift, EPS * blend) / band;
