@@ -74,25 +74,57 @@ const oils: readonly (readonly [PublishedId, grade: string, celsius: string, ind
   ['vis-03', '32', '80', '102'],
 ];
 
-/** Darcy friction factor from the loss over 10 m at a velocity, m/s. */
-const friction = (bore: number, velocity: number, within?: Shown['within']): Shown => ({
-  read: (bench) => (loss(bench) * 2 * bore) / (10 * 900 * velocity ** 2),
+/** Darcy friction factor from the loss over a length, m, at a velocity, m/s. */
+const friction = (bore: number, velocity: number, length = 10, within?: Shown['within']): Shown => ({
+  read: (bench) => (loss(bench) * 2 * bore) / (length * 900 * velocity ** 2),
   ...(within === undefined ? {} : { within }),
 });
 const CHURCHILL: Shown['within'] = [0.03, 'the product uses Churchill (1977), an explicit form that keeps to Colebrook within 3 %'];
 
-/**
- * A pipe at a Reynolds number with a relative roughness: hose is 0.02 mm rough, tube 0.0015 mm. The viscosity is 10 mm2/s, so the velocity follows from
- * the Reynolds number; the bore from the roughness.
- */
-const rough: readonly (readonly [PublishedId, reynolds: number, bore: number, kind: 'hose' | 'tube', within?: Shown['within']])[] = [
-  ['fri-col-5000-0.001', 5e3, 0.02, 'hose', [0.06, 'transition: Churchill lies up to 6 % below Colebrook at a Reynolds number of 5000']],
-  ['fri-col-10000-0.001', 1e4, 0.02, 'hose', CHURCHILL],
-  ['fri-col-100000-0.001', 1e5, 0.02, 'hose', CHURCHILL],
-  ['fri-col-5000-0.01', 5e3, 0.002, 'hose', [0.06, 'transition: Churchill lies up to 6 % off Colebrook at a Reynolds number of 5000']],
-  ['fri-col-10000-0.01', 1e4, 0.002, 'hose', CHURCHILL],
-  ['fri-chu-10000-0.001', 1e4, 0.02, 'hose'],
-  ['fri-chu-100000-0.0001', 1e5, 0.2, 'hose'],
+interface Rough {
+  readonly id: PublishedId;
+  readonly reynolds: number;
+  /** m; with it goes the relative roughness: hose is 0.02 mm rough, tube 0.0015 mm. */
+  readonly bore: number;
+  readonly kind: 'hose' | 'tube';
+  /** mm2/s: the velocity follows from the Reynolds number. */
+  readonly grade: number;
+  /** m */
+  readonly length?: number;
+  readonly within?: Shown['within'];
+}
+/** 500 mm tube is smooth: relative roughness 3e-6. */
+const SMOOTH = { bore: 0.5, kind: 'tube', length: 100 } as const;
+const rough: readonly Rough[] = [
+  {
+    id: 'fri-col-5000-0.001',
+    reynolds: 5e3,
+    bore: 0.02,
+    kind: 'hose',
+    grade: 10,
+    within: [0.06, 'transition: Churchill lies up to 6 % off Colebrook at a Reynolds number of 5000'],
+  },
+  { id: 'fri-col-10000-0.001', reynolds: 1e4, bore: 0.02, kind: 'hose', grade: 10, within: CHURCHILL },
+  { id: 'fri-col-100000-0.001', reynolds: 1e5, bore: 0.02, kind: 'hose', grade: 10, within: CHURCHILL },
+  { id: 'fri-col-1e+06-0.001', reynolds: 1e6, bore: 0.02, kind: 'hose', grade: 1, within: CHURCHILL },
+  {
+    id: 'fri-col-5000-0.01',
+    reynolds: 5e3,
+    bore: 0.002,
+    kind: 'hose',
+    grade: 1,
+    within: [0.06, 'transition: Churchill lies up to 6 % off Colebrook at a Reynolds number of 5000'],
+  },
+  { id: 'fri-col-10000-0.01', reynolds: 1e4, bore: 0.002, kind: 'hose', grade: 1, within: CHURCHILL },
+  { id: 'fri-col-100000-0.01', reynolds: 1e5, bore: 0.002, kind: 'hose', grade: 1, length: 1, within: CHURCHILL },
+  { id: 'fri-chu-10000-0.001', reynolds: 1e4, bore: 0.02, kind: 'hose', grade: 10 },
+  { id: 'fri-chu-100000-0.0001', reynolds: 1e5, bore: 0.2, kind: 'hose', grade: 10 },
+  { id: 'fri-chu-2000-0', reynolds: 2e3, ...SMOOTH, grade: 1000 },
+  { id: 'fri-chu-3000-0', reynolds: 3e3, ...SMOOTH, grade: 1000 },
+  { id: 'fri-chu-4000-0', reynolds: 4e3, ...SMOOTH, grade: 1000 },
+  { id: 'fri-chu-10000-0', reynolds: 1e4, ...SMOOTH, grade: 1000, within: [5e-4, 'tube is not quite smooth'] },
+  { id: 'fri-chu-100000-0', reynolds: 1e5, ...SMOOTH, grade: 100, within: [2e-3, 'tube is not quite smooth'] },
+  { id: 'fri-10', reynolds: 1e4, ...SMOOTH, grade: 1000, within: CHURCHILL },
 ];
 
 export const LINE_CIRCUITS: readonly BenchCircuit[] = [
@@ -151,18 +183,16 @@ export const LINE_CIRCUITS: readonly BenchCircuit[] = [
     }),
     shows: { 'fri-chu-500-0': friction(0.01, 0.5) },
   },
-  ...rough.map(([id, reynolds, bore, kind, within]): BenchCircuit => {
-    // The grade that makes the loss of a 10 m pipe stay within what a pump can give.
-    const grade = bore < 0.01 ? 1 : 10;
+  ...rough.map(({ id, reynolds, bore, kind, grade, length = 10, within }): BenchCircuit => {
     const velocity = (reynolds * grade * 1e-6) / bore;
     return {
-      about: `friction in a ${kind} of ${bore * 1000} mm at a Reynolds number of ${reynolds}`,
+      about: `friction in a ${kind} of ${bore * 1000} mm at a Reynolds number of ${reynolds} (${id})`,
       text: pipe({
         flow: `${velocity} m/s * ${(Math.PI / 4) * bore ** 2 * 1e6} mm2`,
         fluid: `grade ${grade}, temperature 40 degC, density 900 kg/m3`,
-        line: `${kind}, bore ${bore * 1000} mm, length 10 m`,
+        line: `${kind}, bore ${bore * 1000} mm, length ${length} m`,
       }),
-      shows: { [id]: friction(bore, velocity, within) },
+      shows: { [id]: friction(bore, velocity, length, within) },
     };
   }),
   ...oils.map(

@@ -229,6 +229,64 @@ cycle T {
 `,
     shows: { 'int-05': { read: (bench) => bench.pressure('Push', 'I1.A'), within: [0.001, 'the relief adds its override'] } },
   },
+  ...(
+    [
+      ['pmp-01', '5 in3/rev', '20 gpm', '1000 psi', '900 lbf.in'],
+      ['pmp-03', '100 cm3/rev', '0.0015 m3/s', '70 bar', '120 N.m'],
+    ] as const
+  ).map(
+    ([id, displacement, delivered, pressure, torque]): BenchCircuit => ({
+      about: `pump of ${displacement} at 1000 rpm that delivers ${delivered} at ${pressure} for ${torque}`,
+      text: `circuit Bench
+fluid F1 (grade 46, temperature 40 degC)
+reservoir R1 (volume 400 L)
+drive M1 (power 50 kW, speed 1000 rpm)
+pump P1 (displacement ${displacement}, driven by M1, volumetric ${delivered} / (${displacement} * 1000 rpm), mechanical ${displacement} * ${pressure} / ${torque}, rated ${pressure})
+relief RV1 (set ${pressure}, passes 10000 L/min at 1 bar, override 1 %)
+suction R1 to P1
+working P1 to RV1
+return RV1 to R1
+`,
+      shows: {
+        [id]: {
+          // Hydraulic power delivered over the power at the shaft.
+          read: (bench: Bench): number => {
+            const rest = bench.state('REST');
+            const outlet = Object.entries(rest.pressures).find(([net]) => net === 'P1.P')?.[1] ?? Number.NaN;
+            return (Math.abs(rest.flows['P1.P'] ?? Number.NaN) * outlet) / (rest.power.P1 ?? Number.NaN);
+          },
+        },
+      },
+    }),
+  ),
+  {
+    about: 'pump of five pistons of 1.125 in x 1 in',
+    text: `circuit Bench\n${supply('5 * 0.78539816 * 1.125 in * 1.125 in * 1 in / 1 rev * 1000 rpm', '100 psi')}`,
+    shows: { 'pmp-05': { read: (bench) => Math.abs(bench.state('REST').flows['P1.P'] ?? Number.NaN) / ((1000 * Math.PI) / 30) } },
+  },
+  {
+    about: 'force multiplied five times at 25 psi: 50 lbf on 2 in2 carry 250 lbf on 10 in2',
+    text: `circuit Bench
+fluid F1 (grade 46, temperature 40 degC)
+reservoir R1 (volume 400 L)
+drive M1 (power 50 kW, speed 1000 rpm)
+pump P1 (displacement 10 cm3/rev, driven by M1)
+relief RV1 (set 100 psi, passes 10000 L/min at 1 bar)
+cylinder C1 (bore ${round('2 in2')}, stroke 10 in, begins 5 in, ${IDEAL}, attitude level)
+cylinder C2 (bore ${round('10 in2')}, stroke 10 in, begins 5 in, ${IDEAL}, attitude level)
+directional V1 (2/2, normally closed, coil a SOL1, passes 6000 L/min at 0.1 bar, takes 1 ms)
+suction R1 to P1
+working P1 to RV1
+return RV1 to R1
+working C1.cap to V1 to C2.cap
+load C1 (inward 50 lbf)
+load C2 (inward 240 lbf)
+cycle T {
+  step Push energise SOL1 for 0.2 s
+}
+`,
+    shows: { 'cyl-16': available('Push', 'C2') },
+  },
   {
     about: 'pump over its relief at 2000 psi',
     text: `circuit Bench\n${supply('5 gpm', '2000 psi')}`,
@@ -295,6 +353,20 @@ require UV1 power in REST at most 5 hp
       'mot-01': velocity('Turn', 'HM1'),
       'mot-02': available('Turn', 'HM1'),
       'mot-03': { read: delivered('Turn', 'HM1'), within: [0.006, 'turned against 91 N.m, not the 91.4 N.m at which it would stand'] },
+    },
+  },
+  {
+    about: 'motor of 164 cm3 a revolution, 0.006 m3/s, 91.2 % and 93.0 %',
+    text: motor({
+      flow: '0.006 m3/s',
+      set: '90 bar',
+      motor: 'displacement 164 cm3/rev, volumetric 91.2 %, mechanical 93.0 %, fastest 2000 rpm, rated 70 bar',
+      load: 'resist 170 N.m',
+    }),
+    shows: {
+      'mot-06': {
+        read: (bench) => delivered('Turn', 'HM1')(bench) / (bench.pressure('Turn', 'HM1.A', 'HM1') * bench.flow('Turn', 'HM1.A', 'HM1')),
+      },
     },
   },
   {

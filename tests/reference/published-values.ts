@@ -287,6 +287,15 @@ export const PUBLISHED = {
     source:
       "Sullivan, 'Fluid Power: Theory and Applications', 4th ed., Example 2.8 (p. 35); data and printed answer in a public textbook-companion repository",
   },
+  'pmp-01': {
+    what: 'pump overall efficiency',
+    value: 81.6,
+    unit: '%',
+    within: 0.003,
+    kind: 'source-steps',
+    source:
+      "Esposito, 'Fluid Power with Applications' (edition not recorded), Example 5-8; problem data and solution steps in a public textbook-companion repository; value = result of those steps, evaluated here",
+  },
   'pmp-02': {
     what: 'pump theoretical torque',
     value: 793,
@@ -295,6 +304,15 @@ export const PUBLISHED = {
     kind: 'source-steps',
     source:
       "Esposito, 'Fluid Power with Applications' (edition not recorded), Example 5-8; problem data and solution steps in a public textbook-companion repository; value = result of those steps, evaluated here",
+  },
+  'pmp-03': {
+    what: 'pump overall efficiency, SI',
+    value: 83.5,
+    unit: '%',
+    within: 0.003,
+    kind: 'source-steps',
+    source:
+      "Esposito, 'Fluid Power with Applications' (edition not recorded), Example 5-9; problem data and solution steps in a public textbook-companion repository; value = result of those steps, evaluated here",
   },
   'pmp-04': {
     what: 'pump theoretical torque, SI',
@@ -331,6 +349,15 @@ export const PUBLISHED = {
     kind: 'source-steps',
     source:
       "Esposito, 'Fluid Power with Applications' (edition not recorded), Example 7-5; problem data and solution steps in a public textbook-companion repository; value = result of those steps, evaluated here",
+  },
+  'mot-06': {
+    what: 'motor overall efficiency',
+    value: 84.8,
+    unit: '%',
+    within: 0.003,
+    kind: 'source-steps',
+    source:
+      "Esposito, 'Fluid Power with Applications' (edition not recorded), Example 7-6; problem data and solution steps in a public textbook-companion repository; value = result of those steps, evaluated here",
   },
   'mot-07': {
     what: 'motor output power',
@@ -497,6 +524,70 @@ export const PUBLISHED = {
     kind: 'source',
     source: 'Cengel & Cimbala, Example 8-3 (public companion; printed answers 1700 lbf/ft2, 27.3 ft, 461 W [values from memory])',
   },
+  'fri-col-1e+06-0.001': {
+    what: 'Colebrook Darcy f',
+    value: 0.0199,
+    unit: '',
+    within: 0.003,
+    kind: 'source',
+    source: "public R package test, values attributed there to an engineering reference site's Colebrook table",
+  },
+  'fri-col-100000-0.01': {
+    what: 'Colebrook Darcy f',
+    value: 0.0384,
+    unit: '',
+    within: 0.006,
+    kind: 'source',
+    source: "public R package test, values attributed there to an engineering reference site's Colebrook table",
+  },
+  'fri-chu-2000-0': {
+    what: 'Churchill 1977 Darcy f',
+    value: 0.0320433,
+    unit: '',
+    within: 0.0001,
+    kind: 'derived',
+    source: 'derived: Churchill (1977) formula evaluated here (A=[2.457 ln(1/((7/Re)^0.9+0.27 e/D))]^16, B=(37530/Re)^16)',
+  },
+  'fri-chu-3000-0': {
+    what: 'Churchill 1977 Darcy f',
+    value: 0.0429747,
+    unit: '',
+    within: 0.0001,
+    kind: 'derived',
+    source: 'derived: Churchill (1977) formula evaluated here (A=[2.457 ln(1/((7/Re)^0.9+0.27 e/D))]^16, B=(37530/Re)^16)',
+  },
+  'fri-chu-4000-0': {
+    what: 'Churchill 1977 Darcy f',
+    value: 0.0405897,
+    unit: '',
+    within: 0.0001,
+    kind: 'derived',
+    source: 'derived: Churchill (1977) formula evaluated here (A=[2.457 ln(1/((7/Re)^0.9+0.27 e/D))]^16, B=(37530/Re)^16)',
+  },
+  'fri-chu-10000-0': {
+    what: 'Churchill 1977 Darcy f',
+    value: 0.0310021,
+    unit: '',
+    within: 0.0001,
+    kind: 'derived',
+    source: 'derived: Churchill (1977) formula evaluated here (A=[2.457 ln(1/((7/Re)^0.9+0.27 e/D))]^16, B=(37530/Re)^16)',
+  },
+  'fri-chu-100000-0': {
+    what: 'Churchill 1977 Darcy f',
+    value: 0.0178748,
+    unit: '',
+    within: 0.0001,
+    kind: 'derived',
+    source: 'derived: Churchill (1977) formula evaluated here (A=[2.457 ln(1/((7/Re)^0.9+0.27 e/D))]^16, B=(37530/Re)^16)',
+  },
+  'fri-10': {
+    what: 'Blasius f = 0.3164 Re^-0.25 at 1e4',
+    value: 0.03164,
+    unit: '',
+    within: 0.0001,
+    kind: 'source',
+    source: 'Blasius (valid 4000<Re<1e5, smooth) [from memory]',
+  },
   'fri-chu-500-0': {
     what: 'Churchill 1977 Darcy f',
     value: 0.128,
@@ -653,16 +744,6 @@ export const PUBLISHED = {
     kind: 'derived',
     source: 'derived',
   },
-  'acc-07': { what: 'ideal adiabatic (n=1.4) yield', value: 3.604, unit: 'L', within: 0.001, kind: 'derived', source: 'derived' },
-  'acc-08': {
-    what: 'real-gas isothermal yield at 20 C',
-    value: 4.26,
-    unit: 'L',
-    within: 0.001,
-    kind: 'derived',
-    source:
-      'derived from the reference equation of state for nitrogen (Span et al., J. Phys. Chem. Ref. Data 29 (2000) 1361; the one used by the NIST WebBook)',
-  },
   'acc-10': {
     what: 'precharge 90 bar g at 20 C read at 50 C, ideal',
     value: 99.31,
@@ -689,57 +770,6 @@ export const PUBLISHED = {
     source:
       "Sullivan, 'Fluid Power: Theory and Applications', 4th ed., Example 2.6 (p. 28); data and printed answer in a public textbook-companion repository",
   },
-  'cyl-17': {
-    what: 'large-piston area to raise 800 lbf with 40 lbf on 4 in2',
-    value: 80,
-    unit: 'in2',
-    within: 0.0001,
-    kind: 'source',
-    source: 'US Army TM 1-1500-204-23-2, p. 2-3 (public domain)',
-  },
-  'cyl-18': {
-    what: 'small-piston stroke for 10 in at 20:1',
-    value: 200,
-    unit: 'in',
-    within: 0.0001,
-    kind: 'source',
-    source: 'US Army TM 1-1500-204-23-2, p. 2-3 (public domain)',
-  },
-  'hea-01': {
-    what: 'heat over 4 h',
-    value: 30528,
-    unit: 'Btu',
-    within: 1e-5,
-    kind: 'source',
-    source:
-      "Sullivan, 'Fluid Power: Theory and Applications', 4th ed., Example 12.1 (p. 290); data and printed answer in a public textbook-companion repository",
-  },
-  'pow-04': { what: '1 bar x 600 L/min', value: 1.0, unit: 'kW', within: 1e-9, kind: 'derived', source: 'derived' },
-  'thm-03': {
-    what: 'trapped oil, alpha 7e-4, K 1.5 GPa, +20 K, rigid',
-    value: 210,
-    unit: 'bar',
-    within: 0.001,
-    kind: 'derived',
-    source: 'derived from dp=alpha K dT',
-  },
-  'blk-01': {
-    what: 'fractional compression',
-    value: 0.0029,
-    unit: '',
-    within: 0.02,
-    kind: 'source',
-    source:
-      "Sullivan, 'Fluid Power: Theory and Applications', 4th ed., Example 6.2 (p. 115); data and printed answer in a public textbook-companion repository",
-  },
-  'dec-01': {
-    what: 'decompression volume: 60 L at 300 bar, K 1.4 GPa',
-    value: 1.2857,
-    unit: 'L',
-    within: 0.001,
-    kind: 'derived',
-    source: 'derived dV=V dp/K',
-  },
   'fri-col-5000-0.001': {
     what: 'Colebrook Darcy f',
     value: 0.0385,
@@ -764,14 +794,6 @@ export const PUBLISHED = {
     kind: 'source',
     source: "public R package test, values attributed there to an engineering reference site's Colebrook table",
   },
-  'fri-col-1e+06-0.001': {
-    what: 'Colebrook Darcy f',
-    value: 0.0199,
-    unit: '',
-    within: 0.003,
-    kind: 'source',
-    source: "public R package test, values attributed there to an engineering reference site's Colebrook table",
-  },
   'fri-col-5000-0.01': {
     what: 'Colebrook Darcy f',
     value: 0.0472,
@@ -783,22 +805,6 @@ export const PUBLISHED = {
   'fri-col-10000-0.01': {
     what: 'Colebrook Darcy f',
     value: 0.0431,
-    unit: '',
-    within: 0.006,
-    kind: 'source',
-    source: "public R package test, values attributed there to an engineering reference site's Colebrook table",
-  },
-  'fri-col-100000-0.01': {
-    what: 'Colebrook Darcy f',
-    value: 0.0384,
-    unit: '',
-    within: 0.006,
-    kind: 'source',
-    source: "public R package test, values attributed there to an engineering reference site's Colebrook table",
-  },
-  'fri-col-1e+06-0.01': {
-    what: 'Colebrook Darcy f',
-    value: 0.0379,
     unit: '',
     within: 0.006,
     kind: 'source',

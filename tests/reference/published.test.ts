@@ -34,8 +34,30 @@ describe('accumulators', () => {
   }
 });
 
-it('at least sixty published values pass through the product', () => {
+it('every value brought over passes through the product, sixty of them printed in their source', () => {
   const shown = [...ALL.flatMap((circuit) => Object.keys(circuit.shows)), ...ACCUMULATORS.map((one) => one.id)];
-  expect(new Set(shown).size).toBe(shown.length);
-  expect(shown.length).toBeGreaterThanOrEqual(60);
+  expect(shown.sort()).toEqual(Object.keys(PUBLISHED).sort());
+  const printed = Object.values(PUBLISHED).filter((one: Published) => one.kind !== 'derived');
+  expect(printed.length).toBeGreaterThanOrEqual(60);
 });
+
+/*
+Published values that cannot go through the product as it is, and why.
+
+| values | reason |
+|---|---|
+| size of the other piston, its stroke; lever classes (US Army TM 1-1500-204-23-2, Esposito 6-5) | geometry: the notation has no levers, and a pair of cylinders without a source moves at no determined speed |
+| deceleration force, cushion peak (Sullivan 8.4, Esposito 6-6) | the force of a stop within a way is not shown; cushions follow a law of their own (an orifice that closes), not constant deceleration |
+| volumetric and mechanical efficiency of a motor; angle of an axial piston pump (Esposito 7-6, 5-x) | they are declared, not found; the inside of a pump is not modelled |
+| orifice with Cd 0.8; Cv and Kv of a valve (Esposito 8-4, 8-5) | Cd is 0.62; a valve is declared by its flow at a drop, Cv is not shown |
+| friction at a Reynolds number of 1e6 and roughness 0.01; cast-iron pipe; Moody chart (White 6.7, Esposito 4-x) | 500 m/s in 2 mm; the roughness of tube and hose is fixed |
+| viscosity index from two viscosities, constants of Walther's line, Saybolt seconds (ASTM D2270, D341, D2161) | the index is declared; the table behind it is tested with the fluid's own tests |
+| stiffness with air, trapped oil in the heat, decompression | used in runs, not shown as figures |
+| pressure surge (DOE-HDBK-1012/3-92) | not computed |
+| buckling of rods, burst of tubes | not computed |
+| gas volumes of an accumulator with n = 1.4; real nitrogen (Span et al. 2000) | no figure of a step alone shows the first; the gas is ideal |
+| heat balances other than the reservoir's (Sullivan 12.1, Esposito 11-2 to 11-4) | rise of temperature over one valve and heat exchangers are not shown |
+| spring of a relief valve (Esposito 8-1) | declared by setting and override |
+| beta ratio, particle counts, element drop with viscosity, housing drop (Sullivan 6.3, ISO 4406) | cleanliness is text; a filter has one curve, smoothed below 0.1 bar |
+| pump inlet with velocity head; safety distance (ISO 13855) | the velocity head is not taken off; guards are outside the circuit |
+*/
