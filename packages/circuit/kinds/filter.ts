@@ -8,7 +8,7 @@ import { hardware } from './common.ts';
 export const filter: Kind = {
   name: 'filter',
   noun: 'filter',
-  about: 'Filter.',
+  about: 'Filter: holds dirt back; its bypass valve opens when it clogs.',
   ports: [
     { name: 'in', role: 'any', required: true, about: 'Dirty side.' },
     { name: 'out', role: 'any', required: true, about: 'Clean side.' },

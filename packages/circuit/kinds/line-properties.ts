@@ -10,8 +10,15 @@ export const LINE_PROPERTIES: readonly PropertySpec[] = [
     example: 'flanged',
     about: 'Flanged straight on, no pipe between.',
   },
-  { name: 'tube', shape: { form: 'flag' }, required: false, default: 'not said', example: 'tube', about: 'Steel tube.' },
-  { name: 'hose', shape: { form: 'flag' }, required: false, default: 'not said', example: 'hose', about: 'Hose.' },
+  { name: 'tube', shape: { form: 'flag' }, required: false, default: 'not said', example: 'tube', about: 'Steel tube line.' },
+  {
+    name: 'hose',
+    shape: { form: 'flag' },
+    required: false,
+    default: 'not said',
+    example: 'hose',
+    about: 'Hose line: soft, and to be replaced in time.',
+  },
   {
     name: 'bore',
     shape: { form: 'quantity', dimensions: ['length'] },
