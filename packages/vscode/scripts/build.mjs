@@ -1,6 +1,6 @@
 // Builds the extension into dist/: extension, language server and study worker, once for node and once for the browser, and the grammar.
-import { cpSync, existsSync, mkdirSync, rmSync } from 'node:fs';
-import { join } from 'node:path';
+import { cpSync, existsSync, mkdirSync, rmSync, writeFileSync } from 'node:fs';
+import { dirname, join } from 'node:path';
 import { fileURLToPath } from 'node:url';
 import { build } from 'esbuild';
 
@@ -41,12 +41,20 @@ const BUNDLES = [
   { from: join(language, 'server/study-worker-browser.ts'), to: 'web/study-worker.js', with: { ...web, format: 'iife' } },
 ];
 
+/** All or nothing: what stood in dist/ stays where a bundle cannot be made. */
 export async function buildExtension() {
-  rmSync(dist, { recursive: true, force: true });
-  mkdirSync(dist, { recursive: true });
-  for (const bundle of BUNDLES) await build({ ...bundle.with, entryPoints: [bundle.from], outfile: join(dist, bundle.to) });
   const grammar = join(root, 'syntaxes/oilway.tmLanguage.json');
   if (!existsSync(grammar)) throw new Error(`The grammar is missing: ${grammar}. It is generated from the kind and unit tables.`);
+  const made = [];
+  for (const bundle of BUNDLES) {
+    const { outputFiles } = await build({ ...bundle.with, entryPoints: [bundle.from], outfile: join(dist, bundle.to), write: false });
+    made.push(...outputFiles);
+  }
+  rmSync(dist, { recursive: true, force: true });
+  for (const { path, contents } of made) {
+    mkdirSync(dirname(path), { recursive: true });
+    writeFileSync(path, contents);
+  }
   cpSync(grammar, join(dist, 'oilway.tmLanguage.json'));
 }
 

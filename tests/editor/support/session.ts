@@ -28,6 +28,8 @@ export const sample = (name: string): string => readFileSync(join(root, 'samples
 export interface SessionOptions {
   readonly settings?: Readonly<Record<string, unknown>>;
   readonly height?: number;
+  /** Further files of the workspace by name. */
+  readonly others?: Readonly<Record<string, string>>;
 }
 
 /** Runs a test in a session and closes it; any request that left this machine fails it. */
@@ -40,6 +42,7 @@ export async function inEditor(
   const workspace = mkdtempSync(join(tmpdir(), 'oilway-editor-'));
   const file = join(workspace, NAME);
   writeFileSync(file, text);
+  for (const [name, content] of Object.entries(options.others ?? {})) writeFileSync(join(workspace, name), content);
   let rig: Rig | undefined;
   let window: Window | undefined;
   try {
