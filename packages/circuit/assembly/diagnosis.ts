@@ -65,6 +65,9 @@ function letOut(assembled: Assembled, nodes: readonly number[], result: SteadyRe
       const vent = e.x === undefined || inside.has(e.x) ? set : p(e.x) + e.vented;
       lowest = Math.min(lowest, set, vent);
     }
+    // A shuttle lets oil back to the higher of its inlets.
+    if (e.type === 'shuttle' && inside.has(e.c) && !inside.has(e.a) && !inside.has(e.b))
+      lowest = Math.min(lowest, Math.max(p(e.a), p(e.b)));
     if (e.type === 'check' && inside.has(e.a) && !inside.has(e.b) && (e.opening === undefined || (parameters[e.opening] ?? 0) > 0))
       lowest = Math.min(lowest, p(e.b) + e.crack);
     if (e.type === 'piloted' && inside.has(e.a) !== inside.has(e.b)) {

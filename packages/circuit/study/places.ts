@@ -123,6 +123,7 @@ export function stepSamples(place: StepPlace): readonly (Sample & { readonly sin
 
 /** "Drill.Out at 315 mm, 4.20 s". */
 export function placeWords(plant: Plant, place: string, body: Body | undefined, position: number | undefined, time: number | undefined): string {
-  const where = position === undefined || !body ? place : `${place} at ${sayPlace(plant.circuit, position, body.type === 'rotating')}`;
+  // The angle of a shaft that turns on and on says nothing.
+  const where = position === undefined || !body || !Number.isFinite(body.stroke) ? place : `${place} at ${sayPlace(plant.circuit, position, body.type === 'rotating')}`;
   return time === undefined ? where : `${where}, ${say(plant.circuit, time, 'time')}`;
 }

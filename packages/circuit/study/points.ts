@@ -28,6 +28,8 @@ interface Wanted {
 
 /** Points of one passage of a step in a run. */
 export function pointsInRun(plant: Plant, trace: Trace, step: string, from: number, to: number): readonly Point[] {
+  // A step that ends at once moves nothing: its coils were never live.
+  if (to - from < 1e-9) return [];
   const samples = trace.between(from, to).filter((one) => one.lines.includes(step) || one.time <= from + 1e-9);
   const [first, last] = [samples[0], samples.at(-1)];
   const snapshot = trace.snapshotAt(from, false);
@@ -35,7 +37,7 @@ export function pointsInRun(plant: Plant, trace: Trace, step: string, from: numb
   const shift: Record<string, number> = {};
   for (const body of plant.bodies) shift[body.id] = (last.solution.positions[body.id] ?? 0) - (first.solution.positions[body.id] ?? 0);
   const entry = settingAt(snapshot, first);
-  const directions = directionsOf(plant, entry, shift, first.solution);
+  const directions = directionsOf(plant, entry, shift, first.solution, wentIn(samples, shift));
   const wanted: Wanted[] = [{ label: 'entry', time: from, setting: entry, begun: {}, sample: first }];
   for (const body of plant.bodies) {
     if (!Number.isFinite(body.stroke) || Math.abs(shift[body.id] ?? 0) < MOVED) continue;
@@ -64,20 +66,37 @@ function stored(sample: Sample): Pick<Setting, 'oil' | 'bits' | 'gasPressures'> 
 /** Displacement below this share of the stroke may be oil that is compressed or let down: then the pressing counts, not the way. */
 const SMALL_WAY = 0.02;
 
-/** Directions in which a step moves its bodies: as they went; a body that (all but) stood as it would go without its load. */
-function directionsOf(plant: Plant, entry: Setting, shift: Readonly<Record<string, number>>, near: Solution): Record<string, Direction> {
+/** Directions in which a step moves its bodies: as they went; a body that only settled goes as it would without its load. */
+function directionsOf(plant: Plant, entry: Setting, shift: Readonly<Record<string, number>>, near: Solution, went: (body: Body) => boolean): Record<string, Direction> {
   const result: Record<string, Direction> = {};
-  const stood = (body: Body) => Math.abs(shift[body.id] ?? 0) < Math.max(MOVED, SMALL_WAY * (Number.isFinite(body.stroke) ? body.stroke : 0));
-  const standing = plant.bodies.filter(stood);
-  for (const body of plant.bodies) result[body.id] = Math.sign(shift[body.id] ?? 0) as Direction;
+  for (const body of plant.bodies) result[body.id] = went(body) ? (Math.sign(shift[body.id] ?? 0) as Direction) : 0;
+  const standing = plant.bodies.filter((one) => !went(one)).map((one) => one.id);
   if (standing.length === 0) return result;
-  const ids = standing.map((one) => one.id);
-  const loads = { ...entry.loads, ...Object.fromEntries(ids.map((id) => [id, NO_LOAD])) };
-  const probe = plant.machine.solve({ ...entry, loads, free: ids }, near);
-  for (const body of standing) {
-    result[body.id] = probe.solved && moves(body, probe) ? (Math.sign(probe.velocities[body.id] ?? 0) as Direction) : 0;
-  }
+  const pushed = pushedWays(plant, entry, standing, near);
+  for (const id of standing) result[id] = pushed[id] ?? 0;
   return result;
+}
+
+/** Ways in which bodies go with their loads taken off and their stops not holding: the way the oil pushes them. */
+function pushedWays(plant: Plant, setting: Setting, ids: readonly string[], near: Solution): Record<string, Direction> {
+  const loads = { ...setting.loads, ...Object.fromEntries(ids.map((id) => [id, NO_LOAD])) };
+  const probe = plant.machine.solve({ ...setting, loads, free: ids }, near);
+  const ways: Record<string, Direction> = {};
+  for (const body of plant.bodies) {
+    if (!ids.includes(body.id)) continue;
+    ways[body.id] = probe.solved && moves(body, probe) ? (Math.sign(probe.velocities[body.id] ?? 0) as Direction) : 0;
+  }
+  return ways;
+}
+
+/** Whether a body went its way in a passage: more than settling oil moves it; a shaft still turns in the middle or at the end. */
+function wentIn(samples: readonly Sample[], shift: Readonly<Record<string, number>>): (body: Body) => boolean {
+  return (body) => {
+    const way = Math.abs(shift[body.id] ?? 0);
+    if (Number.isFinite(body.stroke)) return way > Math.max(MOVED, SMALL_WAY * body.stroke);
+    const middle = samples[samples.length >> 1];
+    return way > MOVED && [middle, samples.at(-1)].some((one) => one !== undefined && moves(body, one.solution));
+  };
 }
 
 function knotPoints(plant: Plant, trace: Trace, body: Body, samples: readonly Sample[], entry: Setting): Wanted[] {
@@ -157,7 +176,8 @@ function solveAll(plant: Plant, wanted: readonly Wanted[], directions: Readonly<
     near = solution.solved ? solution : near;
     const setting = { ...one.setting, bits: solution.bits };
     const point = pointOf(plant, setting, solution, { label: one.label, directions, forces: true, held, ...(one.time === undefined ? {} : { time: Math.max(0, one.time) }) });
-    points.push({ ...left(point, one.sample), actuators: point.actuators.map((actuator) => begunOnly(plant, actuator, one.begun, one.label)) });
+    const actuators = point.actuators.map((actuator) => stalledOnly(plant, actuator, one, setting, solution));
+    points.push({ ...left(point, one.sample), actuators });
   }
   return points;
 }
@@ -170,11 +190,12 @@ function left(point: Point, sample: Sample | undefined): Point {
   return { ...point, pressures, undetermined: {} };
 }
 
-/** An actuator whose turn has not come yet is not stalled. */
-function begunOnly(plant: Plant, actuator: Point['actuators'][number], begun: Readonly<Record<string, boolean>>, label: string): Point['actuators'][number] {
-  if (actuator.shortBy === undefined || label === 'end') return actuator;
+/** An actuator whose turn has not come yet, or that the oil does not push any more, is not stalled. */
+function stalledOnly(plant: Plant, actuator: Point['actuators'][number], at: Wanted, setting: Setting, solution: Solution): Point['actuators'][number] {
+  if (actuator.shortBy === undefined) return actuator;
   const body = plant.bodies.find((one) => one.actuators.includes(actuator.id));
-  if (body && begun[body.id]) return actuator;
+  const turn = at.label === 'end' || (body !== undefined && at.begun[body.id] === true);
+  if (turn && body && pushedWays(plant, setting, [body.id], solution)[body.id] === actuator.direction) return actuator;
   const { shortBy: _waiting, ...rest } = actuator;
   return rest;
 }
@@ -184,7 +205,7 @@ function begunOnly(plant: Plant, actuator: Point['actuators'][number], begun: Re
  * `turn`: a body that begins at the stop it is pushed to begins at the other one.
  */
 export function pointsAlone(plant: Plant, given: Setting, entryLabel: string, turn = false): readonly Point[] {
-  const found = directionsOf(plant, given, {}, plant.machine.settle(given));
+  const found = directionsOf(plant, given, {}, plant.machine.settle(given), () => false);
   const positions = { ...given.positions };
   for (const body of plant.bodies) {
     const direction = found[body.id] ?? 0;

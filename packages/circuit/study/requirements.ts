@@ -63,7 +63,7 @@ function bounded(facts: Facts, requirement: Bounded, runner: StateRunner): Requi
     observed = placed ? places.map((one) => placed(asked, one)) : [];
   }
   const doubtful = chattersIn(facts, requirement);
-  const verdict = judge(requirement.bound, observed, dimensionOf(facts, requirement), named, requirement.lasts);
+  const verdict = judge(requirement.bound, observed, dimensionOf(facts, requirement), named, requirement.measure === 'drift' || requirement.measure === 'position' ? undefined : requirement.lasts);
   const judged: Verdict = doubtful !== undefined && verdict.verdict === 'met' ? { ...verdict, verdict: 'undecidable', why: doubtful } : verdict;
   return told(facts, requirement, judged, observed.flatMap((one) => one.notes ?? []));
 }

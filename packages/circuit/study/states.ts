@@ -259,7 +259,7 @@ function settled(plant: Plant, choice: Choice, control: ControlOf, start: Soluti
       standing: choice.standing,
     });
     const setting: Setting = { ...base, free: choice.free, leakage: false, sealFriction: 'not with load' };
-    const solution = plant.machine.settle(setting, near);
+    const solution = known(plant, setting, near);
     near = solution.solved ? solution : near;
     let turned: string | undefined;
     for (const contact of plant.contacts) {
@@ -277,6 +277,20 @@ function settled(plant: Plant, choice: Choice, control: ControlOf, start: Soluti
       return { setting: { ...setting, bits: solution.bits }, solution, note: { of, words: `${of} hunts: the coils it decides turn it back` } };
     }
   }
+}
+
+const memory = new WeakMap<Plant, Map<string, Solution>>();
+
+/** Equal settings are solved once: most states differ in name only. */
+function known(plant: Plant, setting: Setting, near: Solution | undefined): Solution {
+  const kept = memory.get(plant) ?? new Map<string, Solution>();
+  memory.set(plant, kept);
+  const key = JSON.stringify(setting);
+  const found = kept.get(key);
+  if (found) return found;
+  const solution = plant.machine.settle(setting, near);
+  kept.set(key, solution);
+  return solution;
 }
 
 function sameControl(one: Control, other: Control): boolean {
