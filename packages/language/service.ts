@@ -115,5 +115,11 @@ function analyseOne(document: SourceDocument, texts: ReadonlyMap<string, string>
     }
   }
   const all = [...findings, ...ruled].sort((a, b) => a.origin.start - b.origin.start);
-  return { uri, circuit, findings: all, ...(study === undefined ? {} : { study }), ...(failures.length === 0 ? {} : { failed: failures.join('\n') }) };
+  return {
+    uri,
+    circuit,
+    findings: all,
+    ...(study === undefined ? {} : { study }),
+    ...(failures.length === 0 ? {} : { failed: failures.join('\n') }),
+  };
 }

@@ -15,13 +15,22 @@ const replaceFirst = (line: string, find: RegExp | string, by: string): string |
 };
 
 const BREAKS: readonly Break[] = [
-  { name: 'cut in the middle', make: (line) => (line.endsWith('{') || line === '}' ? undefined : line.slice(0, Math.max(1, Math.floor(line.length * 0.6)))) },
+  {
+    name: 'cut in the middle',
+    make: (line) => (line.endsWith('{') || line === '}' ? undefined : line.slice(0, Math.max(1, Math.floor(line.length * 0.6)))),
+  },
   { name: 'closing bracket lost', make: (line) => replaceFirst(line, /\)(?=[^)]*$)/, '') },
   { name: 'opening bracket lost', make: (line) => replaceFirst(line, '(', '') },
   { name: 'one bracket too many', make: (line) => replaceFirst(line, ')', '))') },
   { name: 'comma lost', make: (line) => replaceFirst(line, ',', '') },
-  { name: 'name lost', make: (line) => (/^\s*[a-z]+\s+[A-Z0-9]\w*/.test(line) ? replaceFirst(line, /^(\s*[a-z]+\s+)\w+/, '$1') : undefined) },
-  { name: 'stray character', make: (line) => (line === '}' ? undefined : `${line.slice(0, Math.floor(line.length / 2))};${line.slice(Math.floor(line.length / 2))}`) },
+  {
+    name: 'name lost',
+    make: (line) => (/^\s*[a-z]+\s+[A-Z0-9]\w*/.test(line) ? replaceFirst(line, /^(\s*[a-z]+\s+)\w+/, '$1') : undefined),
+  },
+  {
+    name: 'stray character',
+    make: (line) => (line === '}' ? undefined : `${line.slice(0, Math.floor(line.length / 2))};${line.slice(Math.floor(line.length / 2))}`),
+  },
   { name: 'head mistyped', make: (line) => replaceFirst(line, /^(\s*)([a-z])([a-z])([a-z]+)/, '$1$2$4') },
   { name: 'text not closed', make: (line) => replaceFirst(line, /"(?=[^"]*$)/, '') },
   { name: '`to` lost', make: (line) => replaceFirst(line, / to /, ' ') },
@@ -35,7 +44,9 @@ const BREAKS: readonly Break[] = [
 /** Texts of all statements, those in blocks too. */
 function statements({ text, parsed }: TextAnalysis): string[] {
   const found: string[] = [];
-  const visit = (nodes: readonly { readonly $type: string; readonly $cstNode?: { readonly offset: number; readonly end: number } | undefined }[]): void => {
+  const visit = (
+    nodes: readonly { readonly $type: string; readonly $cstNode?: { readonly offset: number; readonly end: number } | undefined }[],
+  ): void => {
     for (const node of nodes) {
       const inner = 'lines' in node ? (node.lines as typeof nodes) : 'statements' in node ? (node.statements as typeof nodes) : undefined;
       if (inner !== undefined) visit(inner);
@@ -70,7 +81,10 @@ describe('broken lines', () => {
             const at = text.slice(0, finding.origin.start).split('\n').length - 1;
             return finding.severity === 'error' && at !== number && at !== opening;
           });
-          expect(elsewhere.map((finding) => `${finding.what} @ ${text.slice(finding.origin.start, finding.origin.end)}`), `line ${number + 1}: ${broken}`).toEqual([]);
+          expect(
+            elsewhere.map((finding) => `${finding.what} @ ${text.slice(finding.origin.start, finding.origin.end)}`),
+            `line ${number + 1}: ${broken}`,
+          ).toEqual([]);
           const left = new Set(statements(analysis));
           const lost = whole.filter((statement) => !left.has(statement) && statement !== line.trim());
           expect(lost, `line ${number + 1}: ${broken}`).toEqual([]);

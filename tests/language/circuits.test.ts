@@ -4,7 +4,7 @@ import { describe, expect, it } from 'vitest';
 import { CIRCUITS, errors, read, said } from './support.ts';
 
 /** The circuit without its places in the text. */
-export function withoutPlaces(circuit: Circuit): unknown {
+function withoutPlaces(circuit: Circuit): unknown {
   return JSON.parse(JSON.stringify(circuit, (key, value: unknown) => (/[oO]rigin$/.test(key) ? undefined : value)));
 }
 
@@ -37,7 +37,8 @@ describe('the collection', () => {
     it(`${name} resolves without an error`, () => {
       expect(errors(text)).toEqual([]);
       const informations = said(text);
-      if (/^(use|unit|assembly)\b/m.test(text)) expect(informations).toEqual([expect.stringContaining('units of an assembly are not computed')]);
+      if (/^(use|unit|assembly)\b/m.test(text))
+        expect(informations).toEqual([expect.stringContaining('units of an assembly are not computed')]);
       else expect(informations).toEqual([]);
       if (/^circuit\b/m.test(text)) expect(read(text).circuit.components.length).toBeGreaterThan(5);
     });

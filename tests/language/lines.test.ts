@@ -18,7 +18,10 @@ directional V1 (4/3, centre closed, spring to centre, coil a SOL1, coil b SOL2, 
 const nets = (lines: string) =>
   read(BASE + lines)
     .circuit.nets.filter((net) => net.pieces.length > 0)
-    .map((net) => `${net.id}: ${net.ports.map((port) => `${port.component}.${port.port}`).join(' ')}${net.reservoir === undefined ? '' : ` ${net.reservoir}`}`);
+    .map(
+      (net) =>
+        `${net.id}: ${net.ports.map((port) => `${port.component}.${port.port}`).join(' ')}${net.reservoir === undefined ? '' : ` ${net.reservoir}`}`,
+    );
 const wrong = (lines: string) => errors(BASE + lines);
 
 describe('natural ports', () => {
@@ -38,29 +41,39 @@ describe('natural ports', () => {
     expect(wrong('return V1.T to R1 to F1')).toEqual([expect.stringContaining('CHAIN The reservoir `R1` cannot be passed through')]);
     expect(wrong('working P1 to RV1 to V1.P')).toEqual([expect.stringContaining('`RV1` cannot be passed through')]);
     expect(wrong('working P1 to V1.P to C1.cap')).toEqual([expect.stringContaining('The port `V1.P` cannot be passed through')]);
-    expect(wrong('working low: P1 to V1.P\nworking P2 to low to C1.cap')).toEqual([expect.stringContaining('The line `low` cannot be passed through')]);
+    expect(wrong('working low: P1 to V1.P\nworking P2 to low to C1.cap')).toEqual([
+      expect.stringContaining('The line `low` cannot be passed through'),
+    ]);
   });
 
   it('S13: kinds with a load side are never passed through: both sides are written', () => {
-    expect(wrong('working V1.A to PC1 to C1.cap')).toEqual([expect.stringContaining('`PC1` is never passed through: write the ports on both sides, `PC1.V`')]);
+    expect(wrong('working V1.A to PC1 to C1.cap')).toEqual([
+      expect.stringContaining('`PC1` is never passed through: write the ports on both sides, `PC1.V`'),
+    ]);
     expect(wrong('working V1.A to PC1')).toEqual([expect.stringContaining('PORT `PC1` has no natural port: write `PC1.V`')]);
     expect(fixed(`${BASE}working V1.A to PC1`, 'Write `PC1.C`')).toContain('V1.A to PC1.C');
   });
 
   it('A3: each natural port once; a second time needs the port or the name of the line', () => {
-    expect(wrong('working P1 to RV1\nworking P1 to V1.P')).toEqual(['PORT `P1.P` is taken already: without a port, `P1` stands for it once @ P1']);
+    expect(wrong('working P1 to RV1\nworking P1 to V1.P')).toEqual([
+      'PORT `P1.P` is taken already: without a port, `P1` stands for it once @ P1',
+    ]);
     expect(fixed(`${BASE}working P1 to RV1\nworking P1 to V1.P`)).toContain('working P1.P to V1.P');
     expect(wrong('working P1 to RV1\nworking P1.P to V1.P')).toEqual([]);
     expect(wrong('working out: P1 to RV1\nworking out to V1.P')).toEqual([]);
   });
 
   it('the cap of a single-acting cylinder is natural', () => {
-    expect(errors('pump P1\ncylinder C9 (bore 80 mm, single cap, stroke 1 m)\nworking P1 to C9').filter((line) => line.startsWith('PORT'))).toEqual([]);
+    expect(
+      errors('pump P1\ncylinder C9 (bore 80 mm, single cap, stroke 1 m)\nworking P1 to C9').filter((line) => line.startsWith('PORT')),
+    ).toEqual([]);
   });
 
   it('what has no ports, what is no component, what is not there', () => {
     expect(wrong('working P1 to M1')).toEqual([expect.stringContaining('`M1` has no ports')]);
-    expect(wrong('let x = 5 bar\nworking P1 to x')).toEqual([expect.stringContaining('`x` is a constant: a line joins components and lines')]);
+    expect(wrong('let x = 5 bar\nworking P1 to x')).toEqual([
+      expect.stringContaining('`x` is a constant: a line joins components and lines'),
+    ]);
     expect(wrong('working P1 to RV1, PC2.V')).toEqual(['NAME `PC2` is not declared: did you mean `PC1` @ PC2']);
     expect(wrong('working P1 to V1.Q')).toEqual([expect.stringContaining('PORT `V1` has no port `Q`: it has `P`, `T`, `A`, `B`')]);
     expect(wrong('working P1 to V1.')).toEqual([expect.stringContaining('A port of `V1` is missing after the dot')]);
@@ -74,7 +87,11 @@ describe('natural ports', () => {
 
 describe('nets', () => {
   it('every pipe to a reservoir is a net of its own', () => {
-    expect(nets('suction R1 to P1\nsuction R1 to P2\nreturn RV1, RV2 to R1')).toEqual(['P1.S: P1.S R1', 'P2.S: P2.S R1', 'RV1.T: RV1.T RV2.T R1']);
+    expect(nets('suction R1 to P1\nsuction R1 to P2\nreturn RV1, RV2 to R1')).toEqual([
+      'P1.S: P1.S R1',
+      'P2.S: P2.S R1',
+      'RV1.T: RV1.T RV2.T R1',
+    ]);
   });
 
   it('a named line is one net with what names it, before or after', () => {
@@ -89,20 +106,31 @@ describe('nets', () => {
     expect(nets('working V1.A to C1.cap (bore 12 mm, length 2 m)')).toEqual(['V1.A: V1.A', 'C1.cap: C1.cap']);
     expect(nets('working V1.A to C1.cap (bore 12 mm)')).toEqual(['V1.A: V1.A C1.cap']);
     const { pieces } = read(`${BASE}working V1.A to C1.cap (hose, bore 12 mm, length 2 m, rated 210 bar, bends 4, shielded)`).circuit;
-    expect(pieces).toMatchObject([{ id: 'line:0.0', nets: ['V1.A', 'C1.cap'], joint: 'hose', bore: 0.012, length: 2, rated: 21e6, bends: 4, shielded: true }]);
+    expect(pieces).toMatchObject([
+      { id: 'line:0.0', nets: ['V1.A', 'C1.cap'], joint: 'hose', bore: 0.012, length: 2, rated: 21e6, bends: 4, shielded: true },
+    ]);
   });
 
   it('A2: length needs one piece with two ends', () => {
-    expect(wrong('working P1 to RV1, V1.P (bore 12 mm, length 2 m)')).toEqual([expect.stringContaining('`length` needs one piece with two ends')]);
-    expect(wrong('return V1.T to F1 to R1 (bore 12 mm, length 2 m)')).toEqual([expect.stringContaining('`length` needs one piece with two ends')]);
+    expect(wrong('working P1 to RV1, V1.P (bore 12 mm, length 2 m)')).toEqual([
+      expect.stringContaining('`length` needs one piece with two ends'),
+    ]);
+    expect(wrong('return V1.T to F1 to R1 (bore 12 mm, length 2 m)')).toEqual([
+      expect.stringContaining('`length` needs one piece with two ends'),
+    ]);
   });
 
   it('a pipe to a reservoir with a loss of its own', () => {
-    expect(nets('suction R1 to P1 (bore 30 mm, length 1 m)')).toEqual([expect.stringMatching(/^R1 line:0\.0: R1$|^R1 line:0.0:  R1$/), 'P1.S: P1.S']);
+    expect(nets('suction R1 to P1 (bore 30 mm, length 1 m)')).toEqual([
+      expect.stringMatching(/^R1 line:0\.0: R1$|^R1 line:0.0: {2}R1$/),
+      'P1.S: P1.S',
+    ]);
   });
 
   it('a required port that nothing joins is an open net; an optional one is none', () => {
-    const open = read(`${BASE}working P1 to RV1`).circuit.nets.filter((net) => net.open === true).map((net) => net.id);
+    const open = read(`${BASE}working P1 to RV1`)
+      .circuit.nets.filter((net) => net.open === true)
+      .map((net) => net.id);
     expect(open).toContain('P1.S');
     expect(open).toContain('V1.P');
     expect(open).not.toContain('P1.P');

@@ -40,7 +40,9 @@ describe('numbers and units', () => {
     ]);
     expect(fixed('cylinder X1 (bore 63, stroke 5 mm)')).toBe('cylinder X1 (bore 63 mm, stroke 5 mm)');
     expect(fixed('cylinder X1 (bore 63 mn, stroke 5 mm)')).toBe('cylinder X1 (bore 63 mm, stroke 5 mm)');
-    expect(errors('fluid X1 (grade 46, temperature 45 K)')).toEqual(['M07 `45 K` is a difference; a temperature is written in degC or degF @ 45 K']);
+    expect(errors('fluid X1 (grade 46, temperature 45 K)')).toEqual([
+      'M07 `45 K` is a difference; a temperature is written in degC or degF @ 45 K',
+    ]);
   });
 
   it('a decimal comma is said where it stands and mended', () => {
@@ -50,7 +52,9 @@ describe('numbers and units', () => {
   });
 
   it('numbers beyond reason are refused', () => {
-    expect(errors(`cylinder X1 (bore ${'9'.repeat(400)} mm, stroke 5 mm)`)).toEqual([expect.stringContaining('larger than any figure of the trade')]);
+    expect(errors(`cylinder X1 (bore ${'9'.repeat(400)} mm, stroke 5 mm)`)).toEqual([
+      expect.stringContaining('larger than any figure of the trade'),
+    ]);
     expect(errors('let x = 1/0 bar')).toEqual([expect.stringContaining('fraction over zero')]);
     expect(errors('let x = 5 bar / (2 - 2)')).toEqual([expect.stringContaining('ivision by zero')]);
   });
@@ -65,7 +69,8 @@ describe('constants', () => {
   });
 
   it('a sign after a word is a difference, after a small word or first in a setting it is a sign', () => {
-    const text = 'let hold = 180 bar\nswitch X1 (rises hold, falls hold - 15 bar)\npump X2 (inlet -0.15 bar)\nreservoir X3 (ambient -10 degC to 35 degC)';
+    const text =
+      'let hold = 180 bar\nswitch X1 (rises hold, falls hold - 15 bar)\npump X2 (inlet -0.15 bar)\nreservoir X3 (ambient -10 degC to 35 degC)';
     expect(si(text, 'falls')).toBeCloseTo(165e5, 3);
     expect(value(text, 'inlet', 'X2')).toMatchObject({ q: { si: -15000 } });
     expect(value(text, 'ambient', 'X3')).toMatchObject({ from: { si: 263.15 }, to: { si: 308.15 } });
@@ -97,16 +102,22 @@ describe('settings', () => {
   });
 
   it('a required choice is exactly one', () => {
-    expect(errors('divider X1 (gear, spool)')).toEqual(['VALUE `X1` has `gear` and `spool`: only one of `gear` or `spool` can hold @ spool']);
+    expect(errors('divider X1 (gear, spool)')).toEqual([
+      'VALUE `X1` has `gear` and `spool`: only one of `gear` or `spool` can hold @ spool',
+    ]);
     expect(errors('divider X1')).toEqual(['M08 `X1` needs one of `gear` or `spool` @ X1']);
   });
 
   it('S1: what brings the spool back is required', () => {
-    expect(errors('directional X1 (4/3, centre closed, coil a SOL1, passes 9 L/min at 1 bar)')).toEqual([expect.stringContaining('nothing says where the spool goes without current')]);
+    expect(errors('directional X1 (4/3, centre closed, coil a SOL1, passes 9 L/min at 1 bar)')).toEqual([
+      expect.stringContaining('nothing says where the spool goes without current'),
+    ]);
   });
 
   it('S10, S11, S12: gas and its temperature, relieving or not, bypass or none are required', () => {
-    expect(errors('accumulator X1 (bladder, volume 1 L, precharge 90 bar, gas nitrogen)')).toEqual([expect.stringContaining('needs its gas temperature')]);
+    expect(errors('accumulator X1 (bladder, volume 1 L, precharge 90 bar, gas nitrogen)')).toEqual([
+      expect.stringContaining('needs its gas temperature'),
+    ]);
     expect(errors('reducing X1 (set 70 bar)')).toEqual(['M08 `X1` has no `relieving` @ X1']);
     expect(errors('filter X1 (passes 9 L/min at 1 bar)')).toEqual(['M08 `X1` has no `bypass` @ X1']);
     expect(value('filter X1 (passes 9 L/min at 1 bar, bypass none)', 'bypass')).not.toHaveProperty('crack');
@@ -134,7 +145,9 @@ describe('settings', () => {
   });
 
   it('rated may name a port', () => {
-    const rated = component('directional X1 (3/2, spring to b, passes 9 L/min at 1 bar, rated 315 bar, rated T 160 bar)')?.properties.filter((property) => property.name === 'rated');
+    const rated = component(
+      'directional X1 (3/2, spring to b, passes 9 L/min at 1 bar, rated 315 bar, rated T 160 bar)',
+    )?.properties.filter((property) => property.name === 'rated');
     expect(rated?.map((property) => property.port)).toEqual([undefined, 'T']);
     expect(errors('check X1 (rated in 160 bar)')).toEqual([]);
     expect(errors('check X1 (rated Q 160 bar)')).toEqual([expect.stringContaining('no port `Q`')]);
@@ -161,25 +174,43 @@ describe('directional valves', () => {
     expect(paths('directional X1 (4/3, centre float, spring to centre, passes 9 L/min at 1 bar)', 'centre')).toEqual(['AT', 'BT']);
     expect(paths('directional X1 (4/3, centre (), spring to centre, passes 9 L/min at 1 bar)', 'centre')).toEqual([]);
     expect(paths('directional X1 (4/3, centre open, spring to centre, passes 9 L/min at 1 bar)', 'centre')).toContain('PT');
-    expect(value('directional X1 (4/3, centre (A to T passes 2 L/min at 5 bar), spring to centre, passes 9 L/min at 1 bar)', 'centre')).toMatchObject({ paths: [{ passes: { drop: { si: 5e5 } } }] });
+    expect(
+      value('directional X1 (4/3, centre (A to T passes 2 L/min at 5 bar), spring to centre, passes 9 L/min at 1 bar)', 'centre'),
+    ).toMatchObject({ paths: [{ passes: { drop: { si: 5e5 } } }] });
   });
 
   it('a centre where there is none, and none where there is one', () => {
-    expect(errors('directional X1 (4/2, centre closed, detent, passes 9 L/min at 1 bar)')).toEqual([expect.stringContaining('two positions has no centre')]);
-    expect(errors('directional X1 (4/3, spring to centre, passes 9 L/min at 1 bar)')).toEqual([expect.stringContaining('nothing says what the centre joins')]);
-    expect(errors('directional X1 (4/2, spring to centre, passes 9 L/min at 1 bar)')).toEqual([expect.stringContaining('no centre to spring to')]);
-    expect(errors('directional X1 (4/2, normally open, passes 9 L/min at 1 bar)')).toEqual([expect.stringContaining('words for 2/2 and 3/2')]);
+    expect(errors('directional X1 (4/2, centre closed, detent, passes 9 L/min at 1 bar)')).toEqual([
+      expect.stringContaining('two positions has no centre'),
+    ]);
+    expect(errors('directional X1 (4/3, spring to centre, passes 9 L/min at 1 bar)')).toEqual([
+      expect.stringContaining('nothing says what the centre joins'),
+    ]);
+    expect(errors('directional X1 (4/2, spring to centre, passes 9 L/min at 1 bar)')).toEqual([
+      expect.stringContaining('no centre to spring to'),
+    ]);
+    expect(errors('directional X1 (4/2, normally open, passes 9 L/min at 1 bar)')).toEqual([
+      expect.stringContaining('words for 2/2 and 3/2'),
+    ]);
     expect(errors('directional X1 (5/9, detent, passes 9 L/min at 1 bar)')[0]).toContain('There is no valve `5/9`');
   });
 
   it('coils: side, voltage, signed command, one a side', () => {
-    expect(read('directional X1 (4/3, centre closed, spring to centre, coil a SOL1 24 V, coil b SOL2, passes 9 L/min at 1 bar)').circuit.coils).toMatchObject([
+    expect(
+      read('directional X1 (4/3, centre closed, spring to centre, coil a SOL1 24 V, coil b SOL2, passes 9 L/min at 1 bar)').circuit.coils,
+    ).toMatchObject([
       { id: 'SOL1', component: 'X1', side: 'a', voltage: 24 },
       { id: 'SOL2', side: 'b' },
     ]);
-    expect(read('directional X1 (4/3, proportional, centre closed, spring to centre, coil Y1, passes 9 L/min at 1 bar)').circuit.coils[0]).not.toHaveProperty('side');
-    expect(errors('directional X1 (4/3, centre closed, spring to centre, coil Y1, passes 9 L/min at 1 bar)')).toEqual([expect.stringContaining('needs the side its coil shifts to')]);
-    expect(errors('directional X1 (4/3, centre closed, spring to centre, coil a Y1, coil a Y2, passes 9 L/min at 1 bar)')).toEqual([expect.stringContaining('coil on side `a` already')]);
+    expect(
+      read('directional X1 (4/3, proportional, centre closed, spring to centre, coil Y1, passes 9 L/min at 1 bar)').circuit.coils[0],
+    ).not.toHaveProperty('side');
+    expect(errors('directional X1 (4/3, centre closed, spring to centre, coil Y1, passes 9 L/min at 1 bar)')).toEqual([
+      expect.stringContaining('needs the side its coil shifts to'),
+    ]);
+    expect(errors('directional X1 (4/3, centre closed, spring to centre, coil a Y1, coil a Y2, passes 9 L/min at 1 bar)')).toEqual([
+      expect.stringContaining('coil on side `a` already'),
+    ]);
   });
 
   it('only ports of the shape in paths', () => {
@@ -189,7 +220,8 @@ describe('directional valves', () => {
 
 describe('parts and twins', () => {
   it('own settings override, a choice of the part gives way as a whole', () => {
-    const text = 'part directional Four (4/3, centre closed, spring to centre, passes 80 L/min at 5 bar)\ndirectional X1 as Four (detent, passes 40 L/min at 7 bar, coil a S1)';
+    const text =
+      'part directional Four (4/3, centre closed, spring to centre, passes 80 L/min at 5 bar)\ndirectional X1 as Four (detent, passes 40 L/min at 7 bar, coil a S1)';
     expect(errors(text)).toEqual([]);
     const names = component(text)?.properties.map((property) => property.name) ?? [];
     expect(names.filter((name) => name === 'spring' || name === 'passes')).toEqual(['passes']);
@@ -199,14 +231,18 @@ describe('parts and twins', () => {
   });
 
   it('a part of another kind, a missing part, a part of itself', () => {
-    expect(errors('part check NR (crack 1 bar)\nrelief X1 as NR (set 5 bar, passes 9 L/min at 1 bar)')).toEqual([expect.stringContaining('is a part of the kind `check`')]);
+    expect(errors('part check NR (crack 1 bar)\nrelief X1 as NR (set 5 bar, passes 9 L/min at 1 bar)')).toEqual([
+      expect.stringContaining('is a part of the kind `check`'),
+    ]);
     expect(fixed('part check NonReturn (crack 1 bar)\ncheck X1 as NonRetrun')).toContain('check X1 as NonReturn');
     expect(errors('part check P1 as P1\ncheck X1 as P1')).toEqual([expect.stringContaining('defined through itself')]);
   });
 
   it('A17: twins are alike, and cannot share a coil', () => {
     expect(read('relief X1, X2 (set 5 bar, passes 9 L/min at 1 bar)').circuit.components.map((each) => each.id)).toEqual(['X1', 'X2']);
-    expect(errors('directional X1, X2 (2/2, normally open, coil a S1, passes 9 L/min at 1 bar)')[0]).toContain('would be the coil of 2 valves');
+    expect(errors('directional X1, X2 (2/2, normally open, coil a S1, passes 9 L/min at 1 bar)')[0]).toContain(
+      'would be the coil of 2 valves',
+    );
   });
 
   it('L7, L12: names after the older ISO 1219 code; words of the notation are no names', () => {

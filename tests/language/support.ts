@@ -43,7 +43,8 @@ export function fixed(text: string, title?: string): string {
     const fix = finding.fixes.find((candidate) => title === undefined || candidate.title === title);
     if (fix === undefined) continue;
     let result = text;
-    for (const change of [...fix.changes].sort((a, b) => b.start - a.start)) result = result.slice(0, change.start) + change.text + result.slice(change.end);
+    for (const change of [...fix.changes].sort((a, b) => b.start - a.start))
+      result = result.slice(0, change.start) + change.text + result.slice(change.end);
     return result;
   }
   throw new Error(`no fix${title === undefined ? '' : ` "${title}"`} for ${said(text).join('; ')}`);

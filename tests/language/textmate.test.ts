@@ -16,7 +16,10 @@ beforeAll(async () => {
   await oniguruma.loadWASM(readFileSync(require.resolve('vscode-oniguruma/release/onig.wasm')).buffer as ArrayBuffer);
   const path = fileURLToPath(new URL('../../syntaxes/oilway.tmLanguage.json', import.meta.url));
   const registry = new textmate.Registry({
-    onigLib: Promise.resolve({ createOnigScanner: (sources) => new oniguruma.OnigScanner(sources), createOnigString: (text) => new oniguruma.OnigString(text) }),
+    onigLib: Promise.resolve({
+      createOnigScanner: (sources) => new oniguruma.OnigScanner(sources),
+      createOnigString: (text) => new oniguruma.OnigString(text),
+    }),
     loadGrammar: async () => textmate.parseRawGrammar(readFileSync(path, 'utf8'), path),
   });
   const loaded = await registry.loadGrammar('source.oilway');
@@ -80,7 +83,8 @@ describe('colouring', () => {
 
   it('every kind and every unit of the tables is coloured', () => {
     for (const kind of Object.keys(KINDS)) expect(scopeOf(`${kind} X1`, kind), kind).toBe('storage.type.kind.oilway');
-    for (const { spelling } of UNIT_SPELLINGS) expect(scopeOf(`let x = 5 ${spelling}`, spelling), spelling).toBe('keyword.other.unit.oilway');
+    for (const { spelling } of UNIT_SPELLINGS)
+      expect(scopeOf(`let x = 5 ${spelling}`, spelling), spelling).toBe('keyword.other.unit.oilway');
   });
 
   it('in the collection every number with a unit shows both, and nothing stays without a colour', () => {

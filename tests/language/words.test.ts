@@ -43,8 +43,16 @@ describe('words', () => {
           if (!example.startsWith(spec.name)) continue;
           const shape = kind.name === 'directional' ? '4/3, ' : '';
           const text = `${kind.name} Z9 (${shape}${example})\ndrive M1\ncylinder C2\nmotor HM1\nreservoir R1\nfilter F2\ndirectional V1 (4/3)`;
-          const own = read(text).findings.filter((finding) => finding.origin.start >= text.indexOf('(') && finding.origin.end <= text.indexOf('\n') && !finding.what.includes('words for 2/2'));
-          expect(own.map((finding) => finding.what), `${kind.name}: ${example}`).toEqual([]);
+          const own = read(text).findings.filter(
+            (finding) =>
+              finding.origin.start >= text.indexOf('(') &&
+              finding.origin.end <= text.indexOf('\n') &&
+              !finding.what.includes('words for 2/2'),
+          );
+          expect(
+            own.map((finding) => finding.what),
+            `${kind.name}: ${example}`,
+          ).toEqual([]);
         }
       }
     }
@@ -64,14 +72,19 @@ describe('generated files', () => {
   it('the parser is the one the grammar gives', () => {
     const folder = mkdtempSync(join(tmpdir(), 'oilway-grammar-'));
     try {
-      const config = JSON.parse(readFileSync(join(root, 'packages/language/langium-config.json'), 'utf8')) as { languages: { grammar: string }[]; out: string };
+      const config = JSON.parse(readFileSync(join(root, 'packages/language/langium-config.json'), 'utf8')) as {
+        languages: { grammar: string }[];
+        out: string;
+      };
       for (const language of config.languages) language.grammar = relative(folder, join(root, 'packages/language', language.grammar));
       config.out = 'out';
       writeFileSync(join(folder, 'langium-config.json'), JSON.stringify(config));
       const cli = fileURLToPath(new URL('../bin/langium.js', import.meta.resolve('langium-cli')));
       execFileSync(process.execPath, [cli, 'generate', '-f', join(folder, 'langium-config.json')], { cwd: folder, stdio: 'pipe' });
       for (const name of ['ast.ts', 'grammar.ts', 'module.ts']) {
-        expect(readFileSync(join(root, 'packages/language/generated', name), 'utf8'), name).toBe(readFileSync(join(folder, 'out', name), 'utf8'));
+        expect(readFileSync(join(root, 'packages/language/generated', name), 'utf8'), name).toBe(
+          readFileSync(join(folder, 'out', name), 'utf8'),
+        );
       }
     } finally {
       rmSync(folder, { recursive: true });

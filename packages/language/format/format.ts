@@ -46,7 +46,10 @@ export function format(text: string): string {
 /** Nothing but spaces may have changed; where anything else did, the text stays as it was. */
 function sameTokens(before: readonly Raw[], text: string): boolean {
   const after = scan(text).tokens;
-  return after.length === before.length && after.every((token, i) => token.image === before[i]?.image && token.kind === before[i]?.kind && token.line === before[i]?.line);
+  return (
+    after.length === before.length &&
+    after.every((token, i) => token.image === before[i]?.image && token.kind === before[i]?.kind && token.line === before[i]?.line)
+  );
 }
 
 function linesOf(text: string, tokens: readonly Raw[], comments: readonly Raw[], starts: readonly number[]): Line[] {
@@ -77,7 +80,8 @@ function linesOf(text: string, tokens: readonly Raw[], comments: readonly Raw[],
     const inner = own.some((raw) => raw.start < (tokens[token - 1]?.start ?? 0) && token > from);
     while ((broken[nextBroken]?.end ?? Number.POSITIVE_INFINITY) < start) nextBroken++;
     while ((problems[nextProblem]?.end ?? Number.POSITIVE_INFINITY) < start) nextProblem++;
-    const isBroken = (broken[nextBroken]?.start ?? Number.POSITIVE_INFINITY) <= end || (problems[nextProblem]?.start ?? Number.POSITIVE_INFINITY) <= end;
+    const isBroken =
+      (broken[nextBroken]?.start ?? Number.POSITIVE_INFINITY) <= end || (problems[nextProblem]?.start ?? Number.POSITIVE_INFINITY) <= end;
     const marks = own.map((raw) => /^\/\/\s*oilway:\s*format\s+(on|off)\s*$/.exec(raw.image)?.[1]).filter((mark) => mark !== undefined);
     const wasOff = off;
     if (marks.length > 0) off = marks.at(-1) === 'off';
@@ -115,7 +119,8 @@ function cellOf(line: Line, tokens: readonly Raw[]): { readonly group: string; r
   // A part stands among the components without a column of its own.
   if (head === 'part') return { group: 'component', text: '', count: 0 };
   if (FUNCTIONS.has(head)) return { group: 'line', text: head, count: 1 };
-  if ((head === 'let' || head === 'step') && second?.kind === 'word' && line.to - line.from > 2) return { group: head, text: `${head} ${second.image}`, count: 2 };
+  if ((head === 'let' || head === 'step') && second?.kind === 'word' && line.to - line.from > 2)
+    return { group: head, text: `${head} ${second.image}`, count: 2 };
   return undefined;
 }
 

@@ -10,6 +10,9 @@ import { LINE_HEADS, isLineHead, isReserved } from './words.ts';
 /** Brackets in brackets: far more than any circuit needs, far fewer than a stack holds. */
 export const MOST_BRACKETS = 40;
 
+/** Problems said of one statement; what follows is the echo of these. */
+const MOST_PROBLEMS = 10;
+
 export interface LayoutToken {
   /** Name of the token type in the grammar. */
   readonly type: string;
@@ -81,6 +84,8 @@ class Layouter {
   private depthSaid = false;
   /** Index of the open statement, -1 between statements. */
   private open = -1;
+  /** Problems said of the open statement. */
+  private saidHere = 0;
   private stray: { start: number; end: number } | undefined;
   private last: Raw | undefined;
   /** Where the last `}` without partner stands; -1 if there is none. */
@@ -145,7 +150,7 @@ class Layouter {
     if (!isLineHead(word)) {
       const near = word === '' ? undefined : nearest(word, LINE_HEADS);
       if (near !== undefined && next !== undefined && !next.first && (next.kind === 'word' || next.image === '(' || near === 'emergency')) {
-        this.problems.push({
+        this.say({
           start: raw.start,
           end: raw.end,
           what: `\`${word}\` is no word that begins a line: did you mean \`${near}\``,
@@ -164,7 +169,14 @@ class Layouter {
     this.push(type, { ...raw, image: type });
   }
 
+  /** The first of many: a hundred brackets too many are one trouble. */
+  private say(problem: ScanProblem): void {
+    this.saidHere++;
+    if (this.saidHere <= MOST_PROBLEMS) this.problems.push(problem);
+  }
+
   private openStatement(head: string, raw: Raw): void {
+    this.saidHere = 0;
     this.open = this.statements.length;
     this.statements.push({ head, start: raw.start, end: raw.end });
     this.brackets = [];
@@ -202,7 +214,12 @@ class Layouter {
       case '(':
         if (this.brackets.length >= MOST_BRACKETS) {
           this.tooDeep++;
-          if (!this.depthSaid) this.problems.push({ start: raw.start, end: raw.end, what: `Brackets are nested deeper than ${MOST_BRACKETS}: what is inside cannot be read` });
+          if (!this.depthSaid)
+            this.say({
+              start: raw.start,
+              end: raw.end,
+              what: `Brackets are nested deeper than ${MOST_BRACKETS}: what is inside cannot be read`,
+            });
           this.depthSaid = true;
           return;
         }
@@ -214,7 +231,7 @@ class Layouter {
           return;
         }
         if (this.brackets.pop() === undefined) {
-          this.problems.push({
+          this.say({
             start: raw.start,
             end: raw.end,
             what: 'This `)` closes nothing: a `(` is missing, or one `)` is too many',
@@ -225,7 +242,11 @@ class Layouter {
         break;
       case '{':
         if (!BLOCK_HEADS.has(head)) {
-          this.problems.push({ start: raw.start, end: raw.end, what: 'A `{` does not stand here: only `cycle`, `manual` and `assembly` have braces' });
+          this.say({
+            start: raw.start,
+            end: raw.end,
+            what: 'A `{` does not stand here: only `cycle`, `manual` and `assembly` have braces',
+          });
           return;
         }
         this.closeBrackets();
@@ -261,7 +282,7 @@ class Layouter {
     if (this.open >= 0) this.end(undefined);
     const brace = this.braces.pop();
     if (brace === undefined) {
-      this.problems.push({
+      this.say({
         start: raw.start,
         end: raw.end,
         what: 'This `}` closes nothing: a `{` is missing, or one `}` is too many',
@@ -282,7 +303,7 @@ class Layouter {
     const at = this.last?.end ?? 0;
     const opening = brace.open;
     if (opening !== undefined) {
-      this.problems.push({
+      this.say({
         start: opening.start,
         end: opening.end,
         what: `The \`{\` of this \`${brace.head}\` is not closed: a \`}\` is missing`,
@@ -313,7 +334,7 @@ class Layouter {
 
   /** A block's head without its `{`: true, with the block entered where lines of it follow, else closed at once. */
   private missingBrace(statement: LayoutStatement, at: number, next: Raw | undefined): true {
-    this.problems.push({
+    this.say({
       start: Math.max(statement.start, at - 1),
       end: at,
       what: `A \`{\` is missing after this \`${statement.head}\``,
@@ -335,7 +356,7 @@ class Layouter {
     const opening = this.brackets.at(-1);
     if (opening === undefined) return;
     const at = this.last?.end ?? 0;
-    this.problems.push({
+    this.say({
       start: Math.max(opening.start, at - 1),
       end: at,
       what: 'A `)` is missing',

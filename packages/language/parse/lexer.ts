@@ -28,7 +28,14 @@ export class OilwayLexer implements Lexer {
       tokens: result.tokens.map((token) => this.parserToken(token, lines)),
       hidden: result.comments.map((raw) =>
         this.parserToken(
-          { type: raw.image.startsWith('//') ? 'SL_COMMENT' : 'ML_COMMENT', image: raw.image, start: raw.start, end: raw.end, statement: -1, inserted: false },
+          {
+            type: raw.image.startsWith('//') ? 'SL_COMMENT' : 'ML_COMMENT',
+            image: raw.image,
+            start: raw.start,
+            end: raw.end,
+            statement: -1,
+            inserted: false,
+          },
           commentLines,
         ),
       ),

@@ -34,7 +34,8 @@ export class MessageProvider implements IParserErrorMessageProvider {
       return `\`${actual.image}\` is a word of the notation and cannot be a name`;
     }
     if (expected.name === 'EOF') return `${seen(actual)} does not fit here`;
-    if (expected.name === 'EOL') return `${seen(actual)} does not fit here: after ${this.after(previous)} the line should end, or a \`,\` or \`to\` is missing`;
+    if (expected.name === 'EOL')
+      return `${seen(actual)} does not fit here: after ${this.after(previous)} the line should end, or a \`,\` or \`to\` is missing`;
     if (ENDS.has(actual.tokenType.name)) return `The line ends too soon: ${thing(expected.name)} is missing after ${this.after(previous)}`;
     return `${thing(expected.name)} is missing before ${seen(actual)}`.replace(/^a /, 'A ');
   }
@@ -43,7 +44,8 @@ export class MessageProvider implements IParserErrorMessageProvider {
     const actual = options.actual[0];
     if (actual === undefined) return 'Something is missing here';
     const place = PLACES[options.ruleName.replace(/\u200B$/, '')];
-    if (ENDS.has(actual.tokenType.name)) return `The line ends too soon: ${place ?? 'something'} is missing after ${this.after(options.previous)}`;
+    if (ENDS.has(actual.tokenType.name))
+      return `The line ends too soon: ${place ?? 'something'} is missing after ${this.after(options.previous)}`;
     if (place !== undefined && isReserved(actual.image)) return `${place.replace(/^a/, 'A')} is missing before \`${actual.image}\``;
     return `${seen(actual)} does not fit here${place === undefined ? '' : `: ${place} should stand here`}`;
   }

@@ -1,8 +1,15 @@
 /** Text to syntax tree. One call, no document store: the tree, and what does not fit as data. */
-import { type AstNode, EmptyFileSystem, type LangiumCoreServices, createDefaultCoreModule, createDefaultSharedCoreModule, inject } from 'langium';
+import {
+  type AstNode,
+  EmptyFileSystem,
+  type LangiumCoreServices,
+  createDefaultCoreModule,
+  createDefaultSharedCoreModule,
+  inject,
+} from 'langium';
 import type { LangiumParser, LangiumSharedCoreServices } from 'langium';
 import type { Finding, Fix } from '@oilway/rules';
-import { type File as FileNode } from '../generated/ast.ts';
+import type { File as FileNode } from '../generated/ast.ts';
 import { OilwayGeneratedModule, OilwayGeneratedSharedModule } from '../generated/module.ts';
 import { finding } from './finding.ts';
 import type { Layout } from './layout.ts';
@@ -80,7 +87,13 @@ export function parseText(uri: string, text: string): Parsed {
         const { start, end, text: written, title } = problem.change;
         fixes.push({ title, safe: false, changes: [{ uri, start, end, text: written }] });
       }
-      return finding({ code: 'SYNTAX', what: problem.what, mend: problem.mend, origin: { uri, start: problem.start, end: problem.end }, fixes });
+      return finding({
+        code: 'SYNTAX',
+        what: problem.what,
+        mend: problem.mend,
+        origin: { uri, start: problem.start, end: problem.end },
+        fixes,
+      });
     });
     const mended = statementsWithProblems(layout);
     const lost = new Set<number>();
@@ -147,8 +160,20 @@ function brokenStatements(layout: Layout, mended: ReadonlySet<number>, lost: Rea
   const words = new Map<number, string[]>();
   for (const index of broken) words.set(index, []);
   for (const token of layout.tokens) if (token.type === 'ID') words.get(token.statement)?.push(token.image);
-  return [...broken].sort((a, b) => a - b).flatMap((index) => {
-    const statement = layout.statements[index];
-    return statement === undefined ? [] : [{ head: statement.head, start: statement.start, end: ownEnd(layout, index), lost: lost.has(index), words: words.get(index) ?? [] }];
-  });
+  return [...broken]
+    .sort((a, b) => a - b)
+    .flatMap((index) => {
+      const statement = layout.statements[index];
+      return statement === undefined
+        ? []
+        : [
+            {
+              head: statement.head,
+              start: statement.start,
+              end: ownEnd(layout, index),
+              lost: lost.has(index),
+              words: words.get(index) ?? [],
+            },
+          ];
+    });
 }

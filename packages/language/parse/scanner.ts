@@ -63,7 +63,8 @@ export function lineStartsOf(text: string): number[] {
 
 const describe = (character: string): string => {
   const code = character.codePointAt(0) ?? 0;
-  if (code < 32 || (code >= 0x7f && code < 0xa0) || (code >= 0xd800 && code < 0xe000)) return `U+${code.toString(16).toUpperCase().padStart(4, '0')}`;
+  if (code < 32 || (code >= 0x7f && code < 0xa0) || (code >= 0xd800 && code < 0xe000))
+    return `U+${code.toString(16).toUpperCase().padStart(4, '0')}`;
   return `\`${character}\``;
 };
 
@@ -78,7 +79,15 @@ export function scan(text: string): Scan {
   let junkEnd = -1;
   const push = (kind: RawKind, image: string): void => {
     while (line + 1 < lineStarts.length && (lineStarts[line + 1] ?? 0) <= offset) line++;
-    const raw: Raw = { kind, start: offset, end: offset + image.length, image, line, column: offset - (lineStarts[line] ?? 0), first: line !== lineOfLast };
+    const raw: Raw = {
+      kind,
+      start: offset,
+      end: offset + image.length,
+      image,
+      line,
+      column: offset - (lineStarts[line] ?? 0),
+      first: line !== lineOfLast,
+    };
     if (kind === 'comment') comments.push(raw);
     else {
       tokens.push(raw);
@@ -186,7 +195,11 @@ export function scan(text: string): Scan {
     if (last !== undefined && junkEnd === offset) {
       problems[problems.length - 1] = { ...last, end: offset + length, what: 'These characters are no part of the notation' };
     } else {
-      problems.push({ start: offset, end: offset + length, what: `${describe(text.slice(offset, offset + length))} is no part of the notation` });
+      problems.push({
+        start: offset,
+        end: offset + length,
+        what: `${describe(text.slice(offset, offset + length))} is no part of the notation`,
+      });
     }
     offset += length;
     junkEnd = offset;

@@ -60,7 +60,9 @@ export class Components {
     const part = this.partOf(node.part, kind, name);
     if (part === undefined) return { kind, ...own };
     const written = new Set(own.properties.map(keyOf));
-    const groups = KINDS[kind].groups.filter((group) => group.need === 'exactly one' && own.properties.some((property) => group.of.includes(property.name)));
+    const groups = KINDS[kind].groups.filter(
+      (group) => group.need === 'exactly one' && own.properties.some((property) => group.of.includes(property.name)),
+    );
     const inherited = part.properties
       .filter((property) => !written.has(keyOf(property)) && !groups.some((group) => group.of.includes(property.name)))
       .map((property) => ({ ...property, part: property.part ?? node.part?.text ?? '' }));
@@ -74,7 +76,14 @@ export class Components {
     const origin = this.context.origin(name);
     const declared = this.context.names.get(word);
     if (declared?.what !== 'part') {
-      if (declared === undefined) this.context.unknownName(word, origin, (d) => d.what === 'part' && d.kind === kind, `a part (\`part ${kind} ${word} (..)\`)`, owner);
+      if (declared === undefined)
+        this.context.unknownName(
+          word,
+          origin,
+          (d) => d.what === 'part' && d.kind === kind,
+          `a part (\`part ${kind} ${word} (..)\`)`,
+          owner,
+        );
       else this.context.report({ code: 'NAME', what: `\`${word}\` is a ${declared.what}, not a part`, origin, place: owner });
       return undefined;
     }
@@ -90,7 +99,8 @@ export class Components {
       return undefined;
     }
     const content = this.part(word);
-    if (content === undefined) this.context.report({ code: 'VALUE', what: `The part \`${word}\` is defined through itself`, origin, place: owner });
+    if (content === undefined)
+      this.context.report({ code: 'VALUE', what: `The part \`${word}\` is defined through itself`, origin, place: owner });
     return content;
   }
 
@@ -166,7 +176,11 @@ export class Components {
       if (distinct.length === 0) {
         missing.push(group.of.join('/'));
         const brings = kind.name === 'directional' && group.name === 'return' ? ': nothing says where the spool goes without current' : '';
-        this.missing(component, `\`${component.id}\` needs ${group.need === 'exactly one' ? 'one of' : 'at least one of'} ${oneOf(group.of)}${brings}`, exampleOf(component, group.of));
+        this.missing(
+          component,
+          `\`${component.id}\` needs ${group.need === 'exactly one' ? 'one of' : 'at least one of'} ${oneOf(group.of)}${brings}`,
+          exampleOf(component, group.of),
+        );
       } else if (group.need === 'exactly one' && distinct.length > 1) {
         const second = written.find((property) => property.name !== written[0]?.name);
         this.context.report({
@@ -179,7 +193,8 @@ export class Components {
         this.unknown[component.id] ??= `${component.id} has ${distinct.join(' and ')}: only one can hold`;
       }
     }
-    for (const name of missing) if (!isOnlyChecked(component.kind, name)) this.unknown[component.id] ??= `${component.id} has no \`${name}\``;
+    for (const name of missing)
+      if (!isOnlyChecked(component.kind, name)) this.unknown[component.id] ??= `${component.id} has no \`${name}\``;
     for (const property of component.properties) this.checkProperty(component, property);
     if (component.kind === 'directional') this.checkShape(component);
     this.checkSizes(component);
@@ -199,7 +214,10 @@ export class Components {
   }
 
   /** Adds a setting at the end of the brackets, as an example whose figure is still to be set. */
-  private insertion(component: Component, example: string): { title: string; safe: boolean; changes: { uri: string; start: number; end: number; text: string }[] }[] {
+  private insertion(
+    component: Component,
+    example: string,
+  ): { title: string; safe: boolean; changes: { uri: string; start: number; end: number; text: string }[] }[] {
     const text = this.context.slice(component.origin);
     const first = example.split(/ \||, /)[0] ?? example;
     const closing = text.lastIndexOf(')');
@@ -220,9 +238,11 @@ export class Components {
     if (value.type === 'unknown') {
       const required = kindOf(component).properties.find((spec) => spec.name === property.name)?.required === true;
       const grouped = kindOf(component).groups.some((group) => group.of.includes(property.name));
-      if ((required || grouped) && !isOnlyChecked(component.kind, property.name)) this.unknown[component.id] ??= `${component.id}: ${value.why}`;
+      if ((required || grouped) && !isOnlyChecked(component.kind, property.name))
+        this.unknown[component.id] ??= `${component.id}: ${value.why}`;
     }
-    if (value.type === 'wanted' && !isOnlyChecked(component.kind, property.name)) this.unknown[component.id] ??= `${component.id} \`${property.name}\` is to be found (\`?\`)`;
+    if (value.type === 'wanted' && !isOnlyChecked(component.kind, property.name))
+      this.unknown[component.id] ??= `${component.id} \`${property.name}\` is to be found (\`?\`)`;
     const ports = portsOf(component).map((port) => port.name);
     const check = (port: string, origin: Origin): void => {
       if (!ports.includes(port)) this.noPort(component, port, origin, ports);
@@ -236,7 +256,8 @@ export class Components {
       for (const path of value.paths) {
         check(path.from, path.origin);
         check(path.to, path.origin);
-        if (path.from === path.to) this.context.report({ code: 'VALUE', what: `\`${path.from}\` is joined with itself`, origin: path.origin, place: component.id });
+        if (path.from === path.to)
+          this.context.report({ code: 'VALUE', what: `\`${path.from}\` is joined with itself`, origin: path.origin, place: component.id });
       }
     }
   }
@@ -256,7 +277,8 @@ export class Components {
     const { shape } = component;
     if (shape === undefined) {
       // A shape that there is not was said where it is written.
-      if (!/[(,]\s*[0-9]+\/[0-9]+/.test(this.context.slice(component.origin))) this.missing(component, `\`${component.id}\` has no shape`, '4/3');
+      if (!/[(,]\s*[0-9]+\/[0-9]+/.test(this.context.slice(component.origin)))
+        this.missing(component, `\`${component.id}\` has no shape`, '4/3');
       this.unknown[component.id] ??= `${component.id} has no shape (\`4/3\`)`;
       return;
     }
@@ -268,15 +290,23 @@ export class Components {
     }
     const refuse = (property: Property | undefined, what: string): void => {
       if (property === undefined) return;
-      this.context.report({ code: 'VALUE', what, origin: property.origin, related: [{ message: 'the shape', origin: shape.origin }], place: component.id });
+      this.context.report({
+        code: 'VALUE',
+        what,
+        origin: property.origin,
+        related: [{ message: 'the shape', origin: shape.origin }],
+        place: component.id,
+      });
       this.unknown[component.id] ??= `${component.id}: ${what}`;
     };
     if (shape.positions === 2) {
       refuse(centre, 'A valve with two positions has no centre');
       const spring = written('spring');
-      if (spring?.value.type === 'word' && spring.value.word === 'centre') refuse(spring, 'A valve with two positions has no centre to spring to');
+      if (spring?.value.type === 'word' && spring.value.word === 'centre')
+        refuse(spring, 'A valve with two positions has no centre to spring to');
     }
-    if (shape.ports === 4 || shape.positions === 3) refuse(written('normally'), '`normally open` and `normally closed` are words for 2/2 and 3/2 valves');
+    if (shape.ports === 4 || shape.positions === 3)
+      refuse(written('normally'), '`normally open` and `normally closed` are words for 2/2 and 3/2 valves');
     const coils = component.properties.filter((property) => property.value.type === 'coil');
     coils.forEach((property, i) => {
       const side = property.value.type === 'coil' ? property.value.side : undefined;
@@ -295,7 +325,21 @@ export class Components {
       const property = component.properties.find((candidate) => candidate.name === name && candidate.port === undefined);
       return property?.value.type === 'quantity' ? { si: property.value.q.si, origin: property.origin } : undefined;
     };
-    for (const name of ['bore', 'rod', 'stroke', 'displacement', 'volume', 'orifice', 'angle', 'set', 'closes', 'power', 'speed', 'opens', 'torque'] as const) {
+    for (const name of [
+      'bore',
+      'rod',
+      'stroke',
+      'displacement',
+      'volume',
+      'orifice',
+      'angle',
+      'set',
+      'closes',
+      'power',
+      'speed',
+      'opens',
+      'torque',
+    ] as const) {
       const value = size(name);
       if (value !== undefined && !(value.si > 0)) {
         this.context.report({ code: 'VALUE', what: `\`${name}\` must be above zero`, origin: value.origin, place: component.id });
@@ -305,7 +349,13 @@ export class Components {
     const bore = size('bore');
     const rod = size('rod');
     if (component.kind === 'cylinder' && bore !== undefined && rod !== undefined && rod.si >= bore.si) {
-      this.context.report({ code: 'VALUE', what: 'The rod is as thick as the bore or thicker', origin: rod.origin, related: [{ message: 'the bore', origin: bore.origin }], place: component.id });
+      this.context.report({
+        code: 'VALUE',
+        what: 'The rod is as thick as the bore or thicker',
+        origin: rod.origin,
+        related: [{ message: 'the bore', origin: bore.origin }],
+        place: component.id,
+      });
       this.unknown[component.id] ??= `${component.id}: the rod is as thick as the bore`;
     }
     const passes = component.properties.find((property) => property.name === 'passes')?.value;
@@ -334,10 +384,31 @@ export class Components {
     });
     const usual: readonly (readonly ['a' | 'b', readonly (readonly [string, string])[]])[] =
       shape.ports === 4
-        ? [['a', [['P', 'A'], ['B', 'T']]], ['b', [['P', 'B'], ['A', 'T']]]]
+        ? [
+            [
+              'a',
+              [
+                ['P', 'A'],
+                ['B', 'T'],
+              ],
+            ],
+            [
+              'b',
+              [
+                ['P', 'B'],
+                ['A', 'T'],
+              ],
+            ],
+          ]
         : shape.ports === 3
-          ? [['a', [['P', 'A']]], ['b', [['A', 'T']]]]
-          : [['a', [['P', 'A']]], ['b', []]];
+          ? [
+              ['a', [['P', 'A']]],
+              ['b', [['A', 'T']]],
+            ]
+          : [
+              ['a', [['P', 'A']]],
+              ['b', []],
+            ];
     for (const [name, pairs] of usual) {
       if (properties.some((property) => property.name === name)) continue;
       const paths: PathSpec[] = pairs.map(([from, to]) => ({ from, to, origin: shape.origin }));
@@ -357,7 +428,13 @@ function keyOf(property: Property): string {
 
 /** Settings the laws do not need: without them a component still computes. */
 function isOnlyChecked(kind: KindName, name: string): boolean {
-  return (kind === 'drive' && name === 'power') || name === 'gas' || name === 'seals' || (kind === 'sensor' && name === 'range') || (kind === 'accumulator' && name.includes('bladder'));
+  return (
+    (kind === 'drive' && name === 'power') ||
+    name === 'gas' ||
+    name === 'seals' ||
+    (kind === 'sensor' && name === 'range') ||
+    (kind === 'accumulator' && name.includes('bladder'))
+  );
 }
 
 function exampleOf(component: Component, names: readonly string[]): string {

@@ -1,5 +1,15 @@
 /** What all parts of the resolution share: the text, the names, the findings so far. */
-import { type Component, KINDS, KIND_NAMES, type Kind, type KindName, type NotComputed, type Origin, type PortSpec, type Chain } from '@oilway/circuit';
+import {
+  type Component,
+  KINDS,
+  KIND_NAMES,
+  type Kind,
+  type KindName,
+  type NotComputed,
+  type Origin,
+  type PortSpec,
+  type Chain,
+} from '@oilway/circuit';
 import type { Finding, Fix } from '@oilway/rules';
 import type { Let, Name, Ref } from '../generated/ast.ts';
 import { type FindingParts, finding } from '../parse/finding.ts';
@@ -15,7 +25,9 @@ export interface Placed {
 
 const LINES: ReadonlySet<string> = new Set(LINE_FUNCTIONS);
 /** Kinds with a `coil` setting. */
-const HAVE_COILS: ReadonlySet<string> = new Set<string>([...KIND_NAMES.filter((kind) => KINDS[kind].properties.some((spec) => spec.name === 'coil'))]);
+const HAVE_COILS: ReadonlySet<string> = new Set<string>([
+  ...KIND_NAMES.filter((kind) => KINDS[kind].properties.some((spec) => spec.name === 'coil')),
+]);
 
 export class Context {
   readonly uri: string;
@@ -42,14 +54,27 @@ export class Context {
     this.perhaps = new Set(broken.flatMap((statement) => statement.words));
   }
 
+  /** The statement with a problem that holds this place; they stand in text order and do not overlap. */
+  private brokenAt(start: number): BrokenStatement | undefined {
+    let low = 0;
+    let high = this.broken.length;
+    while (low < high) {
+      const middle = (low + high) >> 1;
+      if ((this.broken[middle]?.start ?? 0) <= start) low = middle + 1;
+      else high = middle;
+    }
+    const statement = this.broken[low - 1];
+    return statement !== undefined && start <= statement.end ? statement : undefined;
+  }
+
   /** True where the statement that holds this place does not parse as it stands. */
   isBroken(origin: Origin): boolean {
-    return this.broken.some((statement) => statement.start <= origin.start && origin.start <= statement.end);
+    return this.brokenAt(origin.start) !== undefined;
   }
 
   /** True where the parser gave up in the statement. */
   isLost(origin: Origin): boolean {
-    return this.broken.some((statement) => statement.lost && statement.start <= origin.start && origin.start <= statement.end);
+    return this.brokenAt(origin.start)?.lost === true;
   }
 
   /** True where the component's own line, or that of its part, does not parse: what it lacks may be in the lost part. */
@@ -63,7 +88,8 @@ export class Context {
   /** A line that could have declared what fits does not parse: its name may be half typed. */
   private mayBeLost(fits: (declaration: SymbolDeclaration) => boolean): boolean {
     const nowhere: Origin = { uri: this.uri, start: 0, end: 0 };
-    const could = (what: SymbolKind, kind?: KindName): boolean => fits({ id: '', name: '', what, origin: nowhere, statement: nowhere, ...(kind === undefined ? {} : { kind }) });
+    const could = (what: SymbolKind, kind?: KindName): boolean =>
+      fits({ id: '', name: '', what, origin: nowhere, statement: nowhere, ...(kind === undefined ? {} : { kind }) });
     return this.broken.some(({ head }) => {
       const kind = KIND_NAMES.find((name) => name === head);
       if (kind !== undefined) return could('component', kind) || (HAVE_COILS.has(kind) && could('coil'));
@@ -79,7 +105,13 @@ export class Context {
 
   /** Components named in lines that do not parse: their ports may be joined there. */
   get perhapsJoined(): ReadonlySet<string> {
-    return new Set(this.broken.flatMap((statement) => ((LINE_FUNCTIONS as readonly string[]).includes(statement.head) || statement.head === '' || statement.head === 'plug' ? statement.words : [])));
+    return new Set(
+      this.broken.flatMap((statement) =>
+        (LINE_FUNCTIONS as readonly string[]).includes(statement.head) || statement.head === '' || statement.head === 'plug'
+          ? statement.words
+          : [],
+      ),
+    );
   }
 
   origin(node: Placed | undefined): Origin {
@@ -97,6 +129,8 @@ export class Context {
 
   /** One finding; the same words at the same place (twins share their text) are said once. */
   report(parts: FindingParts): void {
+    // Where the parser gave up, what else seems wrong is mostly its echo.
+    if (parts.code !== 'SYNTAX' && this.isLost(parts.origin)) return;
     const key = `${parts.origin.start} ${parts.origin.end} ${parts.code} ${parts.what}`;
     if (this.said.has(key)) return;
     this.said.add(key);
@@ -107,7 +141,12 @@ export class Context {
     return { title, safe, changes: [{ uri: this.uri, start: origin.start, end: origin.end, text }] };
   }
 
-  declare(node: Name | undefined, what: SymbolKind, statement: Placed, detail: Partial<Pick<SymbolDeclaration, 'kind' | 'id'>> = {}): SymbolDeclaration | undefined {
+  declare(
+    node: Name | undefined,
+    what: SymbolKind,
+    statement: Placed,
+    detail: Partial<Pick<SymbolDeclaration, 'kind' | 'id'>> = {},
+  ): SymbolDeclaration | undefined {
     const name = node?.text;
     if (name === undefined || node === undefined) return undefined;
     return this.declareWord(name, this.origin(node), what, this.origin(statement), detail);
@@ -134,7 +173,14 @@ export class Context {
       });
       return undefined;
     }
-    const declaration: SymbolDeclaration = { id, name, what, origin, statement, ...(detail.kind === undefined ? {} : { kind: detail.kind }) };
+    const declaration: SymbolDeclaration = {
+      id,
+      name,
+      what,
+      origin,
+      statement,
+      ...(detail.kind === undefined ? {} : { kind: detail.kind }),
+    };
     this.names.set(id, declaration);
     return declaration;
   }
@@ -152,7 +198,8 @@ export class Context {
   unknownName(word: string, origin: Origin, fits: (declaration: SymbolDeclaration) => boolean, wanted: string, place = ''): void {
     if (this.perhaps.has(word) || this.mayBeLost(fits)) return;
     const candidates: string[] = [];
-    for (const declaration of this.names.values()) if (fits(declaration)) candidates.push(declaration.what === 'step' ? declaration.name : declaration.id);
+    for (const declaration of this.names.values())
+      if (fits(declaration)) candidates.push(declaration.what === 'step' ? declaration.name : declaration.id);
     const near = nearest(word, candidates);
     this.report({
       code: 'NAME',

@@ -86,14 +86,29 @@ export class Control {
       return id === undefined ? missing : { op: 'running', of: id, origin };
     }
     if (declared === undefined) {
-      const wants = node.compare !== undefined ? ['cylinder', 'motor', 'rotary', 'sensor'] : node.state === 'on' || node.state === 'off' ? ['switch'] : ['cylinder', 'rotary'];
+      const wants =
+        node.compare !== undefined
+          ? ['cylinder', 'motor', 'rotary', 'sensor']
+          : node.state === 'on' || node.state === 'off'
+            ? ['switch']
+            : ['cylinder', 'rotary'];
       const coils = node.state === 'on' || node.state === 'off';
-      context.unknownName(words[0] ?? '', at, (d) => (d.kind !== undefined && d.what === 'component' && wants.includes(d.kind)) || (coils && d.what === 'coil'), coils ? 'a switch or coil' : `a ${wants.join(', ')}`);
+      context.unknownName(
+        words[0] ?? '',
+        at,
+        (d) => (d.kind !== undefined && d.what === 'component' && wants.includes(d.kind)) || (coils && d.what === 'coil'),
+        coils ? 'a switch or coil' : `a ${wants.join(', ')}`,
+      );
       return missing;
     }
     context.refer(context.origin(node.of.parts?.[0]), declared.id);
     if (words.length > 1) {
-      context.report({ code: 'NAME', what: `The control does not know \`${name}\`: declare a \`switch\` or a \`sensor\` for it`, mend: 'A pressure at a port is seen by a switch or sensor whose line leads there.', origin: at });
+      context.report({
+        code: 'NAME',
+        what: `The control does not know \`${name}\`: declare a \`switch\` or a \`sensor\` for it`,
+        mend: 'A pressure at a port is seen by a switch or sensor whose line leads there.',
+        origin: at,
+      });
       return missing;
     }
     if (node.compare !== undefined) {
@@ -118,7 +133,8 @@ export class Control {
     const name = context.wordsOf(ref).join('.');
     const origin = context.origin(ref);
     const kind = component?.kind ?? what;
-    const can = kind === 'switch' || kind === 'coil' ? ['on', 'off'] : kind === 'cylinder' || kind === 'rotary' ? ['extended', 'retracted'] : [];
+    const can =
+      kind === 'switch' || kind === 'coil' ? ['on', 'off'] : kind === 'cylinder' || kind === 'rotary' ? ['extended', 'retracted'] : [];
     const say =
       can.length > 0
         ? `write \`${name} ${can[0]}\` or \`${name} ${can[1]}\``
@@ -228,7 +244,11 @@ export class Control {
       }
       const q = this.values.quantity(value, dimensions)?.q;
       if (q?.dimension === 'ratio' && (q.si > 1 + 1e-9 || q.si < (coil.side === undefined ? -1 - 1e-9 : 0))) {
-        context.report({ code: 'VALUE', what: `A command lies between ${coil.side === undefined ? '-100' : '0'} and 100 %`, origin: context.origin(value) });
+        context.report({
+          code: 'VALUE',
+          what: `A command lies between ${coil.side === undefined ? '-100' : '0'} and 100 %`,
+          origin: context.origin(value),
+        });
         return undefined;
       }
       return q;
@@ -270,7 +290,11 @@ export class Control {
         if (valve === undefined || word === undefined) return undefined;
         const positions: readonly string[] = valve.shape?.positions === 3 ? ['a', 'centre', 'b'] : ['a', 'b'];
         if (word !== 'a' && word !== 'b' && word !== 'centre') {
-          context.report({ code: 'VALUE', what: `\`${valve.id}\` is shifted to ${positions.map((p) => `\`${p}\``).join(' or ')}, not to \`${word}\``, origin: context.origin(node.position) });
+          context.report({
+            code: 'VALUE',
+            what: `\`${valve.id}\` is shifted to ${positions.map((p) => `\`${p}\``).join(' or ')}, not to \`${word}\``,
+            origin: context.origin(node.position),
+          });
           return undefined;
         }
         if (!positions.includes(word) && !context.isHalfRead(valve)) {
@@ -278,12 +302,19 @@ export class Control {
           return undefined;
         }
         if (!valve.properties.some((property) => property.name === 'lever') && !context.isHalfRead(valve)) {
-          context.report({ code: 'VALUE', what: `\`${valve.id}\` has no \`lever\`: \`shift\` moves a valve by hand`, origin: context.origin(node.valve), place: valve.id });
+          context.report({
+            code: 'VALUE',
+            what: `\`${valve.id}\` has no \`lever\`: \`shift\` moves a valve by hand`,
+            origin: context.origin(node.valve),
+            place: valve.id,
+          });
         }
         return { does: 'shift', valve: valve.id, to: word, origin };
       }
       case 'Stop': {
-        const drives = (node.drives ?? []).flatMap((ref) => (this.inUnit(ref) ? [] : (this.component(ref, (kind) => kind === 'drive', 'a drive')?.id ?? [])));
+        const drives = (node.drives ?? []).flatMap((ref) =>
+          this.inUnit(ref) ? [] : (this.component(ref, (kind) => kind === 'drive', 'a drive')?.id ?? []),
+        );
         return { does: 'stop', drives, origin };
       }
       case 'Run': {
@@ -309,7 +340,12 @@ export class Control {
       if (command === undefined) continue;
       const first = commands.find((other) => other.coil === command.coil);
       if (first !== undefined) {
-        this.context.report({ code: 'VALUE', what: `\`${command.coil}\` stands twice in this list`, origin: command.origin, related: [{ message: 'first here', origin: first.origin }] });
+        this.context.report({
+          code: 'VALUE',
+          what: `\`${command.coil}\` stands twice in this list`,
+          origin: command.origin,
+          related: [{ message: 'first here', origin: first.origin }],
+        });
         continue;
       }
       commands.push(command);
@@ -336,7 +372,8 @@ export class Control {
       return component;
     }
     const declared = context.names.get(name);
-    if (declared === undefined) context.unknownName(name, origin, (d) => d.what === 'component' && d.kind !== undefined && fits(d.kind), wanted);
+    if (declared === undefined)
+      context.unknownName(name, origin, (d) => d.what === 'component' && d.kind !== undefined && fits(d.kind), wanted);
     else context.report({ code: 'NAME', what: `\`${name}\` is a ${component?.kind ?? declared.what}; ${wanted} is needed here`, origin });
     return undefined;
   }
@@ -347,7 +384,11 @@ export class Control {
     if (name === undefined) return undefined;
     const meanwhile = node.kind === 'meanwhile';
     if (meanwhile && above === undefined && !context.isBroken(context.origin(node.name))) {
-      context.report({ code: 'VALUE', what: '`meanwhile` runs beside the step above it, and there is none', origin: context.origin(node.name) });
+      context.report({
+        code: 'VALUE',
+        what: '`meanwhile` runs beside the step above it, and there is none',
+        origin: context.origin(node.name),
+      });
     }
     const actions = (node.actions ?? []).flatMap((action) => this.action(action) ?? []);
     const lasts = node.lasts === undefined ? undefined : this.time(node.lasts);
@@ -388,7 +429,8 @@ export class Control {
         if (standing !== undefined) whiles.push(standing);
       }
     }
-    const repeat = node.repeat !== true ? undefined : node.times === undefined ? ('ever' as const) : this.times(node.times, context.origin(node.name));
+    const repeat =
+      node.repeat !== true ? undefined : node.times === undefined ? ('ever' as const) : this.times(node.times, context.origin(node.name));
     return {
       cycle: {
         id,
@@ -418,5 +460,4 @@ export class Control {
     const actions = (node.actions ?? []).flatMap((action) => this.action(action) ?? []);
     return { actions, ...(node.title === undefined ? {} : { title: unquoted(node.title) }), origin: this.context.origin(node) };
   }
-
 }

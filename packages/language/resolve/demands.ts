@@ -32,7 +32,10 @@ export class Demands {
 
   /** The words of the requirement are its id: it stays the same when other lines move. */
   private id(text: string): string {
-    const words = text.replace(/^require\s+/, '').replace(/\s+/g, ' ').trim();
+    const words = text
+      .replace(/^require\s+/, '')
+      .replace(/\s+/g, ' ')
+      .trim();
     const count = (this.ids.get(words) ?? 0) + 1;
     this.ids.set(words, count);
     return count === 1 ? words : `${words} (${count})`;
@@ -57,17 +60,36 @@ export class Demands {
     if (node.still === true) {
       const where = this.where(node.where ?? [], named?.subject);
       if (named === undefined || where === undefined) return;
-      if (named.subject.is !== 'component' || !['cylinder', 'motor', 'rotary'].includes(named.subject.component.kind) || named.port !== undefined) {
-        context.report({ code: 'VALUE', what: `\`${named.of}\` does not move: \`still\` is asked of an actuator`, origin: context.origin(node.of) });
+      if (
+        named.subject.is !== 'component' ||
+        !['cylinder', 'motor', 'rotary'].includes(named.subject.component.kind) ||
+        named.port !== undefined
+      ) {
+        context.report({
+          code: 'VALUE',
+          what: `\`${named.of}\` does not move: \`still\` is asked of an actuator`,
+          origin: context.origin(node.of),
+        });
         return;
       }
-      this.requirements.push({ form: 'still', id: this.id(context.slice(origin)), of: named.of, where, ...(lasts === undefined ? {} : { lasts }), origin });
+      this.requirements.push({
+        form: 'still',
+        id: this.id(context.slice(origin)),
+        of: named.of,
+        where,
+        ...(lasts === undefined ? {} : { lasts }),
+        origin,
+      });
       return;
     }
     const measure = this.measure(node, named);
     const where = this.where(node.where ?? [], named?.subject);
     if (node.bound === undefined && node.measure !== undefined) {
-      context.report({ code: 'SYNTAX', what: 'A bound is missing: `at least`, `at most`, `between .. and ..` or `reaches`', origin: context.origin(node.measure) });
+      context.report({
+        code: 'SYNTAX',
+        what: 'A bound is missing: `at least`, `at most`, `between .. and ..` or `reaches`',
+        origin: context.origin(node.measure),
+      });
       return;
     }
     if (named === undefined || measure === undefined || node.bound === undefined) return;
@@ -118,10 +140,19 @@ export class Demands {
       return { of: id, subject: { is: context.names.get(id)?.what === 'cycle' ? 'cycle' : 'step' } };
     }
     if (declared !== undefined) {
-      context.report({ code: 'NAME', what: `\`${words.join('.')}\` is a ${declared.what}: a requirement is about a component, port, line, step or cycle`, origin: context.origin(ref) });
+      context.report({
+        code: 'NAME',
+        what: `\`${words.join('.')}\` is a ${declared.what}: a requirement is about a component, port, line, step or cycle`,
+        origin: context.origin(ref),
+      });
       return undefined;
     }
-    context.unknownName(name, first, (d) => d.what === 'component' || d.what === 'line' || d.what === 'step' || d.what === 'cycle', 'a component, line, step or cycle');
+    context.unknownName(
+      name,
+      first,
+      (d) => d.what === 'component' || d.what === 'line' || d.what === 'step' || d.what === 'cycle',
+      'a component, line, step or cycle',
+    );
     return undefined;
   }
 
@@ -168,7 +199,10 @@ export class Demands {
     if (named === undefined) return undefined;
     const found = measureOf(measure, named.subject);
     if ('dimension' in found) return { name: measure, dimension: found.dimension };
-    const ports = named.subject.is === 'component' && named.port === undefined && measure === 'pressure' ? portsOf(named.subject.component).map((spec) => `${named.of}.${spec.name}`) : [];
+    const ports =
+      named.subject.is === 'component' && named.port === undefined && measure === 'pressure'
+        ? portsOf(named.subject.component).map((spec) => `${named.of}.${spec.name}`)
+        : [];
     const ref = context.origin(node.of);
     context.report({
       code: 'VALUE',
@@ -194,7 +228,11 @@ export class Demands {
         const high = read(node.high);
         if (low === undefined || high === undefined) return undefined;
         if (high.si < low.si) {
-          this.context.report({ code: 'VALUE', what: 'The bounds run backwards: the smaller value stands first', origin: this.context.origin(node) });
+          this.context.report({
+            code: 'VALUE',
+            what: 'The bounds run backwards: the smaller value stands first',
+            origin: this.context.origin(node),
+          });
           return undefined;
         }
         return { is: 'between', low, high };
@@ -237,24 +275,36 @@ export class Demands {
       if (from === undefined || to === undefined || (actuator === undefined && subject !== undefined)) {
         failed = true;
       } else if (to.q.si < from.q.si) {
-        context.report({ code: 'VALUE', what: 'The range runs backwards: the smaller position stands first', origin: context.origin(node) });
+        context.report({
+          code: 'VALUE',
+          what: 'The range runs backwards: the smaller position stands first',
+          origin: context.origin(node),
+        });
         failed = true;
       } else range = { from: from.q, to: to.q };
     }
     if (failed) return undefined;
-    return { ...(places === undefined ? {} : { places }), ...(range === undefined ? {} : { range }), ...(direction === undefined ? {} : { direction }) };
+    return {
+      ...(places === undefined ? {} : { places }),
+      ...(range === undefined ? {} : { range }),
+      ...(direction === undefined ? {} : { direction }),
+    };
   }
 
   /** Whose range or direction is meant: the subject's own, else that of the circuit's only actuator. */
   private actuator(subject: Subject | undefined, node: WhereNode): Component | undefined {
-    const moves = (component: Component): boolean => component.kind === 'cylinder' || component.kind === 'motor' || component.kind === 'rotary';
+    const moves = (component: Component): boolean =>
+      component.kind === 'cylinder' || component.kind === 'motor' || component.kind === 'rotary';
     if (subject?.is === 'component' && moves(subject.component)) return subject.component;
     const all = [...this.context.components.values()].filter(moves);
     if (all.length === 1) return all[0];
     if (subject !== undefined) {
       this.context.report({
         code: 'VALUE',
-        what: all.length === 0 ? 'There is no actuator whose way or direction this could be' : `Whose way or direction is meant: there are ${all.map((component) => `\`${component.id}\``).join(', ')}`,
+        what:
+          all.length === 0
+            ? 'There is no actuator whose way or direction this could be'
+            : `Whose way or direction is meant: there are ${all.map((component) => `\`${component.id}\``).join(', ')}`,
         mend: 'Name the step instead: `in Out`.',
         origin: this.context.origin(node),
       });
@@ -276,11 +326,26 @@ export class Demands {
         what: 'An allowance needs its reason: `allow D09 on C1.cap "why it is safe here"`',
         why: 'Accepted findings and their reasons are printed in the risk notes.',
         origin,
-        fixes: node.reason !== undefined ? [] : [{ title: 'Add a reason', safe: false, changes: [{ uri: origin.uri, start: origin.end, end: origin.end, text: ' "reason"' }] }],
+        fixes:
+          node.reason !== undefined
+            ? []
+            : [
+                {
+                  title: 'Add a reason',
+                  safe: false,
+                  changes: [{ uri: origin.uri, start: origin.end, end: origin.end, text: ' "reason"' }],
+                },
+              ],
       });
       return;
     }
     if (where === undefined || (node.place !== undefined && named === undefined)) return;
-    this.allows.push({ rule, ...(named === undefined ? {} : { on: named.of, ...(named.port === undefined ? {} : { port: named.port }) }), where, reason, origin });
+    this.allows.push({
+      rule,
+      ...(named === undefined ? {} : { on: named.of, ...(named.port === undefined ? {} : { port: named.port }) }),
+      where,
+      reason,
+      origin,
+    });
   }
 }

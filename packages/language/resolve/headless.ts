@@ -30,7 +30,12 @@ export function cutByComma(context: Context, before: PropertyNode | undefined, a
 }
 
 /** The shape, if it is one, and how many items it took; what is wrong is said. */
-export function readHeadless(context: Context, entry: PropertyNode, owner: OwnerWords, before: PropertyNode | undefined): Shape | undefined {
+export function readHeadless(
+  context: Context,
+  entry: PropertyNode,
+  owner: OwnerWords,
+  before: PropertyNode | undefined,
+): Shape | undefined {
   const whole = context.origin(entry);
   const first = (entry.items ?? [])[0];
   const firstOrigin = first === undefined ? whole : context.origin(first);
@@ -62,7 +67,12 @@ export function readHeadless(context: Context, entry: PropertyNode, owner: Owner
 
 function readShape(context: Context, owner: OwnerWords, origin: Origin, ports: number, positions: number): Shape | undefined {
   if (!owner.shaped) {
-    context.report({ code: 'VALUE', what: `Only a directional valve has a shape such as \`${context.slice(origin)}\``, origin, place: owner.name });
+    context.report({
+      code: 'VALUE',
+      what: `Only a directional valve has a shape such as \`${context.slice(origin)}\``,
+      origin,
+      place: owner.name,
+    });
     return undefined;
   }
   if ([2, 3, 4].includes(ports) && [2, 3].includes(positions) && !(ports === 2 && positions === 3)) return { ports, positions, origin };

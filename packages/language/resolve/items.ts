@@ -21,7 +21,12 @@ function pieceOfValue(context: Context, item: { value?: Value; other?: Value; to
   const value = item.value;
   if (value === undefined) return undefined;
   const factor = value.terms?.[0]?.factors?.[0];
-  const single = value.negative !== true && value.terms?.length === 1 && value.terms[0]?.factors?.length === 1 && item.other === undefined && item.tolerance === undefined;
+  const single =
+    value.negative !== true &&
+    value.terms?.length === 1 &&
+    value.terms[0]?.factors?.length === 1 &&
+    item.other === undefined &&
+    item.tolerance === undefined;
   if (single && factor?.$type === 'RefValue' && factor.arguments === undefined && factor.ref !== undefined) {
     return { is: 'name', words: context.wordsOf(factor.ref), ref: factor.ref, value, origin: context.origin(factor) };
   }

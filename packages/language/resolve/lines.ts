@@ -4,7 +4,7 @@ import { LINE_PROPERTIES } from '@oilway/circuit';
 import type { Line as LineNode, Plug as PlugNode, Ref } from '../generated/ast.ts';
 import { nearest } from '../parse/near.ts';
 import { type Context, chainOf, kindOf, oneOf, portsOf } from './context.ts';
-import { Joints } from './joints.ts';
+import { NetBuilder } from './nets.ts';
 import { readProperties } from './properties.ts';
 import type { Values } from './values.ts';
 
@@ -19,22 +19,12 @@ interface Resolved {
   readonly reservoir?: string | undefined;
 }
 
-const portKey = (ref: PortRef): string => `${ref.component}.${ref.port}`;
-const lineKey = (name: string): string => `line ${name}`;
-
 export class Lines {
   readonly statements: LineStatement[] = [];
   private readonly context: Context;
   private readonly values: Values;
-  private readonly joints = new Joints();
-  private readonly pieces: (Omit<Piece, 'nets'> & { readonly keys: readonly [string, string] })[] = [];
+  private readonly net = new NetBuilder();
   private readonly taken = new Map<string, LinePlace>();
-  private readonly ports = new Map<string, { readonly ref: PortRef; readonly origin: Origin }>();
-  private readonly functions = new Map<string, Set<LineFunction>>();
-  private readonly reservoirs = new Map<string, string>();
-  private readonly lineNames = new Map<string, Origin>();
-  private readonly plugs = new Map<string, Origin>();
-  private readonly places = new Map<string, Origin>();
 
   constructor(context: Context, values: Values) {
     this.context = context;
@@ -48,7 +38,12 @@ export class Lines {
     const origin = context.origin(node);
     // Where the parser gave up, the rest of the line may lead elsewhere: nothing is joined by halves.
     const stations = context.isLost(origin) ? [] : (node.stations ?? []);
-    const { properties } = readProperties(context, this.values, node.properties, { name: node.name?.text ?? 'the line', specs: LINE_PROPERTIES, shaped: false, of: 'a line' });
+    const { properties } = readProperties(context, this.values, node.properties, {
+      name: node.name?.text ?? 'the line',
+      specs: LINE_PROPERTIES,
+      shaped: false,
+      of: 'a line',
+    });
     const hydraulic = this.hydraulics(properties, node);
     const ends = stations.length < 2 ? this.single(node, stations.length) : undefined;
     const resolved = stations.map((station, i) => {
@@ -62,21 +57,18 @@ export class Lines {
       ids.push(id);
       const left = `${id} left`;
       const right = own ? `${id} right` : left;
-      this.joints.add(left);
-      this.joints.add(right);
-      this.attach(resolved[i] ?? [], 'exit', left, id, lineFunction);
-      this.attach(resolved[i + 1] ?? [], 'entrance', right, id, lineFunction);
-      for (const key of [left, right]) this.functionOf(key, lineFunction);
-      if (i === 0 && node.name?.text !== undefined && context.names.get(node.name.text)?.origin.start === context.origin(node.name).start) {
-        this.joints.join(left, lineKey(node.name.text));
-        this.lineNames.set(node.name.text, context.origin(node.name));
-      }
       const from = context.origin(stations[i]);
       const to = context.origin(stations[i + 1]);
-      this.places.set(left, from);
-      this.places.set(right, own ? to : from);
-      const joint = properties.find((property) => property.name === 'flanged' || property.name === 'tube' || property.name === 'hose')?.name as Piece['joint'];
-      this.pieces.push({
+      this.net.side(left, lineFunction, from);
+      this.net.side(right, lineFunction, own ? to : from);
+      this.attach(resolved[i] ?? [], 'exit', left, id, lineFunction);
+      this.attach(resolved[i + 1] ?? [], 'entrance', right, id, lineFunction);
+      if (i === 0 && node.name?.text !== undefined && context.names.get(node.name.text)?.origin.start === context.origin(node.name).start) {
+        this.net.nameLine(left, node.name.text, context.origin(node.name));
+      }
+      const joint = properties.find((property) => property.name === 'flanged' || property.name === 'tube' || property.name === 'hose')
+        ?.name as Piece['joint'];
+      this.net.piece({
         id,
         function: lineFunction,
         keys: [left, right],
@@ -90,7 +82,10 @@ export class Lines {
     this.statements.push({
       function: lineFunction,
       ...(node.name?.text === undefined ? {} : { name: node.name.text }),
-      stations: stations.map((station, i) => ({ places: (resolved[i] ?? []).map((entry) => entry.place), origin: context.origin(station) })),
+      stations: stations.map((station, i) => ({
+        places: (resolved[i] ?? []).map((entry) => entry.place),
+        origin: context.origin(station),
+      })),
       properties,
       origin,
       pieces: ids,
@@ -109,11 +104,17 @@ export class Lines {
     return 'start';
   }
 
-  private hydraulics(properties: readonly Property[], node: LineNode): { bore?: number; wall?: number; length?: number; rated?: number; bends?: number } {
+  private hydraulics(
+    properties: readonly Property[],
+    node: LineNode,
+  ): { bore?: number; wall?: number; length?: number; rated?: number; bends?: number } {
     const found: { bore?: number; wall?: number; length?: number; rated?: number; bends?: number } = {};
     for (const property of properties) {
       const { value } = property;
-      if (value.type === 'quantity' && (property.name === 'bore' || property.name === 'wall' || property.name === 'length' || property.name === 'rated')) {
+      if (
+        value.type === 'quantity' &&
+        (property.name === 'bore' || property.name === 'wall' || property.name === 'length' || property.name === 'rated')
+      ) {
         if (value.q.si < 0 || (property.name !== 'length' && value.q.si === 0)) {
           this.context.report({ code: 'VALUE', what: `\`${property.name}\` must be above zero`, origin: property.origin });
         } else found[property.name] = value.q.si;
@@ -134,25 +135,23 @@ export class Lines {
     const joints = properties.filter((property) => property.name === 'flanged' || property.name === 'tube' || property.name === 'hose');
     const second = joints[1];
     if (second !== undefined && joints[0] !== undefined && second.name !== joints[0].name) {
-      this.context.report({ code: 'VALUE', what: `A line is \`${joints[0].name}\` or \`${second.name}\`, not both`, origin: second.origin, related: [{ message: 'first here', origin: joints[0].origin }] });
+      this.context.report({
+        code: 'VALUE',
+        what: `A line is \`${joints[0].name}\` or \`${second.name}\`, not both`,
+        origin: second.origin,
+        related: [{ message: 'first here', origin: joints[0].origin }],
+      });
     }
     return found;
   }
 
   private attach(entries: readonly Resolved[], side: 'entrance' | 'exit', key: string, piece: string, lineFunction: LineFunction): void {
     for (const entry of entries) {
-      if (entry.reservoir !== undefined) this.reservoirs.set(`${entry.reservoir} ${piece} ${side}`, entry.reservoir);
+      if (entry.reservoir !== undefined) this.net.reservoirEnd(`${entry.reservoir} ${piece} ${side}`, entry.reservoir);
       const target = entry.reservoir === undefined ? entry[side] : `${entry.reservoir} ${piece} ${side}`;
       if (target === undefined) continue;
-      this.joints.join(key, target);
-      this.functionOf(target, lineFunction);
+      this.net.join(key, target, lineFunction);
     }
-  }
-
-  private functionOf(key: string, lineFunction: LineFunction): void {
-    const set = this.functions.get(key) ?? new Set();
-    set.add(lineFunction);
-    this.functions.set(key, set);
   }
 
   /** A place of a station: a component, its port, or a line's name. */
@@ -166,7 +165,12 @@ export class Lines {
     if (name === undefined || first === undefined) return nowhere;
     const declared = context.names.get(name);
     if (declared === undefined) {
-      context.unknownName(name, context.origin(first), (d) => d.what === 'component' || d.what === 'line' || d.what === 'unit', 'a component or line');
+      context.unknownName(
+        name,
+        context.origin(first),
+        (d) => d.what === 'component' || d.what === 'line' || d.what === 'unit',
+        'a component or line',
+      );
       return nowhere;
     }
     context.refer(context.origin(first), declared.id);
@@ -175,17 +179,24 @@ export class Lines {
       if (words.length > 1) context.report({ code: 'PORT', what: `\`${name}\` is a line and has no ports`, origin });
       if (position === 'middle') this.notInTheMiddle(origin, `the line \`${name}\``);
       if (name === ownName) context.report({ code: 'CHAIN', what: `The line \`${name}\` is led to itself`, origin });
-      this.joints.add(lineKey(name));
-      return { place: { origin, ports: [], line: name, written: false }, entrance: lineKey(name), exit: lineKey(name) };
+      const key = this.net.useLine(name);
+      return { place: { origin, ports: [], line: name, written: false }, entrance: key, exit: key };
     }
     const component = context.components.get(name);
     if (declared.what !== 'component' || component === undefined) {
       // A component without content: its kind was not understood, and that was said at its own line.
-      if (declared.what !== 'component') context.report({ code: 'NAME', what: `\`${name}\` is a ${declared.what}: a line joins components and lines`, origin });
+      if (declared.what !== 'component')
+        context.report({ code: 'NAME', what: `\`${name}\` is a ${declared.what}: a line joins components and lines`, origin });
       return nowhere;
     }
     if (component.kind === 'reservoir') {
-      if (words.length > 1) context.report({ code: 'PORT', what: `A reservoir takes any number of lines and has no ports: write \`${name}\``, origin, fixes: [context.replace(origin, name, `Write \`${name}\``)] });
+      if (words.length > 1)
+        context.report({
+          code: 'PORT',
+          what: `A reservoir takes any number of lines and has no ports: write \`${name}\``,
+          origin,
+          fixes: [context.replace(origin, name, `Write \`${name}\``)],
+        });
       if (position === 'middle') this.notInTheMiddle(origin, `the reservoir \`${name}\``);
       return { place: { origin, ports: [], written: false }, reservoir: name };
     }
@@ -213,7 +224,13 @@ export class Lines {
       const node = ref.parts?.[1];
       const at = node === undefined ? origin : context.origin(node);
       if (word === undefined) {
-        context.report({ code: 'PORT', what: `A port of \`${component.id}\` is missing after the dot: ${oneOf(names)}`, origin, place: component.id, fixes: names.map((name) => context.replace(origin, `${component.id}.${name}`, `Write \`${component.id}.${name}\``)) });
+        context.report({
+          code: 'PORT',
+          what: `A port of \`${component.id}\` is missing after the dot: ${oneOf(names)}`,
+          origin,
+          place: component.id,
+          fixes: names.map((name) => context.replace(origin, `${component.id}.${name}`, `Write \`${component.id}.${name}\``)),
+        });
       } else this.noPort(component, words.slice(1).join('.'), at, names);
       return { place: { origin, ports: [], written: true } };
     }
@@ -232,21 +249,17 @@ export class Lines {
       origin,
       related: [{ message: `\`${component.id}\` is declared here`, origin: component.nameOrigin }],
       place: component.id,
-      fixes: (near === undefined ? (names.length <= 4 ? names : []) : [near]).map((name) => this.context.replace(origin, name, `Write \`${name}\``)),
+      fixes: (near === undefined ? (names.length <= 4 ? names : []) : [near]).map((name) =>
+        this.context.replace(origin, name, `Write \`${name}\``),
+      ),
     });
   }
 
   private joined(component: Component, spec: PortSpec, origin: Origin, lineFunction: LineFunction, written: boolean): Resolved {
     const ref: PortRef = { component: component.id, port: spec.name };
-    const key = this.touch(ref, origin);
+    const key = this.net.touch(ref, origin);
     this.checkFunction(component, spec, origin, lineFunction);
     return { place: { origin, ports: [ref], written }, entrance: key, exit: key };
-  }
-
-  private touch(ref: PortRef, origin: Origin): string {
-    const key = portKey(ref);
-    if (!this.ports.has(key)) this.ports.set(key, { ref, origin });
-    return this.joints.add(key);
   }
 
   private natural(component: Component, ref: Ref, position: Position, lineFunction: LineFunction): Resolved {
@@ -260,11 +273,22 @@ export class Lines {
       const from = specs.find((spec) => spec.name === chain.from);
       const to = specs.find((spec) => spec.name === chain.to);
       if (from === undefined || to === undefined) return nowhere;
-      const place: LinePlace = { origin, ports: [{ component: component.id, port: from.name }, { component: component.id, port: to.name }], written: false };
+      const place: LinePlace = {
+        origin,
+        ports: [
+          { component: component.id, port: from.name },
+          { component: component.id, port: to.name },
+        ],
+        written: false,
+      };
       this.claim(component, from.name, place);
       this.claim(component, to.name, place);
       this.checkFunction(component, from, origin, lineFunction);
-      return { place, entrance: this.touch({ component: component.id, port: from.name }, origin), exit: this.touch({ component: component.id, port: to.name }, origin) };
+      return {
+        place,
+        entrance: this.net.touch({ component: component.id, port: from.name }, origin),
+        exit: this.net.touch({ component: component.id, port: to.name }, origin),
+      };
     }
     if (position === 'middle') {
       this.context.report({
@@ -279,11 +303,25 @@ export class Lines {
       });
       return nowhere;
     }
-    const port = chain.how === 'through' ? (position === 'start' ? chain.to : chain.from) : chain.how === 'end' ? (position === 'start' ? chain.exit : chain.entry) : chain.how === 'fixed' ? chain.port : undefined;
+    const port =
+      chain.how === 'through'
+        ? position === 'start'
+          ? chain.to
+          : chain.from
+        : chain.how === 'end'
+          ? position === 'start'
+            ? chain.exit
+            : chain.entry
+          : chain.how === 'fixed'
+            ? chain.port
+            : undefined;
     const spec = specs.find((candidate) => candidate.name === port);
     if (spec === undefined && context.isHalfRead(component)) return nowhere;
     if (spec === undefined) {
-      const what = names.length === 0 ? `\`${component.id}\` has no ports: no line leads to ${kindOf(component).noun === 'fluid' ? 'a fluid' : `a ${kindOf(component).noun}`}` : `\`${component.id}\` has no natural port: write ${oneOf(names.map((name) => `${component.id}.${name}`))}`;
+      const what =
+        names.length === 0
+          ? `\`${component.id}\` has no ports: no line leads to ${kindOf(component).noun === 'fluid' ? 'a fluid' : `a ${kindOf(component).noun}`}`
+          : `\`${component.id}\` has no natural port: write ${oneOf(names.map((name) => `${component.id}.${name}`))}`;
       context.report({
         code: 'PORT',
         what,
@@ -320,7 +358,14 @@ export class Lines {
 
   /** Pilot ports on `pilot`, drains on `drain`, suction ports on `suction`. */
   private checkFunction(component: Component, spec: PortSpec, origin: Origin, lineFunction: LineFunction): void {
-    const needs: LineFunction | undefined = spec.role === 'pilot' || spec.role === 'vent' ? 'pilot' : spec.role === 'drain' ? 'drain' : spec.role === 'suction' ? 'suction' : undefined;
+    const needs: LineFunction | undefined =
+      spec.role === 'pilot' || spec.role === 'vent'
+        ? 'pilot'
+        : spec.role === 'drain'
+          ? 'drain'
+          : spec.role === 'suction'
+            ? 'suction'
+            : undefined;
     if (needs === undefined || needs === lineFunction) return;
     this.context.report({
       code: 'PORT',
@@ -347,7 +392,12 @@ export class Lines {
       const names = component === undefined ? [] : portsOf(component).map((spec) => spec.name);
       const port = words[1];
       if (component === undefined || port === undefined) {
-        context.report({ code: 'PORT', what: 'A plug closes one port: write the component and its port', origin, fixes: names.map((name) => context.replace(origin, `${words[0]}.${name}`, `Write \`${words[0]}.${name}\``)) });
+        context.report({
+          code: 'PORT',
+          what: 'A plug closes one port: write the component and its port',
+          origin,
+          fixes: names.map((name) => context.replace(origin, `${words[0]}.${name}`, `Write \`${words[0]}.${name}\``)),
+        });
         continue;
       }
       if (!names.includes(port)) {
@@ -356,84 +406,23 @@ export class Lines {
       }
       const key = `${component.id}.${port}`;
       context.portMentions.push({ origin: context.origin(ref.parts?.[1]), component: component.id, port });
-      const joinedAt = this.ports.get(key);
+      const joinedAt = this.net.joinedAt(key);
       if (joinedAt !== undefined) {
-        context.report({ code: 'PORT', what: `\`${key}\` is plugged, but a line leads to it`, origin, related: [{ message: 'the line', origin: joinedAt.origin }], place: component.id });
+        context.report({
+          code: 'PORT',
+          what: `\`${key}\` is plugged, but a line leads to it`,
+          origin,
+          related: [{ message: 'the line', origin: joinedAt }],
+          place: component.id,
+        });
         continue;
       }
-      this.touch({ component: component.id, port }, origin);
-      this.plugs.set(key, origin);
+      this.net.plug({ component: component.id, port }, origin);
     }
   }
 
-  /** The nets, with every required port that nothing joins as an open one. */
   finish(): { readonly nets: Net[]; readonly pieces: Piece[] } {
-    const perhaps = this.context.perhapsJoined;
-    for (const component of this.context.components.values()) {
-      for (const spec of portsOf(component)) {
-        const ref: PortRef = { component: component.id, port: spec.name };
-        if (spec.required && !this.ports.has(portKey(ref))) {
-          this.touch(ref, component.nameOrigin);
-          if (!perhaps.has(component.id)) this.open.add(portKey(ref));
-        }
-      }
-    }
-    return this.collect();
-  }
-
-  private readonly open = new Set<string>();
-
-  private collect(): { readonly nets: Net[]; readonly pieces: Piece[] } {
-    const groups = new Map<string, string[]>();
-    for (const key of this.joints.keys()) {
-      const root = this.joints.root(key);
-      const group = groups.get(root);
-      if (group === undefined) groups.set(root, [key]);
-      else group.push(key);
-    }
-    const piecesAt = new Map<string, string[]>();
-    for (const piece of this.pieces) {
-      for (const root of new Set(piece.keys.map((key) => this.joints.root(key)))) {
-        const list = piecesAt.get(root);
-        if (list === undefined) piecesAt.set(root, [piece.id]);
-        else list.push(piece.id);
-      }
-    }
-    const idOf = new Map<string, string>();
-    const nets: Net[] = [];
-    const used = new Set<string>();
-    for (const [root, keys] of groups) {
-      const touched = keys.flatMap((key) => this.ports.get(key) ?? []).sort((a, b) => a.origin.start - b.origin.start);
-      const named = keys.flatMap((key) => (key.startsWith('line ') ? [key.slice(5)] : [])).filter((name) => this.lineNames.has(name));
-      named.sort((a, b) => (this.lineNames.get(a)?.start ?? 0) - (this.lineNames.get(b)?.start ?? 0));
-      const pieces = piecesAt.get(root) ?? [];
-      const reservoir = keys.map((key) => this.reservoirs.get(key)).find((id) => id !== undefined);
-      const first = touched[0]?.ref;
-      if (first === undefined && reservoir === undefined && pieces.length === 0) continue;
-      const name = named[0];
-      let id = name ?? (first === undefined ? `${reservoir ?? 'pipe'} ${pieces[0] ?? ''}`.trim() : portKey(first));
-      if (used.has(id)) id = `${id} ${pieces[0] ?? nets.length}`;
-      used.add(id);
-      idOf.set(root, id);
-      const functions = new Set<LineFunction>();
-      for (const key of keys) for (const lineFunction of this.functions.get(key) ?? []) functions.add(lineFunction);
-      const plugged = keys.map((key) => this.plugs.get(key)).find((origin) => origin !== undefined);
-      const place = touched[0]?.origin ?? keys.map((key) => this.places.get(key)).find((origin) => origin !== undefined);
-      nets.push({
-        id,
-        ...(name === undefined ? {} : { name }),
-        ports: touched.map((port) => port.ref),
-        pieces,
-        functions: [...functions],
-        ...(reservoir === undefined ? {} : { reservoir }),
-        ...(plugged === undefined ? {} : { plugged }),
-        ...(keys.some((key) => this.open.has(key)) ? { open: true } : {}),
-        origin: place ?? { uri: this.context.uri, start: 0, end: 0 },
-      });
-    }
-    nets.sort((a, b) => a.origin.start - b.origin.start);
-    const pieces = this.pieces.map(({ keys, ...piece }): Piece => ({ ...piece, nets: [idOf.get(this.joints.root(keys[0])) ?? '', idOf.get(this.joints.root(keys[1])) ?? ''] }));
-    return { nets, pieces };
+    return this.net.finish(this.context);
   }
 }
 

@@ -13,7 +13,10 @@ export function readLoad(reading: Reading, items: Items, origin: LoadValue['orig
   let constant: Quantity | undefined;
   let table: LoadValue['table'];
   const piece = items.peek();
-  if (piece?.is === 'group' && piece.group.entries.some((entry) => entry.items.some((item) => item.$type === 'ValueItem' && item.other !== undefined))) {
+  if (
+    piece?.is === 'group' &&
+    piece.group.entries.some((entry) => entry.items.some((item) => item.$type === 'ValueItem' && item.other !== undefined))
+  ) {
     items.skip(1);
     table = readTable(reading, piece.group.entries, way, size);
     if (table === undefined) return { value: unknown('the table is not understood', origin) };
@@ -37,7 +40,11 @@ export function readLoad(reading: Reading, items: Items, origin: LoadValue['orig
       range = { from: from.q, to: to.q };
     } else if (next.word === 'extending' || next.word === 'retracting') {
       if (reading.spec.name !== 'resist') {
-        return wrong(reading, `\`${reading.spec.name}\` is fixed on the rod whether it moves or not; only \`resist\` has a direction`, next.origin);
+        return wrong(
+          reading,
+          `\`${reading.spec.name}\` is fixed on the rod whether it moves or not; only \`resist\` has a direction`,
+          next.origin,
+        );
       }
       direction = next.word;
     } else if (next.word === 'in') {
@@ -50,7 +57,11 @@ export function readLoad(reading: Reading, items: Items, origin: LoadValue['orig
         steps.push(id);
       } while (items.word('and'));
     } else {
-      return wrong(reading, `\`${next.word}\` does not fit into a load: \`from .. to ..\`, \`extending\` or \`in Step\` may follow`, next.origin);
+      return wrong(
+        reading,
+        `\`${next.word}\` does not fit into a load: \`from .. to ..\`, \`extending\` or \`in Step\` may follow`,
+        next.origin,
+      );
     }
   }
   return {

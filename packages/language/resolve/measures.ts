@@ -10,7 +10,19 @@ export type Subject =
   | { readonly is: 'cycle' };
 
 export const MEASURES: readonly Measure[] = [
-  'speed', 'force', 'torque', 'pressure', 'power', 'loading', 'flow', 'loss', 'temperature', 'time', 'position', 'volume', 'drift',
+  'speed',
+  'force',
+  'torque',
+  'pressure',
+  'power',
+  'loading',
+  'flow',
+  'loss',
+  'temperature',
+  'time',
+  'position',
+  'volume',
+  'drift',
 ];
 
 const LINEAR: readonly KindName[] = ['cylinder'];
@@ -18,7 +30,25 @@ const TURNING: readonly KindName[] = ['motor', 'rotary'];
 const ACTUATORS: readonly KindName[] = [...LINEAR, ...TURNING];
 const NO_OIL: readonly KindName[] = ['fluid', 'drive', 'heater'];
 /** Kinds with two ports a flow goes through. */
-const THROUGH: readonly KindName[] = ['check', 'pilotcheck', 'counterbalance', 'burst', 'throttle', 'filter', 'cooler', 'shutoff', 'coupling', 'deceleration', 'sequence', 'reducing', 'relief', 'unloading', 'directional', 'divider', 'intensifier'];
+const THROUGH: readonly KindName[] = [
+  'check',
+  'pilotcheck',
+  'counterbalance',
+  'burst',
+  'throttle',
+  'filter',
+  'cooler',
+  'shutoff',
+  'coupling',
+  'deceleration',
+  'sequence',
+  'reducing',
+  'relief',
+  'unloading',
+  'directional',
+  'divider',
+  'intensifier',
+];
 
 /** Dimension of the measure for this subject, or in words what the measure is of. */
 export function measureOf(measure: Measure, subject: Subject): { readonly dimension: Dimension } | { readonly of: string } {
@@ -35,15 +65,27 @@ export function measureOf(measure: Measure, subject: Subject): { readonly dimens
     case 'torque':
       return fits(turning && !port, 'torque', 'a motor or semi-rotary actuator');
     case 'pressure': {
-      const onePort = subject.is === 'component' && (port || subject.component.kind === 'accumulator' || ['pump', 'relief', 'unloading', 'brake', 'switch', 'sensor', 'gauge'].includes(subject.component.kind));
+      const onePort =
+        subject.is === 'component' &&
+        (port ||
+          subject.component.kind === 'accumulator' ||
+          ['pump', 'relief', 'unloading', 'brake', 'switch', 'sensor', 'gauge'].includes(subject.component.kind));
       return fits(onePort || subject.is === 'line', 'pressure', 'a port, a line, or a component with one pressure port');
     }
     case 'power':
-      return fits((subject.is === 'component' && !port && !among(['fluid', 'reservoir'])) || subject.is === 'line', 'power', 'a drive, pump, actuator, valve or line');
+      return fits(
+        (subject.is === 'component' && !port && !among(['fluid', 'reservoir'])) || subject.is === 'line',
+        'power',
+        'a drive, pump, actuator, valve or line',
+      );
     case 'loading':
       return fits(among(['drive']), 'ratio', 'a drive');
     case 'flow':
-      return fits((subject.is === 'component' && !among(NO_OIL)) || subject.is === 'line', 'flow', 'a line, or a component oil goes through');
+      return fits(
+        (subject.is === 'component' && !among(NO_OIL)) || subject.is === 'line',
+        'flow',
+        'a line, or a component oil goes through',
+      );
     case 'loss':
       return fits(among(THROUGH) || subject.is === 'line', 'pressure', 'a component oil goes through');
     case 'temperature':

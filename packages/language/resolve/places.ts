@@ -33,7 +33,11 @@ export function resolvePlace(context: Context, ref: Ref | undefined, want: 'step
     return id;
   }
   if (declared !== undefined && want !== 'running') {
-    context.report({ code: 'NAME', what: `\`${name}\` is a ${declared.what}; the name of a step${want === 'step' ? '' : ', cycle or state'} is needed here`, origin });
+    context.report({
+      code: 'NAME',
+      what: `\`${name}\` is a ${declared.what}; the name of a step${want === 'step' ? '' : ', cycle or state'} is needed here`,
+      origin,
+    });
     return undefined;
   }
   const fits = want === 'step' ? 'a step' : want === 'place' ? 'a step or cycle (or REST, OFF, IDLE, STOP)' : 'a step or cycle';

@@ -63,7 +63,14 @@ class PropertyReader {
     const shape = readHeadless(this.context, node, this.owner, before);
     if (shape === undefined) return;
     if (this.shape === undefined) this.shape = shape;
-    else this.context.report({ code: 'VALUE', what: 'The shape is given twice', origin: shape.origin, related: [{ message: 'first here', origin: this.shape.origin }], place: this.owner.name });
+    else
+      this.context.report({
+        code: 'VALUE',
+        what: 'The shape is given twice',
+        origin: shape.origin,
+        related: [{ message: 'first here', origin: this.shape.origin }],
+        place: this.owner.name,
+      });
     const items = new Items(this.context, node);
     items.skip(1);
     const left = items.leftover;
@@ -106,8 +113,12 @@ class PropertyReader {
     const read = readItems({ context, values, spec, owner: owner.name, actuator: owner.actuator }, items, origin);
     const left = items.leftover;
     const own = left === undefined ? origin : { ...origin, end: context.text.slice(0, left.start).trimEnd().length };
-    this.keep({ name: spec.name, ...(read.port === undefined ? {} : { port: read.port }), value: read.value, origin: own, nameOrigin }, spec);
-    if (left !== undefined && (read.value.type !== 'unknown' || this.specs.has(items.plainWord()?.word ?? ''))) this.goOn(items, left, own, spec.example);
+    this.keep(
+      { name: spec.name, ...(read.port === undefined ? {} : { port: read.port }), value: read.value, origin: own, nameOrigin },
+      spec,
+    );
+    if (left !== undefined && (read.value.type !== 'unknown' || this.specs.has(items.plainWord()?.word ?? '')))
+      this.goOn(items, left, own, spec.example);
   }
 
   /** Items that fit no more: another setting whose comma is lost, or too much. */

@@ -3,7 +3,7 @@ import type { KindName, Origin, PropertySpec, PropertyValue, Shape } from '@oilw
 import type { Dimension, Quantity } from '@oilway/quantity';
 import type { Context } from './context.ts';
 import { oneOf } from './context.ts';
-import { type Items } from './items.ts';
+import type { Items } from './items.ts';
 import { nearest } from '../parse/near.ts';
 import { readLoad } from './load-entry.ts';
 import { readCam, readCoil, readPosition } from './valve-entry.ts';
@@ -44,7 +44,13 @@ export function readQuantity(
 ): { readonly q: Quantity; readonly plusMinus?: number; readonly from: readonly string[]; readonly origin: Origin } | undefined {
   const piece = items.peek();
   if (piece === undefined || piece.is === 'word' || piece.is === 'text' || piece.is === 'wanted') {
-    wrong(reading, piece === undefined ? `\`${reading.spec.name}\` needs a value` : `A value is needed here, not \`${reading.context.slice(piece.origin)}\``, items.here);
+    wrong(
+      reading,
+      piece === undefined
+        ? `\`${reading.spec.name}\` needs a value`
+        : `A value is needed here, not \`${reading.context.slice(piece.origin)}\``,
+      items.here,
+    );
     items.skip(1);
     return undefined;
   }
@@ -84,13 +90,21 @@ function byShape(reading: Reading, shape: Shape, items: Items, origin: Origin): 
       return { value: { type: 'flag', origin } };
     case 'quantity': {
       const read = readQuantity(reading, items, shape.dimensions);
-      return { value: read === undefined ? unknownOf(reading, origin) : { type: 'quantity', q: read.q, ...plus(read.plusMinus), origin, ...fromOf(read.from) } };
+      return {
+        value:
+          read === undefined
+            ? unknownOf(reading, origin)
+            : { type: 'quantity', q: read.q, ...plus(read.plusMinus), origin, ...fromOf(read.from) },
+      };
     }
     case 'portQuantity': {
       const port = items.count > 1 ? items.plainWord() : undefined;
       if (port !== undefined) items.skip(1);
       const read = readQuantity(reading, items, [shape.dimension]);
-      const value: PropertyValue = read === undefined ? unknownOf(reading, origin) : { type: 'quantity', q: read.q, ...plus(read.plusMinus), origin, ...fromOf(read.from) };
+      const value: PropertyValue =
+        read === undefined
+          ? unknownOf(reading, origin)
+          : { type: 'quantity', q: read.q, ...plus(read.plusMinus), origin, ...fromOf(read.from) };
       return { value, ...(port === undefined ? {} : { port: port.word }) };
     }
     case 'flowAt':
@@ -135,7 +149,12 @@ function byShape(reading: Reading, shape: Shape, items: Items, origin: Origin): 
         return wrong(reading, 'A precharge needs its gas temperature: `at 20 degC`', origin, 'M08');
       }
       const temperature = readQuantity(reading, items, ['temperature']);
-      return { value: temperature === undefined ? unknownOf(reading, origin) : { type: 'precharge', pressure: pressure.q, temperature: temperature.q, origin } };
+      return {
+        value:
+          temperature === undefined
+            ? unknownOf(reading, origin)
+            : { type: 'precharge', pressure: pressure.q, temperature: temperature.q, origin },
+      };
     }
     case 'list': {
       const list: Quantity[] = [];
@@ -176,7 +195,12 @@ function notAWord(reading: Reading, found: { readonly word: string; readonly ori
     what,
     origin: found.origin,
     place: owner,
-    fixes: near !== undefined ? [context.replace(found.origin, near, `Write \`${near}\``)] : words.length <= 4 ? words.map((word) => context.replace(found.origin, word, `Write \`${word}\``)) : [],
+    fixes:
+      near !== undefined
+        ? [context.replace(found.origin, near, `Write \`${near}\``)]
+        : words.length <= 4
+          ? words.map((word) => context.replace(found.origin, word, `Write \`${word}\``))
+          : [],
   });
   return { value: unknown(what, found.origin) };
 }
@@ -200,7 +224,8 @@ function readFlowAt(reading: Reading, items: Items, origin: Origin, perPath: boo
   }
   const flow = readQuantity(reading, items, ['flow']);
   if (flow === undefined) return { value: unknownOf(reading, origin) };
-  if (!items.word('at')) return wrong(reading, `\`${reading.spec.name}\` needs the pressure drop at this flow: \`at 5 bar\``, origin, 'M08');
+  if (!items.word('at'))
+    return wrong(reading, `\`${reading.spec.name}\` needs the pressure drop at this flow: \`at 5 bar\``, origin, 'M08');
   const drop = readQuantity(reading, items, ['pressure']);
   if (drop === undefined) return { value: unknownOf(reading, origin) };
   if (!(flow.q.si > 0) || !(drop.q.si > 0)) return wrong(reading, 'Flow and pressure drop must both be above zero', origin);
@@ -210,7 +235,12 @@ function readFlowAt(reading: Reading, items: Items, origin: Origin, perPath: boo
 
 function readWord(reading: Reading, items: Items, origin: Origin, words: readonly string[], afterTo: boolean): Read {
   if (afterTo && !items.word('to')) {
-    return wrong(reading, `\`${reading.spec.name}\` needs \`to\` and a position: \`${reading.spec.example}\``, items.count === 0 ? origin : items.here, 'M08');
+    return wrong(
+      reading,
+      `\`${reading.spec.name}\` needs \`to\` and a position: \`${reading.spec.example}\``,
+      items.count === 0 ? origin : items.here,
+      'M08',
+    );
   }
   const word = items.plainWord();
   if (word === undefined) return wrong(reading, `\`${reading.spec.name}\` needs a word: ${oneOf(words)}`, items.here, 'M08');
@@ -218,7 +248,12 @@ function readWord(reading: Reading, items: Items, origin: Origin, words: readonl
   return words.includes(word.word) ? { value: { type: 'word', word: word.word, origin } } : notAWord(reading, word, words);
 }
 
-function readReference(reading: Reading, items: Items, origin: Origin, shape: { readonly small?: 'by'; readonly kinds: readonly KindName[] }): Read {
+function readReference(
+  reading: Reading,
+  items: Items,
+  origin: Origin,
+  shape: { readonly small?: 'by'; readonly kinds: readonly KindName[] },
+): Read {
   const { context, spec, owner } = reading;
   if (shape.small !== undefined && !items.word(shape.small)) {
     return wrong(reading, `\`${spec.name}\` needs \`${shape.small}\` and a name: \`${spec.example}\``, items.here, 'M08');
@@ -229,13 +264,24 @@ function readReference(reading: Reading, items: Items, origin: Origin, shape: { 
   const kinds = shape.kinds;
   const fits = (kind: KindName | undefined): boolean => kind !== undefined && (kinds.length === 0 || kinds.includes(kind));
   if (found === undefined) {
-    context.unknownName(piece.words[0] ?? '', piece.origin, (d) => d.what === 'component' && fits(d.kind), kinds.length === 0 ? 'a component' : `a ${kinds.join(' or ')}`, owner);
+    context.unknownName(
+      piece.words[0] ?? '',
+      piece.origin,
+      (d) => d.what === 'component' && fits(d.kind),
+      kinds.length === 0 ? 'a component' : `a ${kinds.join(' or ')}`,
+      owner,
+    );
     return { value: unknown(`\`${piece.words.join('.')}\` is not declared`, origin) };
   }
   if (found.what === 'unit') return { value: unknown(`\`${found.id}\` is a unit; units are not computed yet`, origin) };
   if (found.what !== 'component' || !fits(found.kind)) {
     const is = found.what === 'component' ? `a ${found.kind}` : `a ${found.what}`;
-    return wrong(reading, `\`${found.id}\` is ${is}; \`${spec.name}\` needs ${kinds.length === 0 ? 'a component' : `a ${kinds.join(' or ')}`}`, piece.origin, 'NAME');
+    return wrong(
+      reading,
+      `\`${found.id}\` is ${is}; \`${spec.name}\` needs ${kinds.length === 0 ? 'a component' : `a ${kinds.join(' or ')}`}`,
+      piece.origin,
+      'NAME',
+    );
   }
   const start = piece.origin.start;
   context.refer({ ...piece.origin, start, end: start + (piece.words[0]?.length ?? 0) }, found.id);
@@ -258,7 +304,8 @@ function readRange(reading: Reading, items: Items, origin: Origin, dimensions: r
 
 function readNumber(reading: Reading, items: Items, origin: Origin): Read {
   const piece = items.take();
-  if (piece === undefined || !('value' in piece)) return wrong(reading, `\`${reading.spec.name}\` needs a number`, piece?.origin ?? origin, 'M08');
+  if (piece === undefined || !('value' in piece))
+    return wrong(reading, `\`${reading.spec.name}\` needs a number`, piece?.origin ?? origin, 'M08');
   const computed = reading.values.compute(piece.value);
   if (computed === undefined) return { value: unknownOf(reading, origin) };
   if (computed.q.dimension !== 'ratio' || computed.q.unit !== '') {
@@ -269,7 +316,8 @@ function readNumber(reading: Reading, items: Items, origin: Origin): Read {
 
 function readRatio(reading: Reading, items: Items, origin: Origin): Read {
   const piece = items.take();
-  if (piece === undefined || !('value' in piece)) return wrong(reading, `\`${reading.spec.name}\` needs a ratio`, piece?.origin ?? origin, 'M08');
+  if (piece === undefined || !('value' in piece))
+    return wrong(reading, `\`${reading.spec.name}\` needs a ratio`, piece?.origin ?? origin, 'M08');
   const first = reading.values.compute(piece.value);
   const other = piece.is === 'value' ? piece.other : undefined;
   const second = other === undefined ? undefined : reading.values.compute(other);
@@ -301,6 +349,7 @@ function readAttitude(reading: Reading, items: Items, origin: Origin): Read {
   }
   const read = readQuantity(reading, items, ['angle']);
   if (read === undefined) return { value: unknownOf(reading, origin) };
-  if (Math.abs(read.q.si) > Math.PI / 2 + 1e-9) return wrong(reading, 'The angle of the rod above horizontal lies between -90 and 90 degrees', read.origin);
+  if (Math.abs(read.q.si) > Math.PI / 2 + 1e-9)
+    return wrong(reading, 'The angle of the rod above horizontal lies between -90 and 90 degrees', read.origin);
   return { value: { type: 'attitude', angle: read.q.si, origin } };
 }

@@ -64,14 +64,20 @@ export class Values {
         what: `The constants ${ring.map((word) => `\`${word}\``).join(', ')} are defined by each other in a ring`,
         mend: 'Give one of them a value of its own.',
         origin: this.context.origin(node?.name ?? node),
-        related: ring.slice(1, -1).map((word) => ({ message: `\`${word}\` is in the ring`, origin: this.context.origin(this.context.constants.get(word)?.name) })),
+        related: ring
+          .slice(1, -1)
+          .map((word) => ({ message: `\`${word}\` is in the ring`, origin: this.context.origin(this.context.constants.get(word)?.name) })),
         place: name,
       });
       return undefined;
     }
     if (node === undefined) return undefined;
     if (this.path.length > 200) {
-      this.context.report({ code: 'VALUE', what: `\`${name}\` is defined through more than 200 other constants`, origin: this.context.origin(node.name) });
+      this.context.report({
+        code: 'VALUE',
+        what: `\`${name}\` is defined through more than 200 other constants`,
+        origin: this.context.origin(node.name),
+      });
       return undefined;
     }
     this.constants.set(name, { state: 'computing' });
@@ -113,7 +119,11 @@ export class Values {
     }
     if (dimensions.length === 0 || dimensions.includes(q.dimension)) return true;
     const wanted = dimensions.map(nameOfDimension).join(' or ');
-    const units = dimensions.flatMap((dimension) => unitsOf(dimension).slice(0, 3).map((unit) => unit.symbol));
+    const units = dimensions.flatMap((dimension) =>
+      unitsOf(dimension)
+        .slice(0, 3)
+        .map((unit) => unit.symbol),
+    );
     const point = dimensions.includes('temperature') && q.dimension === 'temperature difference';
     this.context.report({
       code: 'M07',
@@ -129,8 +139,13 @@ export class Values {
   private missingUnit(computed: Computed, dimensions: readonly Dimension[], example: string): void {
     const { origin } = computed;
     const fromExample = /[0-9]\s*([^\s0-9,|]+)/u.exec(example)?.[1];
-    const candidates = [...(fromExample === undefined ? [] : [fromExample]), ...dimensions.flatMap((dimension) => unitsOf(dimension).map((unit) => unit.symbol))];
-    const units = [...new Set(candidates.filter((symbol) => dimensions.some((dimension) => unitOf(symbol)?.dimension === dimension)))].slice(0, 4);
+    const candidates = [
+      ...(fromExample === undefined ? [] : [fromExample]),
+      ...dimensions.flatMap((dimension) => unitsOf(dimension).map((unit) => unit.symbol)),
+    ];
+    const units = [
+      ...new Set(candidates.filter((symbol) => dimensions.some((dimension) => unitOf(symbol)?.dimension === dimension))),
+    ].slice(0, 4);
     this.context.report({
       code: 'M07',
       what: `\`${this.context.slice(origin)}\` has no unit${dimensions.length === 0 ? '' : `; ${dimensions.map(nameOfDimension).join(' or ')} is needed here`}`,
@@ -263,7 +278,13 @@ export class Values {
     const values: Amount[] = [];
     for (const entry of entries) {
       const item = entry.items?.[0];
-      if (item?.$type !== 'ValueItem' || entry.items.length !== 1 || item.value === undefined || item.other !== undefined || item.tolerance !== undefined) {
+      if (
+        item?.$type !== 'ValueItem' ||
+        entry.items.length !== 1 ||
+        item.value === undefined ||
+        item.other !== undefined ||
+        item.tolerance !== undefined
+      ) {
         return this.wrong(`\`${name}\` takes values in its brackets`, entry, 'VALUE');
       }
       const value = this.value(item.value, from);
@@ -277,7 +298,11 @@ export class Values {
       return this.keep(squareRoot(first), false, node);
     }
     if (name !== 'min' && name !== 'max') {
-      return this.wrong(`\`${name}\` computes nothing: only \`min\`, \`max\` and \`sqrt\` stand before a bracket`, node.ref ?? node, 'VALUE');
+      return this.wrong(
+        `\`${name}\` computes nothing: only \`min\`, \`max\` and \`sqrt\` stand before a bracket`,
+        node.ref ?? node,
+        'VALUE',
+      );
     }
     return this.keep((name === 'min' ? least : greatest)(values), false, node);
   }
@@ -285,7 +310,13 @@ export class Values {
   private bracket(node: Group, from: string[]): Part | undefined {
     const entry = node.entries?.[0];
     const item = entry?.items?.[0];
-    if (node.entries?.length !== 1 || entry?.items.length !== 1 || item?.$type !== 'ValueItem' || item.other !== undefined || item.tolerance !== undefined) {
+    if (
+      node.entries?.length !== 1 ||
+      entry?.items.length !== 1 ||
+      item?.$type !== 'ValueItem' ||
+      item.other !== undefined ||
+      item.tolerance !== undefined
+    ) {
       return this.wrong('one value is needed in these brackets', node, 'VALUE');
     }
     return item.value === undefined ? undefined : this.value(item.value, from);

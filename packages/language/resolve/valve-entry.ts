@@ -14,7 +14,22 @@ export function sideOf(word: string): 'a' | 'b' | 'centre' | undefined {
 /** The paths of a named centre, as far as the valve has the ports. */
 export function pathsOfCentre(word: NamedCentre, ports: readonly string[], origin: Origin): PathSpec[] {
   const pairs: readonly (readonly [string, string])[] =
-    word === 'tandem' ? [['P', 'T']] : word === 'float' ? [['A', 'T'], ['B', 'T']] : word === 'open' ? [['P', 'T'], ['P', 'A'], ['P', 'B'], ['A', 'T'], ['B', 'T']] : [];
+    word === 'tandem'
+      ? [['P', 'T']]
+      : word === 'float'
+        ? [
+            ['A', 'T'],
+            ['B', 'T'],
+          ]
+        : word === 'open'
+          ? [
+              ['P', 'T'],
+              ['P', 'A'],
+              ['P', 'B'],
+              ['A', 'T'],
+              ['B', 'T'],
+            ]
+          : [];
   return pairs.filter(([from, to]) => ports.includes(from) && ports.includes(to)).map(([from, to]) => ({ from, to, origin }));
 }
 
@@ -24,9 +39,14 @@ export function readPosition(reading: Reading, items: Items, origin: Origin): Re
   if (word !== undefined) {
     items.skip(1);
     if (isNamed(word.word)) return { value: { type: 'position', word: word.word, paths: [], origin } };
-    return wrong(reading, `A position is ${NAMED_CENTRES.map((name) => `\`${name}\``).join(', ')}, or its paths in brackets: \`(P to T)\``, word.origin);
+    return wrong(
+      reading,
+      `A position is ${NAMED_CENTRES.map((name) => `\`${name}\``).join(', ')}, or its paths in brackets: \`(P to T)\``,
+      word.origin,
+    );
   }
-  if (piece?.is !== 'group') return wrong(reading, `\`${reading.spec.name}\` needs its paths: \`${reading.spec.name} (P to A)\``, piece?.origin ?? origin, 'M08');
+  if (piece?.is !== 'group')
+    return wrong(reading, `\`${reading.spec.name}\` needs its paths: \`${reading.spec.name} (P to A)\``, piece?.origin ?? origin, 'M08');
   items.skip(1);
   const paths: PathSpec[] = [];
   for (const entry of piece.group.entries ?? []) {
@@ -104,14 +124,17 @@ export function readCam(reading: Reading, items: Items, origin: Origin, small: '
   const first = items.plainWord();
   const side = small === undefined && first !== undefined ? sideOf(first.word) : undefined;
   if (side !== undefined) items.skip(1);
-  if (small !== undefined && !items.word(small)) return wrong(reading, `\`${reading.spec.name}\` needs \`${small}\` and an actuator`, items.here, 'M08');
-  if (small === undefined && side === undefined) return wrong(reading, 'A cam shifts to `a`, `b` or `centre`: `cam a C2 from 250 mm to 320 mm`', items.here, 'M08');
+  if (small !== undefined && !items.word(small))
+    return wrong(reading, `\`${reading.spec.name}\` needs \`${small}\` and an actuator`, items.here, 'M08');
+  if (small === undefined && side === undefined)
+    return wrong(reading, 'A cam shifts to `a`, `b` or `centre`: `cam a C2 from 250 mm to 320 mm`', items.here, 'M08');
   const piece = items.take();
   if (piece?.is !== 'name') return wrong(reading, 'The actuator that carries the cam is missing', piece?.origin ?? origin, 'M08');
   const name = piece.words[0] ?? '';
   const found = context.names.get(name);
   if (found?.what !== 'component' || (found.kind !== 'cylinder' && found.kind !== 'rotary')) {
-    if (found === undefined) context.unknownName(name, piece.origin, (d) => d.kind === 'cylinder' || d.kind === 'rotary', 'a cylinder', reading.owner);
+    if (found === undefined)
+      context.unknownName(name, piece.origin, (d) => d.kind === 'cylinder' || d.kind === 'rotary', 'a cylinder', reading.owner);
     else wrong(reading, `\`${name}\` carries no cam: a cylinder or a semi-rotary actuator does`, piece.origin, 'NAME');
     return { value: unknown(`\`${name}\` is no cylinder`, origin) };
   }

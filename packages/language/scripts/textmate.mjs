@@ -13,7 +13,11 @@ const FORM_WORDS = ['closed', 'open', 'tandem', 'float', 'a', 'b', 'centre', 'ro
 
 const escaped = (text) => text.replace(/[.*+?^${}()|[\]\\/]/g, '\\$&');
 /** Longest first, so that no word hides a longer one. */
-const oneOf = (words) => [...new Set(words)].sort((a, b) => b.length - a.length || (a < b ? -1 : 1)).map(escaped).join('|');
+const oneOf = (words) =>
+  [...new Set(words)]
+    .sort((a, b) => b.length - a.length || (a < b ? -1 : 1))
+    .map(escaped)
+    .join('|');
 const END = '(?![\\p{L}\\p{N}_])';
 const START = '(?<![\\p{L}\\p{N}_.])';
 
@@ -48,11 +52,19 @@ export function textmateGrammar() {
           },
           {
             match: `^\\s*(${oneOf(LINE_FUNCTIONS)})${END}(?:\\s+(${name})\\s*(:))?`,
-            captures: { 1: { name: 'keyword.other.line.oilway' }, 2: { name: 'variable.other.readwrite.line.oilway' }, 3: { name: 'punctuation.separator.oilway' } },
+            captures: {
+              1: { name: 'keyword.other.line.oilway' },
+              2: { name: 'variable.other.readwrite.line.oilway' },
+              3: { name: 'punctuation.separator.oilway' },
+            },
           },
           {
             match: `(?:^|(?<=[{}]))\\s*(let)\\s+(${name})\\s*(=)`,
-            captures: { 1: { name: 'keyword.other.oilway' }, 2: { name: 'variable.other.constant.oilway' }, 3: { name: 'keyword.operator.oilway' } },
+            captures: {
+              1: { name: 'keyword.other.oilway' },
+              2: { name: 'variable.other.constant.oilway' },
+              3: { name: 'keyword.operator.oilway' },
+            },
           },
           {
             match: `(?:^|(?<=[{}]))\\s*(step|meanwhile)\\s+(${name})`,
@@ -83,7 +95,10 @@ export function textmateGrammar() {
       rest: {
         patterns: [
           { name: 'string.quoted.double.oilway', begin: '"', end: '"|$' },
-          { match: `(\\.)(${name})`, captures: { 1: { name: 'punctuation.accessor.oilway' }, 2: { name: 'variable.other.property.port.oilway' } } },
+          {
+            match: `(\\.)(${name})`,
+            captures: { 1: { name: 'punctuation.accessor.oilway' }, 2: { name: 'variable.other.property.port.oilway' } },
+          },
           { name: 'variable.other.oilway', match: `${START}[0-9]+[A-DF-Z]+[0-9]+${END}` },
           {
             match: `${START}([0-9]+/[0-9]+|[0-9]+(?:\\.[0-9]+)?(?:[ \\t]+[0-9]+/[0-9]+)?)(?:[ \\t]*(${units})(?![\\p{L}\\p{N}_°²³^]))?`,
@@ -91,7 +106,10 @@ export function textmateGrammar() {
           },
           { name: 'constant.language.state.oilway', match: `${START}(?:REST|OFF|IDLE|STOP)${END}` },
           { name: 'keyword.operator.word.oilway', match: `${START}(?:${oneOf(RESERVED_WORDS)})${END}` },
-          { name: 'support.type.measure.oilway', match: `${START}(?:${oneOf(MEASURES)})(?=\\s+(?:in|from|at|between|reaches|extending|retracting)\\b)` },
+          {
+            name: 'support.type.measure.oilway',
+            match: `${START}(?:${oneOf(MEASURES)})(?=\\s+(?:in|from|at|between|reaches|extending|retracting)\\b)`,
+          },
           { name: 'variable.other.oilway', match: `${START}[\\p{L}_][\\p{L}\\p{N}_]*` },
           { include: '#punctuation' },
         ],

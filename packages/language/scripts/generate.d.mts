@@ -1,0 +1,2 @@
+/** Types of the script for its test. */
+export function grammarText(): string;
