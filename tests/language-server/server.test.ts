@@ -1,7 +1,8 @@
 /** The bundled server, spoken to by a plain client over stdio: what any editor sees. */
-import { readFileSync, readdirSync, rmSync } from 'node:fs';
+import { mkdirSync, mkdtempSync, readFileSync, readdirSync, rmSync, writeFileSync } from 'node:fs';
+import { tmpdir } from 'node:os';
 import { join } from 'node:path';
-import { fileURLToPath } from 'node:url';
+import { fileURLToPath, pathToFileURL } from 'node:url';
 import { afterAll, afterEach, beforeAll, describe, expect, test } from 'vitest';
 import type { TextEdit } from 'vscode-languageserver-types';
 import { bundleServer } from './support/bundle.ts';
@@ -197,6 +198,39 @@ describe('over stdio', () => {
       await client.diagnostics(uri, () => true, since);
       expect((await client.hints(uri)).length).toBeGreaterThan(3);
     });
+  });
+
+  test('workspace: findings of files that are not open, kept up with the disk', async () => {
+    const room = mkdtempSync(join(tmpdir(), 'oilway-'));
+    mkdirSync(join(room, 'axes'));
+    const file = join(room, 'axes', 'bench.oilway');
+    writeFileSync(file, BENCH.replace('driven by M1', 'driven by M7'));
+    writeFileSync(join(room, 'notes.txt'), 'no circuit');
+    const one = await Client.start(join(folder, 'server.cjs'), {
+      folders: [pathToFileURL(room).href],
+      initializationOptions: { settings: { findings: { scope: 'workspace' }, compute: { enabled: false } } },
+    });
+    const uri = pathToFileURL(file).href;
+    const errors = (published: Published): number => published.diagnostics.filter((found) => found.severity === 1).length;
+    const first = await one.diagnostics(uri, () => true, 0);
+    expect([first.version, errors(first)]).toEqual([undefined, 1]);
+    writeFileSync(file, BENCH);
+    let since = one.published.length;
+    void one.connection.sendNotification('workspace/didChangeWatchedFiles', { changes: [{ uri, type: 2 }] });
+    expect(errors(await one.diagnostics(uri, () => true, since))).toBe(0);
+    // Open, wrong, closed again: what is on disk counts.
+    await one.open(uri, BENCH);
+    const wrong = one.edit(uri, 'C1.cap', 'C1.cup');
+    expect(errors(await one.diagnostics(uri, (found) => found.version === wrong))).toBeGreaterThan(0);
+    since = one.published.length;
+    void one.connection.sendNotification('textDocument/didClose', { textDocument: { uri } });
+    expect(errors(await one.diagnostics(uri, (found) => found.version === undefined && one.published.indexOf(found) > since, since))).toBe(0);
+    since = one.published.length;
+    void one.connection.sendNotification('workspace/didChangeConfiguration', { settings: { oilway: { findings: { scope: 'open files' } } } });
+    expect((await one.diagnostics(uri, () => true, since)).diagnostics).toEqual([]);
+    expect(one.published.filter((found) => found.uri.endsWith('notes.txt'))).toEqual([]);
+    expect(await one.stop()).toBe(0);
+    rmSync(room, { recursive: true, force: true });
   });
 
   test('a closed document shows nothing any more', async () => {
