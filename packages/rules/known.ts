@@ -16,6 +16,7 @@ function knownPoint(point: Point): Point {
     pressures: without(point.pressures, unknown),
     undetermined: without(point.undetermined, unknown),
     flows: without(point.flows, unknownPort),
+    openings: without(point.openings, unknown),
     power: without(point.power, unknown),
     lifting: point.lifting.filter((id) => !unknown(id)),
     actuators: point.actuators.filter((one) => !unknown(one.id)),

@@ -34,11 +34,6 @@ export function list(items: readonly string[], word = 'and'): string {
   return `${items.slice(0, -1).join(', ')} ${word} ${items[items.length - 1]}`;
 }
 
-/** First letter as a capital: sentences may begin with a component's name, which stays as written. */
-export function sentence(words: string): string {
-  return /^[a-z][a-z]/.test(words) ? words[0]!.toUpperCase() + words.slice(1) : words;
-}
-
 /** Names in the order a person would list them: C2 before C10. */
 export function byName(a: string, b: string): number {
   return a.localeCompare(b, 'en', { numeric: true });

@@ -26,7 +26,8 @@ return RV1 to R1
 }
 
 describe('classes of ways, in the direction oil would go', () => {
-  const through = (declared: string, inlet: string, outlet: string, more = '') => between(declared, `working P1 to ${inlet}\nworking ${outlet} to RV1\n${more}`);
+  const through = (declared: string, inlet: string, outlet: string, more = '') =>
+    between(declared, `working P1 to ${inlet}\nworking ${outlet} to RV1\n${more}`);
   const SURE = { sure: true, perhaps: true };
   const CLOSABLE = { sure: false, perhaps: true };
   const NEVER = { sure: false, perhaps: false };
@@ -48,11 +49,29 @@ describe('classes of ways, in the direction oil would go', () => {
     ['cooler', 'cooler K1 (power 0.1 kW/K)', 'K1.in', 'K1.out', SURE],
     ['throttle', 'throttle FC1 (set 5 L/min)', 'FC1.in', 'FC1.out', SURE],
     ['throttle commanded by a coil', 'throttle FC1 (passes 20 L/min at 5 bar, coil SOL1)', 'FC1.in', 'FC1.out', CLOSABLE],
-    ['throttle with reverse check, backwards', 'throttle FC1 (passes 20 L/min at 5 bar, coil SOL1, reverse check)', 'FC1.out', 'FC1.in', SURE],
+    [
+      'throttle with reverse check, backwards',
+      'throttle FC1 (passes 20 L/min at 5 bar, coil SOL1, reverse check)',
+      'FC1.out',
+      'FC1.in',
+      SURE,
+    ],
     ['quick coupling', 'coupling Q1 (seals both)', 'Q1.A', 'Q1.B', CLOSABLE],
     ['hose-burst valve', 'burst HB1 (closes 20 L/min)', 'HB1.V', 'HB1.C', CLOSABLE],
-    ['directional valve in its sprung position', 'directional V1 (2/2, normally open, coil a SOL1, passes 20 L/min at 2 bar)', 'V1.P', 'V1.A', CLOSABLE],
-    ['directional valve, against the drawing', 'directional V1 (2/2, normally open, coil a SOL1, passes 20 L/min at 2 bar)', 'V1.A', 'V1.P', CLOSABLE],
+    [
+      'directional valve in its sprung position',
+      'directional V1 (2/2, normally open, coil a SOL1, passes 20 L/min at 2 bar)',
+      'V1.P',
+      'V1.A',
+      CLOSABLE,
+    ],
+    [
+      'directional valve, against the drawing',
+      'directional V1 (2/2, normally open, coil a SOL1, passes 20 L/min at 2 bar)',
+      'V1.A',
+      'V1.P',
+      CLOSABLE,
+    ],
   ] as const)('%s', (_, declared, inlet, outlet, expected) => {
     expect(through(declared, inlet, outlet)).toEqual(expected);
   });
@@ -129,7 +148,10 @@ describe('guards and ratings', () => {
     expect(rating('C1', 'cap')).toMatchObject({ value: 250e5, of: 'C1' });
     expect(rating('V2', 'T')).toMatchObject({ value: 315e5, of: 'V2.T' });
     expect(rating('F1', 'in')).toBeUndefined();
-    const weak = graphOf(check(text.replace('working V1.A to C1.cap, PS1 (bore 20 mm, rated 250 bar)', 'working V1.A to C1.cap, PS1 (hose, rated 160 bar)')).circuit);
+    const weak = graphOf(
+      check(text.replace('working V1.A to C1.cap, PS1 (bore 20 mm, rated 250 bar)', 'working V1.A to C1.cap, PS1 (hose, rated 160 bar)'))
+        .circuit,
+    );
     expect(ratingOf(weak, weak.netAt('C1', 'cap')!.id)).toMatchObject({ value: 160e5, of: 'the line' });
   });
 });

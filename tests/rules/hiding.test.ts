@@ -34,7 +34,10 @@ describe('same cause, one finding', () => {
 
   it('a missing check with two drives is B01, not also A10', () => {
     const text = edited(faulty('B01').text, [
-      ['drive     M1 (power 5.5 kW, speed 1450 rpm)', 'drive     M1 (power 5.5 kW, speed 1450 rpm)\ndrive     M2 (power 4 kW, speed 1450 rpm)'],
+      [
+        'drive     M1 (power 5.5 kW, speed 1450 rpm)',
+        'drive     M1 (power 5.5 kW, speed 1450 rpm)\ndrive     M2 (power 4 kW, speed 1450 rpm)',
+      ],
       ['P2 (displacement 8 cm3/rev, driven by M1', 'P2 (displacement 8 cm3/rev, driven by M2'],
     ]);
     const { problems } = check(text);
@@ -99,6 +102,8 @@ describe('allow', () => {
   it('one for a rule that is not checked says so', () => {
     const { findings } = allowed('A02', 'allow D09 on C1.cap "Small volume"');
     const unused = findings.filter((f) => f.code === 'ALLOW-UNUSED');
-    expect(unused.map((f) => [f.severity, f.what])).toEqual([['information', 'No rule D09 is checked here, so this permission accepts nothing.']]);
+    expect(unused.map((f) => [f.severity, f.what])).toEqual([
+      ['information', 'No rule D09 is checked here, so this permission accepts nothing.'],
+    ]);
   });
 });

@@ -46,7 +46,10 @@ const NEAR: readonly Near[] = [
     why: 'relief behind pipes with a loss of their own and a pressure filter with bypass',
     edits: [
       ['working P1 to V1.P', 'working P1 to F2 (tube, bore 12 mm, length 1 m)\nworking F2 to V1.P, RV1'],
-      ['filter    F1 (', 'filter    F2 (passes 40 L/min at 1 bar, bypass 5 bar, rated 210 bar)\nrelief    RV1 (set 150 bar, passes 30 L/min at 4 bar)\nfilter    F1 ('],
+      [
+        'filter    F1 (',
+        'filter    F2 (passes 40 L/min at 1 bar, bypass 5 bar, rated 210 bar)\nrelief    RV1 (set 150 bar, passes 30 L/min at 4 bar)\nfilter    F1 (',
+      ],
       TO_TANK,
     ],
   },
@@ -58,10 +61,17 @@ const NEAR: readonly Near[] = [
       TO_TANK,
       ['working P1 to V1.P', 'working P1 to RV1, V1.P\nworking P2 to F2\nreturn  F2 to K1 to R1'],
       ['suction R1 to P1', 'suction R1 to P1, P2'],
-      ['directional V1', 'pump      P2 (displacement 8 cm3/rev, driven by M1, rated 50 bar)\nfilter    F2 (passes 30 L/min at 0.3 bar, bypass 2.5 bar)\ncooler    K1 (power 0.2 kW/K, passes 20 L/min at 0.6 bar)\ndirectional V1'],
+      [
+        'directional V1',
+        'pump      P2 (displacement 8 cm3/rev, driven by M1, rated 50 bar)\nfilter    F2 (passes 30 L/min at 0.3 bar, bypass 2.5 bar)\ncooler    K1 (power 0.2 kW/K, passes 20 L/min at 0.6 bar)\ndirectional V1',
+      ],
     ],
   },
-  { code: 'A01', why: 'a pump with a compensator is judged by another rule', edits: [['rated 210 bar, code "0.1"', 'rated 210 bar, compensator 150 bar, code "0.1"']] },
+  {
+    code: 'A01',
+    why: 'a pump with a compensator is judged by another rule',
+    edits: [['rated 210 bar, code "0.1"', 'rated 210 bar, compensator 150 bar, code "0.1"']],
+  },
   // A02
   {
     code: 'A02',
@@ -105,7 +115,10 @@ const NEAR: readonly Near[] = [
     code: 'A03',
     why: 'the weak part stands behind a reducing valve',
     edits: [
-      ['working V1.A to C1.cap (hose, bore 10 mm, length 1.5 m, rated 180 bar)', 'working V1.A to PR1.P\nworking PR1.A to C1.cap (hose, bore 10 mm, length 1.5 m, rated 180 bar)\ndrain   PR1.Y to R1'],
+      [
+        'working V1.A to C1.cap (hose, bore 10 mm, length 1.5 m, rated 180 bar)',
+        'working V1.A to PR1.P\nworking PR1.A to C1.cap (hose, bore 10 mm, length 1.5 m, rated 180 bar)\ndrain   PR1.Y to R1',
+      ],
       ['filter    F1 (', 'reducing  PR1 (set 150 bar, relieving yes, reverse check, passes 30 L/min at 4 bar)\nfilter    F1 ('],
     ],
   },
@@ -118,7 +131,14 @@ const NEAR: readonly Near[] = [
       ['return  RV1 to R1', 'return  RV1, RV2 to R1'],
     ],
   },
-  { code: 'A03', why: 'nothing declared is nothing guessed', edits: [[', rated 180 bar)', ')'], ['set 200 bar', 'set 220 bar']] },
+  {
+    code: 'A03',
+    why: 'nothing declared is nothing guessed',
+    edits: [
+      [', rated 180 bar)', ')'],
+      ['set 200 bar', 'set 220 bar'],
+    ],
+  },
   // A04
   { code: 'A04', why: 'set well above the need', edits: [['set 60 bar', 'set 130 bar']] },
   {
@@ -132,14 +152,24 @@ const NEAR: readonly Near[] = [
     ],
   },
   // A06
-  { code: 'A06', why: 'a return filter with bypass', edits: [['plug RV1.T', ''], ['return  V1.T to F1 to R1', 'return  V1.T, RV1 to F1 to R1']] },
+  {
+    code: 'A06',
+    why: 'a return filter with bypass',
+    edits: [
+      ['plug RV1.T', ''],
+      ['return  V1.T to F1 to R1', 'return  V1.T, RV1 to F1 to R1'],
+    ],
+  },
   {
     code: 'A06',
     why: 'a cooler with a check beside it',
     edits: [
       ['plug RV1.T', ''],
       ['return  V1.T to F1 to R1', 'return  V1.T, RV1 to F1 to K1, CV1 to R1'],
-      ['filter    F1 (', 'cooler    K1 (power 0.1 kW/K, passes 60 L/min at 0.5 bar)\ncheck     CV1 (crack 1.5 bar, passes 60 L/min at 3 bar)\nfilter    F1 ('],
+      [
+        'filter    F1 (',
+        'cooler    K1 (power 0.1 kW/K, passes 60 L/min at 0.5 bar)\ncheck     CV1 (crack 1.5 bar, passes 60 L/min at 3 bar)\nfilter    F1 (',
+      ],
     ],
   },
   {
@@ -165,7 +195,11 @@ const NEAR: readonly Near[] = [
       ['energise SOL2 until', 'energise SOL0, SOL2 until'],
     ],
   },
-  { code: 'A09', why: 'accepted with a reason', edits: [['step Load for 20 s\n}', 'step Load for 20 s\n}\nallow A09 on P1 in REST "Holds the former open; 20 s between bends"']] },
+  {
+    code: 'A09',
+    why: 'accepted with a reason',
+    edits: [['step Load for 20 s\n}', 'step Load for 20 s\n}\nallow A09 on P1 in REST "Holds the former open; 20 s between bends"']],
+  },
   { code: 'A09', why: 'the house allows more', edits: [['step Load for 20 s\n}', 'step Load for 20 s\n}\nlimits (idle 140 bar)']] },
   // A10
   {
@@ -182,7 +216,10 @@ const NEAR: readonly Near[] = [
     from: 'B02',
     edits: [
       ['pilot   P1.P', 'pilot   P2.P'],
-      ['drive     M1 (power 5.5 kW, speed 1450 rpm)', 'drive     M1 (power 4 kW, speed 1450 rpm)\ndrive     M2 (power 4 kW, speed 1450 rpm)'],
+      [
+        'drive     M1 (power 5.5 kW, speed 1450 rpm)',
+        'drive     M1 (power 4 kW, speed 1450 rpm)\ndrive     M2 (power 4 kW, speed 1450 rpm)',
+      ],
       ['P2 (displacement 8 cm3/rev, driven by M1', 'P2 (displacement 8 cm3/rev, driven by M2'],
     ],
   },
@@ -222,7 +259,10 @@ const NEAR: readonly Near[] = [
       ['working pressure: P1, P2 to UV1, RV1, V1.P', 'working P1 to UV1, CV1\nworking P2 to CV2\nworking pressure: CV2, CV1 to RV1, V1.P'],
       ['pilot   P2.P to UV1.X', 'pilot   pressure to UV1.X\npilot   RV1.X to V0.P\ndrain   V0.A to R1'],
       ['relief    RV1 (set system, passes', 'relief    RV1 (set system, piloted, vented 4 bar, passes'],
-      ['filter    F1 (', 'check     CV1, CV2 (crack 0.5 bar, passes 80 L/min at 3 bar)\ndirectional V0 (2/2, normally open, coil a SOL0, passes 5 L/min at 1 bar)\nfilter    F1 ('],
+      [
+        'filter    F1 (',
+        'check     CV1, CV2 (crack 0.5 bar, passes 80 L/min at 3 bar)\ndirectional V0 (2/2, normally open, coil a SOL0, passes 5 L/min at 1 bar)\nfilter    F1 (',
+      ],
       ['energise SOL1 until', 'energise SOL0, SOL1 until'],
       ['energise SOL2 until', 'energise SOL0, SOL2 until'],
     ],
@@ -231,12 +271,18 @@ const NEAR: readonly Near[] = [
     code: 'B01',
     why: 'both pumps are unloaded on purpose: the pilot senses an accumulator behind a common check',
     edits: [
-      ['working pressure: P1, P2 to UV1, RV1, V1.P', 'working P1, P2 to UV1, RV1, CV1\nworking pressure: CV1 to V1.P, BV1.A\nworking BV1.B to ACC1, BV2, RV2\nreturn  BV2, RV2 to R1'],
+      [
+        'working pressure: P1, P2 to UV1, RV1, V1.P',
+        'working P1, P2 to UV1, RV1, CV1\nworking pressure: CV1 to V1.P, BV1.A\nworking BV1.B to ACC1, BV2, RV2\nreturn  BV2, RV2 to R1',
+      ],
       ['pilot   P2.P to UV1.X', 'pilot   pressure to UV1.X'],
       ['UV1 (set 45 bar, closes 38 bar', 'UV1 (set 120 bar, closes 100 bar'],
       ['centre tandem', 'centre closed'],
       ['power 5.5 kW', 'power 18.5 kW'],
-      ['filter    F1 (', 'check     CV1 (crack 0.5 bar, passes 80 L/min at 3 bar)\nshutoff   BV1 (open, locked)\nshutoff   BV2 (closed)\nrelief    RV2 (set 180 bar, certified, passes 40 L/min at 6 bar)\naccumulator ACC1 (bladder, volume 10 L, precharge 70 bar at 20 degC, gas nitrogen, rated 250 bar)\nfilter    F1 ('],
+      [
+        'filter    F1 (',
+        'check     CV1 (crack 0.5 bar, passes 80 L/min at 3 bar)\nshutoff   BV1 (open, locked)\nshutoff   BV2 (closed)\nrelief    RV2 (set 180 bar, certified, passes 40 L/min at 6 bar)\naccumulator ACC1 (bladder, volume 10 L, precharge 70 bar at 20 degC, gas nitrogen, rated 250 bar)\nfilter    F1 (',
+      ],
     ],
     only: true,
   },
@@ -251,7 +297,11 @@ const NEAR: readonly Near[] = [
     ],
   },
   { code: 'B03', why: 'set between approach and relief', edits: [['set 170 bar, closes 150 bar', 'set 60 bar, closes 50 bar']] },
-  { code: 'B04', why: 'the switch-over is within the declared peak', edits: [['power 4 kW, speed 1450 rpm', 'power 5 kW, speed 1450 rpm, peak 130 %']] },
+  {
+    code: 'B04',
+    why: 'the switch-over is within the declared peak',
+    edits: [['power 4 kW, speed 1450 rpm', 'power 5 kW, speed 1450 rpm, peak 130 %']],
+  },
   { code: 'B04', why: 'a drive that is to be sized', edits: [['power 4 kW', 'power ?']] },
   // C01, C02
   {
@@ -302,7 +352,14 @@ const NEAR: readonly Near[] = [
       ['filter    F1 (', 'relief    RV2 (set 180 bar, passes 20 L/min at 4 bar)\nfilter    F1 ('],
     ],
   },
-  { code: 'E01', why: 'meter-in', edits: [['working C1.rod to FC1 to V1.B', 'working C1.rod to V1.B'], ['working V1.A to C1.cap', 'working V1.A to FC1 to C1.cap']] },
+  {
+    code: 'E01',
+    why: 'meter-in',
+    edits: [
+      ['working C1.rod to FC1 to V1.B', 'working C1.rod to V1.B'],
+      ['working V1.A to C1.cap', 'working V1.A to FC1 to C1.cap'],
+    ],
+  },
   // E03
   {
     code: 'E03',
@@ -316,9 +373,7 @@ const NEAR: readonly Near[] = [
   {
     code: 'E03',
     why: 'the throttle meters the lifting, with its free side lowering, and a counterbalance valve brakes',
-    edits: [
-      ['pilotcheck PC1 (ratio 4:1, passes', 'counterbalance PC1 (set 70 bar, ratio 4:1, passes'],
-    ],
+    edits: [['pilotcheck PC1 (ratio 4:1, passes', 'counterbalance PC1 (set 70 bar, ratio 4:1, passes']],
   },
   // F05, F07
   { code: 'F05', why: 'a drain of its own', edits: [['plug    SV1.Y', 'drain   SV1.Y to R1']] },
@@ -327,7 +382,10 @@ const NEAR: readonly Near[] = [
     why: 'internal drain with its outlet to the reservoir',
     edits: [
       ['plug    SV1.Y\n', ''],
-      ['sequence  SV1 (set 70 bar, reverse check, passes 20 L/min at 4 bar, code "1.2") "Notch after clamp"', 'sequence  SV1 (set 70 bar, internal drain, passes 20 L/min at 4 bar, code "1.2")'],
+      [
+        'sequence  SV1 (set 70 bar, reverse check, passes 20 L/min at 4 bar, code "1.2") "Notch after clamp"',
+        'sequence  SV1 (set 70 bar, internal drain, passes 20 L/min at 4 bar, code "1.2")',
+      ],
       ['working V1.A to C1.cap, SV1\nworking SV1 to C2.cap', 'working V1.A to C1.cap, C2.cap, SV1\nreturn  SV1 to R1'],
       ['resist 10 kN from 60 mm to 140 mm extending', 'resist 5 kN'],
     ],
@@ -348,7 +406,14 @@ const NEAR: readonly Near[] = [
   // H14
   { code: 'H14', why: 'plugged on purpose', edits: [['working V1.A to C1.cap', 'working V1.A to C1.cap\nplug    V1.B']] },
   // L04
-  { code: 'L04', why: 'waits for a person', edits: [['energise SOL1 until LS1 on', 'energise SOL1 until C1 extended, at most 6 s\n  step Stay energise SOL1 until GO on'], ['switch    LS1 (on C1, from 195 mm to 200 mm)', 'switch    GO (outside)']] },
+  {
+    code: 'L04',
+    why: 'waits for a person',
+    edits: [
+      ['energise SOL1 until LS1 on', 'energise SOL1 until C1 extended, at most 6 s\n  step Stay energise SOL1 until GO on'],
+      ['switch    LS1 (on C1, from 195 mm to 200 mm)', 'switch    GO (outside)'],
+    ],
+  },
   { code: 'L04', why: 'a time', edits: [['energise SOL1 until LS1 on', 'energise SOL1 for 3 s']] },
   { code: 'L04', why: 'manual functions end when the button is released', edits: [['cycle Gate {', 'manual Gate {']] },
   // L07
@@ -365,15 +430,29 @@ const NEAR: readonly Near[] = [
   },
   // M01, M07, M08
   { code: 'M01', why: 'two codes', edits: [['code "1.1") "Right chuck"', 'code "2.1") "Right chuck"']] },
-  { code: 'M07', why: 'with its unit, by way of a constant', edits: [['set 110,', 'set system,'], ['fluid     HM46', 'let system = 110 bar\nfluid     HM46']] },
-  { code: 'M08', why: 'from a part', edits: [['cylinder  C1 (rod 22 mm', 'part cylinder Puller (bore 40 mm)\ncylinder  C1 as Puller (rod 22 mm']] },
+  {
+    code: 'M07',
+    why: 'with its unit, by way of a constant',
+    edits: [
+      ['set 110,', 'set system,'],
+      ['fluid     HM46', 'let system = 110 bar\nfluid     HM46'],
+    ],
+  },
+  {
+    code: 'M08',
+    why: 'from a part',
+    edits: [['cylinder  C1 (rod 22 mm', 'part cylinder Puller (bore 40 mm)\ncylinder  C1 as Puller (rod 22 mm']],
+  },
 ];
 
 describe('near misses', () => {
   it.each(NEAR)('$code stays silent: $why', ({ code, edits, from, only }) => {
     const text = edited(faulty(from ?? code).text, edits);
     const { problems, language } = check(text, 'figures');
-    expect(language.filter((f) => f.severity === 'error').map((f) => f.what), text).toEqual([]);
+    expect(
+      language.filter((f) => f.severity === 'error').map((f) => f.what),
+      text,
+    ).toEqual([]);
     const told = problems.map((p) => `${short(p)}: ${p.what}`);
     expect(only === true ? told.filter((t) => t.startsWith(code)) : told, text).toEqual([]);
   });
@@ -382,12 +461,41 @@ describe('near misses', () => {
     const silent = new Set(NEAR.map((n) => n.code));
     expect([...new Set(NEAR.map((n) => n.code))].length).toBeGreaterThan(20);
     // B06 shares those of B01.
-    for (const code of ['A01', 'A02', 'A03', 'A04', 'A06', 'A09', 'A10', 'A19', 'B01', 'B02', 'B03', 'B04', 'C01', 'C02', 'D01', 'E01', 'E03', 'F05', 'F07', 'F17', 'H14', 'L04', 'L07', 'M01', 'M07', 'M08']) {
+    for (const code of [
+      'A01',
+      'A02',
+      'A03',
+      'A04',
+      'A06',
+      'A09',
+      'A10',
+      'A19',
+      'B01',
+      'B02',
+      'B03',
+      'B04',
+      'C01',
+      'C02',
+      'D01',
+      'E01',
+      'E03',
+      'F05',
+      'F07',
+      'F17',
+      'H14',
+      'L04',
+      'L07',
+      'M01',
+      'M07',
+      'M08',
+    ]) {
       expect(silent, code).toContain(code);
     }
   });
 
   it.each(SOUND)('sound sample $name has no finding', ({ text }) => {
-    expect(check(text, 'figures').problems.map((p) => `${short(p)}: ${p.what}`)).toEqual([]);
+    // What their requirements come to is tested with the studies.
+    const told = check(text, 'figures').problems.filter((p) => p.code !== 'REQUIREMENT');
+    expect(told.map((p) => `${short(p)}: ${p.what}`)).toEqual([]);
   });
 });

@@ -6,14 +6,21 @@ import { apply, check, FAULTY, SOUND } from './support.ts';
 
 const TEXTS = [...FAULTY, ...SOUND].map((s) => s.text);
 
-const damaged = fc.record({ text: fc.constantFrom(...TEXTS), at: fc.nat(), length: fc.nat({ max: 60 }), what: fc.constantFrom('line', 'cut', 'characters', 'twice') }).map(({ text, at, length, what }) => {
-  const lines = text.split('\n');
-  const n = at % lines.length;
-  if (what === 'line') return lines.filter((_, i) => i !== n).join('\n');
-  if (what === 'twice') return [...lines.slice(0, n), lines[n]!, ...lines.slice(n)].join('\n');
-  const offset = at % text.length;
-  return what === 'cut' ? text.slice(0, offset) : text.slice(0, offset) + text.slice(offset + length);
-});
+const damaged = fc
+  .record({
+    text: fc.constantFrom(...TEXTS),
+    at: fc.nat(),
+    length: fc.nat({ max: 60 }),
+    what: fc.constantFrom('line', 'cut', 'characters', 'twice'),
+  })
+  .map(({ text, at, length, what }) => {
+    const lines = text.split('\n');
+    const n = at % lines.length;
+    if (what === 'line') return lines.filter((_, i) => i !== n).join('\n');
+    if (what === 'twice') return [...lines.slice(0, n), lines[n]!, ...lines.slice(n)].join('\n');
+    const offset = at % text.length;
+    return what === 'cut' ? text.slice(0, offset) : text.slice(0, offset) + text.slice(offset + length);
+  });
 
 function sane(text: string, figures: 'text' | 'figures'): void {
   const { findings } = check(text, figures);
@@ -27,7 +34,7 @@ function sane(text: string, figures: 'text' | 'figures'): void {
       for (const c of fix.changes) expect(c.end <= text.length && c.start <= c.end && c.start >= 0, fix.title).toBe(true);
       // Changes of one fix never overlap.
       const sorted = [...fix.changes].sort((a, b) => a.start - b.start || a.end - b.end);
-      sorted.slice(1).forEach((c, i) => expect(c.start, fix.title).toBeGreaterThanOrEqual(sorted[i]!.end));
+      for (const [i, c] of sorted.slice(1).entries()) expect(c.start, fix.title).toBeGreaterThanOrEqual(sorted[i]!.end);
       // A mended text goes through the rules as well.
       check(apply(text, fix));
     }
@@ -36,15 +43,22 @@ function sane(text: string, figures: 'text' | 'figures'): void {
 
 describe('half-typed circuits', () => {
   it('from the text', () => {
-    fc.assert(fc.property(damaged, (text) => sane(text, 'text')), { numRuns: 300 });
+    fc.assert(
+      fc.property(damaged, (text) => sane(text, 'text')),
+      { numRuns: 300 },
+    );
   });
 
   it('with figures', () => {
-    fc.assert(fc.property(damaged, (text) => sane(text, 'figures')), { numRuns: 25 });
+    fc.assert(
+      fc.property(damaged, (text) => sane(text, 'figures')),
+      { numRuns: 25 },
+    );
   });
 
   it('an empty text and a shelf have no findings of the rules', () => {
-    for (const text of ['', '// nothing\n', 'circuit Empty\n', 'part check NonReturn (crack 0.5 bar)\n']) expect(check(text).findings).toEqual([]);
+    for (const text of ['', '// nothing\n', 'circuit Empty\n', 'part check NonReturn (crack 0.5 bar)\n'])
+      expect(check(text).findings).toEqual([]);
   });
 });
 

@@ -4,7 +4,8 @@ import type { Graph } from '../graph/graph.ts';
 import type { Fix, RuleContext } from '../rule.ts';
 import { isMiddle, neighbours, replace, takeOut, type Written, writtenAt } from './places.ts';
 import { below, freeName, statement, writable } from './sheet.ts';
-import { drop, pumpFlow, round } from './values.ts';
+import { pumpFlow } from '../graph/flow.ts';
+import { drop, round } from './values.ts';
 
 /**
  * A check at the outlet of `pump`. What is in `keep` (an unloading valve's P) stays on the pump's side, everything else comes behind the
@@ -41,7 +42,7 @@ export function checkAtOutlet(
   }
   const parted = part(graph, pump, keep, outlets, name);
   if (parted === undefined) return undefined;
-  const start = first.place.written ? `${pump.id}.P` : pump.id;
+  const start = parted.natural ? pump.id : `${pump.id}.P`;
   const joined = statement(context, first.line.origin, 'working', `${start} to ${[...parted.kept, name].join(', ')}`);
   return { title, safe: false, changes: [declared, ...parted.changes, below(context, first.line.origin, [joined]), ...more] };
 }
@@ -62,7 +63,8 @@ function part(graph: Graph, pump: Component, keep: readonly Component[], outlets
   }
   kept.push(...moved.map((m) => m.place.ports.find((p) => p.port === 'P')?.component ?? '').filter((id) => id !== ''));
   if (touched.length === 0) return undefined;
-  return { kept, changes };
+  // The name alone stands for the port once: it is free again where the place that had it became the check.
+  return { kept, changes, natural: touched.some((t) => !t.place.written) };
 }
 
 /** True where a line joins nothing but the pump and what stays with it. */

@@ -5,7 +5,8 @@ import type { Fix, RuleContext } from '../rule.ts';
 import { type Carried, chamberArea } from '../rules/sources.ts';
 import { isMiddle, replace, writtenAt } from './places.ts';
 import { below, freeName, statement, writable } from './sheet.ts';
-import { drop, pumpFlow, round } from './values.ts';
+import { pumpFlow } from '../graph/flow.ts';
+import { drop, round } from './values.ts';
 
 /** Set 30 % above the pressure the load needs (common practice), piloted from the other chamber. */
 export function counterbalance(context: RuleContext, graph: Graph, carried: Carried): Fix | undefined {

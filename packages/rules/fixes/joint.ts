@@ -4,7 +4,8 @@ import type { Graph } from '../graph/graph.ts';
 import type { Fix, RuleContext } from '../rule.ts';
 import { writtenAt } from './places.ts';
 import { below, freeName, statement, writable } from './sheet.ts';
-import { drop, pumpFlow, round } from './values.ts';
+import { pumpFlow } from '../graph/flow.ts';
+import { drop, round } from './values.ts';
 
 const namesLine = (line: LineStatement, name: string): boolean => line.stations.some((s) => s.places.some((p) => p.line === name));
 

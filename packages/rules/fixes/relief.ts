@@ -5,7 +5,8 @@ import type { Fix, RuleContext } from '../rule.ts';
 import { neighbours, takeOut, writtenAt } from './places.ts';
 import { below, freeName, reservoirFor, statement, valueOrigin, writable } from './sheet.ts';
 import { ratingOf } from '../graph/rating.ts';
-import { drop, pumpFlow, reliefSetting, round, type Setting } from './values.ts';
+import { pumpFlow, pumpFlowTo } from '../graph/flow.ts';
+import { drop, reliefSetting, round, type Setting } from './values.ts';
 
 /** A new relief at the pump's outlet with its line to the reservoir. */
 export function addRelief(context: RuleContext, graph: Graph, pump: Component, like?: Component): Fix | undefined {
@@ -15,7 +16,8 @@ export function addRelief(context: RuleContext, graph: Graph, pump: Component, l
   const at = writtenAt(circuit, pump.id, 'P')[0];
   if (net === undefined || reservoir === undefined || at === undefined || !writable(context, pump)) return undefined;
   const setting = (like === undefined ? undefined : settingLike(context, graph, net.id, like)) ?? reliefSetting(graph, net.id);
-  const flow = pumpFlow(graph, pump);
+  // All the oil that comes here, not only this pump's; this pump's own flow must be known.
+  const flow = pumpFlow(graph, pump) === undefined ? undefined : pumpFlowTo(graph, net.id);
   if (setting === undefined || flow === undefined) return undefined;
   const name = freeName(circuit, 'RV');
   const passes = round(circuit, flow, 'flow', 'up').text;

@@ -1,5 +1,5 @@
 /** Values for mends: round figures in the circuit's own units, and settings that fit what is there. */
-import { type Circuit, type Component, read } from '@oilway/circuit';
+import { type Circuit, read } from '@oilway/circuit';
 import { type Dimension, displayUnit, fromSi, toSi } from '@oilway/quantity';
 import type { Graph } from '../graph/graph.ts';
 import { ratingOf } from '../graph/rating.ts';
@@ -31,15 +31,6 @@ export function drop(circuit: Circuit, bar: number): string {
   const unit = displayUnit('pressure', { display: circuit.display, units: circuit.units });
   const value = fromSi(bar * 1e5, unit);
   return `${Number(value.toPrecision(2))} ${unit.symbol}`;
-}
-
-/** Theoretical flow of a pump at its drive's speed, m3/s; undefined where either is not known. */
-export function pumpFlow(graph: Graph, pump: Component): number | undefined {
-  const drive = read.reference(pump, 'driven');
-  const of = drive === undefined ? undefined : graph.component(drive.id);
-  const displacement = read.si(pump, 'displacement');
-  const speed = of === undefined ? undefined : read.si(of, 'speed');
-  return displacement === undefined || speed === undefined ? undefined : displacement * speed;
 }
 
 /** Everything the oil of a net can stand against at full pressure: not behind a reducing valve, an intensifier or a divider. */

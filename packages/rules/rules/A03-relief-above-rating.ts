@@ -3,12 +3,14 @@ import { graphOf, type Graph } from '../graph/graph.ts';
 import { type Guard, guardsOf, guardsReached } from '../graph/guards.ts';
 import { openAlways, waysFrom, waysTo } from '../graph/reach.ts';
 import { type Rating, ratingOf } from '../graph/rating.ts';
+import { pressureAt } from '../figures.ts';
 import { tell } from '../finding.ts';
 import { round, spreads } from '../fixes/values.ts';
 import { valueOrigin, writable } from '../fixes/sheet.ts';
 import type { Finding, Fix, Rule, RuleContext } from '../rule.ts';
 import { against, show } from '../words.ts';
-import { pumpFlowTo, settingOf, withOverride } from './limits.ts';
+import { pumpFlowTo } from '../graph/flow.ts';
+import { settingOf, withOverride } from './limits.ts';
 
 /** The lowest rating among the nets that stand at this relief's pressure: not those with a lower guard of their own. */
 function weakest(graph: Graph, guard: Guard): { readonly rating: Rating; readonly net: string } | undefined {
@@ -96,7 +98,7 @@ function backPressure(context: RuleContext, graph: Graph, guard: Guard): number 
     ...context.study.steps.flatMap((s) => s.points),
     ...context.study.states.flatMap((s) => s.variants.map((v) => v.point)),
   ]) {
-    if (point.solved && point.lifting.includes(guard.component.id)) highest = Math.max(highest, point.pressures[outlet] ?? 0);
+    if (point.solved && point.lifting.includes(guard.component.id)) highest = Math.max(highest, pressureAt(point, outlet) ?? 0);
   }
   return highest;
 }

@@ -2,6 +2,7 @@
 import { type ActuatorPoint, type LoadValue, type Point, read } from '@oilway/circuit';
 import { openAlways, waysFrom } from '../graph/reach.ts';
 import { graphOf, type Graph } from '../graph/graph.ts';
+import { pressureAt } from '../figures.ts';
 import { tell } from '../finding.ts';
 import type { Finding, Rule, RuleContext } from '../rule.ts';
 import { round } from '../fixes/values.ts';
@@ -40,7 +41,7 @@ function within(value: LoadValue, position: number): boolean {
 /** True where the pressure stands at the setting, or within 5 % of it: else something other than the setting makes it weak. */
 function atLimit(graph: Graph, point: Point, limit: Limit): boolean {
   const net = graph.netAt(limit.by.id, limit.by.kind === 'reducing' ? 'A' : 'P')?.id;
-  const pressure = net === undefined ? undefined : point.pressures[net];
+  const pressure = net === undefined ? undefined : pressureAt(point, net);
   return pressure !== undefined && pressure * MARGIN >= limit.set;
 }
 

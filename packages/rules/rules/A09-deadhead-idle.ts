@@ -1,6 +1,7 @@
 /** A09: with nothing to do, a fixed pump works against pressure. */
 import { type Component, read, type StateResult, type Variant } from '@oilway/circuit';
 import { graphOf, type Graph } from '../graph/graph.ts';
+import { pressureAt } from '../figures.ts';
 import { tell } from '../finding.ts';
 import type { Finding, Rule, RuleContext } from '../rule.ts';
 import { list, show } from '../words.ts';
@@ -25,10 +26,10 @@ function worst(context: RuleContext, graph: Graph, pump: Component, limit: numbe
     for (const state of context.study?.states ?? []) {
       if (state.state !== name) continue;
       for (const variant of state.variants) {
-        const pressure = variant.point.pressures[outlet];
+        const pressure = pressureAt(variant.point, outlet);
         // Without any way out there is no figure: that pump has no relief (A01, A02).
         const closed = variant.point.diagnosis.some((d) => d.kind === 'OVERPRESSURE' && d.nets.includes(outlet));
-        if (closed || !variant.point.solved || !variant.drivesOn.includes(drive) || pressure === undefined || pressure <= limit) continue;
+        if (closed || !variant.drivesOn.includes(drive) || pressure === undefined || pressure <= limit) continue;
         if (found === undefined || pressure > found.pressure) found = { state, variant, pressure };
       }
     }
@@ -39,7 +40,7 @@ function worst(context: RuleContext, graph: Graph, pump: Component, limit: numbe
 
 /** The variant is named where not all are loaded. */
 function variantWords(state: StateResult, variant: Variant, outlet: string, limit: number): string {
-  const all = state.variants.every((v) => (v.point.pressures[outlet] ?? 0) > limit);
+  const all = state.variants.every((v) => (pressureAt(v.point, outlet) ?? 0) > limit);
   return all || variant.label === '' ? '' : ` (${variant.label})`;
 }
 

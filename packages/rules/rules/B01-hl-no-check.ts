@@ -5,7 +5,7 @@ import { tell } from '../finding.ts';
 import { checkAtOutlet } from '../fixes/check.ts';
 import { checkInJoint } from '../fixes/joint.ts';
 import { replace, writtenAt } from '../fixes/places.ts';
-import { pumpFlow } from '../fixes/values.ts';
+import { pumpFlow } from '../graph/flow.ts';
 import type { Rule, RuleContext } from '../rule.ts';
 import { show } from '../words.ts';
 import { read } from '@oilway/circuit';

@@ -2,7 +2,7 @@
 import { read } from '@oilway/circuit';
 import { graphOf, type Graph } from '../graph/graph.ts';
 import { tell } from '../finding.ts';
-import { pumpFlow } from '../fixes/values.ts';
+import { pumpFlow } from '../graph/flow.ts';
 import type { Finding, Rule, RuleContext } from '../rule.ts';
 import { against, show } from '../words.ts';
 import { type HighLow, highLowUnits } from './high-low.ts';

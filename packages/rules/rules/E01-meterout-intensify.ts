@@ -3,6 +3,7 @@ import type { Component, Point } from '@oilway/circuit';
 import { graphOf, type Graph } from '../graph/graph.ts';
 import { type Passing, waysFrom } from '../graph/reach.ts';
 import { type Rating, ratingOf } from '../graph/rating.ts';
+import { pressureAt } from '../figures.ts';
 import { tell } from '../finding.ts';
 import type { Finding, Rule, RuleContext } from '../rule.ts';
 import { format } from '@oilway/quantity';
@@ -60,9 +61,9 @@ function worst(
     const actuator = point.actuators.find((a) => a.id === cylinder.id);
     if (actuator !== undefined && actuator.velocity < 0) continue;
     for (const net of nets) {
-      const pressure = point.pressures[net];
+      const pressure = pressureAt(point, net);
       const rating = ratingOf(graph, net);
-      const opposite = cap === undefined ? undefined : point.pressures[cap];
+      const opposite = cap === undefined ? undefined : pressureAt(point, cap);
       // Above the other side: intensified, not merely pumped up.
       if (pressure === undefined || rating === undefined || pressure <= rating.value * 1.001 || pressure <= (opposite ?? 0)) continue;
       if (found === undefined || pressure - rating.value > found.pressure - found.rating.value) {

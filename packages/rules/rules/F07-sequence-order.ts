@@ -2,6 +2,7 @@
 import { type Component, read, type Study } from '@oilway/circuit';
 import { graphOf, type Graph } from '../graph/graph.ts';
 import { type Passing, spreadable, waysFrom } from '../graph/reach.ts';
+import { pressureAt } from '../figures.ts';
 import { tell } from '../finding.ts';
 import type { Finding, Rule, RuleContext } from '../rule.ts';
 import { show } from '../words.ts';
@@ -57,7 +58,7 @@ function tooEarly(context: RuleContext, study: Study, graph: Graph, valve: Compo
       );
       const next = point.actuators.find((a) => !first.has(a.id) && Math.abs(a.velocity) > 1e-3);
       if (still === undefined || next === undefined) continue;
-      const pressure = point.pressures[inlet];
+      const pressure = pressureAt(point, inlet);
       const shown = (si: number) => show(context.circuit, si, 'pressure', setting.unit);
       return tell(F07, {
         what: `${valve.id} (set ${shown(setting.set)}) opens in ${step.id} while ${still.id} still moves${pressure === undefined ? '' : `: ${shown(pressure)} stands at ${valve.id}.P`}; ${next.id} does not wait for it.`,

@@ -2,6 +2,7 @@
 import { type Component, type Condition, read, type Step, type Study } from '@oilway/circuit';
 import { graphOf, type Graph } from '../graph/graph.ts';
 import { openAlways, spreadable, waysTo } from '../graph/reach.ts';
+import { pressureAt } from '../figures.ts';
 import { tell } from '../finding.ts';
 import type { Finding, Rule, RuleContext } from '../rule.ts';
 import { against, show } from '../words.ts';
@@ -93,7 +94,7 @@ function inSteps(context: RuleContext, study: Study, graph: Graph, one: Componen
       });
     }
     const entry = result.points[0]!;
-    const begin = entry.pressures[at.net];
+    const begin = pressureAt(entry, at.net);
     const only = step?.until?.op === 'state' && step.lasts === undefined;
     if (only && begin !== undefined && begin >= at.value && entry.actuators.some((a) => a.velocity !== 0)) {
       return tell(L07, {

@@ -2,7 +2,7 @@
 import type { Component } from '@oilway/circuit';
 import type { Edge, Graph } from '../graph/graph.ts';
 import { openAlways, type Passing, spreadable, throughValves, type Way, waysFrom } from '../graph/reach.ts';
-import { pumpFlow } from '../fixes/values.ts';
+import { pumpFlow } from '../graph/flow.ts';
 
 export interface HighLow {
   readonly unloading: Component;

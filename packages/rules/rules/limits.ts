@@ -3,7 +3,8 @@ import { type Component, read } from '@oilway/circuit';
 import type { Graph } from '../graph/graph.ts';
 import { guardsReached } from '../graph/guards.ts';
 import { openAlways, waysTo } from '../graph/reach.ts';
-import { spreads, pumpFlow } from '../fixes/values.ts';
+import { pumpFlowTo } from '../graph/flow.ts';
+import { spreads } from '../fixes/values.ts';
 
 export interface Limit {
   /** What sets it. */
@@ -34,15 +35,6 @@ export function withOverride(relief: Component, set: number, flow: number): numb
   const passes = read.flowAt(relief, 'passes');
   if (passes === undefined || passes.flow <= 0) return set;
   return set + (Math.max((read.si(relief, 'override') ?? 0.1) * set, 0.5e5) * flow) / passes.flow;
-}
-
-/** Flow of all pumps whose oil can get to a net by ways that nothing can close, m3/s. */
-export function pumpFlowTo(graph: Graph, net: string): number {
-  const ways = waysTo(graph, net, openAlways);
-  return graph.ofKind('pump').reduce((sum, pump) => {
-    const outlet = graph.netAt(pump.id, 'P')?.id;
-    return outlet !== undefined && ways.has(outlet) ? sum + (pumpFlow(graph, pump) ?? 0) : sum;
-  }, 0);
 }
 
 /** The lowest limit of what a pump can build up: its sure reliefs, the relief inside, its compensator. */

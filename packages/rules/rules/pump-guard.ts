@@ -4,7 +4,7 @@ import type { Graph } from '../graph/graph.ts';
 import { guardsOf, guardsReached, type Reached } from '../graph/guards.ts';
 import { ifOpened, openAlways, type Passing, waysFrom } from '../graph/reach.ts';
 import { ratingOf } from '../graph/rating.ts';
-import { pumpFlow } from '../fixes/values.ts';
+import { pumpFlow } from '../graph/flow.ts';
 import type { Related } from '../rule.ts';
 import { show } from '../words.ts';
 
