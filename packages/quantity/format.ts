@@ -169,9 +169,19 @@ function suffix(unit: Unit): string {
   return ` ${unit.label ?? unit.symbol}`;
 }
 
+/** From here on an area is that of a reservoir, not of a piston: shown in m2 or ft2 where the text asks for no unit. m2 */
+const LARGE_AREA = 0.1;
+
+function largeArea(si: number, unit: Unit, options: FormatOptions): Unit {
+  const { display = 'as written', units = {} } = options;
+  const asked = display === 'as written' && (options.unit === unit.symbol || units.area === unit.symbol);
+  if (unit.dimension !== 'area' || Math.abs(si) < LARGE_AREA || asked) return unit;
+  return unitOf(unit.system === 'us' ? 'ft2' : 'm2') as Unit;
+}
+
 /** A figure with its unit as people read it: `183 bar`, `4.23 s`, `-0.2 bar`. `si` is in the SI unit of `dimension` (pressure gauge). */
 export function format(si: number, dimension: Dimension, options: FormatOptions = {}): string {
-  const unit = displayUnit(dimension, options);
+  const unit = largeArea(si, displayUnit(dimension, options), options);
   if (Number.isNaN(si)) return 'not computed';
   if (!Number.isFinite(si)) return si > 0 ? 'unlimited' : '-unlimited';
   const value = fromSi(si, unit);

@@ -126,6 +126,11 @@ describe('what cannot be read', () => {
     expect(out).toContain('1 circuit:');
     expect(err).toContain('nowhere.oilway');
   });
+  it('JSON says it too, so that a failed run never reads as clean', () => {
+    const { status, out } = oilway(['check', '--format', 'json', 'nowhere.oilway']);
+    expect(status).toBe(2);
+    expect(JSON.parse(out)).toMatchObject({ files: [], cannotRead: [{ file: 'nowhere.oilway', why: 'there is no such file or folder' }] });
+  });
   it('run refuses the same ways, and a folder of several circuits', () => {
     refused(['run', 'nowhere.oilway'], /no such file/);
     refused(['run', 'tree'], /holds 2 circuits/);

@@ -52,6 +52,10 @@ describe('three significant digits and the exceptions', () => {
     ['100 bar', '10.0 MPa', { units: { pressure: 'MPa' } }],
     ['100 bar', '100 bar', { units: { pressure: 'MPa' }, unit: 'bar' }],
     ['2 bar', '0.20 MPa', { unit: 'MPa' }],
+    ['1.11 m2', '1.11 m2'],
+    ['31.2 cm2', '31.2 cm2'],
+    ['1.11 m2', '11100 cm2', { units: { area: 'cm2' } }],
+    ['15 ft2', '15.0 ft2', { display: 'us' }],
     ['100 mm', '3.94 in', { units: { pressure: 'psi' } }],
     ['100 mm', '100 mm', { units: { pressure: 'psi' }, display: 'metric' }],
   ])('%s is shown as %s', (text, expected, options) => {

@@ -1,7 +1,7 @@
 /** `oilway check`: findings of circuits, as text or JSON. */
 import type { Finding } from '@oilway/rules';
-import { gather } from '../files.ts';
-import { open, type Opened } from '../service.ts';
+import { gather, type Gathered } from '../files.ts';
+import { open, type Opened, type Session } from '../service.ts';
 import { COMMAND_VERSION } from '../version.ts';
 import type { Paint } from '../text/colour.ts';
 import { findingData, findingLines } from '../text/finding.ts';
@@ -55,31 +55,42 @@ function summary(totals: Totals): string {
   return `${plural(totals.files, 'circuit')}: ${found}${accepted}`;
 }
 
+function textOf(session: Session, options: CheckOptions, paint: Paint): string[] {
+  const lines: string[] = [];
+  for (const one of session.opened) {
+    for (const finding of inOrder(one.findings)) {
+      if (finding.accepted !== undefined && !options.accepted) continue;
+      lines.push(...findingLines(finding, session.texts, paint));
+      if (finding.accepted !== undefined) lines.push(`    accepted: ${finding.accepted}`);
+      lines.push('');
+    }
+  }
+  return [...lines, summary(totalsOf(session.opened))];
+}
+
+function dataOf(session: Session, gathered: Gathered): Record<string, unknown> {
+  return {
+    tool: 'oilway',
+    version: COMMAND_VERSION,
+    files: session.opened.map((one) => ({
+      file: one.file.path,
+      findings: inOrder(one.findings).map((finding) => findingData(finding, session.texts)),
+    })),
+    cannotRead: gathered.unusable.map((one) => ({ file: one.path, why: one.why })),
+    failures: session.failures,
+    totals: totalsOf(session.opened),
+  };
+}
+
 export async function check(options: CheckOptions, output: Output, paint: Paint): Promise<Exit> {
   const gathered = await gather(options.paths);
   for (const one of gathered.unusable) output.err(`oilway: ${one.path} ${one.why}`);
-  if (gathered.files.length === 0) return 2;
+  if (gathered.files.length === 0 && options.format === 'text') return 2;
   const session = await open(gathered.files);
-  const totals = totalsOf(session.opened);
-  if (options.format === 'json') {
-    const files = session.opened.map((one) => ({
-      file: one.file.path,
-      findings: inOrder(one.findings).map((finding) => findingData(finding, session.texts)),
-    }));
-    const cannotRead = gathered.unusable.map((one) => ({ file: one.path, why: one.why }));
-    output.out(JSON.stringify({ tool: 'oilway', version: COMMAND_VERSION, files, cannotRead, totals }, null, 2));
-  } else {
-    for (const one of session.opened) {
-      for (const finding of inOrder(one.findings)) {
-        if (finding.accepted !== undefined && !options.accepted) continue;
-        for (const line of findingLines(finding, session.texts, paint)) output.out(line);
-        if (finding.accepted !== undefined) output.out(`    accepted: ${finding.accepted}`);
-        output.out('');
-      }
-    }
-    output.out(summary(totals));
-  }
+  if (options.format === 'json') output.out(JSON.stringify(dataOf(session, gathered), null, 2));
+  else for (const line of textOf(session, options, paint)) output.out(line);
   for (const failure of session.failures) output.err(`oilway: internal error, please report it: ${failure}`);
   if (gathered.unusable.length > 0 || session.failures.length > 0) return 2;
-  return totals.errors + totals.warnings > 0 ? 1 : 0;
+  const { errors, warnings } = totalsOf(session.opened);
+  return errors + warnings > 0 ? 1 : 0;
 }

@@ -58,7 +58,10 @@ export function findingLines(finding: Finding, texts: Texts, paint: Paint): stri
     const there = texts.table(related.origin.uri).at(related.origin.start);
     lines.push(`${indent}also: ${pathOf(related.origin.uri)}:${there.line}:${there.column}: ${related.message}`);
   }
-  if (finding.hides && finding.hides.length > 0) lines.push(paint.faint(`${indent}covers ${finding.hides.join(', ')} at the same place`));
+  // Where the covered findings stand among the other places they are told there.
+  const told = finding.related.some((related) => finding.hides?.some((code) => related.message.includes(code)));
+  if (finding.hides && finding.hides.length > 0 && !told)
+    lines.push(paint.faint(`${indent}covers ${finding.hides.join(', ')} at the same place`));
   return lines;
 }
 
