@@ -3,7 +3,7 @@ import { type Network, type SteadyResult, Transient, type TransientWatch } from 
 import type { Assembled } from './assembled.ts';
 import type { BodyLoad, MachineRun, RunReport, Setting, Solution, Stand, Watch } from './machine.ts';
 import { type Internal, InternalEvents } from './run-events.ts';
-import { applySetting, loadState, ofBody, requestOf } from './setting.ts';
+import { applySetting, LEAKAGE_FLOOR, loadState, ofBody, requestOf } from './setting.ts';
 import { crossover, type Move, proportionalMoves } from './shifting.ts';
 import { brakesAt, solutionOf, type Standing } from './solution.ts';
 import { fromLitres, fromMPa } from './units.ts';
@@ -57,7 +57,10 @@ export class Run implements MachineRun {
     this.#scratch = new Float64Array(assembled.parameters.length);
     this.#brakes = brakesAt(assembled, start.pressures);
     applySetting(assembled, this.#setting, network.parameters);
-    this.#engine = new Transient(network, { ...requestOf(assembled, this.#setting, this.#brakes) }, start, { dynamics });
+    this.#engine = new Transient(network, { ...requestOf(assembled, this.#setting, this.#brakes) }, start, {
+      dynamics,
+      ...(setting.leakage === true ? { floor: LEAKAGE_FLOOR } : {}),
+    });
     this.#engine.setGasExponent(setting.gasExponent ?? 1.4);
     this.#events = new InternalEvents(assembled, network);
   }

@@ -4,8 +4,8 @@ import { expect, test } from 'vitest';
 import { delivers, HEAD, holds, toBar, toLpm } from '../support/bench.ts';
 import { blank, load, machineOf } from '../support/text.ts';
 
-const flowing = (d: readonly Diagnosis[], kind: 'OVERPRESSURE' | 'STARVED') =>
-  d.find((x) => x.kind === kind) as Extract<Diagnosis, { kind: 'OVERPRESSURE' }> | undefined;
+type Flowing = Extract<Diagnosis, { flow: number }>;
+const flowing = (d: readonly Diagnosis[], kind: Flowing['kind']): Flowing | undefined => d.find((x): x is Flowing => x.kind === kind);
 
 test('a pump against a closed centre: no outlet, source and closed elements named', () => {
   const s = machineOf(`${HEAD}${delivers('P1', 30, 'V1.P')}
