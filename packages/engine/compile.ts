@@ -58,7 +58,7 @@ export interface Network {
   /** Passages and checks, stamped in loops; the other elements by number. */
   readonly batches: readonly Batch[];
   readonly general: Int32Array;
-  /** Nodes of parts that reach no fixed node through any element: one each, tied to atmosphere by the floor. */
+  /** Nodes of parts that reach no fixed node through the floor of any element: one each, tied to atmosphere by the floor. */
   readonly grounded: Int32Array;
 }
 
@@ -272,7 +272,11 @@ function groundedNodes(spec: NetworkSpec, laws: readonly Law[], unknownOf: Int32
     while (parent[root] !== root) root = parent[root]!;
     return root;
   };
-  for (const law of laws) for (let i = 1; i < law.terminals; i++) parent[find(law.nodes[i]!)] = find(law.nodes[0]!);
+  for (const law of laws) {
+    // What neither leaks a floor nor always joins (a pressure-opened valve) may leave its other side alone.
+    if (!law.floor && law.joins && !law.own && !law.always) continue;
+    for (let i = 1; i < law.terminals; i++) parent[find(law.nodes[i]!)] = find(law.nodes[0]!);
+  }
   const tied = new Set<number>();
   spec.nodes.forEach((_, i) => {
     if (unknownOf[i]! < 0) tied.add(find(i));

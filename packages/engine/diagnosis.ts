@@ -4,6 +4,8 @@ import type { System } from './residual.ts';
 import type { EngineDiagnosis } from './results.ts';
 import { OPEN_CONDUCTANCE, STARVED_NOISE } from './tolerances.ts';
 
+/** Flow into the fictitious outlet below which it is the floor of a part that stands alone, L/s. */
+const OVER_NOISE = 1e-4;
 /** Pressure apart below which flow over pressure says nothing about openness, MPa. */
 const LEAST_APART = 1e-6;
 
@@ -56,7 +58,7 @@ export function diagnose(sys: System, result: Reported): EngineDiagnosis[] {
     }
     for (const kind of ['OVERPRESSURE', 'STARVED'] as const) {
       const flow = kind === 'OVERPRESSURE' ? over : missing;
-      if (kind === 'OVERPRESSURE' ? flow <= 1e-6 : flow <= STARVED_NOISE) continue;
+      if (kind === 'OVERPRESSURE' ? flow <= OVER_NOISE : flow <= STARVED_NOISE) continue;
       explained.add(root);
       const pressing: number[] = [];
       net.spec.actuators.forEach((actuator, a) => {

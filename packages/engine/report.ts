@@ -66,6 +66,7 @@ export function resultOf(sys: System, contacts: readonly ActuatorContact[], atSt
     const node = net.nodeOf[i]!;
     fictitious[node] = FICTITIOUS * (onset(FLOOR_PRESSURE - p, SUPPLY_ONSET) - onset(p - net.ceilings[node]!, CEILING_ONSET));
   }
+  for (const node of net.grounded) fictitious[node]! -= sys.floor * sys.p[node]!;
   return {
     pressures: Float64Array.from(sys.p),
     flows,

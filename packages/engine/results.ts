@@ -73,7 +73,7 @@ export interface SteadyResult {
   readonly contacts: readonly ActuatorContact[];
   /** Oil flow into each gas charge, L/s; 0 when empty. */
   readonly gasFlows: Float64Array;
-  /** Flow from the fictitious supply (+) or into the fictitious outlet (-), by node, L/s. */
+  /** Flow from the fictitious supply (+) or into the fictitious outlet (-), by node, L/s; also what the floor takes from a part that stands alone. */
   readonly fictitious: Float64Array;
   readonly diagnosis: readonly EngineDiagnosis[];
   /** The unknowns as solved; start of a neighbouring solve. */

@@ -12,6 +12,7 @@ export function customLaw(spec: CustomSpec): Law {
     actuator: spec.actuator ?? -1,
     floor: false,
     joins: true,
+    always: true,
     evaluate(z, parameters, _blend, out, gradient) {
       out[OPENING] = 1;
       evaluate(z, parameters, out, gradient);

@@ -22,6 +22,8 @@ export interface Law {
   readonly floor: boolean;
   /** Whether terminals count as joined when it conducts (not through a pump). */
   readonly joins: boolean;
+  /** A law without floor that determines its terminals by itself (custom). */
+  readonly always?: boolean;
   /**
    * Inputs z: pressures of `nodes`, then the own unknown, then the position. Writes flow INTO the element at each terminal,
    * then the own residual, to `out`; the opening to out[OPENING]; derivatives row by row (outputs by inputs) to `gradient`.

@@ -19,7 +19,8 @@ export function pilotedLaw(spec: PilotedSpec): Law {
     terminals: 2,
     own: 0,
     actuator: -1,
-    floor: true,
+    // A floor across it would fill a dead end past the pressure at which the valve has closed.
+    floor: false,
     joins: true,
     evaluate(z, parameters, blend, out, gradient) {
       let pilot = -parameters[bit >= 0 && parameters[bit]! > 0.5 ? setWhenOn : set]!;
