@@ -79,7 +79,11 @@ export class Run implements MachineRun {
   #solution(result: SteadyResult): Solution {
     const gas = this.#engine.gas();
     const standing: Standing = {
-      positions: [...this.#engine.positions],
+      // Events are located a hair past a stop; the body stands on it.
+      positions: this.#assembled.bodies.map((b, i) => {
+        const x = this.#engine.positions[i] ?? 0;
+        return b.stroke === Number.POSITIVE_INFINITY ? x : Math.min(Math.max(x, 0), b.stroke);
+      }),
       oil: this.#assembled.gases.map((g, i) => {
         const at = gas[i];
         return at === undefined || at === 'empty'

@@ -21,7 +21,11 @@ export function engineWatch(assembled: Assembled, watch: Watch, start: Setting):
     }
     case 'position': {
       const index = assembled.bodies.findIndex((b) => b.id === watch.body || b.actuators.includes(watch.body));
-      return { terms: index < 0 ? [] : [{ of: 'position', index, weight: 1 }], threshold: watch.threshold, edge };
+      return {
+        terms: index < 0 ? [] : [{ of: 'position', index, weight: 1 }],
+        threshold: beyondStop(assembled.bodies[index]?.stroke, watch),
+        edge,
+      };
     }
     case 'oil': {
       const index = assembled.gases.findIndex((g) => g.component === watch.accumulator);
@@ -32,6 +36,16 @@ export function engineWatch(assembled: Assembled, watch: Watch, start: Setting):
       return { terms, threshold: toLitres(watch.threshold) - atStart, edge };
     }
   }
+}
+
+/** How far a threshold at a stop is put beyond it, m: a body comes to rest on its stop, it never passes it. */
+const BEYOND = 1e-6;
+function beyondStop(stroke: number | undefined, watch: { readonly threshold: number; readonly edge: 'rising' | 'falling' }): number {
+  const { threshold, edge } = watch;
+  if (stroke === undefined || stroke === Number.POSITIVE_INFINITY) return threshold;
+  if (edge === 'falling' && Math.abs(threshold) < BEYOND) return -BEYOND;
+  if (edge === 'rising' && Math.abs(threshold - stroke) < BEYOND) return stroke + BEYOND;
+  return threshold;
 }
 
 /**
