@@ -224,9 +224,13 @@ describe('over stdio', () => {
     expect(errors(await one.diagnostics(uri, (found) => found.version === wrong))).toBeGreaterThan(0);
     since = one.published.length;
     void one.connection.sendNotification('textDocument/didClose', { textDocument: { uri } });
-    expect(errors(await one.diagnostics(uri, (found) => found.version === undefined && one.published.indexOf(found) > since, since))).toBe(0);
+    expect(errors(await one.diagnostics(uri, (found) => found.version === undefined && one.published.indexOf(found) > since, since))).toBe(
+      0,
+    );
     since = one.published.length;
-    void one.connection.sendNotification('workspace/didChangeConfiguration', { settings: { oilway: { findings: { scope: 'open files' } } } });
+    void one.connection.sendNotification('workspace/didChangeConfiguration', {
+      settings: { oilway: { findings: { scope: 'open files' } } },
+    });
     expect((await one.diagnostics(uri, () => true, since)).diagnostics).toEqual([]);
     expect(one.published.filter((found) => found.uri.endsWith('notes.txt'))).toEqual([]);
     expect(await one.stop()).toBe(0);

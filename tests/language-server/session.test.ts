@@ -24,9 +24,11 @@ class Idle implements Timers {
     return 0;
   }
   flush(): void {
-    const all = this.#waiting;
-    this.#waiting = [];
-    for (const one of all) if (!one.dropped) one.action();
+    while (this.#waiting.length > 0) {
+      const all = this.#waiting;
+      this.#waiting = [];
+      for (const one of all) if (!one.dropped) one.action();
+    }
   }
 }
 
@@ -40,7 +42,9 @@ class Runner implements StudyRunner {
       this.#resolve = resolve;
     });
   }
+  cut = 0;
   cancel(): void {
+    if (this.#resolve) this.cut += 1;
     this.#resolve?.(undefined);
     this.#resolve = undefined;
   }
@@ -188,17 +192,15 @@ describe('session', () => {
     expect(studied).toEqual([2]);
   });
 
-  test('a study that ends between a key and the next resolution is kept as older, its findings moved', async () => {
-    const { session, timers, runner, studied } = start();
+  test('a key cuts off the running study; the next one waits for the pause', () => {
+    const { session, timers, runner } = start();
     session.update(URI, 1, BENCH);
     timers.flush();
+    expect([runner.jobs.length, runner.cut]).toEqual([1, 0]);
     session.update(URI, 2, `\n${BENCH}`);
-    await runner.answer([computed(BENCH, 'cylinder  C1')]);
-    expect(studied).toEqual([]);
-    const analysis = session.analysis(URI);
-    const moved = analysis?.findings.find((one) => one.code === 'A09');
-    expect(moved && analysis?.text.slice(moved.origin.start, moved.origin.end)).toBe('cylinder  C1');
-    expect(analysis?.studied?.older).toBe(true);
+    expect([runner.jobs.length, runner.cut]).toEqual([1, 1]);
+    timers.flush();
+    expect([runner.jobs.length, runner.cut]).toEqual([2, 1]);
   });
 
   test('computing switched off: findings of figures go, nothing runs; on again: it runs', async () => {

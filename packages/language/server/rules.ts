@@ -2,7 +2,8 @@
 import { codePages, RULES } from '@oilway/rules';
 import { LANGUAGE_CODES } from '../code-pages.ts';
 
-export const ruleList = (): readonly { readonly code: string; readonly title: string }[] => RULES.map(({ code, title }) => ({ code, title }));
+export const ruleList = (): readonly { readonly code: string; readonly title: string }[] =>
+  RULES.map(({ code, title }) => ({ code, title }));
 
 /** Markdown of a rule's page, or of a code of the language itself. */
 export function rulePage(code: string): string | undefined {

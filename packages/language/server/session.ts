@@ -5,7 +5,7 @@ import { Analysis } from '../features/analysis.ts';
 import type { Analyser, TextAnswer } from './analyser.ts';
 import { Coalescer, realTimers, type Timers } from './coalesce.ts';
 import { editBetween, moveFinding } from './moved.ts';
-import { StudyQueue } from './study-queue.ts';
+import { StudyQueue, type QueuedStudy } from './study-queue.ts';
 import type { StudyRunner } from './study-runner.ts';
 
 export interface SessionParts {
@@ -40,7 +40,12 @@ interface Document {
   /** Computed findings of the latest study, moved along with the edits since. */
   moved: readonly Finding[];
   analysis: Analysis | undefined;
+  /** Handle of the pause before the next study. */
+  pause: unknown;
 }
+
+/** While one types, a study would be begun and cut off at every key: it waits for a pause of so many ms. The first one of a document does not. */
+const PAUSE = 120;
 
 export class Session {
   readonly #parts: SessionParts;
@@ -50,13 +55,14 @@ export class Session {
   readonly #reading = new Set<string>();
   readonly #typing: Coalescer;
   readonly #studies: StudyQueue;
+  readonly #timers: Timers;
   #compute = true;
 
   constructor(parts: SessionParts) {
     this.#parts = parts;
-    const timers = parts.timers ?? realTimers;
-    this.#typing = new Coalescer((uri) => this.#analyse(uri), { timers });
-    this.#studies = new StudyQueue(parts.runner, () => timers.now());
+    this.#timers = parts.timers ?? realTimers;
+    this.#typing = new Coalescer((uri) => this.#analyse(uri), { timers: this.#timers });
+    this.#studies = new StudyQueue(parts.runner, () => this.#timers.now());
   }
 
   /** Studies on or off. Off: what was computed is forgotten. */
@@ -83,7 +89,17 @@ export class Session {
   update(uri: string, version: number | undefined, text: string): void {
     const known = this.#documents.get(uri);
     if (!known) {
-      this.#documents.set(uri, { uri, text, serial: 1, version, answer: undefined, studied: undefined, moved: [], analysis: undefined });
+      this.#documents.set(uri, {
+        uri,
+        text,
+        serial: 1,
+        version,
+        answer: undefined,
+        studied: undefined,
+        moved: [],
+        analysis: undefined,
+        pause: undefined,
+      });
     } else {
       const edit = editBetween(known.text, text);
       known.version = version;
@@ -93,7 +109,7 @@ export class Session {
         return;
       }
       known.text = text;
-      known.serial += 1;
+      this.#outdate(known);
       known.moved = known.moved.flatMap((one) => moveFinding(one, uri, edit) ?? []);
     }
     this.#files.delete(uri);
@@ -139,11 +155,19 @@ export class Session {
     this.#studies.dispose();
   }
 
+  /** What was resolved is of an older text; a study of it is cut off. */
+  #outdate(document: Document): void {
+    document.serial += 1;
+    document.analysis = undefined;
+    this.#studies.drop(document.uri);
+    if (document.pause !== undefined) this.#timers.clear(document.pause);
+    document.pause = undefined;
+  }
+
   #usersAgain(uri: string): void {
     for (const other of this.#documents.values()) {
       if (other.uri === uri || !other.answer?.uses.includes(uri)) continue;
-      other.serial += 1;
-      other.analysis = undefined;
+      this.#outdate(other);
       this.#typing.ask(other.uri);
     }
   }
@@ -190,37 +214,41 @@ export class Session {
       return;
     }
     const { uri, serial } = document;
-    const studiedText = document.text;
-    this.#studies.ask(
-      {
-        uri,
-        job: () => {
-          if (this.#documents.get(uri) !== document || document.serial !== serial) return undefined;
-          const texts: Record<string, string> = { [uri]: document.text };
-          for (const other of document.answer?.uses ?? []) {
-            const text = this.textOf(other);
-            if (text !== undefined) texts[other] = text;
-          }
-          return { circuit, texts };
-        },
-        done: (answer, ms) => {
-          if (this.#documents.get(uri) !== document) return;
-          if (answer.failed) this.#parts.log(`${uri}: ${answer.failed}`);
-          document.studied = { study: answer.study, circuit, findings: answer.findings, text: serial };
-          // It may have ended between a key and the next resolution: its findings then follow the edit.
-          const edit = editBetween(studiedText, document.text);
-          document.moved = answer.findings
-            .filter((one) => one.computed)
-            .flatMap((one) => (edit ? (moveFinding(one, uri, edit) ?? []) : one));
-          document.analysis = undefined;
-          if (document.serial !== serial) return;
-          this.#publish(document);
-          this.#parts.studied(uri, document.version ?? 0, ms);
-        },
-        failed: (reason) => this.#parts.log(`the study of ${uri} broke down: ${reason}`),
+    const begin = (): void => this.#studies.ask(this.#queued(document, circuit), urgent);
+    if (!document.studied) begin();
+    else {
+      document.pause = this.#timers.set(() => {
+        document.pause = undefined;
+        if (this.#documents.get(uri) === document && document.serial === serial) begin();
+      }, PAUSE);
+    }
+  }
+
+  #queued(document: Document, circuit: Circuit): QueuedStudy {
+    const { uri, serial } = document;
+    const current = (): boolean => this.#documents.get(uri) === document && document.serial === serial;
+    return {
+      uri,
+      job: () => {
+        if (!current()) return undefined;
+        const texts: Record<string, string> = { [uri]: document.text };
+        for (const other of document.answer?.uses ?? []) {
+          const text = this.textOf(other);
+          if (text !== undefined) texts[other] = text;
+        }
+        return { circuit, texts };
       },
-      urgent,
-    );
+      done: (answer, ms) => {
+        if (!current()) return;
+        if (answer.failed) this.#parts.log(`${uri}: ${answer.failed}`);
+        document.studied = { study: answer.study, circuit, findings: answer.findings, text: serial };
+        document.moved = answer.findings.filter((one) => one.computed);
+        document.analysis = undefined;
+        this.#publish(document);
+        this.#parts.studied(uri, document.version ?? 0, ms);
+      },
+      failed: (reason) => this.#parts.log(`the study of ${uri} broke down: ${reason}`),
+    };
   }
 
   /** Fresh study: the language's findings and all the rules'. Older: topology as it is now, computed ones as they were. */

@@ -102,13 +102,7 @@ function cellsOf(row: Row, circuit: Parameters<typeof pressureAt>[0], id: string
     const span = extent(row.points.map((one) => pressureAt(circuit, one.point, id, port)));
     return span ? show.span(span.low, span.high, 'pressure') : '—';
   };
-  const force = !worst
-    ? '—'
-    : worst.at.shortBy !== undefined && worst.at.shortBy > 0
-      ? `stalled, short by ${show.figure(worst.at.shortBy, units.force)}`
-      : worst.at.available !== undefined && row.direction !== 0
-        ? show.of(worst.at.available, worst.at.needed, units.force)
-        : `presses ${show.figure(Math.abs(worst.at.force), units.force)}`;
+  const force = worst ? forceText(worst.at, row.direction, units.force, show) : '—';
   return [
     `${row.place.label} ${units.words[row.direction + 1]}`,
     force,
@@ -119,6 +113,14 @@ function cellsOf(row: Row, circuit: Parameters<typeof pressureAt>[0], id: string
     row.place.step?.time === undefined ? '—' : show.figure(row.place.step.time, 'time'),
     limits(row),
   ];
+}
+
+/** `22.4 of 9.25 kN`, how short a stalled one is, what a standing one presses with. */
+function forceText(at: ActuatorPoint, direction: -1 | 0 | 1, force: Dimension, show: Show): string {
+  if (at.shortBy !== undefined && at.shortBy > 0) return `stalled, short by ${show.figure(at.shortBy, force)}`;
+  if (at.available === undefined || direction === 0) return `presses ${show.figure(Math.abs(at.force), force)}`;
+  if (at.needed < 0) return `${show.figure(at.available, force)}, the load drives with ${show.figure(-at.needed, force)}`;
+  return show.of(at.available, at.needed, force);
 }
 
 function working(rows: readonly Row[], circuit: Parameters<typeof pressureAt>[0], id: string, units: ActuatorUnits, show: Show): string {
@@ -134,7 +136,7 @@ function working(rows: readonly Row[], circuit: Parameters<typeof pressureAt>[0]
   const speed = speedWorking(circuit, id, worst.point);
   if (!force && !speed) return '';
   return paragraphs(
-    `**Working**, ${row.place.label} ${units.words[row.direction + 1]} at ${show.position(worst.at.position, units.position)} (${worst.point.label})`,
+    `**Working**, ${row.place.label} ${units.words[row.direction + 1]} ${units.force === 'force' ? `at ${show.position(worst.at.position, units.position)} ` : ''}(${worst.point.label})`,
     force ? workingText(force, show, units.force === 'force' ? 'Force on the load' : 'Torque on the load') : '',
     speed ? workingText(speed, show, 'Speed') : '',
   );

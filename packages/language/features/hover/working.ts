@@ -1,11 +1,14 @@
 /** The working of a figure: formula, numbers with units, result, source. Computed from one point of the study, nothing solved anew. */
 import { areasOf, read, type Circuit, type Component, type Point, type Working } from '@oilway/circuit';
-import { componentOf, flowInto, pressureAt } from './places.ts';
+import { componentOf, flowInto, pressureAt, STILL } from './places.ts';
 import type { Show } from './show.ts';
 
 /** The working as Markdown: the formula, then each input with where it comes from, then the published ground. */
 export function workingText(working: Working, show: Show, title: string): string {
-  const inputs = working.inputs.map((one) => `- ${one.symbol} = ${show.figure(one.value, one.dimension)} (${one.source})`);
+  // A ratio above one is a gear or an area ratio: told as the text writes it.
+  const value = (si: number, dimension: Working['dimension']): string =>
+    dimension === 'ratio' && si > 1 ? `${Number(si.toPrecision(3))}:1` : show.figure(si, dimension);
+  const inputs = working.inputs.map((one) => `- ${one.symbol} = ${value(one.value, one.dimension)} (${one.source})`);
   return [
     `${title}: \`${working.formula}\` = **${show.figure(working.result, working.dimension)}**`,
     ...inputs,
@@ -69,7 +72,8 @@ export function forceWorking(circuit: Circuit, id: string, point: Point): Workin
 export function speedWorking(circuit: Circuit, id: string, point: Point): Working | undefined {
   const cylinder = componentOf(circuit, id);
   const actuator = point.actuators.find((one) => one.id === id);
-  if (cylinder?.kind !== 'cylinder' || !actuator || actuator.velocity === 0 || read.has(cylinder, 'telescopic')) return undefined;
+  if (cylinder?.kind !== 'cylinder' || !actuator || Math.abs(actuator.velocity) <= STILL.velocity || read.has(cylinder, 'telescopic'))
+    return undefined;
   const areas = areasOf(cylinder);
   if (!areas) return undefined;
   // The side whose oil is metered or pumped in: cap when extending, rod when retracting; the other where that one is not joined.
