@@ -16,6 +16,9 @@ import {
 /** Pseudo storage of the pseudo-transients, L/MPa, t per 1e-3 m2, MPa s/L: of the order of a real net, its value only sets the pseudo time. */
 const PSEUDO_STORAGE = 1e-2;
 
+/** Residual below which nothing more is asked, L/s, MPa. */
+const POLISHED = 1e-11;
+
 export class Solver {
   readonly sys: System;
   iterations = 0;
@@ -77,6 +80,7 @@ export class Solver {
     const n = y.length;
     sys.evaluate();
     let length = this.length();
+    let polished = -1;
     for (let k = 0; k < most; k++) {
       this.iterations++;
       if (!Number.isFinite(length) || !sys.lu.factor(sys.j)) return false;
@@ -97,10 +101,19 @@ export class Solver {
           length = now;
           break;
         }
-        if (++halvings > HALVINGS) return false;
+        if (polished >= 0 || ++halvings > HALVINGS) {
+          // No better than it was: converged already, or not to be had.
+          y.set(y0);
+          sys.evaluate();
+          this.length();
+          return polished >= 0;
+        }
         share *= 0.5;
       }
-      if (share === 1 && !limited && (this.change < TIGHT || (this.change < LOOSE && this.residual < RESIDUAL))) return true;
+      if (share === 1 && !limited && (this.change < TIGHT || (this.change < LOOSE && this.residual < RESIDUAL))) {
+        // Steep passages leave a balance behind pressures that have converged: at most two steps more.
+        if (this.residual < POLISHED || ++polished >= 2) return true;
+      }
     }
     return false;
   }
