@@ -8,35 +8,11 @@ import type { Finding, Rule, RuleContext } from '../rule.ts';
 import { round } from '../fixes/values.ts';
 import { against, show } from '../words.ts';
 import { type Limit, limitOfNet } from './limits.ts';
+import { hasArrived, pressesOnPart } from './pressing.ts';
 import { relatedTo } from './pump-guard.ts';
 
 /** Common practice: a relief stands at least 5 % above what the work needs. */
 const MARGIN = 1.05;
-
-/** True where the actuator presses on a part that pushes back along a table: it stands where the relief lets it, on purpose. */
-function pressesOnPart(graph: Graph, a: ActuatorPoint): boolean {
-  const against = a.direction > 0 ? ['inward', 'backward'] : ['outward', 'forward'];
-  return graph.circuit.loads.some(
-    (load) =>
-      load.actuators.includes(a.id) &&
-      load.properties.some(
-        (p) => p.value.type === 'load' && against.includes(p.name) && p.value.table !== undefined && within(p.value, a.position),
-      ),
-  );
-}
-
-function within(value: LoadValue, position: number): boolean {
-  const table = value.table ?? [];
-  return table.some((knot, i) => {
-    const next = table[i + 1];
-    return (
-      next !== undefined &&
-      Math.max(Math.abs(knot.value.si), Math.abs(next.value.si)) > 0 &&
-      position >= knot.at.si &&
-      position <= next.at.si
-    );
-  });
-}
 
 /** True where the pressure stands at the setting, or within 5 % of it: else something other than the setting makes it weak. */
 function atLimit(graph: Graph, point: Point, limit: Limit): boolean {
@@ -67,7 +43,7 @@ function shortfalls(context: RuleContext, graph: Graph): Short[] {
       if (!point.solved) continue;
       for (const actuator of point.actuators) {
         const { available, needed, direction } = actuator;
-        if (direction === 0 || available === undefined || available <= 0 || needed <= 0 || actuator.atStop !== undefined) continue;
+        if (direction === 0 || available === undefined || available <= 0 || needed <= 0 || hasArrived(actuator)) continue;
         if (available >= needed * MARGIN || pressesOnPart(graph, actuator) || actuator.limitedBy.some((l) => l.words.startsWith('no path')))
           continue;
         const kind = graph.component(actuator.id)?.kind;

@@ -1,5 +1,5 @@
 /** F07: settings in the wrong order: a sequence valve that never opens, or opens before the motion it waits for is done. */
-import { type Component, read, type Study } from '@oilway/circuit';
+import { type ActuatorPoint, type Component, read, type Study } from '@oilway/circuit';
 import { graphOf, type Graph } from '../graph/graph.ts';
 import { type Passing, spreadable, waysFrom } from '../graph/reach.ts';
 import { pressureAt } from '../figures.ts';
@@ -7,6 +7,7 @@ import { tell } from '../finding.ts';
 import type { Finding, Rule, RuleContext } from '../rule.ts';
 import { show } from '../words.ts';
 import { limitOfNet, settingOf } from './limits.ts';
+import { hasArrived, pressesOnPart } from './pressing.ts';
 import { relatedTo } from './pump-guard.ts';
 
 function tooHigh(context: RuleContext, graph: Graph, valve: Component): Finding | undefined {
@@ -45,6 +46,12 @@ function before(graph: Graph, valve: Component): ReadonlySet<string> {
   );
 }
 
+/** True where an actuator has not yet done its motion: it moves, or is too weak to. */
+function underWay(graph: Graph, a: ActuatorPoint): boolean {
+  if (a.direction === 0 || hasArrived(a) || pressesOnPart(graph, a)) return false;
+  return (Math.abs(a.velocity) > 1e-3 && Math.sign(a.velocity) === a.direction) || (a.available !== undefined && a.available < a.needed);
+}
+
 function tooEarly(context: RuleContext, study: Study, graph: Graph, valve: Component): Finding | undefined {
   const first = before(graph, valve);
   const setting = settingOf(valve);
@@ -53,15 +60,13 @@ function tooEarly(context: RuleContext, study: Study, graph: Graph, valve: Compo
   for (const step of study.steps) {
     for (const point of step.points) {
       if (!point.solved || (point.openings[valve.id] ?? 0) < 0.02) continue;
-      const still = point.actuators.find(
-        (a) => first.has(a.id) && a.direction !== 0 && Math.abs(a.velocity) > 1e-3 && Math.sign(a.velocity) === a.direction,
-      );
+      const still = point.actuators.find((a) => first.has(a.id) && underWay(graph, a));
       const next = point.actuators.find((a) => !first.has(a.id) && Math.abs(a.velocity) > 1e-3);
       if (still === undefined || next === undefined) continue;
       const pressure = pressureAt(point, inlet);
       const shown = (si: number) => show(context.circuit, si, 'pressure', setting.unit);
       return tell(F07, {
-        what: `${valve.id} (set ${shown(setting.set)}) opens in ${step.id} while ${still.id} still moves${pressure === undefined ? '' : `: ${shown(pressure)} stands at ${valve.id}.P`}; ${next.id} does not wait for it.`,
+        what: `${valve.id} (set ${shown(setting.set)}) opens in ${step.id} before ${still.id} has done its motion${pressure === undefined ? '' : `: ${shown(pressure)} stands at ${valve.id}.P`}; ${next.id} does not wait for it.`,
         origin: valve.properties.find((p) => p.name === 'set')?.origin ?? valve.nameOrigin,
         place: valve.id,
         state: step.id,
@@ -85,7 +90,8 @@ export const F07: Rule = {
 The pressure a sequence valve senses is limited by the reliefs and compensators of the pumps that feed it, or by a reducing valve before it. Error where
 its setting is not below that limit (it never opens); warning where only its opening band of 10 % is cut.
 
-Once the steps are computed: error where it is open in a step while an actuator before it still moves and the next one already does.
+Once the steps are computed: error where it is open in a step and the next actuator moves before the
+one before it has done its motion.
 
 Stays clean: working pressure of the first actuator < setting < relief; a limit that is not known.`,
   detect(context) {
