@@ -28,6 +28,8 @@ interface Answer {
   readonly text: string;
   readonly cookie: string;
   readonly type: string;
+  /** Origin whose pages may read the answer. */
+  readonly allowed: string;
 }
 
 /** Like a browser that resolves the rig's name: the connection goes to 127.0.0.1, the Host header says the name. */
@@ -46,7 +48,15 @@ function ask(
           text += part;
         });
         const cookie = (answer.headers['set-cookie']?.[0] ?? '').split(';')[0] ?? '';
-        answer.on('end', () => done({ status: answer.statusCode ?? 0, text, cookie, type: answer.headers['content-type'] ?? '' }));
+        answer.on('end', () =>
+          done({
+            status: answer.statusCode ?? 0,
+            text,
+            cookie,
+            type: answer.headers['content-type'] ?? '',
+            allowed: answer.headers['access-control-allow-origin'] ?? '',
+          }),
+        );
       },
     );
     sent.on('error', fail);
@@ -85,6 +95,13 @@ describe('who is let in', () => {
     expect((await ask('/build/a.js', { host })).text).toBe('built');
     expect((await ask('/', { host, headers: { cookie } })).status).toBe(403);
     expect((await ask('/disk/read?path=/circuits/a.oilway', { host, headers: { cookie } })).status).toBe(403);
+  });
+
+  it('lets scripts of the build into its webviews, and into no other page', async () => {
+    const from = async (origin: string): Promise<string> => (await ask('/build/a.js', { headers: { origin } })).allowed;
+    expect(await from(`http://abc123.${rig.host}`)).toBe(`http://abc123.${rig.host}`);
+    expect(await from('http://example.org')).toBe('');
+    expect(await from(`http://abc.rig.localhost.example.org:${rig.port}`)).toBe('');
   });
 
   it.each(['/build/../secret.txt', '/build/%2e%2e/secret.txt', '/ext/..%2f..%2fsecret.txt', '/build/..'])(

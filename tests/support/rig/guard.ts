@@ -23,6 +23,12 @@ export function hostOf(request: IncomingMessage, port: number): Origin {
   return 'foreign';
 }
 
+/** The Origin of one of our webviews, as the header says it: it may load scripts of the build, and nobody else's page may. */
+export function webviewOrigin(request: IncomingMessage, port: number): string | undefined {
+  const origin = request.headers.origin ?? '';
+  return new RegExp(`^http://[a-z0-9-]+\\.${LABEL.replaceAll('.', '\\.')}:${port}$`).test(origin) ? origin : undefined;
+}
+
 export function sameToken(given: string | null | undefined, token: string): boolean {
   const a = Buffer.from(given ?? '');
   const b = Buffer.from(token);

@@ -6,7 +6,7 @@ import type { AddressInfo } from 'node:net';
 import { extname, join, relative, resolve } from 'node:path';
 import { fileURLToPath } from 'node:url';
 import { Disk } from './disk.ts';
-import { cookieHeader, hasCookie, hostOf, LABEL, newToken, sameToken } from './guard.ts';
+import { cookieHeader, hasCookie, hostOf, LABEL, newToken, sameToken, webviewOrigin } from './guard.ts';
 import { page } from './page.ts';
 
 export interface RigOptions {
@@ -51,7 +51,7 @@ const refuse = (response: ServerResponse, status: number, why: string): void => 
 };
 
 /** A file below `base`, or a refusal: 403 outside of it, 404 if there is none. */
-async function sendFile(response: ServerResponse, base: string, path: string, fresh: boolean): Promise<void> {
+async function sendFile(response: ServerResponse, base: string, path: string, fresh: boolean, asker: string | undefined): Promise<void> {
   const file = resolve(join(base, path));
   const inside = relative(base, file);
   if (path.includes('\0') || inside.startsWith('..') || resolve(inside) === inside) return refuse(response, 403, 'outside');
@@ -61,6 +61,7 @@ async function sendFile(response: ServerResponse, base: string, path: string, fr
     'content-type': TYPES[extname(file)] ?? 'application/octet-stream',
     'content-length': found.size,
     'cache-control': fresh ? 'no-store' : 'max-age=3600',
+    ...(asker === undefined ? {} : { 'access-control-allow-origin': asker, vary: 'origin' }),
   });
   createReadStream(file).pipe(response);
 }
@@ -86,7 +87,7 @@ export async function startRig(options: RigOptions): Promise<Rig> {
     if (from === 'loopback') return raw === '/health' ? refuse(response, 200, 'ok') : refuse(response, 421, 'open the address by its name');
     const folder = folders.find(([prefix]) => raw.startsWith(prefix));
     if (folder && request.method === 'GET' && (from === 'workbench' || folder[0] === '/build/')) {
-      return await sendFile(response, folder[1], raw.slice(folder[0].length), folder[2]);
+      return await sendFile(response, folder[1], raw.slice(folder[0].length), folder[2], webviewOrigin(request, port));
     }
     if (from === 'webview') return refuse(response, 403, 'webviews get the build only');
     if (raw === '/' && sameToken(url.searchParams.get('token'), token)) {
