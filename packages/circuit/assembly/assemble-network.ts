@@ -21,20 +21,26 @@ const LEAST_STORAGE = 1e-9;
 const CEILING = 60;
 
 /** Repeats without the components that turn out not to be computable, until none is left. */
-export function assembleNetwork(circuit: Circuit, temperature?: number): Assembled {
+export function assembleNetwork(circuit: Circuit, temperature?: number, leakage = true): Assembled {
   const out = new Map<string, string>(Object.entries(circuit.unknown));
   for (const c of circuit.components) {
     if (KINDS[c.kind].assemble === undefined && !out.has(c.id)) out.set(c.id, `${c.id}: a ${KINDS[c.kind].noun} is not computed yet`);
   }
   for (;;) {
     const refused = new Map<string, string>();
-    const built = build(circuit, out, refused, temperature);
+    const built = build(circuit, out, refused, temperature, leakage);
     if (refused.size === 0) return built;
     for (const [id, why] of refused) out.set(id, why);
   }
 }
 
-function build(circuit: Circuit, out: ReadonlyMap<string, string>, refused: Map<string, string>, temperature?: number): Assembled {
+function build(
+  circuit: Circuit,
+  out: ReadonlyMap<string, string>,
+  refused: Map<string, string>,
+  temperature: number | undefined,
+  leakage: boolean,
+): Assembled {
   const { oil, assumptions: ofOil } = oilOf(circuit, temperature);
   const assumptions: Assumption[] = [...ofOil];
   const said = new Set<string>();
@@ -113,9 +119,6 @@ function build(circuit: Circuit, out: ReadonlyMap<string, string>, refused: Map<
     said.add(key);
     assumptions.push(a);
   };
-
-  const leakage = parameter(0);
-  apply.push((setting, set) => set(leakage, setting.leakage === true ? 1 : 0));
 
   const into: Assembly = {
     circuit,
@@ -261,7 +264,6 @@ function build(circuit: Circuit, out: ReadonlyMap<string, string>, refused: Map<
       oil: { bulk: toMPa(oil.bulk), air: oil.air, exponent: AIR_EXPONENT },
     },
     parameters: Float64Array.from(parameters),
-    leakage,
     apply,
     elements,
     specs,

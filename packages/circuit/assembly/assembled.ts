@@ -67,7 +67,6 @@ export interface Assembled {
   readonly spec: NetworkSpec;
   /** Values before any setting. */
   readonly parameters: Float64Array;
-  readonly leakage: Param;
   readonly apply: readonly Apply[];
   /** By element index; lines with loss have the piece's id as component. */
   readonly elements: readonly ElementNote[];

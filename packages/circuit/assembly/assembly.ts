@@ -92,8 +92,8 @@ export interface Assembly {
   inner(component: Component, name: string, volume?: number): NodeIndex;
   /** A parameter set from outside (opening, setting, bit, drive running), engine units. `name` is unique in the component: "open P-A", "lifted", "set". */
   parameter(component: Component, name: string, value: number): Param;
-  /** 1 while leakage is counted, else 0. */
-  readonly leakage: Param;
+  /** False: leakage edges are left out (but for pumps and motors, whose leakage is part of their law). */
+  readonly leakage: boolean;
   /** Adds an element; `ports`: the component's port at each terminal in the spec's order (undefined: none). `words`: what it is, for diagnoses: "P to A". */
   add(component: Component, law: Law, ports: readonly (string | undefined)[], words?: string): number;
   /** What a setting means for this component's parameters. Called before every solve. */

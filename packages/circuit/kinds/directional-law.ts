@@ -17,13 +17,13 @@ const CAM_EDGE = 1e-3;
 const LS_PATH: FlowAt = { flow: 5 * LITRE_PER_MINUTE, drop: BAR };
 
 /** How far each position is in force, 0..1. */
-export function weightsOf(component: Component, positions: Positions, setting: Setting): Readonly<Record<Side, number>> {
-  const stand = setting.valves[component.id] ?? { position: positions.rest };
+function weightsOf(id: string, positions: Positions, proportional: boolean, setting: Setting): Readonly<Record<Side, number>> {
+  const stand = setting.valves[id] ?? { position: positions.rest };
   const weights: Record<Side, number> = { a: 0, b: 0, centre: 0 };
   const y = Math.min(1, Math.max(0, stand.opening ?? 1));
   weights[stand.position] = y;
   if (stand.position === positions.rest) weights[stand.position] = 1;
-  else if (has(component, 'proportional')) weights[positions.rest] = Math.max(0, 1 - y / FADE);
+  else if (proportional) weights[positions.rest] = Math.max(0, 1 - y / FADE);
   return weights;
 }
 
@@ -118,7 +118,7 @@ export function addDirectional(component: Component, into: Assembly): string | u
   addSignal(component, into, positions, weight);
   addSpoolLeaks(component, into);
   into.onSetting((setting, put) => {
-    const weights = weightsOf(component, positions, setting);
+    const weights = weightsOf(component.id, positions, proportional, setting);
     for (const { parameter, sides } of apply)
       put(
         parameter,

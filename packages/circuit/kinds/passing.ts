@@ -84,12 +84,8 @@ export function addLeak(
       note: 'leakage by kind: common practice, from memory; counted in drift only',
     });
   }
-  into.add(
-    component,
-    { type: 'laminar', a: a.node, b: b.node, g: laminarG(at) * into.oil.leakage, factor: into.leakage },
-    [a.port, b.port],
-    'leakage',
-  );
+  if (!into.leakage) return;
+  into.add(component, { type: 'laminar', a: a.node, b: b.node, g: laminarG(at) * into.oil.leakage }, [a.port, b.port], 'leakage');
 }
 
 /** Seats leak five drops a minute (0.25 cm3/min at 100 bar), in the drift study only. */
