@@ -96,6 +96,18 @@ describe('in brackets', () => {
   });
 });
 
+describe('parts', () => {
+  const WITH_PART = `${BENCH}part directional Four (4/3, centre closed, spring to centre, passes 50 L/min at 5 bar)\n`;
+  test('kinds after part, parts after as', () => {
+    expect(offered(`${BENCH}part |`)).toContain('check');
+    expect(offered(`${WITH_PART}directional V2 |`)).toContain('as');
+    expect(offered(`${WITH_PART}directional V2 as |`)).toContain('Four');
+  });
+  test('properties of the kind of a part', () => {
+    expect(offered(`${BENCH}part check NonReturn (|)`)).toEqual(expect.arrayContaining(['crack', 'passes']));
+  });
+});
+
 describe('lines', () => {
   test('components that still have an open port come first', () => {
     const labels = offered(`${BENCH}cylinder C2 (bore 40 mm, stroke 100 mm)\nworking V1.A to |`);

@@ -73,7 +73,8 @@ describe('figures', () => {
     const shown = (name: string, unit: string): number => Number(new RegExp(`- ${name} = (-?[\\d.]+) ${unit} `).exec(text)?.[1]);
     const result = (name: string, unit: string): number => Number(new RegExp(`${name}: .*\\*\\*(-?[\\d.]+) ${unit}`).exec(text)?.[1]);
     // 1 bar on 1 cm2 is 10 N; 1 L/min through 1 cm2 is 1000/6 mm/s (definitions of the units).
-    const force = 10 * (shown('p cap', 'bar') * shown('A cap', 'cm2') - shown('p rod', 'bar') * shown('A rod', 'cm2')) - shown('seal friction', 'N');
+    const force =
+      10 * (shown('p cap', 'bar') * shown('A cap', 'cm2') - shown('p rod', 'bar') * shown('A rod', 'cm2')) - shown('seal friction', 'N');
     expect(force / result('Force on the load', 'N')).toBeCloseTo(1, 1);
     expect(((shown('q cap', 'L/min') / shown('A cap', 'cm2')) * 1000) / 6 / result('Speed', 'mm/s')).toBeCloseTo(1, 2);
     // Bore 63 mm, rod 36 mm: pi/4 d2.

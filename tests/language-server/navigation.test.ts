@@ -1,4 +1,7 @@
 /** Definition, references, highlights and rename: every place of a name, and no other. */
+import { readdirSync, readFileSync } from 'node:fs';
+import { join } from 'node:path';
+import { fileURLToPath } from 'node:url';
 import { describe, expect, test } from 'vitest';
 import { definitionAt, highlightsAt, referencesAt } from '../../packages/language/features/navigation.ts';
 import { renameAt, renameTarget } from '../../packages/language/features/rename.ts';
@@ -77,6 +80,10 @@ describe('definition and highlights', () => {
   });
 });
 
+const samples = fileURLToPath(new URL('../../samples', import.meta.url));
+const apply = (text: string, changes: readonly { readonly start: number; readonly end: number; readonly text: string }[]): string =>
+  [...changes].sort((a, b) => b.start - a.start).reduce((now, one) => now.slice(0, one.start) + one.text + now.slice(one.end), text);
+
 describe('rename', () => {
   const renamed = (marks: string, name: string): string =>
     check(marks, (analysis, cursor) => {
@@ -124,4 +131,25 @@ describe('rename', () => {
     });
     expect(found).toEqual(['C1']);
   });
+
+  test('every name of every sample, there and back: no new error, no place forgotten', () => {
+    for (const file of readdirSync(samples).filter((name) => name.endsWith('.oilway'))) {
+      const text = readFileSync(join(samples, file), 'utf8');
+      const before = analyseText(text);
+      const errors = (one: typeof before): number => one.findings.filter((found) => found.severity === 'error').length;
+      for (const declared of before.occurrences.filter((one) => one.role === 'declaration')) {
+        const there = renameAt(before, declared.origin.start, 'Zz9');
+        if (!there.ok) throw new Error(`${file}: ${declared.id}: ${there.problem}`);
+        const changed = apply(text, there.value);
+        const after = analyseText(changed);
+        expect(errors(after), `${file}: ${declared.id}`).toBe(errors(before));
+        const name = text.slice(declared.origin.start, declared.origin.end);
+        const place = after.occurrences.find(
+          (one) => one.role === 'declaration' && changed.slice(one.origin.start, one.origin.end) === 'Zz9',
+        );
+        const back = place && renameAt(after, place.origin.start, name);
+        expect(back?.ok ? apply(changed, back.value) : back?.problem, `${file}: ${declared.id}`).toBe(text);
+      }
+    }
+  }, 240_000);
 });

@@ -88,6 +88,10 @@ export class Client {
 
   capabilities: unknown;
 
+  get pid(): number | undefined {
+    return this.#process.pid;
+  }
+
   get hintRefreshes(): number {
     return this.#hintRefreshes;
   }
