@@ -1,6 +1,6 @@
 /** Finding and reading circuit files: what cannot be read is said in one line, never passed over. */
 import { readdir, readFile, stat } from 'node:fs/promises';
-import { dirname, join, relative, resolve } from 'node:path';
+import { join, relative, resolve } from 'node:path';
 import { fileURLToPath, pathToFileURL } from 'node:url';
 
 export const ENDING = '.oilway';
@@ -110,30 +110,4 @@ export async function gather(paths: readonly string[]): Promise<Gathered> {
     else unusable.push(read.unusable);
   }
   return { files, unusable };
-}
-
-const USE = /^[ \t]*use[ \t]+"([^"\r\n]+)"/gm;
-
-/**
- * The shelves that files take by `use "..."`, found from the folder of the file that names them, and theirs in turn. A shelf that cannot be read
- * is left out: the `use` line then gets its own finding.
- */
-export async function shelvesOf(files: readonly SourceFile[]): Promise<readonly SourceFile[]> {
-  const known = new Set(files.map((file) => file.uri));
-  const shelves: SourceFile[] = [];
-  const open = [...files];
-  for (let file = open.pop(); file !== undefined; file = open.pop()) {
-    const folder = dirname(fileURLToPath(file.uri));
-    for (const [, name = ''] of file.text.matchAll(USE)) {
-      const path = resolve(folder, name);
-      const uri = uriOf(path);
-      if (known.has(uri)) continue;
-      known.add(uri);
-      const read = await readText(path);
-      if (!read.ok) continue;
-      shelves.push(read.file);
-      open.push(read.file);
-    }
-  }
-  return shelves;
 }

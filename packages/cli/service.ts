@@ -3,7 +3,7 @@ import type { Circuit, Study } from '@oilway/circuit';
 import { analyse } from '@oilway/language';
 import type { Finding } from '@oilway/rules';
 import { engines } from './engines.ts';
-import { type SourceFile, shelvesOf } from './files.ts';
+import type { SourceFile } from './files.ts';
 import { Texts } from './text/finding.ts';
 
 export interface Opened {
@@ -16,18 +16,16 @@ export interface Opened {
 
 export interface Session {
   readonly opened: readonly Opened[];
-  /** Texts of all documents, shelves included. */
   readonly texts: Texts;
   /** Errors of the program itself, a line each: what they were to find is missing. */
   readonly failures: readonly string[];
 }
 
-/** Analyses files together with the shelves they use; results in the order of the files. */
-export async function open(files: readonly SourceFile[]): Promise<Session> {
-  const all = [...files, ...(await shelvesOf(files))];
+/** Analyses files; results in their order. */
+export function open(files: readonly SourceFile[]): Session {
   const failures: string[] = [];
   const { documents } = analyse(
-    all.map(({ uri, text }) => ({ uri, text })),
+    files.map(({ uri, text }) => ({ uri, text })),
     engines(failures),
   );
   const byUri = new Map(documents.map((document) => [document.uri, document]));
@@ -41,6 +39,6 @@ export async function open(files: readonly SourceFile[]): Promise<Session> {
     if (failed !== undefined) failures.push(`${file.path}: ${failed}`);
     return { file, findings, ...(circuit.name === undefined ? {} : { circuit }), ...(study === undefined ? {} : { study }) };
   });
-  const texts = new Map(all.map((file) => [file.uri, file.text]));
+  const texts = new Map(files.map((file) => [file.uri, file.text]));
   return { opened, texts: new Texts((uri) => texts.get(uri)), failures };
 }

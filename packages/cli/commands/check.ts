@@ -86,7 +86,7 @@ export async function check(options: CheckOptions, output: Output, paint: Paint)
   const gathered = await gather(options.paths);
   for (const one of gathered.unusable) output.err(`oilway: ${one.path} ${one.why}`);
   if (gathered.files.length === 0 && options.format === 'text') return 2;
-  const session = await open(gathered.files);
+  const session = open(gathered.files);
   if (options.format === 'json') output.out(JSON.stringify(dataOf(session, gathered), null, 2));
   else for (const line of textOf(session, options, paint)) output.out(line);
   for (const failure of session.failures) output.err(`oilway: internal error, please report it: ${failure}`);

@@ -22,7 +22,7 @@ export async function run(options: RunOptions, output: Output, paint: Paint): Pr
   const unusable = gathered.unusable[0];
   if (unusable !== undefined) return refuse(`${unusable.path} ${unusable.why}`);
   if (gathered.files.length > 1) return refuse(`${options.path} holds ${gathered.files.length} circuits: name one file to run`);
-  const { opened, failures } = await open(gathered.files);
+  const { opened, failures } = open(gathered.files);
   for (const failure of failures) output.err(`oilway: internal error, please report it: ${failure}`);
   if (failures.length > 0) return 2;
   const one = opened[0];
