@@ -130,7 +130,7 @@ function determined(sys: System, result: Reported, find: (i: number) => number, 
     net.spec.actuators.forEach((actuator, a) => {
       if (result.contacts[a] !== 'free') return;
       const open = new Set<number>();
-      for (const chamber of actuator.chambers) if (!fixed.has(find(chamber.node))) open.add(find(chamber.node));
+      for (const chamber of actuator.chambers) if (chamber.area !== 0 && !fixed.has(find(chamber.node))) open.add(find(chamber.node));
       if (open.size !== 1) return;
       for (const root of open) fixed.add(root);
       changed = true;

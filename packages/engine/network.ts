@@ -283,6 +283,8 @@ export interface ActuatorSpec {
   readonly spring?: ForceTable;
   /** Friction that depends on pressure: coefficient times |pA - pB| (motor mechanical loss), kN per MPa. */
   readonly pressureFriction?: number;
+  /** Spring-applied brake: friction torque (1 - p/opens), nothing from `opens` on, p at a chamber of area 0 that only senses. kN, MPa. */
+  readonly brake?: { readonly chamber: number; readonly torque: number; readonly opens: number };
   /** Speed within which friction rises to its full value, m/s or rad/s; default 1e-5. */
   readonly creep?: number;
   /** A force of its own, kN, + outward, as a function of position and speed: writes [force, d/dx, d/dv]. For tests and kinds to come. */

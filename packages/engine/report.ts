@@ -1,8 +1,8 @@
 /** From a solved system to the result a caller reads. */
 import type { System } from './residual.ts';
 import type { ActuatorContact, SteadyResult } from './results.ts';
-import { onset, resisting, sliding } from './smooth.ts';
-import { CEILING_ONSET, DELTA, FICTITIOUS, FLOOR_PRESSURE, SUPPLY_ONSET } from './tolerances.ts';
+import { onset, ramp, resisting, sliding } from './smooth.ts';
+import { BAND_EDGE, CEILING_ONSET, DELTA, FICTITIOUS, FLOOR_PRESSURE, SUPPLY_ONSET } from './tolerances.ts';
 
 export type Reported = Omit<SteadyResult, 'converged' | 'how' | 'iterations' | 'residual' | 'diagnosis'>;
 
@@ -32,6 +32,11 @@ export function resultOf(sys: System, contacts: readonly ActuatorContact[], atSt
     if (perPressure > 0 && net.chamberStart[a + 1]! - first >= 2) {
       const d = sys.p[net.chamberNodes[first]!]! - sys.p[net.chamberNodes[first + 1]!]!;
       coulomb += perPressure * (Math.sqrt(d * d + DELTA * DELTA) - DELTA);
+    }
+    const { brake } = net.spec.actuators[a]!;
+    if (brake) {
+      const c = first + brake.chamber;
+      coulomb += brake.torque * (1 - ramp((sys.p[net.chamberNodes[c]!]! - net.chamberHeads[c]!) / brake.opens, BAND_EDGE));
     }
     let load = sys.net0[a]! - force;
     if (v > 0) load -= (sys.out0[a]! + sys.out1[a]! * from) * resisting(v, v0);

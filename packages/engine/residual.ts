@@ -2,10 +2,20 @@
 import type { Network } from './compile.ts';
 import { MAX_INPUTS, MAX_OUTPUTS, OPENING } from './laws/law.ts';
 import type { LoadState } from './network.ts';
-import { onset, onsetSlope, resisting, resistingSlope, sliding, slidingSlope } from './smooth.ts';
+import { onset, onsetSlope, ramp, rampSlope, resisting, resistingSlope, sliding, slidingSlope } from './smooth.ts';
 import { SparseLu } from './sparse/lu.ts';
 import { cellOf, insideOf, lineAt, sortedKnots, sumAt } from './tables.ts';
-import { CEILING_ONSET, DELTA, FICTITIOUS, FLOOR_PRESSURE, FLOOR_STEADY, LEAST_DAMPING, RUNAWAY, SUPPLY_ONSET } from './tolerances.ts';
+import {
+  BAND_EDGE,
+  CEILING_ONSET,
+  DELTA,
+  FICTITIOUS,
+  FLOOR_PRESSURE,
+  FLOOR_STEADY,
+  LEAST_DAMPING,
+  RUNAWAY,
+  SUPPLY_ONSET,
+} from './tolerances.ts';
 
 /** Stiffness of a soft stop against v, in MPa s/m of the scaled balance: only where rigid stops contradict each other. */
 const SOFT_STOP = 1e6;
@@ -259,6 +269,14 @@ export class System {
       j[net.chamberForceSlot[first]!]! -= by;
       j[net.chamberForceSlot[first + 1]!]! += by;
     }
+    const { brake } = spec;
+    if (brake) {
+      const c = first + brake.chamber;
+      const u = (p[net.chamberNodes[c]!]! - net.chamberHeads[c]!) / brake.opens;
+      const edge = Math.min(0.5, BAND_EDGE * this.blend);
+      coulomb += brake.torque * (1 - ramp(u, edge));
+      j[net.chamberForceSlot[c]!]! += (brake.torque / brake.opens) * rampSlope(u, edge) * sliding(v, v0) * scale;
+    }
     if (coulomb > 0) {
       force -= coulomb * sliding(v, v0);
       slope -= coulomb * slidingSlope(v, v0);
@@ -301,7 +319,10 @@ export class System {
       const v0 = 1.5 * net.creep[a]! * this.blend;
       let stop = to;
       const coulomb =
-        this.friction[a]! > 0 || (net.spec.actuators[a]!.pressureFriction ?? 0) > 0 || net.spec.actuators[a]!.force !== undefined;
+        this.friction[a]! > 0 ||
+        (net.spec.actuators[a]!.pressureFriction ?? 0) > 0 ||
+        net.spec.actuators[a]!.brake !== undefined ||
+        net.spec.actuators[a]!.force !== undefined;
       if (to > v) {
         if (v < -v0 * 1.01 && stop > -v0 && this.in0[a]! > 0) stop = -v0;
         else if (v < -1e-12 && stop > 0 && coulomb) stop = 0;

@@ -98,7 +98,7 @@ export interface WatchTerm {
 export interface TransientOptions {
   /** Inertia and tight pressures; default quasi-static. */
   readonly dynamics?: boolean;
-  /** Relative error of positions and oil volumes in a step; default 1e-4, with inertia 3e-5. */
+  /** Relative error of positions and oil volumes in a step; default 1e-4. */
   readonly tolerance?: number;
   readonly maxStep?: number;
   /** Most steps in one `advance`; default 200,000. */

@@ -79,12 +79,14 @@ export class Transient {
         : { spec, pressure: spec.precharge, volume: spec.volume, exponent };
     });
     this.storage = new Storage(network, charges);
-    const relative = options.tolerance ?? (options.dynamics ? 3e-5 : 1e-4);
+    const relative = options.tolerance ?? 1e-4;
     const tolerance: StepTolerance = {
       position: 0.1 * relative,
       positionRelative: relative,
       velocity: relative,
-      ...(options.dynamics ? { pressure: DYNAMIC.pressure * relative, pressureRelative: DYNAMIC.pressureRelative * relative } : QUASI_STATIC),
+      ...(options.dynamics
+        ? { pressure: DYNAMIC.pressure * relative, pressureRelative: DYNAMIC.pressureRelative * relative }
+        : QUASI_STATIC),
     };
     this.stepper = new Stepper(this.sys, this.storage, this.ramps, options.dynamics ?? false, tolerance);
     this.events = new Events(this.sys, this.stepper, this.contacts);

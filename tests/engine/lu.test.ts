@@ -28,7 +28,12 @@ function dense(a: number[][], b: number[]): number[] | undefined {
 }
 
 /** Random sparse matrix; `diagonal` false leaves some diagonals zero, as force balances without friction do. */
-function matrix(seed: number, n: number, density: number, diagonal: boolean): { start: Int32Array; rows: Int32Array; fill: (next: () => number) => Float64Array } {
+function matrix(
+  seed: number,
+  n: number,
+  density: number,
+  diagonal: boolean,
+): { start: Int32Array; rows: Int32Array; fill: (next: () => number) => Float64Array } {
   const next = random(seed);
   const start = new Int32Array(n + 1);
   const rows: number[] = [];

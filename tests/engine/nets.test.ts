@@ -16,10 +16,15 @@ it(`${count} networks in steady state`, { timeout: 600_000 }, () => {
     const net = compile(made.spec);
     net.parameters.set(made.parameters);
     const result = solveSteady(net, { positions: made.positions, loads: made.loads, gas: made.gas, locked: made.locked });
-    expect(finite(result.pressures) && finite(result.velocities) && finite(result.flows) && finite(result.stopForces), `net ${seed}`).toBe(true);
+    expect(finite(result.pressures) && finite(result.velocities) && finite(result.flows) && finite(result.stopForces), `net ${seed}`).toBe(
+      true,
+    );
     if (result.converged) continue;
     refused++;
-    expect(result.diagnosis.some((d) => d.kind === 'NO EQUILIBRIUM' && d.why.length > 20), `net ${seed}`).toBe(true);
+    expect(
+      result.diagnosis.some((d) => d.kind === 'NO EQUILIBRIUM' && d.why.length > 20),
+      `net ${seed}`,
+    ).toBe(true);
   }
   expect(refused).toBeLessThanOrEqual(Math.ceil(count / 500));
 });
@@ -33,10 +38,13 @@ it(`${count / 2} networks over five seconds with valves and pumps switched`, { t
     net.parameters.set(made.parameters);
     const request = { positions: made.positions, loads: made.loads, gas: made.gas, locked: made.locked };
     const run = new Transient(net, request, solveSteady(net, request), { dynamics: seed % 2 === 0, maxSteps: 5000 });
-    const switched = made.spec.elements.flatMap((e) => (e.type === 'path' && e.opening !== undefined ? [e.opening] : e.type === 'pump' ? [e.running] : []));
+    const switched = made.spec.elements.flatMap((e) =>
+      e.type === 'path' && e.opening !== undefined ? [e.opening] : e.type === 'pump' ? [e.running] : [],
+    );
     for (let k = 1; k <= 5; k++) {
       const parameter = switched[Math.floor(next() * switched.length)];
-      if (parameter !== undefined) run.ramp(parameter, run.parameters[parameter]!, next() < 0.5 ? 1 : 0, run.time, run.time + (next() < 0.3 ? 0 : 0.05));
+      if (parameter !== undefined)
+        run.ramp(parameter, run.parameters[parameter]!, next() < 0.5 ? 1 : 0, run.time, run.time + (next() < 0.3 ? 0 : 0.05));
       const report = run.advance(k);
       if (!report.failed) continue;
       expect(report.failed.length).toBeGreaterThan(20);

@@ -1,5 +1,13 @@
 /** What must hold for every network: balance, monotony, mirror, order, dead ends. On random networks of nets.ts. */
-import { compile, type ElementSpec, type Network, type NetworkSpec, solveSteady, type SteadyRequest, type SteadyResult } from '@oilway/engine';
+import {
+  compile,
+  type ElementSpec,
+  type Network,
+  type NetworkSpec,
+  solveSteady,
+  type SteadyRequest,
+  type SteadyResult,
+} from '@oilway/engine';
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { type Net, nastyNet } from './nets.ts';
@@ -104,7 +112,18 @@ describe('a cylinder between two relieved lines', () => {
     return {
       nodes: [tank, node, node, node],
       elements,
-      actuators: [{ tag: 5, chambers: [{ node: 2, area: 3 }, { node: 3, area: -3 }], low: -0.2, high: 0.2, mass: 1 }],
+      actuators: [
+        {
+          tag: 5,
+          chambers: [
+            { node: 2, area: 3 },
+            { node: 3, area: -3 },
+          ],
+          low: -0.2,
+          high: 0.2,
+          mass: 1,
+        },
+      ],
       gas: [],
       parameters: 3,
     };
@@ -112,7 +131,10 @@ describe('a cylinder between two relieved lines', () => {
   const run = (mirrored: boolean, force: number, set: number, opening = 1): SteadyResult => {
     const net = compile(circuit(mirrored));
     net.parameters.set([1, set, opening]);
-    return solveSteady(net, { positions: [0], loads: [{ fixed: [{ at: [0], force: [force] }], resistOut: [], resistIn: [], friction: 1.5 }] });
+    return solveSteady(net, {
+      positions: [0],
+      loads: [{ fixed: [{ at: [0], force: [force] }], resistOut: [], resistIn: [], friction: 1.5 }],
+    });
   };
   it('answers a mirrored network with the mirrored state', () => {
     fc.assert(

@@ -1,5 +1,14 @@
 /** Steady states through the engine's own laws, against figures worked by hand or published; contacts, charges and diagnoses. */
-import { compile, type ElementSpec, type LoadState, type NetworkSpec, problemsOf, solveSteady, type SteadyRequest, type SteadyResult } from '@oilway/engine';
+import {
+  compile,
+  type ElementSpec,
+  type LoadState,
+  type NetworkSpec,
+  problemsOf,
+  solveSteady,
+  type SteadyRequest,
+  type SteadyResult,
+} from '@oilway/engine';
 import { describe, expect, it } from 'vitest';
 import { compression, CompressionTable } from '../../packages/engine/charge.ts';
 import { churchill } from '../../packages/engine/laws/line.ts';
@@ -10,7 +19,14 @@ const k = (flow: number, drop: number): number => flow / 60 / root(drop / 10, 0.
 const LPM = 60;
 
 function solve(spec: Partial<NetworkSpec> & { values?: readonly number[] }, request: Partial<SteadyRequest> = {}): SteadyResult {
-  const net = compile({ nodes: [{ storage: 1, fixed: 0 }], elements: [], actuators: [], gas: [], ...spec, parameters: spec.values?.length ?? 0 });
+  const net = compile({
+    nodes: [{ storage: 1, fixed: 0 }],
+    elements: [],
+    actuators: [],
+    gas: [],
+    ...spec,
+    parameters: spec.values?.length ?? 0,
+  });
   net.parameters.set(spec.values ?? []);
   const result = solveSteady(net, { positions: net.spec.actuators.map(() => 0.1), ...request });
   expect(result.converged).toBe(true);
@@ -18,13 +34,24 @@ function solve(spec: Partial<NetworkSpec> & { values?: readonly number[] }, requ
 }
 const tank = { storage: 1, fixed: 0 };
 const node = { storage: 1e-3 };
-const pump = (p: number, litresPerMinute: number, running: number): ElementSpec => ({ type: 'pump', tag: 1, s: 0, p, qth: litresPerMinute / 60, leak: 0, running });
+const pump = (p: number, litresPerMinute: number, running: number): ElementSpec => ({
+  type: 'pump',
+  tag: 1,
+  s: 0,
+  p,
+  qth: litresPerMinute / 60,
+  leak: 0,
+  running,
+});
 
 describe('valves at flow (oil as declared, tank at 0 bar)', () => {
   it('relief: set 160 bar, override 10 %, passes 100 L/min at 5 bar; 60 L/min, T at 2 bar: 171.6 bar', () => {
     const result = solve({
       nodes: [tank, node, { storage: 1, fixed: 0.2 }],
-      elements: [pump(1, 60, 0), { type: 'relief', tag: 2, p: 1, t: 2, ref: 2, set: 1, vented: 0.4, override: 0.1, qN: 100 / 60, k: k(100, 5) }],
+      elements: [
+        pump(1, 60, 0),
+        { type: 'relief', tag: 2, p: 1, t: 2, ref: 2, set: 1, vented: 0.4, override: 0.1, qN: 100 / 60, k: k(100, 5) },
+      ],
       values: [1, 16],
     });
     expect(result.pressures[1]! * 10).toBeCloseTo(171.6, 3);
@@ -32,20 +59,30 @@ describe('valves at flow (oil as declared, tank at 0 bar)', () => {
   it('vented relief: set 160, override 8 %, vented 4, passes 90 L/min at 6 bar, X at 0, 69.6 L/min: 4 bar and its share of the least band', () => {
     const result = solve({
       nodes: [tank, node],
-      elements: [pump(1, 69.6, 0), { type: 'relief', tag: 2, p: 1, t: 0, ref: 0, x: 0, set: 1, vented: 0.4, override: 0.08, qN: 1.5, k: k(90, 6) }],
+      elements: [
+        pump(1, 69.6, 0),
+        { type: 'relief', tag: 2, p: 1, t: 0, ref: 0, x: 0, set: 1, vented: 0.4, override: 0.08, qN: 1.5, k: k(90, 6) },
+      ],
       values: [1, 16],
     });
     // 8 % of 4 bar is less than the least band of 0.5 bar; the open body asks 6 (69.6/90)^2 = 3.59 bar only.
     expect(result.pressures[1]! * 10).toBeCloseTo(4 + (0.5 * 69.6) / 90, 2);
   });
   it('check: crack 0.5 bar, passes 80 L/min at 3 bar in total; 57.3 L/min: 1.785 bar', () => {
-    const result = solve({ nodes: [tank, node], elements: [pump(1, 57.3, 0), { type: 'check', tag: 2, a: 1, b: 0, k: k(80, 2.5), crack: 0.05 }], values: [1] });
+    const result = solve({
+      nodes: [tank, node],
+      elements: [pump(1, 57.3, 0), { type: 'check', tag: 2, a: 1, b: 0, k: k(80, 2.5), crack: 0.05 }],
+      values: [1],
+    });
     expect(result.pressures[1]! * 10).toBeCloseTo(1.785, 3);
   });
   it('sequence: set 80, band 8, passes 20 L/min at 4 bar, A at 66 bar, 11.2 L/min: P 82.22 bar, opening 0.278', () => {
     const result = solve({
       nodes: [tank, node, { storage: 1, fixed: 6.6 }],
-      elements: [pump(1, 11.2, 0), { type: 'piloted', tag: 2, a: 1, b: 2, k: k(20, 4), pilots: [{ node: 1, weight: 1 }], set: 1, band: 2, oneWay: true }],
+      elements: [
+        pump(1, 11.2, 0),
+        { type: 'piloted', tag: 2, a: 1, b: 2, k: k(20, 4), pilots: [{ node: 1, weight: 1 }], set: 1, band: 2, oneWay: true },
+      ],
       values: [1, 8, 0.8],
     });
     expect(result.pressures[1]! * 10).toBeCloseTo(82.22, 2);
@@ -55,7 +92,20 @@ describe('valves at flow (oil as declared, tank at 0 bar)', () => {
     const result = solve({
       nodes: [tank, { storage: 1, fixed: 16 }, node],
       elements: [
-        { type: 'piloted', tag: 1, a: 1, b: 2, k: k(80, 6), pilots: [{ node: 2, weight: -1 }, { node: 0, weight: 1 }], set: 0, band: 1, oneWay: true },
+        {
+          type: 'piloted',
+          tag: 1,
+          a: 1,
+          b: 2,
+          k: k(80, 6),
+          pilots: [
+            { node: 2, weight: -1 },
+            { node: 0, weight: 1 },
+          ],
+          set: 0,
+          band: 1,
+          oneWay: true,
+        },
         { type: 'regulator', tag: 2, a: 2, b: 0, set: 2, needs: 0.6 },
       ],
       values: [-7, 0.35, 20 / 60],
@@ -65,7 +115,23 @@ describe('valves at flow (oil as declared, tank at 0 bar)', () => {
   it('reducing into a dead end: stands at its setting, does not creep', () => {
     const result = solve({
       nodes: [tank, { storage: 1, fixed: 16 }, node],
-      elements: [{ type: 'piloted', tag: 1, a: 1, b: 2, k: 1, pilots: [{ node: 2, weight: -1 }, { node: 0, weight: 1 }], set: 0, band: 1, oneWay: true }, { type: 'path', tag: 2, a: 2, b: 0, k: 1, opening: 2 }],
+      elements: [
+        {
+          type: 'piloted',
+          tag: 1,
+          a: 1,
+          b: 2,
+          k: 1,
+          pilots: [
+            { node: 2, weight: -1 },
+            { node: 0, weight: 1 },
+          ],
+          set: 0,
+          band: 1,
+          oneWay: true,
+        },
+        { type: 'path', tag: 2, a: 2, b: 0, k: 1, opening: 2 },
+      ],
       values: [-5, 0.25, 0],
     });
     expect(result.pressures[2]!).toBeGreaterThan(4.98);
@@ -73,7 +139,11 @@ describe('valves at flow (oil as declared, tank at 0 bar)', () => {
   });
   it('compensated control: 9 L/min from 6 bar on, 5.196 L/min at 2 bar', () => {
     const at = (bar: number): number =>
-      solve({ nodes: [tank, { storage: 1, fixed: bar / 10 }], elements: [{ type: 'regulator', tag: 1, a: 1, b: 0, set: 0, needs: 0.6 }], values: [9 / 60] }).flows[0]! * LPM;
+      solve({
+        nodes: [tank, { storage: 1, fixed: bar / 10 }],
+        elements: [{ type: 'regulator', tag: 1, a: 1, b: 0, set: 0, needs: 0.6 }],
+        values: [9 / 60],
+      }).flows[0]! * LPM;
     expect(at(6)).toBeCloseTo(9, 3);
     expect(at(60)).toBeCloseTo(9, 2);
     // 9 sqrt(2/6); the laminar core takes a thousandth at so small a drop.
@@ -114,7 +184,10 @@ describe('valves at flow (oil as declared, tank at 0 bar)', () => {
   it('hose: bore 12 mm, 1.5 m, 23 L/min, 32 mm2/s, 870 kg/m3: 0.315 bar (Hagen-Poiseuille)', () => {
     const result = solve({
       nodes: [tank, node],
-      elements: [pump(1, 23, 0), { type: 'line', tag: 2, a: 1, b: 0, bore: 0.012, length: 1.5, roughness: 2e-5, minor: 0, nu: 32e-6, rho: 870 }],
+      elements: [
+        pump(1, 23, 0),
+        { type: 'line', tag: 2, a: 1, b: 0, bore: 0.012, length: 1.5, roughness: 2e-5, minor: 0, nu: 32e-6, rho: 870 },
+      ],
       values: [1],
     });
     expect(result.pressures[1]! * 10).toBeCloseTo(0.315, 3);
@@ -170,7 +243,16 @@ describe('formulas', () => {
 });
 
 describe('bodies', () => {
-  const cylinder = { tag: 7, chambers: [{ node: 1, area: 3.1172 }, { node: 2, area: -2.0994 }], low: 0, high: 0.4, mass: 0.3 };
+  const cylinder = {
+    tag: 7,
+    chambers: [
+      { node: 1, area: 3.1172 },
+      { node: 2, area: -2.0994 },
+    ],
+    low: 0,
+    high: 0.4,
+    mass: 0.3,
+  };
   const load = (over: Partial<LoadState>): LoadState => ({ fixed: [], resistOut: [], resistIn: [], friction: 0, ...over });
   const fed = (values: readonly number[], request: Partial<SteadyRequest>): SteadyResult =>
     solve(
@@ -250,7 +332,11 @@ describe('bodies', () => {
 
 describe('diagnosis', () => {
   it('OVERPRESSURE: a pump into closed valves names flow, source and what is closed', () => {
-    const result = solve({ nodes: [tank, node], elements: [pump(1, 30, 0), { type: 'path', tag: 42, a: 1, b: 0, k: 1, opening: 1 }], values: [1, 0] });
+    const result = solve({
+      nodes: [tank, node],
+      elements: [pump(1, 30, 0), { type: 'path', tag: 42, a: 1, b: 0, k: 1, opening: 1 }],
+      values: [1, 0],
+    });
     const found = result.diagnosis.find((d) => d.kind === 'OVERPRESSURE');
     expect(found).toMatchObject({ nodes: [1], sources: [1], closed: [42] });
     expect(found!.kind === 'OVERPRESSURE' && found!.flow * LPM).toBeCloseTo(30, 1);
@@ -261,8 +347,22 @@ describe('diagnosis', () => {
     const result = solve(
       {
         nodes: [tank, node, node],
-        elements: [{ type: 'path', tag: 5, a: 2, b: 0, k: 1 }, { type: 'check', tag: 6, a: 1, b: 0, k: 1, crack: 0 }],
-        actuators: [{ tag: 7, chambers: [{ node: 1, area: 3.1 }, { node: 2, area: -2.1 }], low: 0, high: 0.4, mass: 0.3 }],
+        elements: [
+          { type: 'path', tag: 5, a: 2, b: 0, k: 1 },
+          { type: 'check', tag: 6, a: 1, b: 0, k: 1, crack: 0 },
+        ],
+        actuators: [
+          {
+            tag: 7,
+            chambers: [
+              { node: 1, area: 3.1 },
+              { node: 2, area: -2.1 },
+            ],
+            low: 0,
+            high: 0.4,
+            mass: 0.3,
+          },
+        ],
       },
       { loads: [{ fixed: [{ at: [0], force: [10] }], resistOut: [], resistIn: [], friction: 0.1 }] },
     );
