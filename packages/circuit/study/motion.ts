@@ -16,6 +16,9 @@ const RELAXING_WAY = 5e-3;
 /** Flow that counts as a way of the oil, m3/s (0.002 L/min). */
 const SEEN_FLOW = 0.002 / 60000;
 
+/** Ports of an actuator's chambers. */
+const CHAMBERS = ['.cap', '.rod', '.A', '.B'];
+
 export function moves(body: Body, solution: Solution): boolean {
   const v = solution.velocities[body.id] ?? 0;
   if (Math.abs(v) <= (body.type === 'rotating' ? STILL_ROTATING : STILL_LINEAR)) return false;
@@ -26,9 +29,7 @@ export function moves(body: Body, solution: Solution): boolean {
 function oilMoved(body: Body, solution: Solution): number {
   let most = 0;
   for (const actuator of body.actuators) {
-    for (const [key, flow] of Object.entries(solution.flows)) {
-      if (key.startsWith(`${actuator}.`)) most = Math.max(most, Math.abs(flow));
-    }
+    for (const port of CHAMBERS) most = Math.max(most, Math.abs(solution.flows[actuator + port] ?? 0));
   }
   return most;
 }

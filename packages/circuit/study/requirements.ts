@@ -85,7 +85,7 @@ function told(facts: Facts, requirement: Bounded, verdict: Verdict, notes: reado
   const dimension = dimensionOf(facts, requirement);
   const subject = subjectWords(requirement);
   const at = verdict.worst?.at ?? '';
-  const figures = verdict.amount === undefined ? '' : figureWords(facts, requirement, verdict.amount, verdict.against ?? verdict.amount, dimension);
+  const figures = verdict.amount === undefined ? '' : figureWords(facts, requirement, verdict, verdict.amount, dimension);
   let words: string;
   if (verdict.verdict === 'undecidable') words = `cannot be decided: ${verdict.why ?? 'no figure'}`;
   else {
@@ -111,13 +111,15 @@ export function subjectWords(requirement: Bounded): string {
 }
 
 /** "183 of at most 180 bar". */
-function figureWords(facts: Facts, requirement: Bounded, amount: number, against: number, dimension: Dimension): string {
+function figureWords(facts: Facts, requirement: Bounded, verdict: Verdict, amount: number, dimension: Dimension): string {
+  const against = verdict.against ?? amount;
   const { circuit } = facts.plant;
   const { bound } = requirement;
   const { value, bound: limit } = sayAgainst(circuit, amount, against, dimension);
   if (bound.is === 'reaches') {
     const within = bound.within === undefined ? '' : ` within ${say(circuit, bound.within, 'time')}`;
-    return `reaches ${unitOnce(value, limit)}${within}`;
+    if (verdict.verdict === 'missed') return `${verdict.rising === false ? 'comes down only to' : 'reaches only'} ${unitOnce(value, limit)}${within}`;
+    return verdict.rising === false ? `comes down to ${limit}${within}` : `reaches ${limit}${within} (highest ${value})`;
   }
   const least = bound.is === 'least' || (bound.is === 'between' && against === bound.low.si);
   return unitOnce(value, `${least ? 'at least' : 'at most'} ${limit}`);

@@ -83,6 +83,7 @@ export class Runner {
     let completed = false;
     let looked: Solution | undefined;
     this.#gasFrom = began;
+    this.switches.chattering.clear();
     for (;;) {
       const time = this.#run.time - began;
       const now = this.#run.now();

@@ -1,9 +1,10 @@
 /** `require C1 still ..`: no motion in any variant of a state or any steady point of a step; with `for`, nor in the run. */
+import type { Body } from '../assembly/machine.ts';
 import type { Requirement } from '../model/circuit.ts';
 import { relaxesWithin } from './loads.ts';
 import { moves } from './motion.ts';
 import { type Facts, placesOf, selectedPoints, stepSamples } from './places.ts';
-import { SETTLING, type StateRunner } from './state-runs.ts';
+import { SETTLING, type StateRun, type StateRunner } from './state-runs.ts';
 import type { RequirementResult } from './study.ts';
 import { list, say } from './words.ts';
 
@@ -62,12 +63,7 @@ export function judgeStill(facts: Facts, requirement: Still, runner: StateRunner
       if (runs.length < all) notes.push(`${runs.length} of ${all} variants of ${place.id} run in time`);
       for (const run of runs) {
         if (run.failed !== undefined) problems.push(`${run.label}: ${run.failed}`);
-        const moving = run.samples.find((one) => {
-          if (one.time < SETTLING || !moves(body, one.solution)) return false;
-          const velocity = one.solution.velocities[body.id] ?? 0;
-          const load = run.setting.loads[body.id];
-          return !load || relaxesWithin(load, one.solution.positions[body.id] ?? 0, velocity > 0 ? 1 : -1, 5e-3) === undefined;
-        });
+        const moving = unsettled(body, run);
         if (moving) return missed(`${run.label}, ${say(circuit, moving.time, 'time')}`, moving.solution.velocities[body.id] ?? 0, '');
       }
     }
@@ -76,4 +72,18 @@ export function judgeStill(facts: Facts, requirement: Still, runner: StateRunner
   const extra = [...new Set(notes)].slice(0, 2);
   const where = list(requirement.where.places ?? ['every step']);
   return { ...base, verdict: 'met', at: '', words: `${requirement.of} stands still in ${where}${extra.length > 0 ? ` (${list(extra)})` : ''}` };
+}
+
+/** First motion of a run that is neither a part springing back nor, in the second after it, compressed oil settling. */
+function unsettled(body: Body, run: StateRun): StateRun['samples'][number] | undefined {
+  let settling = SETTLING;
+  for (const one of run.samples) {
+    if (!moves(body, one.solution)) continue;
+    const velocity = one.solution.velocities[body.id] ?? 0;
+    const load = run.setting.loads[body.id];
+    const relaxing = load !== undefined && relaxesWithin(load, one.solution.positions[body.id] ?? 0, velocity > 0 ? 1 : -1, 5e-3) !== undefined;
+    if (relaxing) settling = Math.max(settling, one.time + SETTLING);
+    else if (one.time > settling) return one;
+  }
+  return undefined;
 }

@@ -125,7 +125,8 @@ export function thin(trace: Trace, plant: Plant): readonly number[] {
     if (next > 0) must.add(next - 1);
     if (next < samples.length) must.add(next);
   }
-  const bends = samples.map((one, index) => ({ index, bend: bend(samples, index, plant), time: one.time }));
+  const nets = Object.keys(samples[0]!.solution.pressures);
+  const bends = samples.map((_, index) => ({ index, bend: bend(samples, index, plant, nets) }));
   bends.sort((a, b) => b.bend - a.bend);
   for (const { index } of bends) {
     if (must.size >= KEPT) break;
@@ -135,20 +136,18 @@ export function thin(trace: Trace, plant: Plant): readonly number[] {
 }
 
 /** How far a sample lies off the line between its neighbours, in shares of 10 bar and 1 % of a stroke, weighted by time. */
-function bend(samples: readonly Sample[], index: number, plant: Plant): number {
+function bend(samples: readonly Sample[], index: number, plant: Plant, nets: readonly string[]): number {
   const [before, here, after] = [samples[index - 1], samples[index], samples[index + 1]];
   if (!before || !here || !after) return Number.POSITIVE_INFINITY;
   const span = after.time - before.time;
   const share = span > 0 ? (here.time - before.time) / span : 0.5;
+  const off = (a: number | undefined, b: number | undefined, c: number | undefined) => Math.abs((b ?? 0) - (a ?? 0) - ((c ?? 0) - (a ?? 0)) * share);
+  const [p, q, r] = [before.solution.pressures, here.solution.pressures, after.solution.pressures];
   let most = 0;
-  for (const net of Object.keys(here.solution.pressures)) {
-    const [a, b, c] = [before, here, after].map((one) => one.solution.pressures[net] ?? 0) as [number, number, number];
-    most = Math.max(most, Math.abs(b - a - (c - a) * share) / 1e6);
-  }
+  for (const net of nets) most = Math.max(most, off(p[net], q[net], r[net]) / 1e6);
   for (const body of plant.bodies) {
-    const [a, b, c] = [before, here, after].map((one) => one.solution.positions[body.id] ?? 0) as [number, number, number];
     const scale = Number.isFinite(body.stroke) ? body.stroke / 100 : 1;
-    most = Math.max(most, Math.abs(b - a - (c - a) * share) / scale);
+    most = Math.max(most, off(before.solution.positions[body.id], here.solution.positions[body.id], after.solution.positions[body.id]) / scale);
   }
   return most + span * 0.01;
 }
@@ -156,13 +155,16 @@ function bend(samples: readonly Sample[], index: number, plant: Plant): number {
 /** The run as it is handed on. */
 export function runOf(plant: Plant, cycle: string, trace: Trace): Run {
   const kept = thin(trace, plant).map((index) => trace.samples[index]!);
-  const series = <T>(pick: (solution: Solution) => Readonly<Record<string, T>>): Record<string, T[]> => {
-    const keys = new Set(kept.flatMap((one) => Object.keys(pick(one.solution))));
-    return Object.fromEntries([...keys].map((key) => [key, kept.map((one) => pick(one.solution)[key] as T)]));
+  // Every solution of a run has the same keys: the first names them.
+  const series = <T>(pick: (solution: Solution) => Readonly<Record<string, T>>, keep: (key: string) => boolean = () => true): Record<string, T[]> => {
+    const first = kept[0];
+    const rows = kept.map((one) => pick(one.solution));
+    const keys = first ? Object.keys(pick(first.solution)).filter(keep) : [];
+    return Object.fromEntries(keys.map((key) => [key, rows.map((one) => one[key] as T)]));
   };
   const shown = new Set(plant.circuit.components.filter((one) => ['pump', 'relief', 'cylinder', 'motor', 'rotary', 'accumulator'].includes(one.kind)).map((one) => one.id));
-  const flows = series((one) => Object.fromEntries(Object.entries(one.flows).filter(([key]) => shown.has(key.slice(0, key.lastIndexOf('.'))))));
-  const power = series((one) => Object.fromEntries(plant.at.drives.map((drive) => [drive.id, drivePower(plant, drive.id, one)])));
+  const flows = series((one) => one.flows, (key) => shown.has(key.slice(0, Math.max(0, key.lastIndexOf('.')))));
+  const power = Object.fromEntries(plant.at.drives.map((drive) => [drive.id, kept.map((one) => drivePower(plant, drive.id, one.solution))]));
   const velocities = series((one) => one.velocities);
   return {
     cycle,

@@ -12,6 +12,8 @@ export interface Verdict {
   readonly verdict: 'met' | 'missed' | 'undecidable';
   readonly worst?: Value;
   readonly amount?: number;
+  /** `reaches`: the place begins below the bound. */
+  readonly rising?: boolean;
   /** Bound that the worst value is nearest to. */
   readonly against?: number;
   readonly margin?: number;
@@ -72,7 +74,7 @@ function reaches(bound: Extract<Bound, { is: 'reaches' }>, places: readonly Obse
   const target = bound.value.si;
   const near = NEAR * Math.abs(target);
   if (places.length === 0 || places.every((one) => one.values.length === 0)) return { verdict: 'undecidable', why: problems[0] ?? 'nothing to be measured in the places named' };
-  let shown: { worst: Value; amount: number } | undefined;
+  let shown: { worst: Value; amount: number; rising: boolean } | undefined;
   for (const place of places) {
     for (const series of new Set(place.values.map((one) => one.series))) {
       const values = place.values.filter((one) => one.series === series);
@@ -87,12 +89,13 @@ function reaches(bound: Extract<Bound, { is: 'reaches' }>, places: readonly Obse
       const margin = (below ? amount - target : target - amount) / Math.max(1e-12, Math.abs(target));
       if (!got) {
         if (problems.length > 0) return { verdict: 'undecidable', worst: best, amount, against: target, margin, why: problems[0]! };
-        return { verdict: 'missed', worst: best, amount, against: target, margin };
+        return { verdict: 'missed', worst: best, amount, against: target, margin, rising: below };
       }
       if (lasts !== undefined && longest(ordered, (one) => (below ? one.high >= target - near : one.low <= target + near)) < lasts - 1e-6) {
         return { verdict: 'missed', worst: best, amount, against: target, margin, why: 'not held without break for the time asked' };
       }
-      if (!shown || (below ? amount < shown.amount : amount > shown.amount)) shown = { worst: best, amount };
+      const crossing = inTime.find((one) => (below ? one.high >= target - near : one.low <= target + near)) ?? best;
+      if (!shown || (below ? amount < shown.amount : amount > shown.amount)) shown = { worst: crossing, amount, rising: below };
     }
   }
   if (problems.length > 0) return { verdict: 'undecidable', why: problems[0]! };
