@@ -44,16 +44,15 @@ const BREAKS: readonly Break[] = [
 /** Texts of all statements, those in blocks too. */
 function statements({ text, parsed }: TextAnalysis): string[] {
   const found: string[] = [];
-  const visit = (
-    nodes: readonly { readonly $type: string; readonly $cstNode?: { readonly offset: number; readonly end: number } | undefined }[],
-  ): void => {
+  const visit = (nodes: TextAnalysis['parsed']['statements']): void => {
     for (const node of nodes) {
-      const inner = 'lines' in node ? (node.lines as typeof nodes) : 'statements' in node ? (node.statements as typeof nodes) : undefined;
+      const inner = node.$type === 'Cycle' ? node.lines : node.$type === 'Assembly' ? node.statements : undefined;
+      const { start, end } = parsed.originOf(node);
       if (inner !== undefined) visit(inner);
-      else found.push(text.slice(node.$cstNode?.offset ?? 0, node.$cstNode?.end ?? 0).trim());
+      else found.push(text.slice(start, end).trim());
     }
   };
-  visit(parsed.root.statements);
+  visit(parsed.statements);
   return found;
 }
 

@@ -3,7 +3,7 @@
  * what does not parse and what stands between `// oilway: format off` and `// oilway: format on`.
  */
 import { KIND_NAMES } from '@oilway/circuit';
-import { layout } from '../parse/layout.ts';
+import { type Layout, layout } from '../parse/layout.ts';
 import { parseText } from '../parse/parse.ts';
 import { type Raw, scan } from '../parse/scanner.ts';
 import { LINE_FUNCTIONS } from '../parse/words.ts';
@@ -31,14 +31,27 @@ interface Line {
 
 /** The text, formatted. Formatting twice changes nothing more. */
 export function format(text: string): string {
+  const once = formatOnce(text);
+  // A text so broken that its layout hangs on its spaces stays as it is.
+  return once === text || formatOnce(once) === once ? once : text;
+}
+
+function formatOnce(text: string): string {
   const source = scan(text);
-  const lines = linesOf(text, source.tokens, source.comments, source.lineStarts);
+  const laid = layout(text);
+  const lines = linesOf(text, source.tokens, source.comments, laid);
   const columns = columnsOf(lines, source.tokens);
+  const braces = source.tokens.filter((token) => token.kind === 'sign' && (token.image === '{' || token.image === '}')).length;
+  // Where braces are lost the depth is a guess: indentation stays as written.
+  const sure = laid.tokens.filter((token) => token.type === '{' || token.type === '}').every((token) => !token.inserted);
+  const all = laid.tokens.filter((token) => token.type === '{' || token.type === '}').length === braces;
   let result = '';
   lines.forEach((line, i) => {
     const next = lines[i + 1];
     const ending = text.slice(line.end, next?.start ?? text.length);
-    result += (line.verbatim ? text.slice(line.start, line.end) : written(line, lines, i, source.tokens, columns.get(i))) + ending;
+    const own = text.slice(line.start, line.end);
+    const indent = sure && all ? ' '.repeat(STEP * indentOf(line, lines, i)) : (/^[ \t]*/.exec(own)?.[0] ?? '');
+    result += (line.verbatim ? own : written(line, source.tokens, columns.get(i), indent)) + ending;
   });
   return sameTokens(source.tokens, result) ? result : text;
 }
@@ -52,8 +65,8 @@ function sameTokens(before: readonly Raw[], text: string): boolean {
   );
 }
 
-function linesOf(text: string, tokens: readonly Raw[], comments: readonly Raw[], starts: readonly number[]): Line[] {
-  const laid = layout(text);
+function linesOf(text: string, tokens: readonly Raw[], comments: readonly Raw[], laid: Layout): Line[] {
+  const starts = laid.lineStarts;
   const broken = parseText('', text).broken;
   const problems = laid.problems;
   const heads = new Set(laid.statements.map((statement) => statement.start));
@@ -147,8 +160,7 @@ function columnsOf(lines: readonly Line[], tokens: readonly Raw[]): Map<number, 
   return columns;
 }
 
-function written(line: Line, lines: readonly Line[], index: number, tokens: readonly Raw[], column: number | undefined): string {
-  const indent = ' '.repeat(STEP * indentOf(line, lines, index));
+function written(line: Line, tokens: readonly Raw[], column: number | undefined, indent: string): string {
   if (line.from === line.to && line.comments.length === 0) return '';
   let code = '';
   const cell = column === undefined ? undefined : cellOf(line, tokens);

@@ -1,14 +1,14 @@
 /** The parser's lexer: the layout's tokens in the parser's own token types. */
 import type { Lexer, LexerResult, LangiumCoreServices } from 'langium';
-import { type Layout, type LayoutToken, layout } from './layout.ts';
+import { type LayoutToken, layout } from './layout.ts';
 
 type TokenDictionary = Lexer['definition'];
 type ParserToken = LexerResult['tokens'][number];
 
 export class OilwayLexer implements Lexer {
   readonly definition: TokenDictionary;
-  /** The layout of the text last read: statements, problems. */
-  last: Layout | undefined;
+  /** Tokens of the statement to be parsed next, made already; offsets count from `base`. */
+  private ready: { readonly tokens: readonly LayoutToken[]; readonly base: number } | undefined;
 
   constructor(services: LangiumCoreServices) {
     const built = services.parser.TokenBuilder.buildTokens(services.Grammar, { caseInsensitive: false });
@@ -19,26 +19,29 @@ export class OilwayLexer implements Lexer {
     this.definition = definition;
   }
 
+  /** The next call of `tokenize` gives these tokens instead of reading its text. */
+  prepare(tokens: readonly LayoutToken[], base: number): void {
+    this.ready = { tokens, base };
+  }
+
   tokenize(text: string): LexerResult {
+    const ready = this.ready;
+    this.ready = undefined;
+    if (ready !== undefined) {
+      // Lines are never asked for: places are offsets.
+      return {
+        tokens: ready.tokens.map((token) => this.parserToken(token, ready.base, 1, token.start - ready.base + 1)),
+        hidden: [],
+        errors: [],
+      };
+    }
     const result = layout(text);
-    this.last = result;
     const lines = new LineCounter(result.lineStarts);
-    const commentLines = new LineCounter(result.lineStarts);
     return {
-      tokens: result.tokens.map((token) => this.parserToken(token, lines)),
-      hidden: result.comments.map((raw) =>
-        this.parserToken(
-          {
-            type: raw.image.startsWith('//') ? 'SL_COMMENT' : 'ML_COMMENT',
-            image: raw.image,
-            start: raw.start,
-            end: raw.end,
-            statement: -1,
-            inserted: false,
-          },
-          commentLines,
-        ),
+      tokens: result.tokens.map((token) =>
+        this.parserToken(token, 0, lines.lineAt(token.start) + 1, token.start - lines.startAt(token.start) + 1),
       ),
+      hidden: [],
       errors: result.problems.map((problem) => ({
         offset: problem.start,
         length: problem.end - problem.start,
@@ -49,21 +52,17 @@ export class OilwayLexer implements Lexer {
     };
   }
 
-  private parserToken(token: LayoutToken, lines: LineCounter): ParserToken {
+  private parserToken(token: LayoutToken, base: number, line: number, column: number): ParserToken {
     const tokenType = this.definition[token.type];
     if (tokenType === undefined) throw new Error(`the grammar has no token ${token.type}`);
-    const startLine = lines.lineAt(token.start);
-    const startColumn = token.start - lines.startAt(token.start);
-    const endLine = token.image.includes('\n') ? lines.lineAt(Math.max(token.start, token.end - 1)) : startLine;
-    const endColumn = token.end - lines.startAt(endLine === startLine ? token.start : token.end - 1);
     return {
       image: token.image,
-      startOffset: token.start,
-      endOffset: token.end - 1,
-      startLine: startLine + 1,
-      startColumn: startColumn + 1,
-      endLine: endLine + 1,
-      endColumn,
+      startOffset: token.start - base,
+      endOffset: token.end - base - 1,
+      startLine: line,
+      startColumn: column,
+      endLine: line,
+      endColumn: column + (token.end - token.start) - 1,
       tokenType,
       tokenTypeIdx: tokenType.tokenTypeIdx as number,
       payload: token.statement,

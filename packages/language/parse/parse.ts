@@ -1,34 +1,33 @@
-/** Text to syntax tree. One call, no document store: the tree, and what does not fit as data. */
-import {
-  type AstNode,
-  EmptyFileSystem,
-  type LangiumCoreServices,
-  createDefaultCoreModule,
-  createDefaultSharedCoreModule,
-  inject,
-} from 'langium';
-import type { LangiumParser, LangiumSharedCoreServices } from 'langium';
+/** Text to syntax trees. One call, no document store: the statements, and what does not fit as data. */
+import type { Origin } from '@oilway/circuit';
 import type { Finding, Fix } from '@oilway/rules';
-import type { File as FileNode } from '../generated/ast.ts';
-import { OilwayGeneratedModule, OilwayGeneratedSharedModule } from '../generated/module.ts';
+import type { Statement } from '../generated/ast.ts';
 import { finding } from './finding.ts';
-import type { Layout } from './layout.ts';
-import { OilwayLexer } from './lexer.ts';
-import { MessageProvider } from './messages.ts';
+import { type Layout, type LayoutToken, layout } from './layout.ts';
+import { type StatementError, parseStatement } from './statements.ts';
+
+export { createCoreServices } from './statements.ts';
 
 /** Characters; a drawing has a few thousand. */
 export const LONGEST_FILE = 2_000_000;
 
+/** A syntax node, as far as its place in the text goes. */
+export interface Placed {
+  readonly $cstNode?: { readonly offset: number; readonly end: number; readonly root: object } | undefined;
+}
+
 export interface Parsed {
   readonly uri: string;
   readonly text: string;
-  /** May lack any part that the text lacks: treat every member as optional. */
-  readonly root: FileNode;
+  /** May lack any part that the text lacks: treat every member as optional. Their own offsets count from each statement's start. */
+  readonly statements: readonly Statement[];
   readonly layout: Layout;
   /** What does not parse, code SYNTAX; at most one a statement. */
   readonly findings: readonly Finding[];
   /** Statements with such a finding: what they declare or join may be lost. */
   readonly broken: readonly BrokenStatement[];
+  /** Where a node of these statements stands in the text. */
+  originOf(node: Placed | undefined): Origin;
 }
 
 export interface BrokenStatement {
@@ -41,78 +40,81 @@ export interface BrokenStatement {
   readonly words: readonly string[];
 }
 
-interface ParserRoom {
-  readonly parser: LangiumParser;
-  readonly lexer: OilwayLexer;
-}
-
-/** Langium services of the notation (parser, lexer, grammar), without any editor service. */
-export function createCoreServices(): LangiumCoreServices {
-  const shared: LangiumSharedCoreServices = inject(createDefaultSharedCoreModule(EmptyFileSystem), OilwayGeneratedSharedModule);
-  const services: LangiumCoreServices = inject(createDefaultCoreModule({ shared }), OilwayGeneratedModule, {
-    parser: {
-      Lexer: (s: LangiumCoreServices) => new OilwayLexer(s),
-      ParserErrorMessageProvider: () => new MessageProvider(),
-    },
-  });
-  shared.ServiceRegistry.register(services);
-  return services;
-}
-
-let room: ParserRoom | undefined;
-
-function parserRoom(): ParserRoom {
-  if (room === undefined) {
-    const services = createCoreServices();
-    room = { parser: services.parser.LangiumParser, lexer: services.parser.Lexer as OilwayLexer };
-  }
-  return room;
-}
-
-const EMPTY: FileNode = { $type: 'File', statements: [] };
-
-/** Never throws. A text too long or one the parser gives up on comes back empty, with a finding that says so. */
+/** Never throws. A text too long comes back empty, with a finding that says so. */
 export function parseText(uri: string, text: string): Parsed {
-  if (text.length > LONGEST_FILE) {
-    return refused(uri, '', `This file has ${text.length} characters; more than ${LONGEST_FILE} are not read`, 0);
+  if (text.length > LONGEST_FILE) return refused(uri, text.length);
+  const laid = layout(text);
+  const bases = new Map<object, number>();
+  const statements: Statement[] = [];
+  const errors: StatementError[] = [];
+  for (const tokens of statementTokens(laid.tokens)) {
+    const first = tokens[0];
+    const last = tokens.at(-1);
+    if (first === undefined || last === undefined) continue;
+    const { node, errors: own } = parseStatement(text.slice(first.start, last.end), tokens, bases);
+    const root = node?.$cstNode?.root;
+    if (root !== undefined) bases.set(root, first.start);
+    if (node !== undefined) statements.push(node);
+    for (const error of own) {
+      errors.push({ ...error, ordinal: error.ordinal + first.statement, start: error.start + first.start, end: error.end + first.start });
+    }
   }
-  try {
-    const { parser, lexer } = parserRoom();
-    const result = parser.parse<FileNode & AstNode>(text);
-    const layout = lexer.last;
-    if (layout === undefined) return refused(uri, text, 'The file could not be read', Math.min(1, text.length));
-    const lexical = layout.problems.map((problem) => {
-      const fixes: Fix[] = [];
-      if (problem.change !== undefined) {
-        const { start, end, text: written, title } = problem.change;
-        fixes.push({ title, safe: false, changes: [{ uri, start, end, text: written }] });
-      }
-      return finding({
-        code: 'SYNTAX',
-        what: problem.what,
-        mend: problem.mend,
-        origin: { uri, start: problem.start, end: problem.end },
-        fixes,
-      });
-    });
-    const mended = statementsWithProblems(layout);
-    const lost = new Set<number>();
-    const syntactic = parserFindings(uri, layout, result.parserErrors, mended, lost);
-    return { uri, text, root: result.value, layout, findings: [...lexical, ...syntactic], broken: brokenStatements(layout, mended, lost) };
-  } catch (error) {
-    // The parser keeps its stack after a throw: the next text would come out empty. A new one costs a few milliseconds.
-    room = undefined;
-    const reason = error instanceof RangeError ? 'it is nested too deep' : error instanceof Error ? error.message : String(error);
-    return refused(uri, text, `This file cannot be read: ${reason}`, Math.min(1, text.length));
-  }
+  const mended = statementsWithProblems(laid);
+  const lost = new Set(errors.map((error) => error.ordinal));
+  return {
+    uri,
+    text,
+    statements,
+    layout: laid,
+    findings: [...lexicalFindings(uri, laid), ...parserFindings(uri, errors, mended)],
+    broken: brokenStatements(laid, mended, lost),
+    originOf: (node) => {
+      const cst = node?.$cstNode;
+      if (cst === undefined) return { uri, start: 0, end: 0 };
+      const base = bases.get(cst.root) ?? 0;
+      return { uri, start: base + cst.offset, end: base + cst.end };
+    },
+  };
 }
 
-function refused(uri: string, text: string, what: string, end: number): Parsed {
-  const layout: Layout = { tokens: [], comments: [], problems: [], statements: [], lineStarts: [0] };
-  return { uri, text, root: EMPTY, layout, findings: [finding({ code: 'SYNTAX', what, origin: { uri, start: 0, end } })], broken: [] };
+/** Tokens of each statement: up to its line's end, a block up to its brace. */
+function* statementTokens(tokens: readonly LayoutToken[]): Generator<readonly LayoutToken[]> {
+  let from = 0;
+  let depth = 0;
+  for (let i = 0; i < tokens.length; i++) {
+    const { type } = tokens[i] as LayoutToken;
+    if (type === '{') depth++;
+    else if (type === '}') depth--;
+    const ends = depth === 0 && (type === '}' || (type === 'EOL' && tokens[i + 1]?.type !== '{'));
+    if (!ends) continue;
+    yield tokens.slice(from, i + 1);
+    from = i + 1;
+  }
+  if (from < tokens.length) yield tokens.slice(from);
 }
 
-type ParserErrors = ReturnType<LangiumParser['parse']>['parserErrors'];
+function refused(uri: string, length: number): Parsed {
+  const what = `This file has ${length} characters; more than ${LONGEST_FILE} are not read`;
+  return {
+    uri,
+    text: '',
+    statements: [],
+    layout: { tokens: [], comments: [], problems: [], statements: [], lineStarts: [0] },
+    findings: [finding({ code: 'SYNTAX', what, origin: { uri, start: 0, end: 0 } })],
+    broken: [],
+    originOf: () => ({ uri, start: 0, end: 0 }),
+  };
+}
+
+function lexicalFindings(uri: string, laid: Layout): Finding[] {
+  return laid.problems.map(({ what, mend, start, end, change }) => {
+    const fixes: Fix[] = [];
+    if (change !== undefined) {
+      fixes.push({ title: change.title, safe: false, changes: [{ uri, start: change.start, end: change.end, text: change.text }] });
+    }
+    return finding({ code: 'SYNTAX', what, mend, origin: { uri, start, end }, fixes });
+  });
+}
 
 /** Statements the scanner or the layout had to mend. */
 function statementsWithProblems(layout: Layout): Set<number> {
@@ -136,21 +138,13 @@ function ownEnd(layout: Layout, index: number): number {
 }
 
 /** One problem a statement: the first; what follows in it is mostly its echo. */
-function parserFindings(uri: string, layout: Layout, errors: ParserErrors, mended: ReadonlySet<number>, lost: Set<number>): Finding[] {
+function parserFindings(uri: string, errors: readonly StatementError[], mended: ReadonlySet<number>): Finding[] {
+  const said = new Set(mended);
   const findings: Finding[] = [];
-  for (const error of errors) {
-    const token = error.token;
-    const previous = 'previousToken' in error ? (error.previousToken as typeof token | undefined) : undefined;
-    const own = typeof token.payload === 'number' ? token.payload : typeof previous?.payload === 'number' ? previous.payload : -1;
-    const first = !mended.has(own) && !lost.has(own);
-    lost.add(own);
-    if (!first) continue;
-    const gone = token.image === '' || Number.isNaN(token.startOffset);
-    const last = gone ? (previous ?? token) : token;
-    const statement = layout.statements[own];
-    const start = Number.isNaN(last.startOffset) ? (statement?.start ?? 0) : last.startOffset;
-    const end = Number.isNaN(last.startOffset) ? (statement?.end ?? start) : (last.endOffset ?? start) + 1;
-    findings.push(finding({ code: 'SYNTAX', what: error.message, origin: { uri, start, end: Math.max(start, end) } }));
+  for (const { ordinal, start, end, message } of errors) {
+    if (said.has(ordinal)) continue;
+    said.add(ordinal);
+    findings.push(finding({ code: 'SYNTAX', what: message, origin: { uri, start, end } }));
   }
   return findings;
 }

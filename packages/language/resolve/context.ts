@@ -13,21 +13,18 @@ import {
 import type { Finding, Fix } from '@oilway/rules';
 import type { Let, Name, Ref } from '../generated/ast.ts';
 import { type FindingParts, finding } from '../parse/finding.ts';
-import type { BrokenStatement } from '../parse/parse.ts';
+import type { BrokenStatement, Parsed, Placed } from '../parse/parse.ts';
 import { LINE_FUNCTIONS } from '../parse/words.ts';
 import { nearest } from '../parse/near.ts';
 import type { PortMention, SymbolDeclaration, SymbolKind, SymbolReference } from './symbols.ts';
-
-/** A syntax node, as far as its place in the text goes. */
-export interface Placed {
-  readonly $cstNode?: { readonly offset: number; readonly end: number } | undefined;
-}
 
 const LINES: ReadonlySet<string> = new Set(LINE_FUNCTIONS);
 /** Kinds with a `coil` setting. */
 const HAVE_COILS: ReadonlySet<string> = new Set<string>([
   ...KIND_NAMES.filter((kind) => KINDS[kind].properties.some((spec) => spec.name === 'coil')),
 ]);
+
+export type { Placed } from '../parse/parse.ts';
 
 export class Context {
   readonly uri: string;
@@ -42,14 +39,17 @@ export class Context {
   /** Short step names: `Clamp` -> ids; more than one: the cycle must be written. */
   readonly stepsByName = new Map<string, string[]>();
   readonly steps = new Set<string>();
+  private readonly placeOf: Parsed['originOf'];
   /** Words of statements that do not parse: they may be declared there, so nothing is said of them elsewhere. */
   private readonly perhaps: ReadonlySet<string>;
   private readonly broken: readonly BrokenStatement[];
   private readonly said = new Set<string>();
 
-  constructor(uri: string, text: string, broken: readonly BrokenStatement[] = []) {
-    this.uri = uri;
-    this.text = text;
+  constructor(parsed: Pick<Parsed, 'uri' | 'text' | 'broken' | 'originOf'>) {
+    this.uri = parsed.uri;
+    this.text = parsed.text;
+    this.placeOf = parsed.originOf;
+    const { broken } = parsed;
     this.broken = broken;
     this.perhaps = new Set(broken.flatMap((statement) => statement.words));
   }
@@ -115,8 +115,7 @@ export class Context {
   }
 
   origin(node: Placed | undefined): Origin {
-    const cst = node?.$cstNode;
-    return { uri: this.uri, start: cst?.offset ?? 0, end: cst?.end ?? 0 };
+    return this.placeOf(node);
   }
 
   span(from: Origin, to: Origin): Origin {

@@ -48,7 +48,7 @@ class PropertyReader {
   }
 
   read(node: Properties | undefined): ReadProperties {
-    const entries = entriesOf(node);
+    const entries = entriesOf(this.context, node);
     entries.forEach(({ property, comma }, i) => {
       if (property === undefined) {
         const origin = { uri: this.context.uri, start: comma, end: comma + 1 };
@@ -172,8 +172,8 @@ interface EntryNode {
   readonly comma: number;
 }
 
-function entriesOf(node: Properties | undefined): EntryNode[] {
-  const rest = (node?.rest ?? []).map((next) => ({ property: next.property, comma: next.$cstNode?.offset ?? 0 }));
+function entriesOf(context: Context, node: Properties | undefined): EntryNode[] {
+  const rest = (node?.rest ?? []).map((next) => ({ property: next.property, comma: context.origin(next).start }));
   if (node?.first !== undefined) return [{ property: node.first, comma: 0 }, ...rest];
   return rest.length > 0 ? [{ property: undefined, comma: rest[0]?.comma ?? 0 }, ...rest] : [];
 }

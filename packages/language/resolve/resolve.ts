@@ -39,10 +39,10 @@ class Resolution {
 
   constructor(parsed: Parsed) {
     this.parsed = parsed;
-    this.context = new Context(parsed.uri, parsed.text, parsed.broken);
+    this.context = new Context(parsed);
     this.values = new Values(this.context);
     this.components = new Components(this.context, this.values);
-    this.statements = parsed.root.statements ?? [];
+    this.statements = parsed.statements;
   }
 
   private all<T extends Statement['$type']>(type: T): Of<T>[] {
