@@ -10,6 +10,9 @@ const ROOT = fileURLToPath(new URL('../..', import.meta.url));
 const COMMAND = join(ROOT, 'packages/cli/bin/oilway.mjs');
 const sample = (name: string) => readFileSync(join(ROOT, 'samples', name), 'utf8');
 
+/** A pump whose relief stands beside the line. */
+const NO_RELIEF = sample('01-table.oilway').replace(/^working pressure: P1 to RV1, /m, 'working pressure: P1 to ');
+
 let folder = '';
 beforeAll(() => {
   folder = mkdtempSync(join(tmpdir(), 'oilway-'));
@@ -40,7 +43,7 @@ describe('check', () => {
     expect(out).toMatch(/^1 circuit: /m);
   });
   it('shows a finding with its place, its line and a mark under the characters', () => {
-    write('faulty/no-relief.oilway', sample('01-table.oilway').replace(/^working pressure: P1 to RV1, /m, 'working pressure: P1 to '));
+    write('faulty/no-relief.oilway', NO_RELIEF);
     const { status, out } = oilway(['check', 'faulty/no-relief.oilway']);
     expect(status).toBe(1);
     expect(out).toMatch(/^faulty\/no-relief\.oilway:\d+:\d+: error A01: /m);
@@ -64,6 +67,7 @@ describe('check', () => {
     expect(out).toMatch(/^broken\.oilway:7:\d+: error /m);
   });
   it('writes JSON that says the same', () => {
+    write('faulty/no-relief.oilway', NO_RELIEF);
     const text = oilway(['check', 'faulty/no-relief.oilway']).out;
     const { status, out } = oilway(['check', '--format', 'json', 'faulty/no-relief.oilway']);
     expect(status).toBe(1);
@@ -85,8 +89,20 @@ describe('check', () => {
     const here = JSON.parse(oilway(['check', '--format', 'json'], join(folder, 'tree')).out);
     expect(here.totals.files).toBe(2);
   });
+  it('hides what an allow statement accepts, counts it, and shows it when asked', () => {
+    write('allowed.oilway', `${NO_RELIEF}\nallow A01 on P1 "a bench with its relief in the hose reel"\n`);
+    const { out } = oilway(['check', 'allowed.oilway']);
+    expect(out).not.toContain('error A01');
+    expect(out).toMatch(/1 accepted by allow/);
+    const all = oilway(['check', '--accepted', 'allowed.oilway']).out;
+    expect(all).toContain('error A01');
+    expect(all).toContain('accepted: a bench with its relief in the hose reel');
+    const [file] = JSON.parse(oilway(['check', '--format', 'json', 'allowed.oilway']).out).files;
+    expect(file.findings.find((one: { code: string }) => one.code === 'A01').accepted).toContain('hose reel');
+  });
   it('uses no colours in a pipe', () => {
-    expect(oilway(['check', 'faulty/no-relief.oilway']).out).not.toContain('\u001b');
+    write('plain.oilway', NO_RELIEF);
+    expect(oilway(['check', 'plain.oilway']).out).not.toContain('\u001b');
   });
 });
 

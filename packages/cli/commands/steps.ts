@@ -233,16 +233,20 @@ export function dutyLines(cycles: readonly CycleResult[], circuit: Circuit, stud
 /** Motions in machine states that nobody asked for, and what was assumed. */
 export function restLines(study: Study): string[] {
   const lines: string[] = [];
-  const moves = study.states.flatMap((state) =>
-    state.state === 'COIL' || state.state === 'MANUAL'
-      ? []
-      : state.variants.flatMap((variant) =>
-          variant.moving
-            .filter((motion) => motion.relaxes === undefined)
-            .map((motion) => `  ${state.id} (${variant.label}): ${motion.id} moves: ${motion.path}`),
-        ),
-  );
-  if (moves.length > 0) lines.push('', 'moves without a step', ...new Set(moves));
+  const moves = new Map<string, { first: string; states: Set<string> }>();
+  for (const state of study.states) {
+    if (state.state === 'COIL' || state.state === 'MANUAL') continue;
+    for (const variant of state.variants) {
+      for (const motion of variant.moving) {
+        if (motion.relaxes !== undefined) continue;
+        const way = `${motion.id} moves by ${motion.path}`;
+        const known = moves.get(way) ?? { first: variant.label, states: new Set() };
+        moves.set(way, { ...known, states: known.states.add(state.id) });
+      }
+    }
+  }
+  if (moves.size > 0) lines.push('', 'moves without a step');
+  for (const [way, { first, states }] of moves) lines.push(`  ${way}: in ${[...states].join(', ')} (first: ${first})`);
   if (study.assumptions.length > 0) {
     lines.push('', 'assumed, as not declared');
     for (const one of study.assumptions) lines.push(`  ${`${one.component} ${one.property}`.trim()}: ${one.value} (${one.source})`);
