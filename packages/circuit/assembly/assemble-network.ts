@@ -1,5 +1,5 @@
 /** Builds the network of a circuit: nodes for nets, laws of the kinds, bodies, gas charges, lines with loss. */
-import type { ElementSpec, ForceTable, NodeIndex, NodeSpec, Param } from '@oilway/engine';
+import type { ActuatorSpec, ElementSpec, ForceTable, NodeIndex, NodeSpec, Param } from '@oilway/engine';
 import { oilOf } from '../fluid/oil.ts';
 import { KINDS } from '../kinds/index.ts';
 import { DEFAULT_MECHANICAL } from '../kinds/pump.ts';
@@ -193,7 +193,10 @@ function build(
     },
     brake(component, b) {
       const body = bodyOf.get(b.actuator);
-      if (body !== undefined) brakes.push({ component: component.id, body, node: b.node, opens: b.opens, torque: b.torque });
+      if (body === undefined) return;
+      if (brakes.some((other) => other.body === body))
+        refused.set(component.id, `${component.id}: a second brake on ${b.actuator} is not computed yet`);
+      else brakes.push({ component: component.id, body, node: b.node, opens: b.opens, torque: b.torque });
     },
     store(node, storage) {
       const n = nodes[node];
@@ -229,22 +232,29 @@ function build(
   }
 
   const bodies: BodyNote[] = drafts.map((d) => bodyNote(d.group, d.seal, d.springs, d.knots));
-  const actuators = drafts.map((d, i) => ({
-    tag: i,
-    chambers: chambers
+  const actuators = drafts.map((d, i): ActuatorSpec => {
+    const own = chambers
       .filter((c) => c.body === i)
       .map((c) => ({
         node: c.node,
         area: c.area,
         ...(c.head === 0 ? {} : { head: c.head }),
         ...(c.stages === undefined ? {} : { areaSteps: c.stages }),
-      })),
-    low: d.group.stroke === Number.POSITIVE_INFINITY ? Number.NEGATIVE_INFINITY : 0,
-    high: d.group.stroke,
-    mass: toKilo(d.group.mass),
-    ...(bodies[i]?.spring === undefined ? {} : { spring: bodies[i].spring }),
-    ...(d.pressureFriction === 0 ? {} : { pressureFriction: d.pressureFriction }),
-  }));
+      }));
+    const brake = brakes.find((b) => b.body === i);
+    const spring = bodies[i]?.spring;
+    return {
+      tag: i,
+      // A brake feels its release pressure through a chamber that presses on nothing.
+      chambers: brake === undefined ? own : [...own, { node: brake.node, area: 0, head: toMPa(heads[brake.component] ?? 0) }],
+      low: d.group.stroke === Number.POSITIVE_INFINITY ? Number.NEGATIVE_INFINITY : 0,
+      high: d.group.stroke,
+      mass: toKilo(d.group.mass),
+      ...(spring === undefined ? {} : { spring }),
+      ...(d.pressureFriction === 0 ? {} : { pressureFriction: d.pressureFriction }),
+      ...(brake === undefined ? {} : { brake: { chamber: own.length, torque: toKilo(brake.torque), opens: toMPa(brake.opens) } }),
+    };
+  });
   const gasSpecs = gases.map((g, i) => ({
     tag: i,
     node: g.node,

@@ -8,11 +8,7 @@ import { Run } from './run.ts';
 import { sensitivitiesOf } from './sensitivities.ts';
 import { applySetting, requestOf } from './setting.ts';
 import { settleMachine } from './settle.ts';
-import { brakesAt, solutionOf } from './solution.ts';
-
-/** Most passes until brake torque and pressure agree, and the change (N.m, relative) at which they do. */
-const BRAKE_PASSES = 40;
-const BRAKE_CLOSE = 1e-6;
+import { solutionOf } from './solution.ts';
 
 interface Built {
   readonly assembled: Assembled;
@@ -36,26 +32,16 @@ export function assemble(circuit: Circuit, options: MachineOptions = {}): Machin
   /** The engine's result behind each solution, for warm starts. */
   const results = new WeakMap<Solution, SteadyResult>();
 
-  const solveEngine = (setting: Setting, near?: SteadyResult): { readonly result: SteadyResult; readonly brakes: readonly number[] } => {
+  const solveEngine = (setting: Setting, near?: SteadyResult): SteadyResult => {
     const { assembled, network } = builtFor(setting);
     applySetting(assembled, setting, network.parameters);
-    let brakes = brakesAt(assembled, near?.pressures);
-    let result = solveSteady(network, { ...requestOf(assembled, setting, brakes), start: near });
-    for (let pass = 0; assembled.brakes.length > 0 && pass < BRAKE_PASSES; pass++) {
-      const now = brakesAt(assembled, result.pressures);
-      const close = now.every((b, i) => Math.abs(b - (brakes[i] ?? 0)) <= BRAKE_CLOSE * (1 + Math.abs(b)));
-      if (close) break;
-      // Averaged after the first passes: pressure and friction of a slipping brake depend on each other.
-      brakes = pass < 4 ? now : now.map((b, i) => (b + (brakes[i] ?? 0)) / 2);
-      result = solveSteady(network, { ...requestOf(assembled, setting, brakes), start: result });
-    }
-    return { result, brakes };
+    return solveSteady(network, { ...requestOf(assembled, setting), start: near });
   };
   const solve = (setting: Setting, near?: Solution): Solution => {
     const whole = near === undefined ? setting : { ...setting, bits: { ...near.bits, ...setting.bits } };
     const { assembled, network } = builtFor(setting);
-    const { result, brakes } = solveEngine(whole, near === undefined ? undefined : results.get(near));
-    const solution = solutionOf(assembled, network, whole, result, brakes);
+    const result = solveEngine(whole, near === undefined ? undefined : results.get(near));
+    const solution = solutionOf(assembled, network, whole, result);
     results.set(solution, result);
     return solution;
   };
@@ -91,7 +77,7 @@ export function assemble(circuit: Circuit, options: MachineOptions = {}): Machin
       // The run starts from where the solution was settled: valves that did not shift, bits that turned.
       const from = { ...setting, valves: { ...setting.valves, ...at.stands }, bits: at.bits };
       const { assembled, network } = builtFor(setting);
-      const start = results.get(at) ?? solveEngine(from).result;
+      const start = results.get(at) ?? solveEngine(from);
       return new Run(assembled, network, from, setting.valves, start, options.dynamics ?? false);
     },
   };

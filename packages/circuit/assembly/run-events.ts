@@ -1,26 +1,21 @@
-/** Events of the valves themselves in a run: unloading lifted, burst shut, piloted valves that gain or lose their pilot pressure, brakes. */
+/** Events of the valves themselves in a run: unloading lifted, burst shut, piloted valves that gain or lose their pilot pressure. */
 import type { Network, Transient, TransientWatch } from '@oilway/engine';
 import type { Assembled } from './assembled.ts';
 import type { Memory, PilotedValve } from './assembly.ts';
 import type { Setting, Stand } from './machine.ts';
 import { STAYS } from './settle.ts';
-import { brakesAt } from './solution.ts';
 import { fromMPa, toLitresPerSecond, toMPa } from './units.ts';
 
-/** Share of a brake's opening pressure over which its torque may change before it is taken anew. */
-const BRAKE_STEP = 0.02;
 /** Below this, MPa, a threshold counts as passed at once. */
 const PAST = 1e-9;
 
 export type Internal =
   | { readonly what: 'bit'; readonly of: string; readonly to: boolean; readonly words: string; readonly watch: TransientWatch }
-  | { readonly what: 'valve'; readonly of: string; readonly stand: Stand; readonly words: string; readonly watch: TransientWatch }
-  | { readonly what: 'brake'; readonly of: string; readonly words: string; readonly watch: TransientWatch };
+  | { readonly what: 'valve'; readonly of: string; readonly stand: Stand; readonly words: string; readonly watch: TransientWatch };
 
 export class InternalEvents {
   readonly #assembled: Assembled;
   readonly #network: Network;
-  #brakePressures: readonly number[] = [];
 
   constructor(assembled: Assembled, network: Network) {
     this.#assembled = assembled;
@@ -30,12 +25,6 @@ export class InternalEvents {
   /** Pilot pressure a valve sees, Pa. */
   pilot(v: PilotedValve, pressures: Float64Array): number {
     return fromMPa((pressures[v.pilot] ?? 0) - (pressures[v.drain] ?? 0));
-  }
-
-  /** Torque each brake holds, by body, at these pressures (MPa by node). */
-  brakes(pressures: Float64Array): readonly number[] {
-    this.#brakePressures = this.#assembled.brakes.map((b) => pressures[b.node] ?? 0);
-    return brakesAt(this.#assembled, pressures);
   }
 
   /** All events that can come next, as watches. */
@@ -49,21 +38,6 @@ export class InternalEvents {
     for (const v of this.#assembled.piloted) {
       if (!frozen(v.component)) events.push(...this.#ofValve(v, setting, wanted));
     }
-    this.#assembled.brakes.forEach((b, i) => {
-      const at = this.#brakePressures[i] ?? 0;
-      const opens = toMPa(b.opens);
-      const step = BRAKE_STEP * opens;
-      const terms = [{ of: 'pressure' as const, index: b.node, weight: 1 }];
-      if (at < opens)
-        events.push({ what: 'brake', of: b.component, words: '', watch: { terms, threshold: Math.min(at + step, opens), edge: 'rising' } });
-      if (at > 0)
-        events.push({
-          what: 'brake',
-          of: b.component,
-          words: '',
-          watch: { terms, threshold: Math.min(Math.max(at - step, 0), opens), edge: 'falling' },
-        });
-    });
     return events;
   }
 
@@ -77,7 +51,6 @@ export class InternalEvents {
         if (t.of === 'pressure') return sum + t.weight * (pressures[t.index] ?? 0);
         return t.of === 'flow' && flows !== undefined ? sum + t.weight * (flows.flows[t.index] ?? 0) : sum;
       }, 0);
-    if (this.#assembled.brakes.length > 0 && this.#brakePressures.length === 0) this.brakes(pressures);
     for (const event of this.armed(setting, wanted, idle)) {
       const past = (event.watch.edge === 'rising' ? 1 : -1) * (value(event.watch) - event.watch.threshold);
       if (past > PAST) due.push(event);

@@ -5,7 +5,7 @@ import type { BodyLoad, MachineRun, RunReport, Setting, Solution, Stand, Watch }
 import { type Internal, InternalEvents } from './run-events.ts';
 import { applySetting, LEAKAGE_FLOOR, loadState, ofBody, requestOf } from './setting.ts';
 import { crossover, type Move, proportionalMoves } from './shifting.ts';
-import { brakesAt, solutionOf, type Standing } from './solution.ts';
+import { solutionOf, type Standing } from './solution.ts';
 import { fromLitres, fromMPa } from './units.ts';
 import { engineWatch } from './watches.ts';
 
@@ -35,8 +35,6 @@ export class Run implements MachineRun {
   readonly #turns = new Map<string, number[]>();
   readonly #frozen = new Map<string, number>();
   readonly #scratch: Float64Array;
-  /** Brake torques in force, by body. */
-  #brakes: readonly number[];
 
   /** `setting` as the solution was settled; `asked` the stands asked for, which piloted valves may not have reached. */
   constructor(
@@ -55,9 +53,8 @@ export class Run implements MachineRun {
     this.#setting = { ...setting, bits };
     this.#wanted = { ...setting.valves, ...asked };
     this.#scratch = new Float64Array(assembled.parameters.length);
-    this.#brakes = brakesAt(assembled, start.pressures);
     applySetting(assembled, this.#setting, network.parameters);
-    this.#engine = new Transient(network, { ...requestOf(assembled, this.#setting, this.#brakes) }, start, {
+    this.#engine = new Transient(network, requestOf(assembled, this.#setting), start, {
       dynamics,
       ...(setting.leakage === true ? { floor: LEAKAGE_FLOOR } : {}),
     });
@@ -91,7 +88,7 @@ export class Run implements MachineRun {
           : { oil: fromLitres(at.oil), pressure: fromMPa(at.pressure) };
       }),
     };
-    const solution = solutionOf(this.#assembled, this.#network, this.#setting, result, this.#brakes, standing, this.#engine.parameters);
+    const solution = solutionOf(this.#assembled, this.#network, this.#setting, result, standing, this.#engine.parameters);
     const held = this.#assembled.memories.filter((m) => m.kind === 'held' && (solution.openings[m.component] ?? 0) <= 0);
     return held.length === 0
       ? solution
@@ -206,7 +203,7 @@ export class Run implements MachineRun {
     const note = this.#assembled.bodies[i];
     if (note === undefined) return;
     const x = this.#engine.positions[i] ?? 0;
-    this.#engine.setLoads(i, loadState(note, ofBody(this.#setting.loads, note), this.#setting, x, this.#brakes[i] ?? 0));
+    this.#engine.setLoads(i, loadState(note, ofBody(this.#setting.loads, note), this.#setting, x));
   }
 
   gasExponent(n: number): void {
@@ -272,12 +269,6 @@ export class Run implements MachineRun {
   }
 
   #act(event: Internal): void {
-    if (event.what === 'brake') {
-      const pressures = this.#engine.pressures;
-      this.#brakes = this.#events.brakes(pressures);
-      for (const b of this.#assembled.brakes) this.#loads(b.body);
-      return;
-    }
     const turns = [...(this.#turns.get(event.of) ?? []).filter((t) => t > this.time - CHATTER_TIME), this.time];
     this.#turns.set(event.of, turns);
     if (turns.length > CHATTER_TURNS) {

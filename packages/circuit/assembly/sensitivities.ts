@@ -4,7 +4,6 @@ import type { Assembled } from './assembled.ts';
 import type { Limitation } from './assembly.ts';
 import type { Setting } from './machine.ts';
 import { applySetting, requestOf } from './setting.ts';
-import { brakesAt } from './solution.ts';
 
 export interface Sensitivity {
   readonly of: string;
@@ -40,7 +39,7 @@ export function sensitivitiesOf(
 ): readonly Sensitivity[] {
   const i = assembled.bodies.findIndex((b) => b.id === body || b.actuators.includes(body));
   if (i < 0 || at === undefined) return [];
-  const request = requestOf(assembled, setting, brakesAt(assembled, at.pressures));
+  const request = requestOf(assembled, setting);
   applySetting(assembled, setting, network.parameters);
   // Once more with nothing changed: the point the changes are measured against.
   const base = solveSteady(network, { ...request, start: at });

@@ -53,20 +53,19 @@ export function chargeIn(gas: GasNote, setting: Setting): { readonly oil: number
 const kilo = (t: ForceOverPosition): ForceTable => ({ at: t.at, force: t.force.map(toKilo) });
 const constant = (newton: number): ForceTable => ({ at: [0], force: [toKilo(newton)] });
 
-/** Loads with seal friction, and what a brake holds (N.m), in the engine's form. */
-export function loadState(body: BodyNote, load: BodyLoad | undefined, setting: Setting, x: number, brake: number): LoadState {
+/** Loads with seal friction, in the engine's form. */
+export function loadState(body: BodyNote, load: BodyLoad | undefined, setting: Setting, x: number): LoadState {
   const fixed = (load?.fixed ?? []).map(kilo);
   const resistOut = (load?.resistOut ?? []).map(kilo);
   const resistIn = (load?.resistIn ?? []).map(kilo);
-  let friction = toKilo((load?.friction ?? 0) + brake);
+  let friction = toKilo(load?.friction ?? 0);
   const pushes = setting.sealFriction === 'not with load' ? fixed.reduce((sum, t) => sum + forceAt(t, x), 0) : 0;
   if (Math.abs(pushes) > 1e-3) (pushes > 0 ? resistIn : resistOut).push(constant(body.sealFriction));
   else friction += toKilo(body.sealFriction);
   return { fixed, resistOut, resistIn, friction };
 }
 
-/** `brakes`: torque held now by body index, N.m. */
-export function requestOf(assembled: Assembled, setting: Setting, brakes: readonly number[]): Omit<SteadyRequest, 'start'> {
+export function requestOf(assembled: Assembled, setting: Setting): Omit<SteadyRequest, 'start'> {
   const { bodies } = assembled;
   const positions = bodies.map((b) => positionOf(b, setting));
   const gas = assembled.gases.map((g): GasState => {
@@ -75,7 +74,7 @@ export function requestOf(assembled: Assembled, setting: Setting, brakes: readon
   });
   return {
     positions,
-    loads: bodies.map((b, i) => loadState(b, ofBody(setting.loads, b), setting, positions[i] ?? 0, brakes[i] ?? 0)),
+    loads: bodies.map((b, i) => loadState(b, ofBody(setting.loads, b), setting, positions[i] ?? 0)),
     locked: bodies.map((b) => inList(setting.locked, b)),
     freeStops: bodies.map((b) => inList(setting.free, b)),
     gas,

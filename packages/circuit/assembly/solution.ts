@@ -19,13 +19,11 @@ export const standingOf = (assembled: Assembled, setting: Setting): Standing => 
   oil: assembled.gases.map((g) => chargeIn(g, setting)),
 });
 
-/** `brakes`: torque held by body index, N.m. */
 export function solutionOf(
   assembled: Assembled,
   network: Network,
   setting: Setting,
   result: SteadyResult,
-  brakes: readonly number[],
   standing: Standing = standingOf(assembled, setting),
   parameters: Float64Array = network.parameters,
 ): Solution {
@@ -48,7 +46,7 @@ export function solutionOf(
     const locked = result.contacts[i] === 'locked';
     const pressed = (result.pressureForces[i] ?? 0) + (body.spring === undefined ? 0 : forceAt(body.spring, x));
     stopForces[body.id] = fromKilo(result.stopForces[i] ?? 0);
-    const own = ownFriction(assembled, i, result, brakes[i] ?? 0);
+    const own = ownFriction(assembled, i, result);
     if (locked) {
       // What it would press with against a stop: friction takes its part of the force there is.
       forces[body.id] = Math.sign(pressed) * Math.max(0, Math.abs(fromKilo(pressed)) - own);
@@ -161,10 +159,10 @@ export function areaAt(chamber: Assembled['chambers'][number], x: number): numbe
 }
 
 /** Friction of the actuator itself (seals, motor, brake) that can act, N or N.m. */
-function ownFriction(assembled: Assembled, i: number, result: SteadyResult, brake: number): number {
+function ownFriction(assembled: Assembled, i: number, result: SteadyResult): number {
   const body = assembled.bodies[i];
   const spec = assembled.actuators[i];
-  let own = (body?.sealFriction ?? 0) + brake;
+  let own = (body?.sealFriction ?? 0) + brakeTorque(assembled, i, result);
   const [first, second] = spec?.chambers ?? [];
   if (spec?.pressureFriction !== undefined && first !== undefined && second !== undefined) {
     const d = (result.pressures[first.node] ?? 0) - (result.pressures[second.node] ?? 0);
@@ -194,12 +192,10 @@ function sealAsResist(
   return total > 0 ? (acting * own) / total : 0;
 }
 
-/** Torque each brake holds at these pressures (MPa by node; none: without pressure), by body index, N.m. */
-export function brakesAt(assembled: Assembled, pressures: Float64Array | undefined): number[] {
-  const held = assembled.bodies.map(() => 0);
-  for (const b of assembled.brakes) {
-    const p = pressures === undefined ? 0 : (pressures[b.node] ?? 0) - toMPa(assembled.heads[b.component] ?? 0);
-    held[b.body] = (held[b.body] ?? 0) + b.torque * Math.min(1, Math.max(0, 1 - p / toMPa(b.opens)));
-  }
-  return held;
+/** Torque the brake of a body can hold at these pressures, N.m. */
+function brakeTorque(assembled: Assembled, i: number, result: SteadyResult): number {
+  const b = assembled.brakes.find((x) => x.body === i);
+  if (b === undefined) return 0;
+  const p = (result.pressures[b.node] ?? 0) - toMPa(assembled.heads[b.component] ?? 0);
+  return b.torque * Math.min(1, Math.max(0, 1 - p / toMPa(b.opens)));
 }
