@@ -246,6 +246,89 @@ ${lines}
   });
 });
 
+describe('a holding valve without a remote pilot (common practice, no source)', () => {
+  const held = (valve: string, lines: string) =>
+    bench(`circuit Bench
+${supply('10 L/min', '100 bar', ', V1.P')}
+directional V1 (4/2, detent, coil a SOL1, coil b SOL2, passes 600 L/min at 0.1 bar, takes 1 ms)
+cylinder C1 (bore 50 mm, rod 28 mm, stroke 300 mm, ${IDEAL}, attitude level)
+${valve}
+working V1.A to C1.cap
+${lines}
+return V1.T to R1
+load C1 (outward 3 kN)
+cycle T {
+  step Out energise SOL1 until C1 extended
+}
+`);
+  it('a counterbalance valve and a sequence valve in the same place hold the rod side at the same pressure', async () => {
+    const counterbalance = await held(
+      'counterbalance H1 (set 60 bar, ratio 1:1, passes 200 L/min at 4 bar)',
+      'working C1.rod to H1.C\nworking H1.V to V1.B',
+    );
+    const asSequence = await held(
+      'sequence H1 (set 60 bar, reverse check, passes 200 L/min at 4 bar)',
+      'working C1.rod to H1 to V1.B\ndrain H1.Y to R1',
+    );
+    const rod = (of: Bench) => of.pressure('Out', 'C1.rod', 'C1');
+    near(rod(counterbalance), rod(asSequence), 0.02);
+    expect(inUnits(rod(counterbalance), 'bar')).toBeGreaterThanOrEqual(60);
+    expect(inUnits(rod(counterbalance), 'bar')).toBeLessThan(66);
+  });
+});
+
+describe('an accumulator, a pressure switch, a vented relief valve and a check valve (common practice, no source)', () => {
+  it('let the pump work only a few seconds of a long hold', async () => {
+    // Dry nitrogen precharged to 600 psi; the pump fills up when the pressure has fallen to 900 psi.
+    const of = await bench(`circuit Bench
+fluid F1 (grade 46, temperature 40 degC)
+reservoir R1 (volume 100 gal)
+drive M1 (power 20 hp, speed 1000 rpm)
+pump P1 (displacement 20 gpm / 1000 rpm, driven by M1, rated 3000 psi)
+relief RV1 (set 1100 psi, piloted, vented 40 psi, passes 40 gpm at 50 psi)
+directional V0 (2/2, normally open, coil a SOL0, passes 2 gpm at 15 psi)
+check CV1 (crack 5 psi, passes 40 gpm at 30 psi)
+accumulator ACC1 (bladder, volume 5 gal, precharge 600 psi at 68 degF, gas nitrogen)
+switch PS1 (rises 1000 psi, falls 900 psi)
+directional V1 (4/2, detent, coil a SOL1, coil b SOL2, passes 40 gpm at 50 psi)
+cylinder C1 (bore 8 in, rod 4 in, stroke 15 in, attitude level, leak 100 cm3/min at 70 bar)
+shutoff BV1 (open)
+suction R1 to P1
+working P1 to RV1, CV1
+working system: CV1 to V1.P, BV1.A, PS1
+working BV1.B to ACC1
+pilot RV1.X to V0.P
+drain V0.A to R1
+working V1.A to C1.cap
+working V1.B to C1.rod
+return V1.T, RV1 to R1
+cycle Press {
+  while Press and PS1 off energise SOL0
+  step Close energise SOL1 until C1 extended
+  step Hold energise SOL1 for 120 s
+  step Open energise SOL2 until C1 retracted
+}
+`);
+    const run = of.study.cycles[0]?.run;
+    const hold = run?.steps.find((one) => one.id === 'Press.Hold');
+    if (run === undefined || hold === undefined) throw new Error('the hold is not reached');
+    const power = run.power.M1 ?? [];
+    const full = Math.max(...power);
+    let seconds = 0;
+    run.times.forEach((time, i) => {
+      const next = run.times[i + 1];
+      if (next !== undefined && time >= hold.from && next <= hold.to && (power[i] ?? 0) > full / 2) seconds += next - time;
+    });
+    expect(hold.to - hold.from).toBeGreaterThan(100);
+    expect(seconds).toBeLessThan(10);
+    // Once filled, it holds the press all the while.
+    const system = run.pressures[of.circuit.nets.find((net) => net.name === 'system')?.id ?? ''] ?? [];
+    const held = system.filter((_, i) => (run.times[i] ?? 0) > hold.from + seconds + 1 && (run.times[i] ?? 0) <= hold.to);
+    expect(held.length).toBeGreaterThan(0);
+    expect(inUnits(Math.min(...held), 'psi')).toBeGreaterThan(850);
+  });
+});
+
 describe('a vented relief valve (common practice, no source)', () => {
   it('opens at very low pressure', async () => {
     const of = await bench(`circuit Bench
