@@ -55,11 +55,14 @@ describe('diagnostics', () => {
 describe('quick fixes', () => {
   const ask = (findings: readonly Finding[], only?: readonly string[]) =>
     codeActions(analysis(findings), { start: 6, end: 6, shown: [], ...(only ? { only } : {}) }, context);
-  test('at the finding, preferred where safe', () => {
+  test('at the finding; preferred where it is safe or the only one', () => {
     expect(ask([finding()]).slice(0, 1)).toMatchObject([
       { title: 'Insert a relief', kind: 'quickfix', isPreferred: true, edit: { changes: { [URI]: [{ newText: '\nrelief RV2 ()' }] } } },
     ]);
-    expect(ask([finding({ fixes: [{ title: 'Guess', safe: false, changes: [] }] })])[0]?.isPreferred).toBeUndefined();
+    const [one, other] = ['One', 'Other'].map((title) => ({ title, safe: false, changes: [] }));
+    if (!one || !other) throw new Error('no fixes');
+    expect(ask([finding({ fixes: [one] })])[0]?.isPreferred).toBe(true);
+    expect(ask([finding({ fixes: [one, other] })]).some((action) => action.isPreferred)).toBe(false);
   });
   test('none elsewhere, none of accepted findings', () => {
     expect(ask([finding({ origin: { uri: URI, start: 18, end: 21 } })])).toEqual([]);

@@ -79,7 +79,8 @@ export function codeActions(analysis: Analysis, question: CodeActionQuestion, co
       finding.fixes.forEach((fix, index) => {
         const edit = workspaceEdit(fix.changes, context);
         if (!edit) return;
-        const preferred = index === 0 && fix.safe ? { isPreferred: true } : {};
+        // The one mend there is, or a safe one: what "fix this" without a choice does.
+        const preferred = index === 0 && (fix.safe || finding.fixes.length === 1) ? { isPreferred: true } : {};
         actions.push({ title: fix.title, kind: CodeActionKind.QuickFix, diagnostics: shownFor(finding), edit, ...preferred });
       });
     }
