@@ -1,6 +1,6 @@
 /** What only figures can tell: each branch of the computed rules, from faulty samples with one more thing changed. */
 import { describe, expect, it } from 'vitest';
-import { check, edited, faulty, short } from './support.ts';
+import { apply, check, edited, faulty, short } from './support.ts';
 
 const problems = (code: string, edits: readonly (readonly [string, string])[], from = code) => {
   const text = edited(faulty(from).text, edits);
@@ -29,6 +29,20 @@ describe('A04, setting below the need', () => {
     ]);
     expect(found).toHaveLength(1);
     expect(found[0]).toMatch(/^warning A04 PR1 in Punch.Through: PR1 \(70 bar\) is set too low/);
+  });
+
+  it('the mend raises the setting, within what the parts bear', () => {
+    const { text } = faulty('A04');
+    const [one] = problems('A04', []);
+    expect(one!.fixes.map((f) => f.title)).toEqual(['Set RV1 to 105 bar']);
+    expect(check(apply(text, one!.fixes[0]!), 'figures').problems.map((p) => p.what)).toEqual([]);
+    expect(problems('A04', [['rated 210 bar, code "1.0"', 'rated 100 bar, code "1.0"']])[0]!.fixes).toEqual([]);
+    expect(
+      problems('A04', [
+        ['set 60 bar', 'set low'],
+        ['fluid     HM46', 'let low = 60 bar\nfluid     HM46'],
+      ])[0]!.fixes,
+    ).toEqual([]);
   });
 
   it('too weak to begin with, at the stop it starts from', () => {

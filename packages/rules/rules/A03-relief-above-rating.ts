@@ -6,8 +6,8 @@ import { type Rating, ratingOf } from '../graph/rating.ts';
 import { pressureAt } from '../figures.ts';
 import { tell } from '../finding.ts';
 import { round, spreads } from '../fixes/values.ts';
-import { valueOrigin, writable } from '../fixes/sheet.ts';
-import type { Finding, Fix, Rule, RuleContext } from '../rule.ts';
+import { setTo } from '../fixes/setting.ts';
+import type { Finding, Rule, RuleContext } from '../rule.ts';
 import { against, show } from '../words.ts';
 import { pumpFlowTo } from '../graph/flow.ts';
 import { settingOf, withOverride } from './limits.ts';
@@ -38,15 +38,6 @@ function weakest(graph: Graph, guard: Guard): { readonly rating: Rating; readonl
     if (rating !== undefined && (found === undefined || rating.value < found.rating.value)) found = { rating, net };
   }
   return found;
-}
-
-function lowerTo(context: RuleContext, guard: Guard, limit: number, reached: number, set: number): Fix | undefined {
-  const property = guard.component.properties.find((p) => p.name === 'set' && p.part === undefined);
-  if (property?.value.type !== 'quantity' || property.value.from !== undefined || !writable(context, guard.component)) return undefined;
-  const to = round(context.circuit, (limit * set) / reached, 'pressure', 'down');
-  const { uri, start, end } = valueOrigin(context, property);
-  if (property.value.plusMinus !== undefined) return undefined;
-  return { title: `Set ${guard.component.id} to ${to.text}`, safe: false, changes: [{ uri, start, end, text: to.text }] };
 }
 
 /** Flow of the pumps whose oil leaves here: those without a lower guard that is as sure, m3/s. */
@@ -84,7 +75,9 @@ function judge(context: RuleContext, graph: Graph, guard: Guard): Finding[] {
       origin: property?.origin ?? guard.component.nameOrigin,
       place: guard.component.id,
       related: [{ message: `rated ${show(context.circuit, rating.value, 'pressure', rating.unit)}`, origin: rating.origin }],
-      fixes: [lowerTo(context, guard, rating.value, reached, setting.set)],
+      fixes: [
+        setTo(context, guard.component, 'set', round(context.circuit, (rating.value * setting.set) / reached, 'pressure', 'down').text),
+      ],
     }),
   ];
 }

@@ -1,11 +1,13 @@
 /** A04: the setting that limits the pressure is below what a step needs. */
-import { type ActuatorPoint, type LoadValue, type Point, read } from '@oilway/circuit';
-import { openAlways, waysFrom } from '../graph/reach.ts';
+import { type ActuatorPoint, type Point, read } from '@oilway/circuit';
+import { openAlways, waysFrom, waysTo } from '../graph/reach.ts';
 import { graphOf, type Graph } from '../graph/graph.ts';
 import { pressureAt } from '../figures.ts';
 import { tell } from '../finding.ts';
 import type { Finding, Rule, RuleContext } from '../rule.ts';
-import { round } from '../fixes/values.ts';
+import { setTo } from '../fixes/setting.ts';
+import { round, spreads } from '../fixes/values.ts';
+import { ratingOf } from '../graph/rating.ts';
 import { against, show } from '../words.ts';
 import { type Limit, limitOfNet } from './limits.ts';
 import { hasArrived, pressesOnPart } from './pressing.ts';
@@ -57,6 +59,12 @@ function shortfalls(context: RuleContext, graph: Graph): Short[] {
   return found;
 }
 
+/** True where everything at this pressure is rated for it, with the override of a relief. */
+function bears(graph: Graph, net: string, set: number): boolean {
+  const nets = [...waysTo(graph, net, openAlways).keys(), ...waysFrom(graph, net, spreads).keys()];
+  return nets.every((n) => (ratingOf(graph, n)?.value ?? Infinity) >= set * 1.1);
+}
+
 function say(context: RuleContext, graph: Graph, short: Short): Finding {
   const { actuator, limit, point, step } = short;
   const { circuit } = context;
@@ -65,12 +73,18 @@ function say(context: RuleContext, graph: Graph, short: Short): Finding {
   const enough = round(circuit, (limit.set * MARGIN * actuator.needed) / (actuator.available ?? 1), 'pressure', 'up');
   const stalls = actuator.shortBy !== undefined || (actuator.available ?? 0) < actuator.needed;
   const at = dimension === 'force' ? ` at ${show(circuit, actuator.position, 'length')}` : '';
-  const property = limit.by.properties.find((p) => p.name === (limit.by.kind === 'pump' ? 'compensator' : 'set'));
+  const name = limit.by.kind === 'pump' ? 'compensator' : 'set';
+  const property = limit.by.properties.find((p) => p.name === name);
+  const net = graph.netAt(limit.by.id, limit.by.kind === 'reducing' ? 'A' : 'P')?.id;
+  // Raising a compensator asks for its relief to follow; parts that bear no more ask for a larger cylinder.
+  const raise =
+    net !== undefined && limit.by.kind !== 'pump' && bears(graph, net, enough.si) ? setTo(context, limit.by, name, enough.text) : undefined;
   return tell(A04, {
     what: `${limit.by.id} (${show(circuit, limit.set, 'pressure', limit.unit)}) is set too low for ${step}: ${actuator.id} ${stalls ? 'stalls' : 'has hardly anything to spare'}${at}, it presses with ${value} of ${bound} needed. It takes about ${enough.text}.`,
     origin: property?.origin ?? limit.by.nameOrigin,
     place: limit.by.id,
     state: step,
+    fixes: [raise],
     related: [
       ...(graph.component(actuator.id) === undefined
         ? []

@@ -7,6 +7,7 @@ import { show } from '../words.ts';
 import { type HighLow, highLowUnits } from './high-low.ts';
 import { limitOfPump, settingOf } from './limits.ts';
 import { relatedTo } from './pump-guard.ts';
+import { driveOf } from './sources.ts';
 
 function tooHigh(context: RuleContext, graph: Graph, unit: HighLow): Finding | undefined {
   const opens = settingOf(unit.unloading);
@@ -24,6 +25,8 @@ function tooHigh(context: RuleContext, graph: Graph, unit: HighLow): Finding | u
     origin: unit.unloading.properties.find((p) => p.name === 'set')?.origin ?? unit.unloading.nameOrigin,
     place: unit.unloading.id,
     related: [relatedTo(limit.by, `set ${at(limit.set, limit.unit)}`)],
+    // A valve that never opens overloads the drive: one cause.
+    ...(never ? { hidesAt: [{ code: 'B04', place: driveOf(unit.low) ?? '' }] } : {}),
     computed: false,
   });
 }

@@ -28,7 +28,7 @@ function thresholdOf(graph: Graph, pressureSwitch: Component): Threshold | undef
 /** True where a load or the other chamber can raise the pressure above what the pumps give: only figures can tell. */
 function mayBeRaised(graph: Graph, net: string): boolean {
   const sides = new Set(waysTo(graph, net, openAlways).keys());
-  const carried = carriedLoads(graph).some((c) => sides.has(graph.netAt(c.actuator.id, c.port)?.id ?? ''));
+  const carried = carriedLoads(graph).some((c) => c.fixed && sides.has(graph.netAt(c.actuator.id, c.port)?.id ?? ''));
   return carried || graph.ofKind('cylinder').some((c) => sides.has(graph.netAt(c.id, 'rod')?.id ?? ''));
 }
 
@@ -124,7 +124,7 @@ over the relief.
 Once the steps are computed: error where a step can end only with the switch on and the pressure there never gets so high; warning where it is on as
 soon as the step begins.
 
-Stays clean: a threshold below the relief; a switch on a chamber that a load or the other chamber can raise (only figures can tell); level,
+Stays clean: a threshold below the relief; a switch on a chamber that a weight, a fixed force or the other chamber can raise (only figures can tell); level,
 temperature and filter switches.`,
   detect(context) {
     const graph = graphOf(context.circuit);
