@@ -79,6 +79,7 @@ export const motor: Kind = {
     const volumetric = siOr(component, into, 'volumetric', 0.94, '94 % at rated pressure');
     const mechanical = siOr(component, into, 'mechanical', 0.9, '90 %');
     const rated = ratedAt(component, 'A') ?? DEFAULT_RATED;
+    if (!(rated > 0)) return into.cannot(component, `${component.id}: \`rated\` is no pressure at which \`volumetric\` could hold`);
     if (ratedAt(component, 'A') === undefined) {
       into.assume({
         component: component.id,

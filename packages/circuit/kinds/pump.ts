@@ -135,6 +135,7 @@ export const pump: Kind = {
     const volumetric = siOr(component, into, 'volumetric', 0.92, '92 % at rated pressure');
     siOr(component, into, 'mechanical', DEFAULT_MECHANICAL, '92 %');
     const rated = ratedAt(component, 'P') ?? DEFAULT_RATED;
+    if (!(rated > 0)) return into.cannot(component, `${component.id}: \`rated\` is no pressure at which \`volumetric\` could hold`);
     if (ratedAt(component, 'P') === undefined) {
       into.assume({
         component: component.id,
