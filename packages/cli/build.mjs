@@ -33,7 +33,7 @@ export async function build() {
   const fresh = `${BUNDLE}.${process.pid}`;
   await bundle({
     stdin: {
-      contents: "import './older-node.ts';\nimport { start } from './main.ts';\nawait start();\n",
+      contents: "import { start } from './main.ts';\nawait start();\n",
       resolveDir: here,
       sourcefile: 'entry.ts',
       loader: 'ts',

@@ -1,4 +1,6 @@
 /** The `oilway` command: reads its arguments, runs one command, sets the exit status. */
+// First: what follows may use it while it is loaded.
+import './older-node.ts';
 import { parseArgs } from 'node:util';
 import { check } from './commands/check.ts';
 import { explain } from './commands/explain.ts';

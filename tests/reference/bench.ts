@@ -2,7 +2,7 @@
 import { analyse } from '@oilway/language';
 import { engines } from '../../packages/cli/engines.ts';
 import type { ActuatorPoint, Circuit, Point, RequirementResult, StepResult, Study } from '@oilway/circuit';
-import { format, unitOf, fromSi, type Dimension } from '@oilway/quantity';
+import { fromSi, unitOf } from '@oilway/quantity';
 
 export interface Bench {
   readonly text: string;
@@ -85,11 +85,6 @@ export async function bench(text: string): Promise<Bench> {
 export function inUnits(si: number, unit: string): number {
   const known = unitOf(unit);
   return known === undefined ? si : fromSi(si, known);
-}
-
-/** The figure as the product shows it in a unit. */
-export function shown(si: number, dimension: Dimension, unit: string): string {
-  return format(si, dimension, { unit });
 }
 
 /** A lossless supply: pump, relief that holds `set` within a hair, oil of 900 kg/m3 (0.9 of water) at 40 degC that hardly gives way. */
