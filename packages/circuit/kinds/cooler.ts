@@ -50,7 +50,6 @@ export const cooler: Kind = {
         a: into.nodeOrBlind(component, 'in'),
         b: into.nodeOrBlind(component, 'out'),
         k: pathK(passesOf(component, into)),
-        opening: into.parameter(component, 'passes', 1),
       },
       ['in', 'out'],
       'in to out',

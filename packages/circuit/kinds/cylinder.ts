@@ -162,7 +162,7 @@ export const cylinder: Kind = {
       }
       const behind = into.inner(component, `cushion ${port}`);
       into.chamber(component, { node: behind, ...chamber }, undefined, area * stroke);
-      into.add(
+      const element = into.add(
         component,
         {
           type: 'cushion',
@@ -177,6 +177,7 @@ export const cylinder: Kind = {
         [undefined, port],
         `cushion, ${port} side`,
       );
+      into.limitation({ component: component.id, words: `${component.id} cushion`, targets: [{ element, size: 'kMin' }] });
       into.knot(
         component.id,
         port === 'cap' ? Math.min(cushion, stroke / 2) : stroke - Math.min(cushion, stroke / 2),

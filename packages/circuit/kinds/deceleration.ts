@@ -66,7 +66,6 @@ export const deceleration: Kind = {
         actuator,
         at: from <= to ? [from, to] : [to, from],
         opening: from <= to ? [1, 0] : [0, 1],
-        factor: into.parameter(component, 'passes', 1),
       },
       ['in', 'out'],
       'in to out',

@@ -98,7 +98,6 @@ export function addDirectional(component: Component, into: Assembly): string | u
           actuator: ofCam.actuator,
           at: ofCam.at,
           opening: opening1,
-          factor: into.parameter(component, `passes ${words}`, 1),
         },
         ports,
         words,

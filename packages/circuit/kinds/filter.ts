@@ -59,12 +59,7 @@ export const filter: Kind = {
     const k = pathK({ flow: passes.flow, drop: passes.drop * into.oil.filterDrop });
     const a = into.nodeOrBlind(component, 'in');
     const b = into.nodeOrBlind(component, 'out');
-    const element = into.add(
-      component,
-      { type: 'path', a, b, k, opening: into.parameter(component, 'passes', 1) },
-      ['in', 'out'],
-      'in to out',
-    );
+    const element = into.add(component, { type: 'path', a, b, k }, ['in', 'out'], 'in to out');
     if (bypass?.type === 'bypass' && bypass.crack !== undefined) {
       into.add(component, { type: 'check', a, b, k, crack: toMPa(bypass.crack.si) }, ['in', 'out'], 'bypass');
     }

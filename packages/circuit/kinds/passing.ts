@@ -34,9 +34,8 @@ export function addCheck(
 ): boolean {
   const k = checkK(component, into, crack);
   if (k === undefined) return false;
-  const opening = into.parameter(component, `passes ${words}`, 1);
-  into.add(component, { type: 'check', a: from.node, b: to.node, k, crack: toMPa(crack), opening }, [from.port, to.port], words);
-  into.limitation({ component: component.id, words: `${component.id} passes ${words}`, targets: [{ parameter: opening }] });
+  const element = into.add(component, { type: 'check', a: from.node, b: to.node, k, crack: toMPa(crack) }, [from.port, to.port], words);
+  into.limitation({ component: component.id, words: `${component.id} passes ${words}`, targets: [{ element, size: 'k' }] });
   return true;
 }
 

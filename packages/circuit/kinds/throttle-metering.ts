@@ -29,7 +29,6 @@ export function addMetering(component: Component, into: Assembly, a: End, b: End
         a: a.node,
         b: b.node,
         k: pathK(orificeAt(orifice, into.oil.density)),
-        opening: into.parameter(component, 'orifice', 1),
       },
       [a.port, b.port],
       'in to out',

@@ -143,3 +143,34 @@ return V1.T, RV1 to R1`);
   run.advance(3, []);
   expect(run.now().velocities.C1).toBeLessThan(-0.1);
 });
+
+test('a brake lets go as its release pressure rises, and holds again when it is gone', () => {
+  const m = machineOf(`${HEAD}${delivers('P1', 40, 'V1.P, RV1')}
+relief RV1 (set 150 bar, passes 60 L/min at 5 bar)
+directional V1 (4/3, centre open, spring to centre, coil a SOL1, coil b SOL2, takes 80 ms, passes 60 L/min at 5 bar)
+motor HM1 (displacement 200 cm3/rev, gear 10:1, fastest 400 rpm, rated 250 bar)
+shuttle SH1
+throttle OR1 (orifice 1 mm, reverse check)
+brake BR1 (on HM1, opens 20 bar, torque 180 N.m, volume 30 cm3)
+counterbalance CB1 (set 200 bar, ratio 4:1, passes 60 L/min at 6 bar)
+working up: V1.A to CB1.V
+working CB1.C to HM1.A
+working side_b: V1.B to HM1.B
+pilot side_b to CB1.X
+working up to SH1.A
+working side_b to SH1.B
+working SH1.C to OR1 to BR1
+drain HM1.L to R1
+return V1.T, RV1 to R1`);
+  const hoist = { ...blank, loads: { HM1: load(-900, 0, 20) } };
+  const run = m.start(hoist, m.settle(hoist));
+  run.advance(1, []);
+  expect(Math.abs(run.now().velocities.HM1 ?? 1)).toBeLessThan(1e-3);
+  run.shift('V1', { position: 'a' });
+  const up = run.advance(8, []);
+  expect(up.failed).toBeUndefined();
+  expect(((run.now().velocities.HM1 ?? 0) * 60) / (2 * Math.PI)).toBeCloseTo(20, 0);
+  run.shift('V1', { position: 'centre' });
+  run.advance(10, []);
+  expect(Math.abs(run.now().velocities.HM1 ?? 1)).toBeLessThan(1e-3);
+});
