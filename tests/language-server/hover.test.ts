@@ -52,6 +52,7 @@ describe('figures', () => {
     ['step', '04-traverse-feed', 'step O|ut'],
     ['cycle', '05-two-pump', 'cycle For|m'],
     ['requirement', '04-traverse-feed', 'req|uire 1A1 speed from 255'],
+    ['requirement-of-the-run', '05-two-pump', 'req|uire C1 force'],
     ['coil', '05-two-pump', 'energise SO|L0'],
     ['switch', '05-two-pump', 'switch    PS|1'],
     ['reservoir', '05-two-pump', 'reservoir R|1'],

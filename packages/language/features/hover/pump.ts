@@ -4,7 +4,8 @@ import type { Analysis } from '../analysis.ts';
 import { componentOf, extent, flowInto, placesOf, pressureAt, type Place } from './places.ts';
 import { notComputed, restsOn, standing } from './rests.ts';
 import { literal, paragraphs, Show, table } from './show.ts';
-import { shaftWorking, workingText } from './working.ts';
+import { flowWorking, shaftWorking } from './supply-working.ts';
+import { workingText } from './working.ts';
 
 const delivered = (point: Point, id: string): number | undefined => {
   const flow = flowInto(point, id, 'P');
@@ -54,13 +55,14 @@ export function hoverPump(analysis: Analysis, pump: Component): string {
     .flatMap((place) => place.points.map((point) => ({ place, point })))
     .filter((one) => one.point.solved)
     .sort((a, b) => (b.point.power[pump.id] ?? 0) - (a.point.power[pump.id] ?? 0))[0];
-  const working = hardest ? shaftWorking(circuit, pump.id, hardest.point) : undefined;
+  const flow = hardest && flowWorking(circuit, pump.id, hardest.point);
+  const shaft = hardest && shaftWorking(circuit, pump.id, hardest.point);
   return paragraphs(
     title,
     table(['Step', 'Flow', 'Pressure', 'Hydraulic power', 'Shaft power', drive ? `Load of ${drive.id}` : 'Load of drive'], rows),
-    working && hardest
-      ? paragraphs(`**Working**, ${hardest.place.label} (${hardest.point.label})`, workingText(working, show, 'Shaft power'))
-      : '',
+    hardest && (flow || shaft) ? `**Working**, ${hardest.place.label} (${hardest.point.label})` : '',
+    flow ? workingText(flow, show, 'Flow') : '',
+    shaft ? workingText(shaft, show, 'Shaft power') : '',
     standing(analysis),
     restsOn(analysis, pump.id),
   );

@@ -4,6 +4,8 @@ import type { Analysis } from '../analysis.ts';
 import { extent, flowInto, netOf, placesOf, pressureAt, type Place } from './places.ts';
 import { notComputed, restsOn, standing } from './rests.ts';
 import { meteringOf } from './metering.ts';
+import { reliefWorking } from './supply-working.ts';
+import { workingText } from './working.ts';
 import { literal, paragraphs, Show, table } from './show.ts';
 
 /** Below this a flow is leakage, m3/s (0.005 L/min). */
@@ -37,6 +39,12 @@ export function hoverValve(analysis: Analysis, component: Component): string {
       : ports.map((port) => portCell(circuit, component.id, port, place, show))),
     component.kind === 'relief' ? (place.points.some((point) => point.lifting.includes(component.id)) ? 'yes' : 'no') : '',
   ]);
+  // A relief's working: where it holds the highest pressure.
+  const lifted = places
+    .flatMap((place) => place.points.map((point) => ({ place, point })))
+    .filter((one) => one.point.lifting.includes(component.id))
+    .sort((a, b) => (pressureAt(circuit, b.point, component.id, 'P') ?? 0) - (pressureAt(circuit, a.point, component.id, 'P') ?? 0))[0];
+  const working = lifted && reliefWorking(circuit, component.id, lifted.point);
   const remarks = [
     ...new Set(
       places.flatMap((place) =>
@@ -49,6 +57,9 @@ export function hoverValve(analysis: Analysis, component: Component): string {
   return paragraphs(
     title,
     rows.length > 0 ? table(head, rows) : '',
+    working && lifted
+      ? paragraphs(`**Working**, ${lifted.place.label} (${lifted.point.label})`, workingText(working, show, 'Pressure at P'))
+      : '',
     remarks.slice(0, 4).map(literal).join('  \n'),
     standing(analysis),
     restsOn(analysis, component.id),
