@@ -152,6 +152,26 @@ function sinks(context: RuleContext, graph: Graph, carried: Carried): Finding | 
   });
 }
 
+/** A cylinder that stands or hangs and says nothing of its load: nothing can be decided, and that is said. */
+function unsaid(context: RuleContext): Finding[] {
+  return context.circuit.components.flatMap((cylinder) => {
+    const attitude = cylinder.properties.find((p) => p.name === 'attitude')?.value;
+    if (cylinder.kind !== 'cylinder' || attitude?.type !== 'attitude' || Math.abs(Math.sin(attitude.angle)) < 1e-9) return [];
+    const loads = context.circuit.loads.filter((l) => l.actuators.includes(cylinder.id));
+    if (loads.some((l) => l.properties.some((p) => ['mass', 'inward', 'outward'].includes(p.name)))) return [];
+    return [
+      tell(D01, {
+        what: `${cylinder.id} does not lie level, and no mass, inward or outward force is declared for it: whether it needs a holding valve cannot be decided.`,
+        severity: 'information',
+        origin: cylinder.nameOrigin,
+        place: cylinder.id,
+        mend: 'Say the load: `mass`, `inward` or `outward`; `inward 0 N` where nothing acts on it.',
+        computed: false,
+      }),
+    ];
+  });
+}
+
 export const D01: Rule = {
   code: 'D01',
   name: 'overrun-no-holding',
@@ -173,16 +193,18 @@ closes the chamber. The way it sinks a minute follows from the leakage declared,
 practice, from memory).
 
 Stays clean: a pilot-operated check, counterbalance valve, check or poppet valve at the chamber; a closed hand valve; a pressed part that springs back
-within a few millimetres (a table that falls to nothing); a load smaller than the friction of the seals; a level cylinder without declared forces.`,
+within a few millimetres (a table that falls to nothing); a load smaller than the friction of the seals; a level cylinder without declared forces. A cylinder that is not
+level and says nothing of its load is told for information.`,
   detect(context) {
     const graph = graphOf(context.circuit);
     const told = new Set<string>();
-    return carriedLoads(graph).flatMap((carried) => {
+    const found = carriedLoads(graph).flatMap((carried) => {
       if (carried.actuator.kind === 'cylinder' && !beyondSeals(carried)) return [];
-      const found = falls(context, graph, carried) ?? sinks(context, graph, carried);
-      if (found === undefined || told.has(found.place)) return [];
-      told.add(found.place);
-      return [found];
+      const one = falls(context, graph, carried) ?? sinks(context, graph, carried);
+      if (one === undefined || told.has(one.place)) return [];
+      told.add(one.place);
+      return [one];
     });
+    return [...found, ...unsaid(context)];
   },
 };
