@@ -1,5 +1,6 @@
 /** Completion: what is offered where; what is offered first; nothing in the wrong place. */
 import { describe, expect, test } from 'vitest';
+import { cursorAt, expectsMore } from '../../packages/language/features/completion/context.ts';
 import { completionAt } from '../../packages/language/features/completion/index.ts';
 import { plain, SNIPPETS } from '../../packages/language/features/completion/snippets.ts';
 import { analyseText, BENCH, check } from './support/check.ts';
@@ -162,6 +163,30 @@ describe('control', () => {
     expect(offered(`${BENCH}require C1 speed in |`)).toEqual(expect.arrayContaining(['Out', 'Back', 'REST']));
     expect(offered(`${BENCH}require C1 speed in Out at least 20 |`)).toContain('mm/s');
     expect(offered(`${BENCH}require C1 speed in Out at least 20 |`)).not.toContain('bar');
+  });
+});
+
+describe('a space', () => {
+  const opens = (marked: string): boolean => check(marked, (analysis, cursor) => expectsMore(cursorAt(analysis, cursor)));
+  test.each([
+    'relief RV9 (set 100 |)',
+    'working V1.A to |',
+    'interlock |',
+    'pump P9 (driven by |)',
+    'emergency stop |',
+    'require C1 speed in |',
+  ])('opens the list: %s', (line) => {
+    expect(opens(BENCH + line)).toBe(true);
+  });
+  test.each([
+    'cylinder C9 |',
+    'cylinder C9 (bore 63 mm, |)',
+    'cylinder C9 (|',
+    '|',
+    'circuit X "a |b"',
+    'require C1 speed at least 5 mm/s |',
+  ])('does not, so that Enter breaks the line: %s', (line) => {
+    expect(opens(BENCH + line)).toBe(false);
   });
 });
 

@@ -3,6 +3,7 @@ import { ErrorCodes, ResponseError, SemanticTokensRequest, type Connection, type
 import type { Origin } from '@oilway/circuit';
 import type { Analysis } from '../features/analysis.ts';
 import { codeActions } from '../features/code-actions.ts';
+import { cursorAt, expectsMore } from '../features/completion/context.ts';
 import { completionAt } from '../features/completion/index.ts';
 import type { DiagnosticContext } from '../features/diagnostics.ts';
 import { workspaceEdit } from '../features/edits.ts';
@@ -54,9 +55,9 @@ export function answerRequests(connection: Connection, room: RequestRoom): void 
     const found = here && hoverAt(here.analysis, here.offset);
     return found && here ? { contents: { kind: 'markdown', value: found.markdown }, range: here.analysis.lines.range(found) } : null;
   });
-  connection.onCompletion(({ textDocument, position }) => {
+  connection.onCompletion(({ textDocument, position, context }) => {
     const here = at(textDocument.uri, position);
-    if (!here) return [];
+    if (!here || (context?.triggerCharacter === ' ' && !expectsMore(cursorAt(here.analysis, here.offset)))) return [];
     return completionAt(here.analysis, here.offset, {
       snippets: room.snippets(),
       rules: ruleList(),

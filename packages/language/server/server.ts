@@ -30,7 +30,7 @@ export const SERVER_NAME = 'oilway';
 /** Address of a rule's page where the client names none. */
 const RULE_PAGE = 'oilway-rule:/{code}.md';
 /** Letters behind which an editor asks for proposals by itself. */
-const TRIGGERS = ['.', '(', ',', ' '];
+const TRIGGERS = ['.', ' '];
 
 export function startServer(connection: Connection, host: Host, analyser: Analyser): void {
   let options: InitializationOptions = {};

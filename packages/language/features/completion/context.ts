@@ -1,6 +1,6 @@
 /** Where the cursor stands in its statement: read from tokens, so that it works on a line that does not parse yet. */
 import type { Analysis } from '../analysis.ts';
-import { isLineHead } from '../../parse/words.ts';
+import { isLineHead, LINE_FUNCTIONS } from '../../parse/words.ts';
 import type { Token } from '../text/scan.ts';
 
 const CONTINUES_BEFORE: ReadonlySet<string> = new Set([',', 'to', 'and', 'or', 'until', 'for', '(', ':']);
@@ -119,6 +119,26 @@ export function cursorAt(analysis: Analysis, offset: number): Cursor {
     owner = parts.length > 0 ? parts.join('.') : undefined;
   }
   return { prefix, replace: { start, end: offset }, block, before, after, afterNumber, owner, quiet: false };
+}
+
+/** Words after which something must follow on the line. */
+const OPENERS: ReadonlySet<string> = new Set(
+  (
+    'to from by with as until and or energise shift stop run needs over above below require interlock emergency load plug while display allow use ' +
+    'never in on least most between reaches within'
+  ).split(' '),
+);
+
+/**
+ * True where a space alone is reason enough to offer something: a unit after a number, a name after `energise`.
+ * Elsewhere a list that opens at a space would take the next Enter, and one breaks lines after commas and brackets.
+ */
+export function expectsMore(cursor: Cursor): boolean {
+  const last = cursor.before.at(-1);
+  if (cursor.quiet || cursor.prefix !== '' || !last) return false;
+  if (cursor.afterNumber) return true;
+  if (last.type !== 'word') return false;
+  return OPENERS.has(last.text) || (LINE_FUNCTIONS as readonly string[]).includes(last.text);
 }
 
 /** Open round brackets at the end of the tokens. */

@@ -135,8 +135,11 @@ function working(rows: readonly Row[], circuit: Parameters<typeof pressureAt>[0]
   const force = forceWorking(circuit, id, worst.point) ?? torqueWorking(circuit, id, worst.point);
   const speed = speedWorking(circuit, id, worst.point);
   if (!force && !speed) return '';
+  // A label that names the place needs no second one; a motor has no place.
+  const named = /\d/.test(worst.point.label) || units.force === 'torque';
+  const where = named ? worst.point.label : `${show.position(worst.at.position, units.position)} (${worst.point.label})`;
   return paragraphs(
-    `**Working**, ${row.place.label} ${units.words[row.direction + 1]} ${units.force === 'force' ? `at ${show.position(worst.at.position, units.position)} ` : ''}(${worst.point.label})`,
+    `**Working**, ${row.place.label} ${units.words[row.direction + 1]}, ${where}`,
     force ? workingText(force, show, units.force === 'force' ? 'Force on the load' : 'Torque on the load') : '',
     speed ? workingText(speed, show, 'Speed') : '',
   );
