@@ -61,7 +61,8 @@ describe('manifest', () => {
 
   it('names files that are there, and bundles that the build makes', () => {
     const { languages, snippets } = manifest.contributes;
-    const files = [manifest.icon, languages[0].configuration, languages[0].icon.light, languages[0].icon.dark, snippets[0].path];
+    const media = manifest.contributes.walkthroughs[0].steps.map((step: { media: { image: string } }) => step.media.image);
+    const files = [...media, manifest.icon, languages[0].configuration, languages[0].icon.light, languages[0].icon.dark, snippets[0].path];
     for (const file of files) expect(existsSync(join(folder, file)), file).toBe(true);
     const build = readFileSync(join(folder, 'scripts/build.mjs'), 'utf8');
     for (const made of [manifest.main, manifest.browser, manifest.contributes.grammars[0].path]) {
