@@ -213,14 +213,20 @@ export class Run implements MachineRun {
 
   advance(until: number, watches: readonly Watch[], onStep?: (time: number, solution: Solution) => void): RunReport {
     const own = watches.map((w) => engineWatch(this.#assembled, w, this.#setting));
-    const step = onStep === undefined ? undefined : (time: number) => onStep(time, this.#solution(this.#engine.now(false)));
+    // Where the bodies stood at each step: what happened there is put into words afterwards.
+    const trail = new Map<number, Float64Array>();
+    const step = (time: number): void => {
+      trail.set(time, Float64Array.from(this.#engine.positions));
+      onStep?.(time, this.#solution(this.#engine.now(false)));
+    };
     for (let count = 0; ; count++) {
       if (count > MOST_EVENTS) return this.#report([], `more than ${MOST_EVENTS} valve events without end`);
       const turned = this.#turnNow();
       const internal = this.#events.armed(this.#setting, this.#wanted, (id) => this.#isFrozen(id) || this.#shifting.has(id));
       const stop = Math.min(until, ...this.#appointments());
       const report = this.#engine.advance(stop, [...own, ...internal.map((i): TransientWatch => i.watch)], step);
-      for (const h of report.happened) this.#note(h);
+      for (const h of report.happened) this.#note(h, trail.get(h.time) ?? this.#engine.positions);
+      trail.clear();
       this.#arrivals();
       if (report.failed !== undefined) return this.#report([], report.failed);
       const mine = report.fired.filter((f) => f < own.length);
@@ -282,10 +288,13 @@ export class Run implements MachineRun {
     else this.#move(event.of, event.stand);
   }
 
-  #note(h: { readonly time: number; readonly actuator: number; readonly what: 'stop reached' | 'stop left' | 'knot' }): void {
+  #note(
+    h: { readonly time: number; readonly actuator: number; readonly what: 'stop reached' | 'stop left' | 'knot' },
+    positions: Float64Array,
+  ): void {
     const body = this.#assembled.bodies[h.actuator];
     if (body === undefined) return;
-    const x = this.#engine.positions[h.actuator] ?? 0;
+    const x = positions[h.actuator] ?? 0;
     if (h.what === 'knot') {
       for (const k of body.knots) if (Math.abs(k.at - x) < 1e-5) this.#happened.push({ time: h.time, of: body.id, words: k.words });
       return;

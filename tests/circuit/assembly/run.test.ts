@@ -1,6 +1,7 @@
 /** Runs in time: shifting, stops, watches, memory bits, accumulators. */
 import { expect, test } from 'vitest';
 import { delivers, HEAD, toBar } from '../support/bench.ts';
+import { HEAD_AND_FEED } from '../support/machines.ts';
 import { blank, load, machineOf } from '../support/text.ts';
 
 const RAM = `${HEAD}${delivers('P1', 30, 'V1.P, RV1')}
@@ -173,4 +174,21 @@ return V1.T, RV1 to R1`);
   run.shift('V1', { position: 'centre' });
   run.advance(10, []);
   expect(Math.abs(run.now().velocities.HM1 ?? 1)).toBeLessThan(1e-3);
+});
+
+test('what happens along the way is told in words, when it happens', () => {
+  const m = machineOf(HEAD_AND_FEED);
+  const setting = { ...blank, valves: { V0: { position: 'b' as const } }, loads: { C2: load(0, 0, 250) } };
+  const run = m.start(setting, m.settle(setting));
+  run.shift('V2', { position: 'a' });
+  const report = run.advance(20, [{ what: 'position', body: 'C2', threshold: 0.3, edge: 'rising' }]);
+  const at = (words: string) => report.happened.find((h) => h.words === words)?.time ?? Number.NaN;
+  // 371 mm/s in fast motion, the valve over in 50 ms; then 35 mm at 10 mm/s.
+  expect(at('DV1 begins to close')).toBeGreaterThan(0.25 / 0.371);
+  expect(at('DV1 begins to close')).toBeLessThan(0.25 / 0.371 + 0.06);
+  expect(at('DV1 closed')).toBeGreaterThan(at('DV1 begins to close'));
+  // 35 mm less the 2 mm by which 0.35 L of rod-side oil gives way when its pressure rises by 180 bar.
+  expect(report.time - at('DV1 closed')).toBeGreaterThan(3.2);
+  expect(report.time - at('DV1 closed')).toBeLessThan(3.5);
+  expect(report.happened.map((h) => h.words)).toContain('UV1 has lifted');
 });
