@@ -39,4 +39,6 @@ export interface InitializationOptions {
   readonly studyWorker?: string;
   /** Address of a rule's page; `{code}` stands for the code. */
   readonly rulePage?: string;
+  /** The client's command that opens the list of proposals: run after a proposal that asks for a second one (`C1.` and its ports). */
+  readonly suggestCommand?: string;
 }

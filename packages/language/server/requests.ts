@@ -4,7 +4,7 @@ import type { Origin } from '@oilway/circuit';
 import type { Analysis } from '../features/analysis.ts';
 import { codeActions } from '../features/code-actions.ts';
 import { cursorAt, expectsMore } from '../features/completion/context.ts';
-import { completionAt } from '../features/completion/index.ts';
+import { completionAt, type CompletionOptions } from '../features/completion/index.ts';
 import type { DiagnosticContext } from '../features/diagnostics.ts';
 import { workspaceEdit } from '../features/edits.ts';
 import { foldingRanges } from '../features/folding.ts';
@@ -29,8 +29,8 @@ export interface RequestRoom {
   context(analysis: Analysis): DiagnosticContext;
   /** Undefined where hints are switched off. */
   hints(): HintSettings | undefined;
-  /** The client fills in snippets. */
-  snippets(): boolean;
+  /** What the client can do with proposals. */
+  proposals(): Pick<CompletionOptions, 'snippets' | 'suggestCommand'>;
 }
 
 /** A refusal that the editor shows as it is. */
@@ -59,7 +59,7 @@ export function answerRequests(connection: Connection, room: RequestRoom): void 
     const here = at(textDocument.uri, position);
     if (!here || (context?.triggerCharacter === ' ' && !expectsMore(cursorAt(here.analysis, here.offset)))) return [];
     return completionAt(here.analysis, here.offset, {
-      snippets: room.snippets(),
+      ...room.proposals(),
       rules: ruleList(),
     });
   });

@@ -208,7 +208,10 @@ export function startServer(connection: Connection, host: Host, analyser: Analys
     uris: () => session?.uris ?? [],
     context: contextOf,
     hints: () => (settings.hints.enabled ? settings.hints : undefined),
-    snippets: () => client.textDocument?.completion?.completionItem?.snippetSupport === true,
+    proposals: () => ({
+      snippets: client.textDocument?.completion?.completionItem?.snippetSupport === true,
+      ...(options.suggestCommand ? { suggestCommand: options.suggestCommand } : {}),
+    }),
   });
 
   connection.onShutdown(() => {

@@ -21,7 +21,7 @@ export async function start(context: vscode.ExtensionContext, make: MakeClient, 
   );
 
   const launch = async (): Promise<void> => {
-    const client = make(clientOptions(output, { rulePage: RULE_PAGE, ...more }));
+    const client = make(clientOptions(output, { rulePage: RULE_PAGE, suggestCommand: 'editor.action.triggerSuggest', ...more }));
     running = client;
     status.follow(client);
     context.subscriptions.push(serveFiles(client));

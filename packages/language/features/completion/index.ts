@@ -14,6 +14,8 @@ import { HEAD_ABOUT } from './heads.ts';
 export interface CompletionOptions {
   /** The client can fill in snippets. */
   readonly snippets: boolean;
+  /** Command that opens the list again; absent where the client has none. */
+  readonly suggestCommand?: string;
   /** Codes that `allow` may name, with their titles. */
   readonly rules?: readonly { readonly code: string; readonly title: string }[];
 }
@@ -44,7 +46,7 @@ export function completionAt(analysis: Analysis, offset: number, options: Comple
   const seen = new Set<string>();
   return proposals(analysis, cursor, options)
     .filter((one) => !seen.has(one.label) && seen.add(one.label))
-    .map((one, order) => toItem(one, order, analysis, cursor, options.snippets))
+    .map((one, order) => toItem(one, order, analysis, cursor, options))
     .filter((one): one is CompletionItem => one !== undefined);
 }
 

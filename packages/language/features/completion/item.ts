@@ -24,10 +24,10 @@ export function toItem(
   order: number,
   analysis: Analysis,
   cursor: Cursor,
-  snippets: boolean,
+  options: { readonly snippets: boolean; readonly suggestCommand?: string },
 ): CompletionItem | undefined {
   const text = proposal.insert ?? proposal.label;
-  if (proposal.snippet && !snippets) return undefined;
+  if (proposal.snippet && !options.snippets) return undefined;
   const rank = String(proposal.rank ?? 5).padStart(2, '0');
   return {
     label: proposal.label,
@@ -36,7 +36,7 @@ export function toItem(
     ...(proposal.detail ? { detail: proposal.detail } : {}),
     ...(proposal.about ? { documentation: { kind: 'markdown' as const, value: proposal.about } } : {}),
     ...(proposal.snippet ? { insertTextFormat: InsertTextFormat.Snippet } : {}),
-    ...(proposal.again ? { command: { title: 'More', command: 'editor.action.triggerSuggest' } } : {}),
+    ...(proposal.again && options.suggestCommand ? { command: { title: 'More', command: options.suggestCommand } } : {}),
     textEdit: { range: analysis.lines.range(cursor.replace), newText: text },
   };
 }
