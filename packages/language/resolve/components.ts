@@ -127,6 +127,9 @@ export class Components {
       const component = kind === 'directional' ? this.withPositions(base) : base;
       context.components.set(id, component);
       this.check(component);
+      if (context.uses && component.part !== undefined && context.names.get(component.part) === undefined) {
+        this.unknown[id] ??= `${id}: its part \`${component.part}\` stands in another file`;
+      }
       this.addCoils(component);
       return component;
     });

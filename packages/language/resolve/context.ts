@@ -11,12 +11,15 @@ import {
   type Chain,
 } from '@oilway/circuit';
 import type { Finding, Fix } from '@oilway/rules';
-import type { Let, Name, Ref } from '../generated/ast.ts';
+import type { Name, Ref, Value } from '../generated/ast.ts';
 import { type FindingParts, finding } from '../parse/finding.ts';
 import type { BrokenStatement, Parsed, Placed } from '../parse/parse.ts';
 import { LINE_FUNCTIONS } from '../parse/words.ts';
 import { nearest } from '../parse/near.ts';
 import type { PortMention, SymbolDeclaration, SymbolKind, SymbolReference } from './symbols.ts';
+
+/** Beyond so many unknown names a file is no slip of the hand, and proposals would only cost time. */
+const MOST_PROPOSED = 200;
 
 const LINES: ReadonlySet<string> = new Set(LINE_FUNCTIONS);
 /** Kinds with a `coil` setting. */
@@ -26,6 +29,12 @@ const HAVE_COILS: ReadonlySet<string> = new Set<string>([
 
 export type { Placed } from '../parse/parse.ts';
 
+/** A `let`, or a parameter of an assembly with its default. */
+export interface ConstantNode extends Placed {
+  readonly name?: Placed | undefined;
+  readonly value?: Value | undefined;
+}
+
 export class Context {
   readonly uri: string;
   readonly text: string;
@@ -33,7 +42,9 @@ export class Context {
   readonly names = new Map<string, SymbolDeclaration>();
   readonly references: SymbolReference[] = [];
   readonly portMentions: PortMention[] = [];
-  readonly constants = new Map<string, Let>();
+  readonly constants = new Map<string, ConstantNode>();
+  /** The file uses another one: parts, assemblies and constants may stand there. */
+  uses = false;
   readonly components = new Map<string, Component>();
   readonly notComputed: NotComputed[] = [];
   /** Short step names: `Clamp` -> ids; more than one: the cycle must be written. */
@@ -44,6 +55,7 @@ export class Context {
   private readonly perhaps: ReadonlySet<string>;
   private readonly broken: readonly BrokenStatement[];
   private readonly said = new Set<string>();
+  private unknownNames = 0;
 
   constructor(parsed: Pick<Parsed, 'uri' | 'text' | 'broken' | 'originOf'>) {
     this.uri = parsed.uri;
@@ -79,6 +91,7 @@ export class Context {
 
   /** True where the component's own line, or that of its part, does not parse: what it lacks may be in the lost part. */
   isHalfRead(component: Component): boolean {
+    if (this.uses && component.part !== undefined && this.names.get(component.part) === undefined) return true;
     if (this.broken.length === 0) return false;
     if (this.isBroken(component.nameOrigin)) return true;
     const part = component.part === undefined ? undefined : this.names.get(component.part);
@@ -90,6 +103,8 @@ export class Context {
     const nowhere: Origin = { uri: this.uri, start: 0, end: 0 };
     const could = (what: SymbolKind, kind?: KindName): boolean =>
       fits({ id: '', name: '', what, origin: nowhere, statement: nowhere, ...(kind === undefined ? {} : { kind }) });
+    if (this.uses && (could('part') || could('assembly') || could('constant') || KIND_NAMES.some((kind) => could('part', kind))))
+      return true;
     return this.broken.some(({ head }) => {
       const kind = KIND_NAMES.find((name) => name === head);
       if (kind !== undefined) return could('component', kind) || (HAVE_COILS.has(kind) && could('coil'));
@@ -196,10 +211,11 @@ export class Context {
   /** Says that a name is not declared, with the nearest name of those that would fit. */
   unknownName(word: string, origin: Origin, fits: (declaration: SymbolDeclaration) => boolean, wanted: string, place = ''): void {
     if (this.perhaps.has(word) || this.mayBeLost(fits)) return;
+    this.unknownNames++;
     const candidates: string[] = [];
     for (const declaration of this.names.values())
       if (fits(declaration)) candidates.push(declaration.what === 'step' ? declaration.name : declaration.id);
-    const near = nearest(word, candidates);
+    const near = this.unknownNames > MOST_PROPOSED ? undefined : nearest(word, candidates);
     this.report({
       code: 'NAME',
       what: `\`${word}\` is not declared${near === undefined ? '' : `: did you mean \`${near}\``}`,

@@ -59,7 +59,20 @@ export function declareNames(context: Context, components: Components, statement
       default:
     }
   }
+  context.uses = statements.some((statement) => statement.$type === 'Use');
+  for (const statement of statements) if (statement.$type === 'Unit') assemblyOf(context, statement.assembly);
   notResolvedYet(context, statements);
+}
+
+/** The assembly a unit is made of: in this file, or in one that is used. */
+function assemblyOf(context: Context, node: Name | undefined): void {
+  const word = node?.text;
+  if (word === undefined) return;
+  const origin = context.origin(node);
+  const declared = context.names.get(word);
+  if (declared === undefined) context.unknownName(word, origin, (d) => d.what === 'assembly', 'an assembly');
+  else if (declared.what === 'assembly') context.refer(origin, declared.id);
+  else context.report({ code: 'NAME', what: `\`${word}\` is a ${declared.what}; a unit is made of an assembly`, origin });
 }
 
 function declareSteps(context: Context, cycle: CycleNode): void {

@@ -1,10 +1,11 @@
 /** Syntax tree to circuit: the order in which names, settings, lines, control and requirements are resolved. */
 import type { Circuit, Component, Constant, Cycle, Interlock, While } from '@oilway/circuit';
 import type { Finding } from '@oilway/rules';
-import type { Statement } from '../generated/ast.ts';
+import type { Assembly, Statement } from '../generated/ast.ts';
 import { nearest } from '../parse/near.ts';
 import type { Parsed } from '../parse/parse.ts';
 import { LINE_HEADS } from '../parse/words.ts';
+import { bodyOf, declareHead, within } from './assemblies.ts';
 import { Components } from './components.ts';
 import { Context } from './context.ts';
 import { Control } from './control.ts';
@@ -27,7 +28,21 @@ type Of<T extends Statement['$type']> = Extract<Statement, { $type: T }>;
 
 /** Never throws on any tree the parser makes. */
 export function resolve(parsed: Parsed): Resolved {
-  return new Resolution(parsed).run();
+  const whole = new Resolution(parsed, parsed.statements).run();
+  const assemblies = parsed.statements.filter((statement) => statement.$type === 'Assembly');
+  if (assemblies.length === 0) return whole;
+  const bodies = assemblies.map((assembly) =>
+    within(parsed, assembly, new Resolution(parsed, bodyOf(assembly, parsed.statements), assembly).run()),
+  );
+  return {
+    circuit: whole.circuit,
+    findings: [...whole.findings, ...bodies.flatMap((body) => body.findings)].sort((a, b) => a.origin.start - b.origin.start),
+    symbols: {
+      declarations: [whole.symbols, ...bodies.map((body) => body.symbols)].flatMap((index) => index.declarations),
+      references: [whole.symbols, ...bodies.map((body) => body.symbols)].flatMap((index) => index.references),
+      ports: [whole.symbols, ...bodies.map((body) => body.symbols)].flatMap((index) => index.ports),
+    },
+  };
 }
 
 class Resolution {
@@ -37,12 +52,16 @@ class Resolution {
   private readonly components: Components;
   private readonly statements: readonly Statement[];
 
-  constructor(parsed: Parsed) {
+  private readonly assembly: Assembly | undefined;
+
+  /** `assembly`: the one whose body the statements are. */
+  constructor(parsed: Parsed, statements: readonly Statement[], assembly?: Assembly) {
+    this.assembly = assembly;
     this.parsed = parsed;
     this.context = new Context(parsed);
     this.values = new Values(this.context);
     this.components = new Components(this.context, this.values);
-    this.statements = parsed.statements;
+    this.statements = statements;
   }
 
   private all<T extends Statement['$type']>(type: T): Of<T>[] {
@@ -62,7 +81,9 @@ class Resolution {
 
   run(): Resolved {
     const { context, values, components } = this;
+    if (this.assembly !== undefined) declareHead(context, this.assembly);
     declareNames(context, components, this.flat());
+    context.uses = this.parsed.statements.some((statement) => statement.$type === 'Use');
     const heads = this.all('CircuitHead');
     for (const extra of heads.slice(1)) {
       context.report({
