@@ -11,16 +11,42 @@ export function noticed(plant: Plant, heat: Study['heat']): readonly Assumption[
   if (Object.keys(heat).length > 0) {
     for (const group of oilGroups(plant)) {
       for (const reservoir of group.reservoirs) {
-        found.push({ component: reservoir.id, property: 'heat through the wall', value: `${WALL} W/m2K`, source: 'memory', note: 'common practice 10 to 15 W/m2K in still air, no source' });
+        found.push({
+          component: reservoir.id,
+          property: 'heat through the wall',
+          value: `${WALL} W/m2K`,
+          source: 'memory',
+          note: 'common practice 10 to 15 W/m2K in still air, no source',
+        });
         const surface = surfaceOf(reservoir);
-        if (surface.assumed) found.push({ component: reservoir.id, property: 'surface', value: say(circuit, surface.area, 'area'), source: 'derived', note: '6 V^(2/3): a cube of its volume' });
+        if (surface.assumed)
+          found.push({
+            component: reservoir.id,
+            property: 'surface',
+            value: say(circuit, surface.area, 'area'),
+            source: 'derived',
+            note: '6 V^(2/3): a cube of its volume',
+          });
         if (!range(reservoir, 'ambient') && si(reservoir, 'ambient') === undefined) {
-          found.push({ component: reservoir.id, property: 'ambient', value: say(circuit, 293.15, 'temperature'), source: 'default', note: 'room temperature' });
+          found.push({
+            component: reservoir.id,
+            property: 'ambient',
+            value: say(circuit, 293.15, 'temperature'),
+            source: 'default',
+            note: 'room temperature',
+          });
         }
-        found.push({ component: reservoir.id, property: 'heat given off by lines and cylinders', value: 'none', source: 'not counted', note: 'on the safe side' });
+        found.push({
+          component: reservoir.id,
+          property: 'heat given off by lines and cylinders',
+          value: 'none',
+          source: 'not counted',
+          note: 'on the safe side',
+        });
       }
       for (const cooler of group.coolers) {
-        if (si(cooler, 'coolant') === undefined) found.push({ component: cooler.id, property: 'coolant', value: 'ambient', source: 'default', note: 'air cooler' });
+        if (si(cooler, 'coolant') === undefined)
+          found.push({ component: cooler.id, property: 'coolant', value: 'ambient', source: 'default', note: 'air cooler' });
       }
     }
   }

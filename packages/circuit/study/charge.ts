@@ -2,13 +2,13 @@
 import { ATMOSPHERE } from '../fluid/density.ts';
 import { oilAt as chargedWith, prechargeAt } from '../fluid/gas.ts';
 import type { Component } from '../model/circuit.ts';
-import { si, valueOf } from './read.ts';
+import { si, valueNamed } from './read.ts';
 import type { Plant } from './scene.ts';
 
 /** Oil (m3) that an accumulator holds at a gauge pressure, filled isothermally: V0 (1 - p0/p), absolute, p0 at the fluid's temperature. */
 export function oilAt(accumulator: Component, pressure: number, temperature: number): number {
   const volume = si(accumulator, 'volume');
-  const value = valueOf(accumulator, 'precharge');
+  const value = valueNamed(accumulator, 'precharge');
   if (volume === undefined || value?.type !== 'precharge') return 0;
   return chargedWith(volume, prechargeAt(value.pressure.si, value.temperature.si, temperature), pressure + ATMOSPHERE, 1);
 }
@@ -24,7 +24,13 @@ export function usualCharge(plant: Plant, accumulator: Component): number | unde
       const part = plant.at.component(component);
       if (!part) continue;
       const setting =
-        part.kind === 'relief' && port === 'P' ? si(part, 'set') : part.kind === 'pump' && port === 'P' ? si(part, 'compensator') : part.kind === 'switch' ? si(part, 'rises') : undefined;
+        part.kind === 'relief' && port === 'P'
+          ? si(part, 'set')
+          : part.kind === 'pump' && port === 'P'
+            ? si(part, 'compensator')
+            : part.kind === 'switch'
+              ? si(part, 'rises')
+              : undefined;
       if (setting !== undefined) found.push(setting);
     }
   }
@@ -43,7 +49,7 @@ function joinedThroughOpen(plant: Plant, start: string): ReadonlySet<string> {
     }
     for (const { component } of plant.at.net(net)?.ports ?? []) {
       const part = plant.at.component(component);
-      if (!part || !(part.kind === 'shutoff' && part.properties.some((one) => one.name === 'open')) && part.kind !== 'filter') continue;
+      if (!part || (!(part.kind === 'shutoff' && part.properties.some((one) => one.name === 'open')) && part.kind !== 'filter')) continue;
       for (const other of plant.at.portsOf(component)) {
         if (seen.has(other.net) || plant.at.net(other.net)?.reservoir !== undefined) continue;
         seen.add(other.net);

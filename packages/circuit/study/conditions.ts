@@ -16,9 +16,15 @@ export interface Situation {
 export function holds(at: Lookup, condition: Condition, situation: Situation): boolean | undefined {
   switch (condition.op) {
     case 'and':
-      return fold(condition.items.map((one) => holds(at, one, situation)), false);
+      return fold(
+        condition.items.map((one) => holds(at, one, situation)),
+        false,
+      );
     case 'or':
-      return fold(condition.items.map((one) => holds(at, one, situation)), true);
+      return fold(
+        condition.items.map((one) => holds(at, one, situation)),
+        true,
+      );
     case 'state': {
       if (condition.is === 'extended' || condition.is === 'retracted') return situation.contact(`${condition.of} ${condition.is}`);
       const on = at.coil(condition.of) ? situation.live(condition.of) : situation.contact(condition.of);

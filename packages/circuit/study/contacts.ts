@@ -4,7 +4,7 @@ import type { Component, Condition } from '../model/circuit.ts';
 import type { Position } from './coils.ts';
 import type { Lookup } from './lookup.ts';
 import { bodyOf, type Scene, type Source, sourceOf, valueIn, watchOf } from './quantities.ts';
-import { flag, range, si, valueOf } from './read.ts';
+import { flag, range, si, valueNamed } from './read.ts';
 import { say, sayPlace } from './words.ts';
 
 export interface Contact {
@@ -42,7 +42,7 @@ export function switchContact(scene: Scene, component: Component): Contact {
   if (source.what === 'outside') return { key, source, test: { is: 'outside' }, inverted };
   if (source.what === 'unknown') return { key, source, test: { is: 'unknown' }, inverted };
   if (source.what === 'stand') {
-    const place = valueOf(component, 'at');
+    const place = valueNamed(component, 'at');
     const name = place?.type === 'place' ? place.word : undefined;
     const position = name === 'open' ? 'a' : name === 'closed' ? 'b' : name;
     return position === 'a' || position === 'b' || position === 'centre'
@@ -50,8 +50,14 @@ export function switchContact(scene: Scene, component: Component): Contact {
       : { key, source, test: { is: 'unknown' }, inverted };
   }
   const between = range(component, 'from');
-  if (between) return { key, source, test: { is: 'inside', from: Math.min(between.from, between.to), to: Math.max(between.from, between.to) }, inverted };
-  const place = valueOf(component, 'at');
+  if (between)
+    return {
+      key,
+      source,
+      test: { is: 'inside', from: Math.min(between.from, between.to), to: Math.max(between.from, between.to) },
+      inverted,
+    };
+  const place = valueNamed(component, 'at');
   if (place?.type === 'place' && place.q) {
     const half = spread(place.q.dimension);
     return { key, source, test: { is: 'inside', from: place.q.si - half, to: place.q.si + half }, inverted };
@@ -77,7 +83,8 @@ export function atomContact(scene: Scene, atom: Condition): Contact | undefined 
     const key = compareKey(atom.of, atom.is, atom.value.si);
     const words = `${atom.of} ${atom.is} ${atom.value.dimension === 'length' ? sayPlace(scene.at.circuit, atom.value.si, false) : say(scene.at.circuit, atom.value.si, atom.value.dimension)}`;
     const source = sourceOf(scene, atom.of, atom.value.dimension);
-    if (source.what === 'unknown' || source.what === 'outside' || source.what === 'stand') return { key, source, test: { is: 'unknown' }, inverted: false };
+    if (source.what === 'unknown' || source.what === 'outside' || source.what === 'stand')
+      return { key, source, test: { is: 'unknown' }, inverted: false };
     const x = heldInRange(scene.at, atom.of, atom.value.si);
     if (atom.is === 'at') {
       const half = spread(atom.value.dimension);
@@ -157,7 +164,12 @@ export function closed(scene: Scene, contact: Contact, solution: Solution, befor
 }
 
 /** Watches that tell when a contact turns over, from how it stands now. */
-export function watches(scene: Scene, contact: Contact, solution: Solution, now: boolean | undefined): readonly { readonly watch: Watch; readonly becomes: boolean }[] {
+export function watches(
+  scene: Scene,
+  contact: Contact,
+  solution: Solution,
+  now: boolean | undefined,
+): readonly { readonly watch: Watch; readonly becomes: boolean }[] {
   const { test, source, inverted } = contact;
   if (now === undefined || (test.is !== 'above' && test.is !== 'inside')) return [];
   const on = now !== inverted;

@@ -50,7 +50,11 @@ function allSteps(plant: Plant, cycle: Cycle, depth: number): readonly Cycle['st
 }
 
 /** All drives turn, valves sprung, cylinders at `begins`: pressures as at REST. */
-export function startOf(plant: Plant, detents: Detents, oil: Readonly<Record<string, number | 'empty'>>): { readonly setting: Setting; readonly solution: Solution } {
+export function startOf(
+  plant: Plant,
+  detents: Detents,
+  oil: Readonly<Record<string, number | 'empty'>>,
+): { readonly setting: Setting; readonly solution: Solution } {
   const dead = { contact: () => undefined, live: () => false, running: () => false };
   const control = decide(plant.at, NOTHING, dead, { whileLines: false });
   const setting = settingOf(plant, { control, detents, positions: begins(plant), oil, loads: loadsInSteps(plant, []) });
@@ -76,7 +80,11 @@ function runAutomatic(plant: Plant, cycle: Cycle): Ran {
   return { ...second.ran, result: { ...second.ran.result, faults: [short, ...second.ran.result.faults] } };
 }
 
-function attempt(plant: Plant, cycle: Cycle, oil: Readonly<Record<string, number | 'empty'>>): { readonly completed: boolean; readonly ran: Ran } {
+function attempt(
+  plant: Plant,
+  cycle: Cycle,
+  oil: Readonly<Record<string, number | 'empty'>>,
+): { readonly completed: boolean; readonly ran: Ran } {
   const detents = detentsAtStart(plant, cycle);
   const { setting, solution } = startOf(plant, detents, oil);
   const runner = new Runner(plant, plant.machine.start(setting, solution), setting, detents);
@@ -104,7 +112,11 @@ function attempt(plant: Plant, cycle: Cycle, oil: Readonly<Record<string, number
   }
   const last = ends.at(-1)!;
   if (last.completed && !settled && ends.length >= RUNS) {
-    faults.push({ kind: 'does not settle', words: `${cycle.id} does not settle in ${RUNS} runs; the figures are those of the last`, origin: cycle.nameOrigin });
+    faults.push({
+      kind: 'does not settle',
+      words: `${cycle.id} does not settle in ${RUNS} runs; the figures are those of the last`,
+      origin: cycle.nameOrigin,
+    });
   }
   const counted = typeof cycle.repeat === 'number' ? ends.map((one) => one.trace) : [last.trace];
   return { completed: last.completed, ran: handOn(plant, cycle, ends, counted, faults, settled) };
@@ -144,13 +156,31 @@ function runManual(plant: Plant, cycle: Cycle): Ran {
     if (end.faults.some((one) => one.kind === 'no equilibrium')) break;
     runner.release();
   }
-  return handOn(plant, cycle, ends, ends.map((one) => one.trace), faults, true);
+  return handOn(
+    plant,
+    cycle,
+    ends,
+    ends.map((one) => one.trace),
+    faults,
+    true,
+  );
 }
 
-function handOn(plant: Plant, cycle: Cycle, ends: readonly End[], counted: readonly Trace[], faults: readonly Fault[], settled: boolean): Ran {
+function handOn(
+  plant: Plant,
+  cycle: Cycle,
+  ends: readonly End[],
+  counted: readonly Trace[],
+  faults: readonly Fault[],
+  settled: boolean,
+): Ran {
   const last = ends.at(-1);
   const completed = cycle.mode === 'manual' ? ends.every((one) => one.completed) : last?.completed === true;
-  const power = meanPower(counted, plant.at.ofKind('pump').map((one) => one.id), plant.bodies.map((one) => one.id));
+  const power = meanPower(
+    counted,
+    plant.at.ofKind('pump').map((one) => one.id),
+    plant.bodies.map((one) => one.id),
+  );
   const worst = Math.max(0, ...(typeof cycle.repeat === 'number' ? ends : ends.slice(-1)).map((one) => one.time));
   const trace = cycle.mode === 'manual' ? joined(ends.map((one) => one.trace)) : last?.trace;
   const result: CycleResult = {

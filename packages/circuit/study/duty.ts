@@ -29,13 +29,18 @@ export function dutyOf(plant: Plant, traces: readonly Trace[]): Readonly<Record<
         squares += (span * (here * here + here * there + there * there)) / 3;
       }
     }
-    result[drive.id] = time > 0 ? { rms: Math.sqrt(squares / time), highest, mean: energy / time } : { rms: highest, highest, mean: highest };
+    result[drive.id] =
+      time > 0 ? { rms: Math.sqrt(squares / time), highest, mean: energy / time } : { rms: highest, highest, mean: highest };
   }
   return result;
 }
 
 /** Mean of shaft power and of work given to loads, W, of the given pumps and bodies. Work a load gives back is negative. */
-export function meanPower(traces: readonly Trace[], pumps: readonly string[], bodies: readonly string[]): { readonly shaft: number; readonly work: number } {
+export function meanPower(
+  traces: readonly Trace[],
+  pumps: readonly string[],
+  bodies: readonly string[],
+): { readonly shaft: number; readonly work: number } {
   let shaft = 0;
   let work = 0;
   let time = 0;

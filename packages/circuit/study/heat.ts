@@ -63,16 +63,26 @@ function ambientOf(reservoir: Component): number {
 }
 
 /** T such that k A (T - ambient) + sum power share (T - coolant) = heat; a cooler warmer than the oil gives nothing. */
-export function balance(heat: number, reservoirs: readonly Component[], coolers: readonly { readonly cooler: Component; readonly share: number }[]): { readonly temperature: number; readonly working: Working } {
+export function balance(
+  heat: number,
+  reservoirs: readonly Component[],
+  coolers: readonly { readonly cooler: Component; readonly share: number }[],
+): { readonly temperature: number; readonly working: Working } {
   const ambient = Math.max(...reservoirs.map(ambientOf));
   const area = reservoirs.reduce((sum, one) => sum + surfaceOf(one).area, 0);
   const wall = WALL * area;
-  const active = coolers.map(({ cooler, share }) => ({ id: cooler.id, origin: cooler.origin, g: (si(cooler, 'power') ?? 0) * share, coolant: si(cooler, 'coolant') ?? ambient }));
+  const active = coolers.map(({ cooler, share }) => ({
+    id: cooler.id,
+    origin: cooler.origin,
+    g: (si(cooler, 'power') ?? 0) * share,
+    coolant: si(cooler, 'coolant') ?? ambient,
+  }));
   let used = active;
   let temperature = ambient;
   for (let round = 0; round <= active.length; round += 1) {
     const g = wall + used.reduce((sum, one) => sum + one.g, 0);
-    temperature = g > 0 ? (Math.max(0, heat) + wall * ambient + used.reduce((sum, one) => sum + one.g * one.coolant, 0)) / g : Number.POSITIVE_INFINITY;
+    temperature =
+      g > 0 ? (Math.max(0, heat) + wall * ambient + used.reduce((sum, one) => sum + one.g * one.coolant, 0)) / g : Number.POSITIVE_INFINITY;
     const cooling = used.filter((one) => one.coolant < temperature);
     if (cooling.length === used.length) break;
     used = cooling;
@@ -83,11 +93,29 @@ export function balance(heat: number, reservoirs: readonly Component[], coolers:
     inputs: [
       { symbol: 'heat', value: heat, dimension: 'power', source: 'mean shaft power less mean work given to the loads' },
       { symbol: 'k', value: WALL, dimension: 'ratio', source: 'assumed: 12 W/m2K of wall in still air (common practice, no source)' },
-      { symbol: 'A', value: area, dimension: 'area', source: surfaceOf(first).assumed ? `derived: 6 V^(2/3) of ${first.id}` : `${first.id} surface`, origin: first.origin },
+      {
+        symbol: 'A',
+        value: area,
+        dimension: 'area',
+        source: surfaceOf(first).assumed ? `derived: 6 V^(2/3) of ${first.id}` : `${first.id} surface`,
+        origin: first.origin,
+      },
       { symbol: 'T ambient', value: ambient, dimension: 'temperature', source: `${first.id} ambient, highest`, origin: first.origin },
       ...used.flatMap((one) => [
-        { symbol: `g ${one.id}`, value: one.g, dimension: 'power/temperature' as const, source: `${one.id} power x share of time with flow`, origin: one.origin },
-        { symbol: `T coolant ${one.id}`, value: one.coolant, dimension: 'temperature' as const, source: `${one.id} coolant (ambient unless said)`, origin: one.origin },
+        {
+          symbol: `g ${one.id}`,
+          value: one.g,
+          dimension: 'power/temperature' as const,
+          source: `${one.id} power x share of time with flow`,
+          origin: one.origin,
+        },
+        {
+          symbol: `T coolant ${one.id}`,
+          value: one.coolant,
+          dimension: 'temperature' as const,
+          source: `${one.id} coolant (ambient unless said)`,
+          origin: one.origin,
+        },
       ]),
     ],
     result: temperature,
@@ -131,7 +159,11 @@ export function heatOf(plant: Plant, rans: readonly Ran[], states: readonly Stud
     for (const ran of rans) {
       if (ran.cycle.mode !== 'cycle' || ran.counted.every((one) => one.end <= 0)) continue;
       const power = meanPower(ran.counted, group.pumps, group.bodies);
-      put(ran.cycle.id, power.shaft - power.work, group.coolers.map((cooler) => ({ cooler, share: shareInTraces(cooler, ran.counted) })));
+      put(
+        ran.cycle.id,
+        power.shaft - power.work,
+        group.coolers.map((cooler) => ({ cooler, share: shareInTraces(cooler, ran.counted) })),
+      );
     }
     for (const { result: state, settings } of states) {
       if (state.state !== 'REST' && state.state !== 'IDLE') continue;
@@ -143,9 +175,12 @@ export function heatOf(plant: Plant, rans: readonly Ran[], states: readonly Stud
       }
       if (!worst || !settings[worst.index]) continue;
       const flows = state.variants[worst.index]!.point.flows;
-      put(state.id, worst.heat, group.coolers.map((cooler) => ({ cooler, share: Math.abs(flows[`${cooler.id}.in`] ?? 0) >= coolerEnough(cooler) ? 1 : 0 })));
+      put(
+        state.id,
+        worst.heat,
+        group.coolers.map((cooler) => ({ cooler, share: Math.abs(flows[`${cooler.id}.in`] ?? 0) >= coolerEnough(cooler) ? 1 : 0 })),
+      );
     }
   }
   return result;
 }
-

@@ -24,7 +24,12 @@ export function knotsOf(plant: Plant, body: Body, load: BodyLoad): readonly Knot
   for (const at of loadKnots(load)) found.push({ at, words: 'load', sides: jumps(load, at) ? 'both' : 'once' });
   for (const contact of plant.contacts) {
     if (contact.source.what !== 'position' || contact.source.body !== body.id) continue;
-    const ends = contact.test.is === 'inside' ? [contact.test.from, contact.test.to] : contact.test.is === 'above' ? [contact.test.rises, contact.test.falls] : [];
+    const ends =
+      contact.test.is === 'inside'
+        ? [contact.test.from, contact.test.to]
+        : contact.test.is === 'above'
+          ? [contact.test.rises, contact.test.falls]
+          : [];
     for (const at of ends) if (Number.isFinite(at)) found.push({ at, words: contact.words ?? contact.key, sides: 'control' });
   }
   for (const { low, high } of requiredRanges(plant, body)) {
@@ -46,7 +51,8 @@ function requiredRanges(plant: Plant, body: Body): readonly { readonly low: numb
 }
 
 function jumps(load: BodyLoad, x: number): boolean {
-  const jump = (over: ForceOverPosition) => over.at.some((one, index) => one === x && over.at[index + 1] === x && over.force[index] !== over.force[index + 1]);
+  const jump = (over: ForceOverPosition) =>
+    over.at.some((one, index) => one === x && over.at[index + 1] === x && over.force[index] !== over.force[index + 1]);
   return [...load.fixed, ...load.resistOut, ...load.resistIn].some(jump);
 }
 
@@ -71,7 +77,11 @@ function joint(one: Knot['sides'], other: Knot['sides']): Knot['sides'] {
 }
 
 /** Places beside a knot at which it is solved, m: in the order a motion in `direction` passes them. */
-export function besides(knot: Knot, direction: number, turns: boolean): readonly { readonly at: number; readonly when: 'before' | 'after' | 'at' }[] {
+export function besides(
+  knot: Knot,
+  direction: number,
+  turns: boolean,
+): readonly { readonly at: number; readonly when: 'before' | 'after' | 'at' }[] {
   const beside = (when: 'before' | 'after') => ({ at: knot.at + (when === 'before' ? -BESIDE : BESIDE) * direction, when });
   if (knot.sides === 'both' || (knot.sides === 'control' && turns)) return [beside('before'), beside('after')];
   if (knot.sides === 'above') return [{ at: knot.at + BESIDE, when: 'at' }];

@@ -1,6 +1,8 @@
 /** What limits a motion: the setting or size its speed follows, a lifting relief, a destroked pump, a stop, a closed path. */
 import type { Body, Setting, Solution } from '../assembly/machine.ts';
 import { standWords } from './coils.ts';
+import { needed } from './loads.ts';
+import { moves } from './motion.ts';
 import { openPairs } from './passage.ts';
 import { si } from './read.ts';
 import type { Plant } from './scene.ts';
@@ -32,7 +34,10 @@ export function limiters(plant: Plant, body: Body, setting: Setting, solution: S
     }
   }
   for (const brake of plant.at.ofKind('brake')) {
-    if (body.actuators.some((id) => brake.properties.some((one) => one.value.type === 'reference' && one.value.id === id)) && !motion.moving) {
+    if (
+      body.actuators.some((id) => brake.properties.some((one) => one.value.type === 'reference' && one.value.id === id)) &&
+      !motion.moving
+    ) {
       found.push({ of: brake.id, words: `brake ${brake.id} holds` });
     }
   }
@@ -99,4 +104,20 @@ function reachable(plant: Plant, from: string, solution: Solution): { readonly e
     }
   }
   return { ends, blocked: [...blocked] };
+}
+
+/** Why a body does not go the way it should, in words: stalled by how much, or which valve closes its way, or how slowly it moves. */
+export function whyItStands(plant: Plant, body: Body, setting: Setting, solution: Solution, direction: -1 | 1): string {
+  if (moves(body, solution)) {
+    return `${body.id} moves at ${say(plant.circuit, Math.abs(solution.velocities[body.id] ?? 0), body.type === 'rotating' ? 'rotation' : 'velocity')}`;
+  }
+  const held = plant.machine.solve({ ...setting, locked: [body.id] }, solution);
+  const load = setting.loads[body.id];
+  const available = (held.forces[body.id] ?? 0) * direction;
+  const need = load ? needed(load, solution.positions[body.id] ?? 0, direction) : 0;
+  const closed = closedAround(plant, body, held);
+  if (closed.length > 0) return closed.map((one) => one.words).join('; ');
+  if (!held.solved || available >= need) return '';
+  const dimension = body.type === 'rotating' ? 'torque' : 'force';
+  return `${body.id} stalled, short by ${say(plant.circuit, need - available, dimension)}: ${say(plant.circuit, Math.max(0, available), dimension)} of ${say(plant.circuit, need, dimension)}`;
 }

@@ -3,7 +3,7 @@ import type { Body, BodyLoad, ForceOverPosition } from '../assembly/machine.ts';
 import type { Load } from '../model/circuit.ts';
 import type { LoadValue, Property } from '../model/value.ts';
 import type { Lookup } from './lookup.ts';
-import { property, si, valueOf } from './read.ts';
+import { si, valueNamed } from './read.ts';
 
 /** Standard acceleration of free fall, m/s2 (ISO 80000-3). */
 const G = 9.80665;
@@ -67,7 +67,7 @@ function weight(at: Lookup, load: Load): number {
   const mass = si(load, 'mass');
   const actuator = load.actuators[0] ? at.component(load.actuators[0]) : undefined;
   if (mass === undefined || actuator?.kind !== 'cylinder') return 0;
-  const attitude = valueOf(actuator, 'attitude');
+  const attitude = valueNamed(actuator, 'attitude');
   return attitude?.type === 'attitude' ? -mass * G * Math.sin(attitude.angle) : 0;
 }
 
@@ -89,8 +89,19 @@ export function loadsOn(at: Lookup, body: Body): readonly Load[] {
   return at.circuit.loads.filter((load) => load.actuators.some((one) => body.actuators.includes(one)));
 }
 
-function bodyLoad(at: Lookup, loads: readonly Load[], fixed: (entry: Entry) => boolean, resist: (entry: Entry) => boolean, friction: boolean): BodyLoad {
-  const result = { fixed: [] as ForceOverPosition[], resistOut: [] as ForceOverPosition[], resistIn: [] as ForceOverPosition[], friction: 0 };
+function bodyLoad(
+  at: Lookup,
+  loads: readonly Load[],
+  fixed: (entry: Entry) => boolean,
+  resist: (entry: Entry) => boolean,
+  friction: boolean,
+): BodyLoad {
+  const result = {
+    fixed: [] as ForceOverPosition[],
+    resistOut: [] as ForceOverPosition[],
+    resistIn: [] as ForceOverPosition[],
+    friction: 0,
+  };
   for (const load of loads) {
     const heavy = weight(at, load);
     if (heavy !== 0) result.fixed.push(constant(heavy));
@@ -132,11 +143,23 @@ function optional(entry: Entry): boolean {
 /** Cases in which a state is studied: no friction, nothing that only resists. */
 export function loadCases(at: Lookup, body: Body): readonly LoadCase[] {
   const loads = loadsOn(at, body);
-  const none = bodyLoad(at, loads, (entry) => !optional(entry), () => false, false);
+  const none = bodyLoad(
+    at,
+    loads,
+    (entry) => !optional(entry),
+    () => false,
+    false,
+  );
   const cases: LoadCase[] = [];
   for (const name of ['inward', 'outward'] as const) {
     const sign = name === 'inward' ? -1 : 1;
-    const load = bodyLoad(at, loads, (entry) => !optional(entry) || SIGN[entry.property.name] === sign, () => false, false);
+    const load = bodyLoad(
+      at,
+      loads,
+      (entry) => !optional(entry) || SIGN[entry.property.name] === sign,
+      () => false,
+      false,
+    );
     const found = greatestNet(load, body, sign);
     if (found.force * sign > 1e-9) {
       cases.push({ name, load, greatest: found.force, ...(found.at === undefined ? {} : { at: found.at }) });
@@ -181,9 +204,4 @@ export function relaxesWithin(load: BodyLoad, x: number, direction: -1 | 1, way:
     before = { x: point, force };
   }
   return undefined;
-}
-
-/** Weight or a fixed force declared, so that the body has a load that can drive it. */
-export function hasLoad(at: Lookup, body: Body): boolean {
-  return loadsOn(at, body).some((load) => load.properties.some((one) => FIXED.includes(one.name)) || property(load, 'mass') !== undefined);
 }

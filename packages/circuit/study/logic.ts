@@ -114,7 +114,10 @@ function once(at: Lookup, demand: Demand, situation: Situation, mode: Mode): Con
   const dropped: Dropped[] = [];
   const live = new Map<string, Live>();
   for (const [coil, one] of chosen) {
-    const failing = mode.interlocks === false ? undefined : at.circuit.interlocks.find((lock) => lock.coils.includes(coil) && holds(at, lock.needs, situation) !== true);
+    const failing =
+      mode.interlocks === false
+        ? undefined
+        : at.circuit.interlocks.find((lock) => lock.coils.includes(coil) && holds(at, lock.needs, situation) !== true);
     if (failing) dropped.push({ coil, by: failing, step: one.by });
     else live.set(coil, one.live);
   }
@@ -177,7 +180,11 @@ export function commandsOf(at: Lookup, control: Control): Record<string, number>
 }
 
 /** Detented valves after a control has stood: those it moved stay there. */
-export function detentsAfter(at: Lookup, control: Control, before: Readonly<Record<string, Stand['position']>>): Record<string, Stand['position']> {
+export function detentsAfter(
+  at: Lookup,
+  control: Control,
+  before: Readonly<Record<string, Stand['position']>>,
+): Record<string, Stand['position']> {
   const stands = standsOf(at, control, before);
   const after: Record<string, Stand['position']> = {};
   for (const valve of at.ofKind('directional').filter(isDetent)) {

@@ -75,7 +75,3 @@ export function lookup(circuit: Circuit): Lookup {
 export function product<T>(lists: readonly (readonly T[])[]): T[][] {
   return lists.reduce<T[][]>((rows, list) => rows.flatMap((row) => list.map((item) => [...row, item])), [[]]);
 }
-
-export function clamp(value: number, low: number, high: number): number {
-  return value < low ? low : value > high ? high : value;
-}

@@ -44,14 +44,22 @@ export function movingIn(plant: Plant, solution: Solution, loads: Readonly<Recor
     const inward = wayOfOil(plant, body, solution, 'in');
     // Oil from a turning pump or an accumulator that enters makes it a motion by pressure, whatever the load does.
     const cause = driven && !inward.pushed ? ('load' as const) : ('pressure' as const);
-    const way = cause === 'load' && body.type === 'linear' ? relaxesWithin(load!, solution.positions[body.id] ?? 0, direction, RELAXING_WAY) : undefined;
+    const way =
+      cause === 'load' && body.type === 'linear'
+        ? relaxesWithin(load!, solution.positions[body.id] ?? 0, direction, RELAXING_WAY)
+        : undefined;
     const path = (cause === 'load' ? wayOfOil(plant, body, solution, 'out') : inward).words;
     return body.actuators.map((id) => ({ id, velocity, cause, path, ...(way === undefined ? {} : { relaxes: way }) }));
   });
 }
 
 /** The components that the oil of a moving actuator passes, from the chamber outwards (`out`) or from its source to the chamber (`in`). */
-export function wayOfOil(plant: Plant, body: Body, solution: Solution, side: 'in' | 'out'): { readonly words: string; readonly pushed: boolean } {
+export function wayOfOil(
+  plant: Plant,
+  body: Body,
+  solution: Solution,
+  side: 'in' | 'out',
+): { readonly words: string; readonly pushed: boolean } {
   const out = side === 'out';
   // Flow into a component is positive: oil leaves the chamber where it is negative.
   const along = (key: string, sign: number) => (solution.flows[key] ?? 0) * sign;

@@ -15,11 +15,20 @@ export interface Breach {
   /** "in Drill.Out with PS1 off". */
   readonly at: string;
 }
-export type Searched = { readonly found: Breach } | { readonly found?: undefined; readonly searched: 'all' | 'runs only'; readonly why?: string };
+export type Searched =
+  | { readonly found: Breach }
+  | { readonly found?: undefined; readonly searched: 'all' | 'runs only'; readonly why?: string };
 
 /** Whether a condition is decided by switches, coils and steps alone. */
 export function logicOnly(plant: Plant, condition: Condition): boolean {
-  return atoms(condition).every((one) => one.op === 'running' || (one.op === 'state' && one.is !== 'extended' && one.is !== 'retracted' && (plant.at.coil(one.of) !== undefined || plant.at.component(one.of)?.kind === 'switch')));
+  return atoms(condition).every(
+    (one) =>
+      one.op === 'running' ||
+      (one.op === 'state' &&
+        one.is !== 'extended' &&
+        one.is !== 'retracted' &&
+        (plant.at.coil(one.of) !== undefined || plant.at.component(one.of)?.kind === 'switch')),
+  );
 }
 
 export function searchLogic(plant: Plant, condition: Condition): Searched {
@@ -45,7 +54,9 @@ function breachWords(name: string, states: ReadonlyMap<string, boolean>, relevan
 
 /** Switches that the condition, interlocks and while lines look at; comparisons in those count as switches of their own. */
 function relevantContacts(plant: Plant, condition: Condition): readonly Contact[] {
-  const looked = [condition, ...plant.circuit.interlocks.map((one) => one.needs), ...plant.circuit.whiles.map((one) => one.when)].flatMap(atoms);
+  const looked = [condition, ...plant.circuit.interlocks.map((one) => one.needs), ...plant.circuit.whiles.map((one) => one.when)].flatMap(
+    atoms,
+  );
   const keys = new Set<string>();
   for (const atom of looked) {
     if (atom.op === 'state') keys.add(atom.is === 'extended' || atom.is === 'retracted' ? `${atom.of} ${atom.is}` : atom.of);
@@ -56,14 +67,23 @@ function relevantContacts(plant: Plant, condition: Condition): readonly Contact[
 
 /** What may be asked for at once: every step with its meanwhile lines (any of those may have ended), every push button, nothing. */
 function situations(plant: Plant): readonly { readonly name: string; readonly demand: Demand; readonly running: ReadonlySet<string> }[] {
-  const found: { name: string; demand: Demand; running: ReadonlySet<string> }[] = [{ name: 'without a step', demand: NOTHING, running: new Set() }];
+  const found: { name: string; demand: Demand; running: ReadonlySet<string> }[] = [
+    { name: 'without a step', demand: NOTHING, running: new Set() },
+  ];
   for (const cycle of plant.circuit.cycles) for (const group of groupsOf(cycle)) found.push(...groupSituations(plant, cycle, group));
   return found;
 }
 function groupSituations(plant: Plant, cycle: Cycle, group: readonly Step[]) {
-  const subsets = group.length > 4 ? [group] : product(group.map((one) => [[one], []] as const)).map((row) => row.flat()).filter((one) => one.length > 0);
+  const subsets =
+    group.length > 4
+      ? [group]
+      : product(group.map((one) => [[one], []] as const))
+          .map((row) => row.flat())
+          .filter((one) => one.length > 0);
   return subsets.map((steps) => {
-    const outer = plant.circuit.cycles.filter((one) => one.steps.some((step) => step.actions.some((action) => action.does === 'run' && action.cycle === cycle.id)));
+    const outer = plant.circuit.cycles.filter((one) =>
+      one.steps.some((step) => step.actions.some((action) => action.does === 'run' && action.cycle === cycle.id)),
+    );
     const running = new Set([cycle.id, ...steps.map((one) => one.id), ...outer.map((one) => one.id)]);
     return { name: `in ${list(steps.map((one) => one.id))}`, demand: join(steps.map((one) => demandOf(one.actions, one.id))), running };
   });
@@ -90,10 +110,14 @@ function together(contacts: readonly Contact[]): readonly Stands[] {
     if (test.is === 'inside') limits.add(test.from).add(test.to);
   }
   const sorted = [...limits].filter(Number.isFinite).sort((a, b) => a - b);
-  const values = sorted.length === 0 ? [0] : [sorted[0]! - 1, ...sorted.flatMap((one, index) => [one, index + 1 < sorted.length ? (one + sorted[index + 1]!) / 2 : one + 1])];
+  const values =
+    sorted.length === 0
+      ? [0]
+      : [sorted[0]! - 1, ...sorted.flatMap((one, index) => [one, index + 1 < sorted.length ? (one + sorted[index + 1]!) / 2 : one + 1])];
   const seen = new Map<string, Stands>();
   for (const value of values) {
-    for (const row of product(contacts.map((one) => possible(one, value).map((on) => [one.key, on] as const)))) seen.set(JSON.stringify(row), row);
+    for (const row of product(contacts.map((one) => possible(one, value).map((on) => [one.key, on] as const))))
+      seen.set(JSON.stringify(row), row);
   }
   return [...seen.values()];
 }

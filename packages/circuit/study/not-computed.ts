@@ -46,7 +46,8 @@ function standsOf(plant: Plant, point: Point): Solution['stands'] {
     const name = words.split(' ')[0];
     const valve = plant.at.component(id);
     if (name === 'a' || name === 'b' || name === 'centre') stands[id] = { position: name };
-    else if (valve) stands[id] = { position: (['a', 'b'] as const).find((side) => pathsIn(valve, side).length > 0 === (name === 'open')) ?? 'a' };
+    else if (valve)
+      stands[id] = { position: (['a', 'b'] as const).find((side) => pathsIn(valve, side).length > 0 === (name === 'open')) ?? 'a' };
   }
   return stands;
 }

@@ -66,7 +66,10 @@ function stepsNamed(facts: Facts, name: string, depth: number): readonly string[
   if (at.step(name)) return [name];
   const cycle = at.cycle(name);
   if (!cycle || depth > 8) return [];
-  return cycle.steps.flatMap((step) => [step.id, ...step.actions.flatMap((one) => (one.does === 'run' ? stepsNamed(facts, one.cycle, depth + 1) : []))]);
+  return cycle.steps.flatMap((step) => [
+    step.id,
+    ...step.actions.flatMap((one) => (one.does === 'run' ? stepsNamed(facts, one.cycle, depth + 1) : [])),
+  ]);
 }
 
 /** The actuator whose range or direction is meant: the one named, else the circuit's only one. */
@@ -85,7 +88,11 @@ export function selectedPoints(where: Where, body: Body | undefined, points: rea
   if (!body) return [];
   return points.filter((point) => {
     const one = point.actuators.find((actuator) => actuator.id === body.actuators[0]);
-    return one !== undefined && inside(where, one.position) && inDirection(where, one.velocity !== 0 && one.direction === 0 ? Math.sign(one.velocity) : one.direction, one.velocity);
+    return (
+      one !== undefined &&
+      inside(where, one.position) &&
+      inDirection(where, one.velocity !== 0 && one.direction === 0 ? Math.sign(one.velocity) : one.direction, one.velocity)
+    );
   });
 }
 /** Samples of a run that range and direction select, outside the shifting of valves. */
@@ -122,8 +129,17 @@ export function stepSamples(place: StepPlace): readonly (Sample & { readonly sin
 }
 
 /** "Drill.Out at 315 mm, 4.20 s". */
-export function placeWords(plant: Plant, place: string, body: Body | undefined, position: number | undefined, time: number | undefined): string {
+export function placeWords(
+  plant: Plant,
+  place: string,
+  body: Body | undefined,
+  position: number | undefined,
+  time: number | undefined,
+): string {
   // The angle of a shaft that turns on and on says nothing.
-  const where = position === undefined || !body || !Number.isFinite(body.stroke) ? place : `${place} at ${sayPlace(plant.circuit, position, body.type === 'rotating')}`;
+  const where =
+    position === undefined || !body || !Number.isFinite(body.stroke)
+      ? place
+      : `${place} at ${sayPlace(plant.circuit, position, body.type === 'rotating')}`;
   return time === undefined ? where : `${where}, ${say(plant.circuit, time, 'time')}`;
 }

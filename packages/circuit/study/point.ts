@@ -5,7 +5,7 @@ import { standWords } from './coils.ts';
 import { limiters } from './limits.ts';
 import { needed, netFixed } from './loads.ts';
 import { moves } from './motion.ts';
-import { reference, si } from './read.ts';
+import { si } from './read.ts';
 import type { Plant } from './scene.ts';
 import type { ActuatorPoint, Point } from './study.ts';
 
@@ -69,7 +69,8 @@ function actuatorPoints(plant: Plant, body: Body, setting: Setting, solution: So
     if (held.solved && force !== undefined) available = force * wanted;
   }
   const stands = !moving && atStop === undefined && Math.abs(velocity) < CREEP;
-  const short = available !== undefined && stands && available < need && !presses(load, position, wanted, available) ? need - available : undefined;
+  const short =
+    available !== undefined && stands && available < need && !presses(load, position, wanted, available) ? need - available : undefined;
   const limitedBy = asked.forces && wanted !== 0 ? limiters(plant, body, setting, solution, { wanted, moving, atStop, short }) : [];
   const stopForce = solution.stopForces[body.id];
   return body.actuators.map((id) => ({
@@ -94,7 +95,9 @@ const GIVES = 5e-3;
 function presses(load: BodyLoad | undefined, x: number, direction: -1 | 0 | 1, available: number): boolean {
   if (!load || direction === 0) return false;
   const here = -direction * netFixed(load, x);
-  return here > 0 && -direction * netFixed(load, x - direction * GIVES) < here && needed(load, x - direction * GIVES, direction) <= available;
+  return (
+    here > 0 && -direction * netFixed(load, x - direction * GIVES) < here && needed(load, x - direction * GIVES, direction) <= available
+  );
 }
 
 function stopAt(body: Body, position: number, velocity: number, moving: boolean, solution: Solution): 'retracted' | 'extended' | undefined {
@@ -125,10 +128,4 @@ export function cylinderAreas(plant: Plant, id: string): { readonly cap: number;
   const areas = cylinder ? areasOf(cylinder) : undefined;
   if (!cylinder || !areas) return { cap: 0, rod: 0, sealFriction: 0 };
   return { cap: areas.cap ?? 0, rod: areas.rod ?? 0, sealFriction: (si(cylinder, 'seal') ?? DEFAULT_SEAL) * areas.bore };
-}
-
-/** Drive of a pump. */
-export function driveOf(plant: Plant, pump: string): string | undefined {
-  const component = plant.at.component(pump);
-  return component ? reference(component, 'driven')?.id : undefined;
 }

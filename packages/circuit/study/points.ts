@@ -67,7 +67,13 @@ function stored(sample: Sample): Pick<Setting, 'oil' | 'bits' | 'gasPressures'> 
 const SMALL_WAY = 0.02;
 
 /** Directions in which a step moves its bodies: as they went; a body that only settled goes as it would without its load. */
-function directionsOf(plant: Plant, entry: Setting, shift: Readonly<Record<string, number>>, near: Solution, went: (body: Body) => boolean): Record<string, Direction> {
+function directionsOf(
+  plant: Plant,
+  entry: Setting,
+  shift: Readonly<Record<string, number>>,
+  near: Solution,
+  went: (body: Body) => boolean,
+): Record<string, Direction> {
   const result: Record<string, Direction> = {};
   for (const body of plant.bodies) result[body.id] = went(body) ? (Math.sign(shift[body.id] ?? 0) as Direction) : 0;
   const standing = plant.bodies.filter((one) => !went(one)).map((one) => one.id);
@@ -114,7 +120,12 @@ function knotPoints(plant: Plant, trace: Trace, body: Body, samples: readonly Sa
     const share = Math.abs(way) > 0 ? Math.min(1, Math.max(0, (knot.at - x(before)) / way)) : 1;
     const time = before.time + share * (after.time - before.time);
     const others = between(before, after, share);
-    const begun = Object.fromEntries(plant.bodies.map((one) => [one.id, one.id === body.id || Math.abs((others[one.id] ?? 0) - (samples[0]!.solution.positions[one.id] ?? 0)) > MOVED]));
+    const begun = Object.fromEntries(
+      plant.bodies.map((one) => [
+        one.id,
+        one.id === body.id || Math.abs((others[one.id] ?? 0) - (samples[0]!.solution.positions[one.id] ?? 0)) > MOVED,
+      ]),
+    );
     const [closing, opening] = [trace.snapshotAt(time, true), trace.snapshotAt(time, false)];
     const turns = closing !== undefined && opening !== undefined && closing !== opening;
     for (const side of besidesOnWay(knot, from, to, turns)) {
@@ -175,7 +186,13 @@ function solveAll(plant: Plant, wanted: readonly Wanted[], directions: Readonly<
     const solution = plant.machine.settle(one.setting, near);
     near = solution.solved ? solution : near;
     const setting = { ...one.setting, bits: solution.bits };
-    const point = pointOf(plant, setting, solution, { label: one.label, directions, forces: true, held, ...(one.time === undefined ? {} : { time: Math.max(0, one.time) }) });
+    const point = pointOf(plant, setting, solution, {
+      label: one.label,
+      directions,
+      forces: true,
+      held,
+      ...(one.time === undefined ? {} : { time: Math.max(0, one.time) }),
+    });
     const actuators = point.actuators.map((actuator) => stalledOnly(plant, actuator, one, setting, solution));
     points.push({ ...left(point, one.sample), actuators });
   }
@@ -191,7 +208,13 @@ function left(point: Point, sample: Sample | undefined): Point {
 }
 
 /** An actuator whose turn has not come yet, or that the oil does not push any more, is not stalled. */
-function stalledOnly(plant: Plant, actuator: Point['actuators'][number], at: Wanted, setting: Setting, solution: Solution): Point['actuators'][number] {
+function stalledOnly(
+  plant: Plant,
+  actuator: Point['actuators'][number],
+  at: Wanted,
+  setting: Setting,
+  solution: Solution,
+): Point['actuators'][number] {
   if (actuator.shortBy === undefined) return actuator;
   const body = plant.bodies.find((one) => one.actuators.includes(actuator.id));
   const turn = at.label === 'end' || (body !== undefined && at.begun[body.id] === true);
@@ -210,10 +233,13 @@ export function pointsAlone(plant: Plant, given: Setting, entryLabel: string, tu
   for (const body of plant.bodies) {
     const direction = found[body.id] ?? 0;
     const x = positions[body.id] ?? body.begins;
-    if (turn && direction !== 0 && Number.isFinite(body.stroke) && x === (direction > 0 ? body.stroke : 0)) positions[body.id] = direction > 0 ? 0 : body.stroke;
+    if (turn && direction !== 0 && Number.isFinite(body.stroke) && x === (direction > 0 ? body.stroke : 0))
+      positions[body.id] = direction > 0 ? 0 : body.stroke;
   }
   const setting = { ...given, positions };
-  const wanted: Wanted[] = [{ label: entryLabel, time: undefined, setting, begun: Object.fromEntries(plant.bodies.map((one) => [one.id, true])) }];
+  const wanted: Wanted[] = [
+    { label: entryLabel, time: undefined, setting, begun: Object.fromEntries(plant.bodies.map((one) => [one.id, true])) },
+  ];
   for (const body of plant.bodies) {
     const direction = found[body.id] ?? 0;
     if (direction === 0 || !Number.isFinite(body.stroke)) continue;
@@ -223,14 +249,20 @@ export function pointsAlone(plant: Plant, given: Setting, entryLabel: string, tu
     const places: { readonly at: number; readonly label: string }[] = [];
     for (const knot of passed(knotsOf(plant, body, setting.loads[body.id] ?? NO_LOAD), from, to)) {
       const words = `${sayPlace(plant.circuit, knot.at, body.type === 'rotating')} (${knot.words})`;
-      for (const side of besidesOnWay(knot, from, to, false)) places.push({ at: side.at, label: side.when === 'at' ? words : `just ${side.when} ${words}` });
+      for (const side of besidesOnWay(knot, from, to, false))
+        places.push({ at: side.at, label: side.when === 'at' ? words : `just ${side.when} ${words}` });
     }
     const middle = body.stroke / 2;
     if ((middle - from) * direction > 2e-6) places.push({ at: middle, label: 'mid-stroke' });
     if (Math.abs(to - from) > 2 * OFF_STOP) places.push({ at: to - OFF_STOP * direction, label: 'just before the stop' });
     places.sort((a, b) => (a.at - b.at) * direction);
     for (const place of places) {
-      wanted.push({ label: own + place.label, time: undefined, setting: { ...setting, positions: { ...setting.positions, [body.id]: place.at } }, begun: { [body.id]: true } });
+      wanted.push({
+        label: own + place.label,
+        time: undefined,
+        setting: { ...setting, positions: { ...setting.positions, [body.id]: place.at } },
+        begun: { [body.id]: true },
+      });
     }
   }
   return solveAll(plant, wanted, found);

@@ -47,7 +47,9 @@ function onOf(scene: Scene, component: Component, dimension: string | undefined)
   const on = reference(component, 'on');
   if (!on) {
     const net = scene.at.netOf(component.id, 'P');
-    return net === undefined ? { what: 'unknown', why: `${component.id} is joined to nothing` } : { what: 'pressure', net, head: scene.heads[component.id] ?? 0 };
+    return net === undefined
+      ? { what: 'unknown', why: `${component.id} is joined to nothing` }
+      : { what: 'pressure', net, head: scene.heads[component.id] ?? 0 };
   }
   const target = scene.at.component(on.id);
   if (!target) return { what: 'unknown', why: `${component.id} is on ${on.id}, which is not declared` };
@@ -58,7 +60,9 @@ function partSource(scene: Scene, target: Component, port: string | undefined, d
   if (dimension === 'temperature') return { what: 'temperature' };
   const pressureAt = (name: string): Source => {
     const net = scene.at.netOf(target.id, name);
-    return net === undefined ? { what: 'unknown', why: `${target.id}.${name} is joined to nothing` } : { what: 'pressure', net, head: scene.heads[target.id] ?? 0 };
+    return net === undefined
+      ? { what: 'unknown', why: `${target.id}.${name} is joined to nothing` }
+      : { what: 'pressure', net, head: scene.heads[target.id] ?? 0 };
   };
   if (port !== undefined) return pressureAt(port);
   switch (target.kind) {

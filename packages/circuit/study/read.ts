@@ -2,7 +2,7 @@
 import { range as rangeOf } from '../kinds/read.ts';
 import type { Property, PropertyValue } from '../model/value.ts';
 
-export { coils as coilsOf, flowAt, has as flag, reference, si, word } from '../kinds/read.ts';
+export { flowAt, has as flag, reference, si } from '../kinds/read.ts';
 
 interface Bearer {
   readonly properties: readonly Property[];
@@ -12,7 +12,7 @@ interface Bearer {
 export function property(of: Bearer, name: string): Property | undefined {
   return of.properties.find((one) => one.name === name);
 }
-export function valueOf(of: Bearer, name: string): PropertyValue | undefined {
+export function valueNamed(of: Bearer, name: string): PropertyValue | undefined {
   return property(of, name)?.value;
 }
 /** A range in SI with its dimension. */

@@ -1,6 +1,6 @@
 /** Every `require` of the circuit with its verdict, worst value, margin and words. */
 import type { Dimension } from '@oilway/quantity';
-import type { Bound, Condition, Measure, Requirement } from '../model/circuit.ts';
+import type { Condition, Measure, Requirement } from '../model/circuit.ts';
 import { conditionWords, holds, type Situation } from './conditions.ts';
 import { atoms, closed } from './contacts.ts';
 import type { Asked, Bounded } from './measures/asked.ts';
@@ -63,14 +63,31 @@ function bounded(facts: Facts, requirement: Bounded, runner: StateRunner): Requi
     observed = placed ? places.map((one) => placed(asked, one)) : [];
   }
   const doubtful = chattersIn(facts, requirement);
-  const verdict = judge(requirement.bound, observed, dimensionOf(facts, requirement), named, requirement.measure === 'drift' || requirement.measure === 'position' ? undefined : requirement.lasts);
-  const judged: Verdict = doubtful !== undefined && verdict.verdict === 'met' ? { ...verdict, verdict: 'undecidable', why: doubtful } : verdict;
-  return told(facts, requirement, judged, observed.flatMap((one) => one.notes ?? []));
+  const verdict = judge(
+    requirement.bound,
+    observed,
+    dimensionOf(facts, requirement),
+    named,
+    requirement.measure === 'drift' || requirement.measure === 'position' ? undefined : requirement.lasts,
+  );
+  const judged: Verdict =
+    doubtful !== undefined && verdict.verdict === 'met' ? { ...verdict, verdict: 'undecidable', why: doubtful } : verdict;
+  return told(
+    facts,
+    requirement,
+    judged,
+    observed.flatMap((one) => one.notes ?? []),
+  );
 }
 
 /** A run in which a contact chatters decides nothing about what rests on it. */
 function chattersIn(facts: Facts, requirement: Bounded): string | undefined {
-  const ran = facts.rans.find((one) => one.chattering.length > 0 && (!requirement.where.places || requirement.where.places.some((place) => place === one.cycle.id || place.startsWith(`${one.cycle.id}.`))));
+  const ran = facts.rans.find(
+    (one) =>
+      one.chattering.length > 0 &&
+      (!requirement.where.places ||
+        requirement.where.places.some((place) => place === one.cycle.id || place.startsWith(`${one.cycle.id}.`))),
+  );
   return ran ? `${ran.chattering[0]} chatters in ${ran.cycle.id}` : undefined;
 }
 
@@ -90,7 +107,8 @@ function told(facts: Facts, requirement: Bounded, verdict: Verdict, notes: reado
   if (verdict.verdict === 'undecidable') words = `cannot be decided: ${verdict.why ?? 'no figure'}`;
   else {
     words = `${subject} ${figures}${at ? ` in ${at}` : ''}`;
-    if (verdict.verdict === 'met' && verdict.margin !== undefined && Math.abs(verdict.margin) <= 1e-3 && requirement.bound.is !== 'reaches') words += ', just met';
+    if (verdict.verdict === 'met' && verdict.margin !== undefined && Math.abs(verdict.margin) <= 1e-3 && requirement.bound.is !== 'reaches')
+      words += ', just met';
     if (verdict.why) words += ` (${verdict.why})`;
   }
   if (notes.length > 0) words += ` (${list([...new Set(notes)].slice(0, 2))})`;
@@ -118,33 +136,21 @@ function figureWords(facts: Facts, requirement: Bounded, verdict: Verdict, amoun
   const { value, bound: limit } = sayAgainst(circuit, amount, against, dimension);
   if (bound.is === 'reaches') {
     const within = bound.within === undefined ? '' : ` within ${say(circuit, bound.within, 'time')}`;
-    if (verdict.verdict === 'missed') return `${verdict.rising === false ? 'comes down only to' : 'reaches only'} ${unitOnce(value, limit)}${within}`;
+    if (verdict.verdict === 'missed')
+      return `${verdict.rising === false ? 'comes down only to' : 'reaches only'} ${unitOnce(value, limit)}${within}`;
     return verdict.rising === false ? `comes down to ${limit}${within}` : `reaches ${limit}${within} (highest ${value})`;
   }
   const least = bound.is === 'least' || (bound.is === 'between' && against === bound.low.si);
   return unitOnce(value, `${least ? 'at least' : 'at most'} ${limit}`);
 }
 
-export function boundWords(facts: Facts, bound: Bound): string {
-  const { circuit } = facts.plant;
-  const q = (one: { readonly si: number; readonly dimension: Dimension }) => say(circuit, one.si, one.dimension);
-  switch (bound.is) {
-    case 'least':
-      return `at least ${q(bound.value)}`;
-    case 'most':
-      return `at most ${q(bound.value)}`;
-    case 'between':
-      return `between ${q(bound.low)} and ${q(bound.high)}`;
-    case 'reaches':
-      return `reaches ${q(bound.value)}${bound.within === undefined ? '' : ` within ${say(circuit, bound.within, 'time')}`}`;
-  }
-}
-
 /** Violated in any instant of any run, in any steady point, or in some stand of switches. */
 function never(facts: Facts, requirement: Extract<Requirement, { readonly form: 'never' }>): RequirementResult {
   const { plant } = facts;
   const condition = requirement.condition;
-  const words = conditionWords(condition, (si, dimension) => (dimension === 'length' ? sayPlace(plant.circuit, si, false) : say(plant.circuit, si, dimension as Dimension)));
+  const words = conditionWords(condition, (si, dimension) =>
+    dimension === 'length' ? sayPlace(plant.circuit, si, false) : say(plant.circuit, si, dimension as Dimension),
+  );
   if (atoms(condition).some((one) => one.op === 'unknown')) return undecided(requirement, 'the condition is not resolved');
   let unknown: string | undefined;
   for (const { counted, chattering } of facts.rans) {
@@ -160,13 +166,23 @@ function never(facts: Facts, requirement: Extract<Requirement, { readonly form: 
   }
   const searched = searchLogic(plant, condition);
   if (searched.found) {
-    return { id: requirement.id, verdict: 'missed', at: searched.found.at, words: `${words} can be true ${searched.found.at}`, origin: requirement.origin };
+    return {
+      id: requirement.id,
+      verdict: 'missed',
+      at: searched.found.at,
+      words: `${words} can be true ${searched.found.at}`,
+      origin: requirement.origin,
+    };
   }
   if (unknown !== undefined) return undecided(requirement, unknown);
   if (searched.searched === 'runs only' && facts.rans.length === 0) return undecided(requirement, 'no cycle is run');
   const stopped = facts.rans.find((one) => !one.result.completed && one.cycle.mode === 'cycle');
-  if (searched.searched === 'runs only' && stopped) return undecided(requirement, `${stopped.cycle.id} does not end: ${stopped.result.faults[0]?.words ?? 'it stops'}`);
-  const how = searched.searched === 'all' ? 'in any step and any stand of the switches' : `in the runs (${searched.why ?? 'no more can be searched'})`;
+  if (searched.searched === 'runs only' && stopped)
+    return undecided(requirement, `${stopped.cycle.id} does not end: ${stopped.result.faults[0]?.words ?? 'it stops'}`);
+  const how =
+    searched.searched === 'all'
+      ? 'in any step and any stand of the switches'
+      : `in the runs (${searched.why ?? 'no more can be searched'})`;
   return { id: requirement.id, verdict: 'met', at: '', words: `${words} is never true ${how}`, origin: requirement.origin };
 }
 
@@ -186,7 +202,8 @@ function inTrace(facts: Facts, condition: Condition, trace: Trace): { readonly a
       running: (id) => sample.lines.some((one) => one === id || one.startsWith(`${id}.`)),
     };
     const true_ = holds(plant.at, condition, situation);
-    if (true_ === true && sample.time < trace.end - 1e-9) return { at: `${sample.lines[0] ?? 'the run'}, ${say(plant.circuit, sample.time, 'time')}` };
+    if (true_ === true && sample.time < trace.end - 1e-9)
+      return { at: `${sample.lines[0] ?? 'the run'}, ${say(plant.circuit, sample.time, 'time')}` };
     if (true_ === undefined) unknown ??= 'a switch of the condition is not computed';
   }
   return unknown === undefined ? {} : { unknown };

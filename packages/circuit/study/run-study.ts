@@ -29,8 +29,14 @@ export function study(circuit: Circuit, options: StudyOptions = {}): Study {
   const machine = options.machine ?? assemble(circuit);
   const plant = plantOf(circuit, machine, options.cancelled);
   const rans = circuit.cycles.flatMap((one): readonly Ran[] => (plant.cancelled() ? [] : [runCycle(plant, one)]));
-  const steps = [...stepResults(plant, rans), ...coilTables(plant, circuit)].map((one) => ({ ...one, points: one.points.map((point) => spread(plant, point)) }));
-  const highest = highestPressures(rans, steps.flatMap((one) => one.points));
+  const steps = [...stepResults(plant, rans), ...coilTables(plant, circuit)].map((one) => ({
+    ...one,
+    points: one.points.map((point) => spread(plant, point)),
+  }));
+  const highest = highestPressures(
+    rans,
+    steps.flatMap((one) => one.points),
+  );
   const heritage = heritageOf(plant, rans, chargedOil(plant, rans.length > 0 ? highest : {}));
   const states = studyStates(plant, heritage).map((one) => ({ ...one, result: bounded(plant, one.result, highest) }));
   const cycles = rans.map((one) => one.result);
@@ -51,7 +57,10 @@ export function study(circuit: Circuit, options: StudyOptions = {}): Study {
 }
 
 function highestPressures(rans: readonly Ran[], points: readonly Point[]): Readonly<Record<string, number>> {
-  const { peaks } = extremes(points, rans.flatMap((one) => one.counted.flatMap((trace) => trace.samples.filter((sample) => !sample.shifting))));
+  const { peaks } = extremes(
+    points,
+    rans.flatMap((one) => one.counted.flatMap((trace) => trace.samples.filter((sample) => !sample.shifting))),
+  );
   return peaks;
 }
 

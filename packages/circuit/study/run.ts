@@ -5,6 +5,7 @@ import type { Origin } from '../model/origin.ts';
 import { firstLive, settingBy, standBy } from './coils.ts';
 import { onlyOutside, type Situation } from './conditions.ts';
 import { type Control, decide, detentsAfter, NOTHING } from './logic.ts';
+import { whyItStands } from './limits.ts';
 import { loadInSteps } from './loads.ts';
 import { moves, STILL_FLOW } from './motion.ts';
 import type { Plant } from './scene.ts';
@@ -13,7 +14,7 @@ import { settingOf } from './setting.ts';
 import type { Fault } from './study.ts';
 import { type Armed, Switches } from './switches.ts';
 import { liveValue, Trace } from './trace.ts';
-import { waitingFor } from './waiting.ts';
+import { bodiesWaitedFor, waitingFor } from './waiting.ts';
 import { say } from './words.ts';
 
 /** At most this many step changes in one instant. */
@@ -56,6 +57,8 @@ export class Runner {
   #drives: Readonly<Record<string, boolean>>;
   #loads = new Map<string, string>();
   #control: Control;
+  /** As last set. */
+  #setting: Setting;
   #shiftingUntil = 0;
   #gasFrom = 0;
   #gas = 1.4;
@@ -66,6 +69,7 @@ export class Runner {
     this.#detents = { ...detents };
     this.#stands = start.valves;
     this.#drives = start.drives;
+    this.#setting = start;
     this.switches = switches ?? new Switches(plant);
     this.#control = decide(plant.at, NOTHING, { contact: () => undefined, live: () => false, running: () => false }, { whileLines: false });
     for (const [id, load] of Object.entries(start.loads)) this.#loads.set(id, JSON.stringify(load));
@@ -113,7 +117,8 @@ export class Runner {
         (at, solution) => trace.sample(at - began, solution, ids, at <= this.#shiftingUntil + 1e-9),
       );
       const after = this.#run.now();
-      if (trace.end < this.#run.time - began - 1e-9) trace.sample(this.#run.time - began, after, ids, this.#run.time <= this.#shiftingUntil + 1e-9);
+      if (trace.end < this.#run.time - began - 1e-9)
+        trace.sample(this.#run.time - began, after, ids, this.#run.time <= this.#shiftingUntil + 1e-9);
       for (const one of report.happened) trace.event(one.time - began, one.of, one.words);
       fired = report.fired.flatMap((index) => armed[index] ?? []);
       events += 1 + report.happened.length;
@@ -174,13 +179,30 @@ export class Runner {
     };
   }
 
-  #instant(sequence: Sequence, time: number, now: Solution, fired: readonly Armed[], trace: Trace, faults: Fault[], manual: boolean): 'goes on' | 'finished' | 'fault' {
+  #instant(
+    sequence: Sequence,
+    time: number,
+    now: Solution,
+    fired: readonly Armed[],
+    trace: Trace,
+    faults: Fault[],
+    manual: boolean,
+  ): 'goes on' | 'finished' | 'fault' {
     const { at } = this.#plant;
-    for (const turned of this.switches.read(now, this.#run.time, fired)) trace.event(time, turned.key, turnedWords(this.#plant, turned.key, turned.on));
+    for (const turned of this.switches.read(now, this.#run.time, fired))
+      trace.event(time, turned.key, turnedWords(this.#plant, turned.key, turned.on));
     let control = this.#control;
     for (let change = 0; ; change += 1) {
       if (change > CHANGES) {
-        faults.push(this.#plain('cycle without time', `more than ${CHANGES} step changes in one instant`, sequence.lines(), time, sequence.cycle.origin));
+        faults.push(
+          this.#plain(
+            'cycle without time',
+            `more than ${CHANGES} step changes in one instant`,
+            sequence.lines(),
+            time,
+            sequence.cycle.origin,
+          ),
+        );
         return 'fault';
       }
       const demand = sequence.demand();
@@ -259,6 +281,7 @@ export class Runner {
     this.#commands = setting.commands;
     this.#drives = setting.drives;
     this.#control = control;
+    this.#setting = setting;
     const last = trace.snapshots.at(-1);
     if (last && last.time >= time - 1e-9) trace.snapshots.pop();
     trace.snapshots.push({ time, setting, lines: steps });
@@ -309,7 +332,19 @@ export class Runner {
       kind === 'time limit'
         ? `${line.step.id} is not over after ${say(circuit, line.step.atMost ?? 0, 'time')}${waits ? `: waits for ${waits}` : ''}`
         : `${line.step.id} waits for ever${waits ? ` at ${waits}` : ''}`;
-    return { kind, words: held ? `${words} (${held})` : words, step: line.step.id, time, origin: line.step.origin };
+    const bodies = bodiesWaitedFor(this.#plant, line.step.until, situation, now);
+    const setting = {
+      ...this.#setting,
+      positions: now.positions,
+      oil: now.oil,
+      bits: now.bits,
+      ...(now.gasPressures ? { gasPressures: now.gasPressures } : {}),
+    };
+    const stands = [
+      ...new Set(bodies.map((one) => whyItStands(this.#plant, one.body, setting, now, one.direction)).filter((one) => one !== '')),
+    ];
+    const more = held !== '' ? held : stands.join('; ');
+    return { kind, words: more ? `${words} (${more})` : words, step: line.step.id, time, origin: line.step.origin };
   }
   #plain(kind: Fault['kind'], words: string, lines: readonly Line[], time: number, origin?: Origin): Fault {
     const step = lines[0]?.step;

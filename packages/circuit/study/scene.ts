@@ -34,9 +34,3 @@ export function conditionsOf(circuit: Circuit): readonly Condition[] {
     ...circuit.requirements.flatMap((one: Requirement) => (one.form === 'never' ? [one.condition] : [])),
   ];
 }
-
-export function body(plant: Plant, id: string): Body {
-  const found = plant.bodies.find((one) => one.id === id);
-  if (!found) throw new Error(`no body ${id}`);
-  return found;
-}

@@ -15,11 +15,6 @@ export interface Line {
   readonly inner?: Sequence;
 }
 
-export interface Entered {
-  readonly step: Step;
-  readonly at: number;
-}
-
 /** What one round of the step chain did. */
 export type Change =
   | { readonly did: 'entered'; readonly lines: readonly Line[] }
@@ -167,7 +162,12 @@ export function late(lines: readonly Line[], time: number): Line | undefined {
  * Outside switches as the running lines and the interlocks of their coils need them.
  * `pressed`: what `until` waits for happens at once. `held`: a push button, whose release alone would end it, stays pressed. `free`: interlocks only.
  */
-export function outsideFor(at: Lookup, lines: readonly Line[], demand: Demand, untils: 'pressed' | 'held' | 'free'): ReadonlyMap<string, boolean> {
+export function outsideFor(
+  at: Lookup,
+  lines: readonly Line[],
+  demand: Demand,
+  untils: 'pressed' | 'held' | 'free',
+): ReadonlyMap<string, boolean> {
   const needs = new Map<string, boolean>();
   if (untils === 'held') {
     for (const { step } of lines) {
@@ -182,9 +182,4 @@ export function outsideFor(at: Lookup, lines: readonly Line[], demand: Demand, u
     for (const { step } of lines) if (step.until) for (const [id, on] of outsideNeeds(at, step.until)) needs.set(id, on);
   }
   return needs;
-}
-
-/** Coils a step lists. */
-export function coilsOfStep(step: Step): readonly string[] {
-  return step.actions.flatMap((one) => (one.does === 'energise' ? one.commands.map((command) => command.coil) : []));
 }

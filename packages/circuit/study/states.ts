@@ -4,7 +4,7 @@ import type { Action, Condition } from '../model/circuit.ts';
 import { noOil } from './charge.ts';
 import { greatest, isDetent } from './coils.ts';
 import { atoms, closed } from './contacts.ts';
-import { type Situation } from './conditions.ts';
+import type { Situation } from './conditions.ts';
 import type { Ran } from './cycle.ts';
 import { type Control, decide, demandOf, type Demand, detentsAfter, NOTHING } from './logic.ts';
 import { movingIn } from './motion.ts';
@@ -39,7 +39,10 @@ export function heritageOf(plant: Plant, rans: readonly Ran[], charged: Readonly
   const ends: Record<string, number[]> = {};
   const detents = new Map<string, Readonly<Record<string, Stand['position']>>>();
   let left: Readonly<Record<string, number>> | undefined;
-  const valves = plant.at.ofKind('directional').filter(isDetent).map((one) => one.id);
+  const valves = plant.at
+    .ofKind('directional')
+    .filter(isDetent)
+    .map((one) => one.id);
   for (const { counted } of rans) {
     for (const trace of counted) {
       for (const span of trace.spans) {
@@ -70,13 +73,22 @@ export function studyStates(plant: Plant, heritage: Heritage): readonly StudiedS
   add(studied(plant, heritage, { id: 'REST', state: 'REST' }, () => rest, { detents, accumulators: both }));
   add(studied(plant, heritage, { id: 'OFF', state: 'OFF' }, () => rest, { detents, accumulators: both, standing: [drives] }));
   const idle = idleLines(plant);
-  if (idle) add(studied(plant, heritage, { id: 'IDLE', state: 'IDLE' }, 'idle', { detents, accumulators: leftOil(plant, heritage) ?? both }));
+  if (idle)
+    add(studied(plant, heritage, { id: 'IDLE', state: 'IDLE' }, 'idle', { detents, accumulators: leftOil(plant, heritage) ?? both }));
   for (const from of ['', ...plant.at.steps.map((one) => one.id)]) add(stopFrom(plant, heritage, from, detents));
   for (const coil of plant.circuit.coils) add(coilState(plant, heritage, coil.id, detents));
   for (const cycle of plant.circuit.cycles.filter((one) => one.mode === 'manual')) {
     for (const step of cycle.steps.filter((one) => one.beside === undefined)) {
       const actions = [step, ...cycle.steps.filter((one) => one.beside === step.id)].flatMap((one) => one.actions);
-      add(studied(plant, heritage, { id: `manual ${step.id}`, state: 'MANUAL', of: step.id }, manualControl(plant, step.id, demandOf(actions, step.id)), { detents, accumulators: charged(plant, heritage) }));
+      add(
+        studied(
+          plant,
+          heritage,
+          { id: `manual ${step.id}`, state: 'MANUAL', of: step.id },
+          manualControl(plant, step.id, demandOf(actions, step.id)),
+          { detents, accumulators: charged(plant, heritage) },
+        ),
+      );
     }
   }
   return states;
@@ -111,7 +123,12 @@ function can(plant: Plant, condition: Condition): boolean {
   }
 }
 
-function stopFrom(plant: Plant, heritage: Heritage, step: string, all: readonly Record<string, Stand['position']>[]): StudiedState | undefined {
+function stopFrom(
+  plant: Plant,
+  heritage: Heritage,
+  step: string,
+  all: readonly Record<string, Stand['position']>[],
+): StudiedState | undefined {
   const { emergency } = plant.circuit;
   const left = step === '' ? undefined : heritage.detents.get(step);
   const detented = plant.at.ofKind('directional').some(isDetent);
@@ -128,7 +145,10 @@ function stopFrom(plant: Plant, heritage: Heritage, step: string, all: readonly 
 }
 
 /** What an emergency stop keeps alive, its interlocks heeded. */
-export function stopControl(plant: Plant, detents: Readonly<Record<string, Stand['position']>>): { readonly control: Control; readonly detents: Record<string, Stand['position']> } {
+export function stopControl(
+  plant: Plant,
+  detents: Readonly<Record<string, Stand['position']>>,
+): { readonly control: Control; readonly detents: Record<string, Stand['position']> } {
   const kept = (plant.circuit.emergency?.actions ?? []).filter((one: Action) => one.does !== 'stop');
   const demand = demandOf(kept, 'emergency');
   const pressed = outsideFor(plant.at, [], demand, 'free');
@@ -144,13 +164,21 @@ function coilState(plant: Plant, heritage: Heritage, coil: string, detents: Fact
     const asked = { live: { ...greatest(coil), ratio }, command: { coil, origin }, by: 'coil' };
     return decide(plant.at, { coils: [asked], levers: [], stops: [] }, DEAD, { whileLines: false, interlocks: false });
   });
-  const parts = controls.map((control) => studied(plant, heritage, { id: `coil ${coil}`, state: 'COIL', of: coil }, () => control, { detents: detents ?? [{}], accumulators: charged(plant, heritage) }));
+  const parts = controls.map((control) =>
+    studied(plant, heritage, { id: `coil ${coil}`, state: 'COIL', of: coil }, () => control, {
+      detents: detents ?? [{}],
+      accumulators: charged(plant, heritage),
+    }),
+  );
   const [first, second] = parts;
   if (!first || !second) return first;
   return {
     result: {
       ...first.result,
-      variants: [...first.result.variants.map((one) => marked(one, '+100 %')), ...second.result.variants.map((one) => marked(one, '-100 %'))],
+      variants: [
+        ...first.result.variants.map((one) => marked(one, '+100 %')),
+        ...second.result.variants.map((one) => marked(one, '-100 %')),
+      ],
       studied: { of: first.result.studied.of + second.result.studied.of, all: first.result.studied.all + second.result.studied.all },
     },
     settings: [...first.settings, ...second.settings],
@@ -170,7 +198,11 @@ function manualControl(plant: Plant, step: string, demand: Demand): (contacts: C
   const pressed = outsideFor(plant.at, [], demand, 'free');
   const cycle = plant.at.step(step)?.cycle;
   return (contacts) => {
-    const situation: Situation = { contact: (key) => pressed.get(key) ?? contacts(key), live: () => false, running: (id) => id === step || id === cycle };
+    const situation: Situation = {
+      contact: (key) => pressed.get(key) ?? contacts(key),
+      live: () => false,
+      running: (id) => id === step || id === cycle,
+    };
     return decide(plant.at, demand, situation);
   };
 }
@@ -194,7 +226,14 @@ function studied(
   let all = selection.all;
   for (const choice of selection.chosen) {
     if (plant.cancelled()) break;
-    const controls = control === 'idle' ? outsideWays(plant).map((pressed): ControlOf => (contacts) => idleControl(plant, (key) => pressed.get(key) ?? contacts(key))) : [control];
+    const controls =
+      control === 'idle'
+        ? outsideWays(plant).map(
+            (pressed): ControlOf =>
+              (contacts) =>
+                idleControl(plant, (key) => pressed.get(key) ?? contacts(key)),
+          )
+        : [control];
     for (const one of controls) {
       const { setting, solution, note } = settled(plant, choice, one, near);
       if (solution.solved) near = solution;
@@ -203,7 +242,15 @@ function studied(
         all -= 1;
         continue;
       }
-      const key = JSON.stringify([choice.detents, choice.accumulators, choice.standing, choice.positions, choice.loads, setting.valves, solution.bits]);
+      const key = JSON.stringify([
+        choice.detents,
+        choice.accumulators,
+        choice.standing,
+        choice.positions,
+        choice.loads,
+        setting.valves,
+        solution.bits,
+      ]);
       if (known.has(key)) {
         all -= 1;
         continue;
@@ -244,7 +291,12 @@ function outsideWays(plant: Plant): readonly ReadonlyMap<string, boolean>[] {
 }
 
 /** Solves with switches as solved: coils and contacts settle together, or hunt. */
-function settled(plant: Plant, choice: Choice, control: ControlOf, start: Solution | undefined): { readonly setting: Setting; readonly solution: Solution; readonly note?: { of: string; words: string } } {
+function settled(
+  plant: Plant,
+  choice: Choice,
+  control: ControlOf,
+  start: Solution | undefined,
+): { readonly setting: Setting; readonly solution: Solution; readonly note?: { of: string; words: string } } {
   const states = new Map<string, boolean | undefined>();
   let near = start;
   for (let round = 0; ; round += 1) {
@@ -274,7 +326,11 @@ function settled(plant: Plant, choice: Choice, control: ControlOf, start: Soluti
     if (sameControl(decided, next)) return { setting: { ...setting, bits: solution.bits }, solution };
     if (round >= 10) {
       const of = turned ?? 'control';
-      return { setting: { ...setting, bits: solution.bits }, solution, note: { of, words: `${of} hunts: the coils it decides turn it back` } };
+      return {
+        setting: { ...setting, bits: solution.bits },
+        solution,
+        note: { of, words: `${of} hunts: the coils it decides turn it back` },
+      };
     }
   }
 }

@@ -24,7 +24,9 @@ export function stepResults(plant: Plant, rans: readonly Ran[]): readonly StepRe
 
 /** All passages of a step in all runs that count. */
 export function passagesOf(rans: readonly Ran[], step: string): readonly Passage[] {
-  return rans.flatMap((ran) => ran.counted.flatMap((trace) => trace.spans.filter((one) => one.id === step).map((span) => ({ trace, span }))));
+  return rans.flatMap((ran) =>
+    ran.counted.flatMap((trace) => trace.spans.filter((one) => one.id === step).map((span) => ({ trace, span }))),
+  );
 }
 
 /** Samples of a step outside the shifting of valves, with the time since its entry. */
@@ -42,7 +44,12 @@ function stepResult(plant: Plant, rans: readonly Ran[], cycle: Cycle, step: Step
   const own = rans.find((one) => one.cycle.id === cycle.id);
   const faults: Fault[] = (own?.result.faults ?? []).filter((one) => one.step === step.id);
   const solved = passages.length > PASSAGES ? [passages[0]!, ...passages.slice(1 - PASSAGES)] : passages;
-  const points = passages.length > 0 ? solved.flatMap(({ trace, span }) => pointsInRun(plant, trace, step.id, span.from, span.to)) : plant.cancelled() ? [] : alone(plant, step);
+  const points =
+    passages.length > 0
+      ? solved.flatMap(({ trace, span }) => pointsInRun(plant, trace, step.id, span.from, span.to))
+      : plant.cancelled()
+        ? []
+        : alone(plant, step);
   const { peaks, lows } = extremes(points, samplesOf(passages, step.id));
   const ended = faults.every((one) => one.kind !== 'time limit' && one.kind !== 'waits for ever' && one.kind !== 'no equilibrium');
   const longest = Math.max(0, ...passages.map(({ span }) => span.to - span.from));
@@ -83,8 +90,14 @@ export function coilTables(plant: Plant, circuit: Circuit): readonly StepResult[
     const demand = demandOf([{ does: 'energise', commands: [command], origin: coil.origin }], coil.id);
     const dead = { contact: () => undefined, live: () => false, running: () => false };
     const helpers = loaders(plant, coil.id);
-    const helped = demandOf([{ does: 'energise', commands: helpers.map((one) => ({ coil: one, origin: coil.origin })), origin: coil.origin }], coil.id);
-    const control = decide(plant.at, { ...demand, coils: [...demand.coils, ...helped.coils] }, dead, { whileLines: false, interlocks: false });
+    const helped = demandOf(
+      [{ does: 'energise', commands: helpers.map((one) => ({ coil: one, origin: coil.origin })), origin: coil.origin }],
+      coil.id,
+    );
+    const control = decide(plant.at, { ...demand, coils: [...demand.coils, ...helped.coils] }, dead, {
+      whileLines: false,
+      interlocks: false,
+    });
     const setting = settingOf(plant, { control, detents: {}, positions: begins(plant), loads: loadsInSteps(plant, []) });
     const label = helpers.length > 0 ? `entry (with ${helpers.join(', ')})` : 'entry';
     const points = pointsAlone(plant, setting, label, true);
@@ -100,10 +113,16 @@ function loaders(plant: Plant, coil: string): readonly string[] {
   const outlet = (coils: readonly string[]) => {
     const dead = { contact: () => undefined, live: () => false, running: () => false };
     const origin = plant.circuit.coils[0]!.origin;
-    const demand = coils.length === 0 ? NOTHING : demandOf([{ does: 'energise', commands: coils.map((one) => ({ coil: one, origin })), origin }], 'coil');
+    const demand =
+      coils.length === 0
+        ? NOTHING
+        : demandOf([{ does: 'energise', commands: coils.map((one) => ({ coil: one, origin })), origin }], 'coil');
     const control = decide(plant.at, demand, dead, { whileLines: false, interlocks: false });
     // Held still: an outlet that only serves a moving cylinder would look idle.
-    const setting = { ...settingOf(plant, { control, detents: {}, positions: begins(plant), loads: loadsInSteps(plant, []) }), locked: plant.bodies.map((one) => one.id) };
+    const setting = {
+      ...settingOf(plant, { control, detents: {}, positions: begins(plant), loads: loadsInSteps(plant, []) }),
+      locked: plant.bodies.map((one) => one.id),
+    };
     const solution = plant.machine.settle(setting);
     return Math.max(0, ...plant.at.ofKind('pump').map((one) => solution.pressures[plant.at.netOf(one.id, 'P') ?? ''] ?? 0));
   };
@@ -114,7 +133,10 @@ function loaders(plant: Plant, coil: string): readonly string[] {
   return found.filter((one, index) => found.findIndex((other) => other.component === one.component) === index).map((one) => one.id);
 }
 
-export function extremes(points: readonly Point[], samples: readonly Sample[]): { readonly peaks: Record<string, number>; readonly lows: Record<string, number> } {
+export function extremes(
+  points: readonly Point[],
+  samples: readonly Sample[],
+): { readonly peaks: Record<string, number>; readonly lows: Record<string, number> } {
   const peaks: Record<string, number> = {};
   const lows: Record<string, number> = {};
   const take = (pressures: Readonly<Record<string, number>>, undetermined: Point['undetermined']) => {

@@ -16,7 +16,10 @@ export function judgeStill(facts: Facts, requirement: Still, runner: StateRunner
   const base = { id: requirement.id, origin: requirement.origin };
   const undecided = (why: string): RequirementResult => ({ ...base, verdict: 'undecidable', at: '', words: `cannot be decided: ${why}` });
   const body = plant.bodies.find((one) => one.actuators.includes(requirement.of));
-  if (!body) return undecided(plant.circuit.unknown[requirement.of] ?? plant.machine.notComputed[requirement.of] ?? `${requirement.of} is not computed`);
+  if (!body)
+    return undecided(
+      plant.circuit.unknown[requirement.of] ?? plant.machine.notComputed[requirement.of] ?? `${requirement.of} is not computed`,
+    );
   const { places, missing } = placesOf(facts, requirement.where);
   if (missing.length > 0) return undecided(`${list(missing)} is not studied`);
   if (places.length === 0) return undecided('the file has no cycle: name a state');
@@ -35,7 +38,8 @@ export function judgeStill(facts: Facts, requirement: Still, runner: StateRunner
       for (const point of selectedPoints(requirement.where, body, place.result.points)) {
         const one = point.actuators.find((actuator) => actuator.id === requirement.of);
         if (!point.solved) problems.push(`no equilibrium found at ${point.label} of ${place.id}`);
-        else if (one && Math.abs(one.velocity) > (body.type === 'rotating' ? 8.7e-4 : 5e-5)) return missed(`${place.id}, ${point.label}`, one.velocity, '');
+        else if (one && Math.abs(one.velocity) > (body.type === 'rotating' ? 8.7e-4 : 5e-5))
+          return missed(`${place.id}, ${point.label}`, one.velocity, '');
       }
       if (requirement.lasts !== undefined) {
         const sample = stepSamples(place).find((one) => moves(body, one.solution));
@@ -54,7 +58,8 @@ export function judgeStill(facts: Facts, requirement: Still, runner: StateRunner
         const one = variant.moving.find((moving) => moving.id === requirement.of);
         if (!one) continue;
         if (one.relaxes !== undefined) notes.push(`relaxes ${say(circuit, one.relaxes, 'length')} in ${result.id}`);
-        else if (!worst || Math.abs(one.velocity) > Math.abs(worst.velocity)) worst = { velocity: one.velocity, at, path: one.path, cause: one.cause };
+        else if (!worst || Math.abs(one.velocity) > Math.abs(worst.velocity))
+          worst = { velocity: one.velocity, at, path: one.path, cause: one.cause };
       }
     }
     if (worst) return missed(worst.at, worst.velocity, worst.path ? `, by ${worst.cause} through ${worst.path}` : '');
@@ -71,7 +76,12 @@ export function judgeStill(facts: Facts, requirement: Still, runner: StateRunner
   if (problems.length > 0) return undecided(problems[0]!);
   const extra = [...new Set(notes)].slice(0, 2);
   const where = list(requirement.where.places ?? ['every step']);
-  return { ...base, verdict: 'met', at: '', words: `${requirement.of} stands still in ${where}${extra.length > 0 ? ` (${list(extra)})` : ''}` };
+  return {
+    ...base,
+    verdict: 'met',
+    at: '',
+    words: `${requirement.of} stands still in ${where}${extra.length > 0 ? ` (${list(extra)})` : ''}`,
+  };
 }
 
 /** First motion of a run that is neither a part springing back nor, in the second after it, compressed oil settling. */
@@ -81,7 +91,8 @@ function unsettled(body: Body, run: StateRun): StateRun['samples'][number] | und
     if (!moves(body, one.solution)) continue;
     const velocity = one.solution.velocities[body.id] ?? 0;
     const load = run.setting.loads[body.id];
-    const relaxing = load !== undefined && relaxesWithin(load, one.solution.positions[body.id] ?? 0, velocity > 0 ? 1 : -1, 5e-3) !== undefined;
+    const relaxing =
+      load !== undefined && relaxesWithin(load, one.solution.positions[body.id] ?? 0, velocity > 0 ? 1 : -1, 5e-3) !== undefined;
     if (relaxing) settling = Math.max(settling, one.time + SETTLING);
     else if (one.time > settling) return one;
   }

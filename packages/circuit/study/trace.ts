@@ -75,10 +75,18 @@ export class Trace {
     for (const one of other.events) this.events.push({ ...one, time: one.time + offset });
     for (const one of other.spans) this.spans.push({ ...one, from: one.from + offset, to: one.to + offset });
     for (const [key, spans] of other.live) {
-      this.live.set(key, [...(this.live.get(key) ?? []), ...spans.map((one) => ({ ...one, from: one.from + offset, to: one.to + offset }))]);
+      this.live.set(key, [
+        ...(this.live.get(key) ?? []),
+        ...spans.map((one) => ({ ...one, from: one.from + offset, to: one.to + offset })),
+      ]);
     }
     const [a, b] = [this.statistics, other.statistics];
-    this.statistics = { steps: a.steps + b.steps, rejected: a.rejected + b.rejected, newton: a.newton + b.newton, events: a.events + b.events };
+    this.statistics = {
+      steps: a.steps + b.steps,
+      rejected: a.rejected + b.rejected,
+      newton: a.newton + b.newton,
+      events: a.events + b.events,
+    };
   }
   get end(): number {
     return this.samples.at(-1)?.time ?? 0;
@@ -141,13 +149,17 @@ function bend(samples: readonly Sample[], index: number, plant: Plant, nets: rea
   if (!before || !here || !after) return Number.POSITIVE_INFINITY;
   const span = after.time - before.time;
   const share = span > 0 ? (here.time - before.time) / span : 0.5;
-  const off = (a: number | undefined, b: number | undefined, c: number | undefined) => Math.abs((b ?? 0) - (a ?? 0) - ((c ?? 0) - (a ?? 0)) * share);
+  const off = (a: number | undefined, b: number | undefined, c: number | undefined) =>
+    Math.abs((b ?? 0) - (a ?? 0) - ((c ?? 0) - (a ?? 0)) * share);
   const [p, q, r] = [before.solution.pressures, here.solution.pressures, after.solution.pressures];
   let most = 0;
   for (const net of nets) most = Math.max(most, off(p[net], q[net], r[net]) / 1e6);
   for (const body of plant.bodies) {
     const scale = Number.isFinite(body.stroke) ? body.stroke / 100 : 1;
-    most = Math.max(most, off(before.solution.positions[body.id], here.solution.positions[body.id], after.solution.positions[body.id]) / scale);
+    most = Math.max(
+      most,
+      off(before.solution.positions[body.id], here.solution.positions[body.id], after.solution.positions[body.id]) / scale,
+    );
   }
   return most + span * 0.01;
 }
@@ -156,20 +168,35 @@ function bend(samples: readonly Sample[], index: number, plant: Plant, nets: rea
 export function runOf(plant: Plant, cycle: string, trace: Trace): Run {
   const kept = thin(trace, plant).map((index) => trace.samples[index]!);
   // Every solution of a run has the same keys: the first names them.
-  const series = <T>(pick: (solution: Solution) => Readonly<Record<string, T>>, keep: (key: string) => boolean = () => true): Record<string, T[]> => {
+  const series = <T>(
+    pick: (solution: Solution) => Readonly<Record<string, T>>,
+    keep: (key: string) => boolean = () => true,
+  ): Record<string, T[]> => {
     const first = kept[0];
     const rows = kept.map((one) => pick(one.solution));
     const keys = first ? Object.keys(pick(first.solution)).filter(keep) : [];
     return Object.fromEntries(keys.map((key) => [key, rows.map((one) => one[key] as T)]));
   };
-  const shown = new Set(plant.circuit.components.filter((one) => ['pump', 'relief', 'cylinder', 'motor', 'rotary', 'accumulator'].includes(one.kind)).map((one) => one.id));
-  const flows = series((one) => one.flows, (key) => shown.has(key.slice(0, Math.max(0, key.lastIndexOf('.')))));
-  const power = Object.fromEntries(plant.at.drives.map((drive) => [drive.id, kept.map((one) => drivePower(plant, drive.id, one.solution))]));
+  const shown = new Set(
+    plant.circuit.components
+      .filter((one) => ['pump', 'relief', 'cylinder', 'motor', 'rotary', 'accumulator'].includes(one.kind))
+      .map((one) => one.id),
+  );
+  const flows = series(
+    (one) => one.flows,
+    (key) => shown.has(key.slice(0, Math.max(0, key.lastIndexOf('.')))),
+  );
+  const power = Object.fromEntries(
+    plant.at.drives.map((drive) => [drive.id, kept.map((one) => drivePower(plant, drive.id, one.solution))]),
+  );
   const velocities = series((one) => one.velocities);
   return {
     cycle,
     times: kept.map((one) => one.time),
-    positions: byActuator(plant, series((one) => one.positions)),
+    positions: byActuator(
+      plant,
+      series((one) => one.positions),
+    ),
     velocities: byActuator(plant, velocities),
     pressures: series((one) => one.pressures),
     flows,

@@ -34,7 +34,9 @@ export interface Factors {
 /** Every position of every detented valve. */
 export function allDetents(plant: Plant): readonly Record<string, Stand['position']>[] {
   const valves = plant.at.ofKind('directional').filter(isDetent);
-  return product(valves.map((valve) => positionsOf(valve).map((position) => [valve.id, position] as const))).map((row) => Object.fromEntries(row));
+  return product(valves.map((valve) => positionsOf(valve).map((position) => [valve.id, position] as const))).map((row) =>
+    Object.fromEntries(row),
+  );
 }
 
 interface Stance {
@@ -62,7 +64,12 @@ export function stances(plant: Plant, ends: Readonly<Record<string, readonly num
         if (seen.has(key)) continue;
         seen.add(key);
         const free = x === body.begins ? [] : [body.id];
-        found.push({ loads, positions, free, label: `${body.actuators.join(' with ')} ${caseWords(one)} at ${placeWords(plant, body, x)}` });
+        found.push({
+          loads,
+          positions,
+          free,
+          label: `${body.actuators.join(' with ')} ${caseWords(one)} at ${placeWords(plant, body, x)}`,
+        });
       }
     }
   }
@@ -71,17 +78,19 @@ export function stances(plant: Plant, ends: Readonly<Record<string, readonly num
 
 /** The load around a place: forces within 5 mm decide motion and relaxing. */
 function near(load: BodyLoad, x: number): readonly unknown[] {
-  return load.fixed.map((one) => {
-    const inside = one.at.map((at, index) => [at, one.force[index]] as const).filter(([at]) => Math.abs(at - x) <= 6e-3);
-    const at = (place: number) => {
-      const right = one.at.findIndex((knot) => knot > place);
-      if (right <= 0) return right === 0 ? one.force[0] : one.force.at(-1);
-      const [x0, x1] = [one.at[right - 1]!, one.at[right]!];
-      return one.force[right - 1]! + ((one.force[right]! - one.force[right - 1]!) * (place - x0)) / (x1 - x0);
-    };
-    const here = [at(x), at(x - 5e-3), at(x + 5e-3)];
-    return here.every((force) => force === 0) && inside.every(([, force]) => force === 0) ? 0 : [here, inside];
-  }).filter((one) => one !== 0);
+  return load.fixed
+    .map((one) => {
+      const inside = one.at.map((at, index) => [at, one.force[index]] as const).filter(([at]) => Math.abs(at - x) <= 6e-3);
+      const at = (place: number) => {
+        const right = one.at.findIndex((knot) => knot > place);
+        if (right <= 0) return right === 0 ? one.force[0] : one.force.at(-1);
+        const [x0, x1] = [one.at[right - 1]!, one.at[right]!];
+        return one.force[right - 1]! + ((one.force[right]! - one.force[right - 1]!) * (place - x0)) / (x1 - x0);
+      };
+      const here = [at(x), at(x - 5e-3), at(x + 5e-3)];
+      return here.every((force) => force === 0) && inside.every(([, force]) => force === 0) ? 0 : [here, inside];
+    })
+    .filter((one) => one !== 0);
 }
 
 function positionsFor(body: Body, cases: readonly LoadCase[], ends: readonly number[]): readonly number[] {
@@ -119,15 +128,31 @@ export function variantsOf(plant: Plant, factors: Factors, ends: Readonly<Record
     const [d, a, s, l, p] = indices as [number, number, number, number, number];
     const [detent, accumulator, stand, lift, place] = [detents[d]!, accumulators[a]!, standing[s]!, lifted[l]!, places[p]!];
     const label = [
-      Object.keys(detent).length > 0 ? list(Object.entries(detent).map(([id, position]) => `${id} as ${position}`), 'and') : '',
+      Object.keys(detent).length > 0
+        ? list(
+            Object.entries(detent).map(([id, position]) => `${id} as ${position}`),
+            'and',
+          )
+        : '',
       accumulator.as === 'none' ? '' : `accumulators ${accumulator.as}`,
       standing.length > 1 ? (stand.length > 0 ? `${stand.join(', ')} stopped` : 'drives turning') : '',
       lift.length > 0 ? `${lift.join(', ')} lifted` : '',
       place.label,
     ].filter((one) => one !== '');
-    return { detents: detent, oil: accumulator.oil, accumulators: accumulator.as, standing: stand, lifted: lift, loads: place.loads, positions: place.positions, free: place.free, label: label.join(', ') };
+    return {
+      detents: detent,
+      oil: accumulator.oil,
+      accumulators: accumulator.as,
+      standing: stand,
+      lifted: lift,
+      loads: place.loads,
+      positions: place.positions,
+      free: place.free,
+      label: label.join(', '),
+    };
   };
-  const indices = all <= ALL ? product(factorLists.map((one) => one.map((_, index) => index))) : pairs(factorLists.map((one) => one.length));
+  const indices =
+    all <= ALL ? product(factorLists.map((one) => one.map((_, index) => index))) : pairs(factorLists.map((one) => one.length));
   return { chosen: indices.map(make), all };
 }
 
@@ -140,7 +165,9 @@ export function pairs(sizes: readonly number[]): readonly (readonly number[])[] 
     for (const [factor, value] of changes) row[factor] = value;
     return row;
   };
-  const choices = sizes.flatMap((size, factor) => Array.from({ length: Math.max(0, size - 1) }, (_, value) => [factor, value + 1] as const));
+  const choices = sizes.flatMap((size, factor) =>
+    Array.from({ length: Math.max(0, size - 1) }, (_, value) => [factor, value + 1] as const),
+  );
   for (const one of choices) if (found.length < MOST) found.push(with_([one]));
   for (const [index, one] of choices.entries()) {
     for (const other of choices.slice(index + 1)) {

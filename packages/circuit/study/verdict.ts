@@ -28,7 +28,13 @@ export function marginOf(amount: number, bound: number, side: 'least' | 'most', 
   return left / scale;
 }
 
-export function judge(bound: Bound, observed: readonly Observed[], dimension: Dimension, named: boolean, lasts: number | undefined): Verdict {
+export function judge(
+  bound: Bound,
+  observed: readonly Observed[],
+  dimension: Dimension,
+  named: boolean,
+  lasts: number | undefined,
+): Verdict {
   const places = named ? observed : observed.filter((one) => one.values.length > 0 || one.problems.length > 0);
   // Where no place was named, those that do not pass the range are not meant.
   const meant = named ? places : places.filter((one) => one.values.length > 0);
@@ -38,7 +44,12 @@ export function judge(bound: Bound, observed: readonly Observed[], dimension: Di
   return within(bound, meant, problems, dimension);
 }
 
-function within(bound: Exclude<Bound, { is: 'reaches' }>, places: readonly Observed[], problems: readonly string[], dimension: Dimension): Verdict {
+function within(
+  bound: Exclude<Bound, { is: 'reaches' }>,
+  places: readonly Observed[],
+  problems: readonly string[],
+  dimension: Dimension,
+): Verdict {
   let worst: { value: Value; amount: number; against: number; margin: number } | undefined;
   let unsure: Value | undefined;
   for (const value of places.flatMap((one) => one.values)) {
@@ -58,7 +69,12 @@ function within(bound: Exclude<Bound, { is: 'reaches' }>, places: readonly Obser
   return { verdict: 'met', ...shown };
 }
 
-function score(bound: Exclude<Bound, { is: 'reaches' }>, value: Value, dimension: Dimension, side: 'bad' | 'good'): { readonly amount: number; readonly against: number; readonly margin: number } {
+function score(
+  bound: Exclude<Bound, { is: 'reaches' }>,
+  value: Value,
+  dimension: Dimension,
+  side: 'bad' | 'good',
+): { readonly amount: number; readonly against: number; readonly margin: number } {
   if (bound.is === 'between') {
     const low = score({ is: 'least', value: bound.low }, value, dimension, side);
     const high = score({ is: 'most', value: bound.high }, value, dimension, side);
@@ -70,10 +86,16 @@ function score(bound: Exclude<Bound, { is: 'reaches' }>, value: Value, dimension
 }
 
 /** The value crosses the bound from whichever side the place begins, within a time of the entry where one is named. */
-function reaches(bound: Extract<Bound, { is: 'reaches' }>, places: readonly Observed[], problems: readonly string[], lasts: number | undefined): Verdict {
+function reaches(
+  bound: Extract<Bound, { is: 'reaches' }>,
+  places: readonly Observed[],
+  problems: readonly string[],
+  lasts: number | undefined,
+): Verdict {
   const target = bound.value.si;
   const near = NEAR * Math.abs(target);
-  if (places.length === 0 || places.every((one) => one.values.length === 0)) return { verdict: 'undecidable', why: problems[0] ?? 'nothing to be measured in the places named' };
+  if (places.length === 0 || places.every((one) => one.values.length === 0))
+    return { verdict: 'undecidable', why: problems[0] ?? 'nothing to be measured in the places named' };
   let shown: { worst: Value; amount: number; rising: boolean } | undefined;
   for (const place of places) {
     for (const series of new Set(place.values.map((one) => one.series))) {
@@ -99,16 +121,27 @@ function reaches(bound: Extract<Bound, { is: 'reaches' }>, places: readonly Obse
     }
   }
   if (problems.length > 0) return { verdict: 'undecidable', why: problems[0]! };
-  return shown ? { verdict: 'met', ...shown, against: target, margin: Math.abs(shown.amount - target) / Math.max(1e-12, Math.abs(target)) } : { verdict: 'undecidable', why: 'nothing to be measured' };
+  return shown
+    ? { verdict: 'met', ...shown, against: target, margin: Math.abs(shown.amount - target) / Math.max(1e-12, Math.abs(target)) }
+    : { verdict: 'undecidable', why: 'nothing to be measured' };
 }
 
 /** A bound held without break for a time somewhere in the place. */
-function lasting(bound: Exclude<Bound, { is: 'reaches' }>, places: readonly Observed[], problems: readonly string[], dimension: Dimension, lasts: number): Verdict {
+function lasting(
+  bound: Exclude<Bound, { is: 'reaches' }>,
+  places: readonly Observed[],
+  problems: readonly string[],
+  dimension: Dimension,
+  lasts: number,
+): Verdict {
   for (const place of places) {
     let best = 0;
     for (const series of new Set(place.values.map((one) => one.series))) {
       const ordered = place.values.filter((one) => one.series === series && one.since !== undefined);
-      best = Math.max(best, longest(ordered, (one) => score(bound, one, dimension, 'bad').margin >= -NEAR));
+      best = Math.max(
+        best,
+        longest(ordered, (one) => score(bound, one, dimension, 'bad').margin >= -NEAR),
+      );
     }
     if (best < lasts - 1e-6) {
       const plain = within(bound, [place], [], dimension);
@@ -116,7 +149,8 @@ function lasting(bound: Exclude<Bound, { is: 'reaches' }>, places: readonly Obse
       return problems.length > 0 ? { verdict: 'undecidable', why: problems[0]! } : { ...plain, verdict: 'missed', why };
     }
   }
-  if (places.length === 0 || problems.length > 0) return { verdict: 'undecidable', why: problems[0] ?? 'nothing to be measured in the places named' };
+  if (places.length === 0 || problems.length > 0)
+    return { verdict: 'undecidable', why: problems[0] ?? 'nothing to be measured in the places named' };
   const plain = within(bound, places, [], dimension);
   return { ...plain, verdict: 'met' };
 }

@@ -1,6 +1,6 @@
 /** What a step waits for, with the value it stands at: "PS1 at 138 of 145 bar". */
 import type { Dimension } from '@oilway/quantity';
-import type { Solution } from '../assembly/machine.ts';
+import type { Body, Solution } from '../assembly/machine.ts';
 import type { Condition } from '../model/circuit.ts';
 import { holds, type Situation } from './conditions.ts';
 import { atomContact, switchContact } from './contacts.ts';
@@ -13,6 +13,27 @@ export function waitingFor(plant: Plant, condition: Condition | undefined, situa
   if (!condition) return '';
   const open = missing(plant, condition, situation);
   return list(open.map((atom) => atomWords(plant, atom, solution)));
+}
+
+/** Bodies whose place is waited for, and the way each would have to go. */
+export function bodiesWaitedFor(
+  plant: Plant,
+  condition: Condition | undefined,
+  situation: Situation,
+  solution: Solution,
+): readonly { readonly body: Body; readonly direction: -1 | 1 }[] {
+  if (!condition) return [];
+  return missing(plant, condition, situation).flatMap((atom) => {
+    const component = 'of' in atom ? plant.at.component(atom.of) : undefined;
+    const contact = component?.kind === 'switch' ? switchContact(plant, component) : atomContact(plant, atom);
+    if (contact?.source.what !== 'position') return [];
+    const { source, test } = contact;
+    const body = plant.bodies.find((one) => one.id === source.body);
+    const x = solution.positions[source.body];
+    if (!body || x === undefined) return [];
+    const target = test.is === 'inside' ? (x < test.from ? test.from : test.to) : test.is === 'above' ? test.rises : x;
+    return target === x ? [] : [{ body, direction: target > x ? (1 as const) : (-1 as const) }];
+  });
 }
 
 function missing(plant: Plant, condition: Condition, situation: Situation): readonly Condition[] {
@@ -35,7 +56,9 @@ function atomWords(plant: Plant, atom: Condition, solution: Solution): string {
     const contact = atomContact(plant, atom);
     const value = contact ? valueIn(plant, contact.source, solution) : undefined;
     const rotating = contact?.source.what === 'position' && contact.source.rotating;
-    return value === undefined ? `${atom.of} ${atom.is}` : `${atom.of} ${atom.is}, it stands at ${sayPlace(circuit, value, rotating === true)}`;
+    return value === undefined
+      ? `${atom.of} ${atom.is}`
+      : `${atom.of} ${atom.is}, it stands at ${sayPlace(circuit, value, rotating === true)}`;
   }
   const component = plant.at.component(atom.of);
   if (component?.kind !== 'switch') return `${atom.of} ${atom.is}`;

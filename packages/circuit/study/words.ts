@@ -14,7 +14,12 @@ export function sayPlace(circuit: Circuit, si: number, rotating: boolean): strin
   return rotating ? format(si, 'angle', options(circuit)) : format(si, 'length', options(circuit, true));
 }
 /** Value and bound with as many digits as tell them apart. */
-export function sayAgainst(circuit: Circuit, si: number, bound: number, dimension: Dimension): { readonly value: string; readonly bound: string } {
+export function sayAgainst(
+  circuit: Circuit,
+  si: number,
+  bound: number,
+  dimension: Dimension,
+): { readonly value: string; readonly bound: string } {
   return formatAgainst(si, bound, dimension, options(circuit));
 }
 /** `SOL1`, `SOL1 and SOL2`, `SOL1, SOL2 and SOL3`. */

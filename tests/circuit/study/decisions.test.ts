@@ -13,7 +13,9 @@ import { circuitOf, PLAIN } from './support/circuits.ts';
 import { fakeMachine } from './support/fake-machine.ts';
 
 const q = (si: number) => ({ si, dimension: 'pressure' as const, unit: 'bar' });
-const seen = (...amounts: number[]) => [{ place: 'Go.Out', values: amounts.map((one, index) => value(`at ${index}`, one, { time: index, since: index })), problems: [] }];
+const seen = (...amounts: number[]) => [
+  { place: 'Go.Out', values: amounts.map((one, index) => value(`at ${index}`, one, { time: index, since: index })), problems: [] },
+];
 
 describe('a bound', () => {
   it('is met within 0.1 % of itself and missed beyond', () => {
@@ -38,7 +40,9 @@ describe('a bound', () => {
   it('is reached from whichever side the place begins, in time', () => {
     const up = judge({ is: 'reaches', value: q(100e5) }, seen(10e5, 60e5, 101e5), 'pressure', true, undefined);
     expect(up.verdict).toBe('met');
-    expect(judge({ is: 'reaches', value: q(100e5), within: 1 }, seen(10e5, 60e5, 101e5), 'pressure', true, undefined).verdict).toBe('missed');
+    expect(judge({ is: 'reaches', value: q(100e5), within: 1 }, seen(10e5, 60e5, 101e5), 'pressure', true, undefined).verdict).toBe(
+      'missed',
+    );
     expect(judge({ is: 'reaches', value: q(10e5) }, seen(100e5, 50e5, 9e5), 'pressure', true, undefined).verdict).toBe('met');
     expect(judge({ is: 'reaches', value: q(10e5) }, seen(100e5, 50e5, 12e5), 'pressure', true, undefined).verdict).toBe('missed');
   });
@@ -50,13 +54,18 @@ describe('a bound', () => {
   it('that nothing decides is never passed', () => {
     const problems = fc.array(fc.string({ minLength: 1 }), { minLength: 1, maxLength: 3 });
     fc.assert(
-      fc.property(fc.array(fc.double({ min: -1e7, max: 1e7, noNaN: true }), { maxLength: 4 }), problems, fc.double({ min: 1, max: 1e7, noNaN: true }), (amounts, list, bound) => {
-        const observed = [{ place: 'x', values: amounts.map((one, i) => value(`${i}`, one, { since: i })), problems: list }];
-        for (const is of ['least', 'most', 'reaches'] as const) {
-          if (judge({ is, value: q(bound) }, observed, 'pressure', true, undefined).verdict === 'met') return false;
-        }
-        return judge({ is: 'most', value: q(bound) }, [], 'pressure', true, undefined).verdict === 'undecidable';
-      }),
+      fc.property(
+        fc.array(fc.double({ min: -1e7, max: 1e7, noNaN: true }), { maxLength: 4 }),
+        problems,
+        fc.double({ min: 1, max: 1e7, noNaN: true }),
+        (amounts, list, bound) => {
+          const observed = [{ place: 'x', values: amounts.map((one, i) => value(`${i}`, one, { since: i })), problems: list }];
+          for (const is of ['least', 'most', 'reaches'] as const) {
+            if (judge({ is, value: q(bound) }, observed, 'pressure', true, undefined).verdict === 'met') return false;
+          }
+          return judge({ is: 'most', value: q(bound) }, [], 'pressure', true, undefined).verdict === 'undecidable';
+        },
+      ),
     );
   });
   it('of a temperature counts its margin in degrees of the bound', () => {
@@ -74,7 +83,10 @@ const above = (key: string, rises: number, falls: number): Contact => ({
 describe('contacts', () => {
   const circuit = circuitOf(PLAIN);
   const plant = plantOf(circuit, fakeMachine(circuit, {}, { C1: 0.3 }));
-  const at = (p: number) => ({ ...plant.machine.solve({ drives: {}, valves: {}, commands: {}, bits: {}, positions: {}, oil: {}, loads: {} }), pressures: { n: p } });
+  const at = (p: number) => ({
+    ...plant.machine.solve({ drives: {}, valves: {}, commands: {}, bits: {}, positions: {}, oil: {}, loads: {} }),
+    pressures: { n: p },
+  });
   it('hold their state between the two thresholds', () => {
     const one = above('PS', 120e5, 100e5);
     expect(closed(plant, one, at(110e5), undefined)).toBe(false);
@@ -115,7 +127,10 @@ describe('never', () => {
     const circuit = circuitOf(PLAIN + more, true);
     const plant = plantOf(circuit, fakeMachine(circuit, {}, { C1: 0.3 }));
     const [requirement] = circuit.requirements;
-    return searchLogic(plant, requirement?.form === 'never' ? requirement.condition : { op: 'unknown', origin: circuit.components[0]!.origin });
+    return searchLogic(
+      plant,
+      requirement?.form === 'never' ? requirement.condition : { op: 'unknown', origin: circuit.components[0]!.origin },
+    );
   };
   const CYCLE = 'cycle Go {\n  step Out energise SOL1 until LS1 on\n}\n';
   it('finds the stand of switches that breaks it, and none where an interlock holds', () => {
@@ -126,7 +141,10 @@ describe('never', () => {
     expect(search(`${CYCLE}while PS1 off energise SOL2\nrequire never SOL1 on and SOL2 on\n`).found?.at).toBe('in Go.Out with PS1 off');
   });
   it('says that positions are looked for in the runs only', () => {
-    expect(search(`${CYCLE}require never C1 above 200 mm and PS1 off\n`)).toEqual({ searched: 'runs only', why: 'it names positions or sensors' });
+    expect(search(`${CYCLE}require never C1 above 200 mm and PS1 off\n`)).toEqual({
+      searched: 'runs only',
+      why: 'it names positions or sensors',
+    });
   });
 });
 
@@ -136,7 +154,14 @@ describe('variants', () => {
       fc.property(fc.array(fc.integer({ min: 1, max: 30 }), { minLength: 1, maxLength: 5 }), (sizes) => {
         const rows = pairs(sizes);
         const unique = new Set(rows.map((one) => one.join(',')));
-        return rows.length <= 256 && unique.size === rows.length && rows.every((row) => row.length === sizes.length && row.every((one, i) => one >= 0 && one < sizes[i]!) && row.filter((one) => one > 0).length <= 2);
+        return (
+          rows.length <= 256 &&
+          unique.size === rows.length &&
+          rows.every(
+            (row) =>
+              row.length === sizes.length && row.every((one, i) => one >= 0 && one < sizes[i]!) && row.filter((one) => one > 0).length <= 2,
+          )
+        );
       }),
     );
   });
@@ -144,6 +169,8 @@ describe('variants', () => {
 
 describe('texts of these tests', () => {
   it('resolve without errors', () => {
-    expect(analyseText({ uri: 'test:/plain.oilway', text: PLAIN }).findings.filter((one) => one.severity === 'error' && !one.computed)).toEqual([]);
+    expect(
+      analyseText({ uri: 'test:/plain.oilway', text: PLAIN }).findings.filter((one) => one.severity === 'error' && !one.computed),
+    ).toEqual([]);
   });
 });

@@ -27,7 +27,10 @@ describe('heat', () => {
   });
   it('a coolant warmer than the oil gives nothing', () => {
     const text = `${tank}cooler K1 (power 0.2 kW/K, coolant 80 degC)\nplug K1.in, K1.out\n`;
-    expect(balance(400, [part(text, 'R1')], [{ cooler: part(text, 'K1'), share: 1 }]).temperature).toBeCloseTo(balance(400, [part(text, 'R1')], []).temperature, 9);
+    expect(balance(400, [part(text, 'R1')], [{ cooler: part(text, 'K1'), share: 1 }]).temperature).toBeCloseTo(
+      balance(400, [part(text, 'R1')], []).temperature,
+      9,
+    );
   });
 });
 
@@ -38,7 +41,13 @@ describe('duty of a drive', () => {
     const plant = plantOf(circuit, fakeMachine(circuit, {}, { C1: 0.3 }));
     const base = plant.machine.solve({ drives: {}, valves: {}, commands: {}, bits: {}, positions: {}, oil: {}, loads: {} });
     const trace = new Trace();
-    for (const [time, watts] of [[0, 4200], [2, 4200], [2, 1000], [10, 1000]] as const) trace.sample(time, { ...base, shaft: { P1: watts } }, [], false);
+    for (const [time, watts] of [
+      [0, 4200],
+      [2, 4200],
+      [2, 1000],
+      [10, 1000],
+    ] as const)
+      trace.sample(time, { ...base, shaft: { P1: watts } }, [], false);
     const duty = dutyOf(plant, [trace]).M1!;
     expect(duty.rms).toBeCloseTo(2080, 0);
     expect(duty.highest).toBe(4200);
@@ -49,7 +58,10 @@ describe('duty of a drive', () => {
 describe('stored oil', () => {
   // Absolute pressures: 10 L, 90 bar at 20 degC, oil between 100 and 200 bar: 4.482 L isothermal (recomputed from Boyle's law; gauge figures would give 4.500).
   it('10 L at 90 bar gives 4.482 L between 100 and 200 bar', () => {
-    const accumulator = part('circuit T\naccumulator A1 (bladder, volume 10 L, precharge 90 bar at 20 degC, gas nitrogen)\nplug A1.P\n', 'A1');
+    const accumulator = part(
+      'circuit T\naccumulator A1 (bladder, volume 10 L, precharge 90 bar at 20 degC, gas nitrogen)\nplug A1.P\n',
+      'A1',
+    );
     expect((oilAt(accumulator, 200e5, 293.15) - oilAt(accumulator, 100e5, 293.15)) * 1000).toBeCloseTo(4.482, 3);
     expect(oilAt(accumulator, 80e5, 293.15)).toBe(0);
   });
@@ -69,7 +81,9 @@ describe('a path', () => {
 });
 
 describe('workings', () => {
-  const circuit = circuitOf(`${PLAIN}load C1 (friction 500 N, resist 10 kN from 100 mm to 290 mm extending)\ncycle Go {\n  step Out energise SOL1 until LS1 on, at most 9 s\n  step Back energise SOL2 until LS2 on, at most 9 s\n}\n`);
+  const circuit = circuitOf(
+    `${PLAIN}load C1 (friction 500 N, resist 10 kN from 100 mm to 290 mm extending)\ncycle Go {\n  step Out energise SOL1 until LS1 on, at most 9 s\n  step Back energise SOL2 until LS2 on, at most 9 s\n}\n`,
+  );
   const result = study(circuit);
   const point = result.steps[0]!.points.find((one) => one.actuators[0]!.needed > 10000)!;
   it('reproduce what they explain from the inputs they name', () => {

@@ -1,12 +1,28 @@
 /** Load statements as forces: ranges, tables, weight by attitude, load cases, relaxing parts. */
-import { type Body, type Circuit } from '@oilway/circuit';
+import type { Body, Circuit } from '@oilway/circuit';
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import { forceAt, greatestHolding, loadCases, loadInSteps, needed, netFixed, relaxesWithin } from '../../../packages/circuit/study/loads.ts';
+import {
+  forceAt,
+  greatestHolding,
+  loadCases,
+  loadInSteps,
+  needed,
+  netFixed,
+  relaxesWithin,
+} from '../../../packages/circuit/study/loads.ts';
 import { lookup } from '../../../packages/circuit/study/lookup.ts';
 import { circuitOf, PLAIN } from './support/circuits.ts';
 
-const body = (stroke = 0.3, begins = 0): Body => ({ id: 'C1', actuators: ['C1'], type: 'linear', stroke, begins, sealFriction: 0, knots: [] });
+const body = (stroke = 0.3, begins = 0): Body => ({
+  id: 'C1',
+  actuators: ['C1'],
+  type: 'linear',
+  stroke,
+  begins,
+  sealFriction: 0,
+  knots: [],
+});
 const withLoad = (load: string, more = '', text = PLAIN): Circuit => circuitOf(`${text}load C1 (${load})\n${more}`);
 const CYCLE = 'cycle Go {\n  step Out energise SOL1 until LS1 on\n  step Back energise SOL2 until LS2 on\n}\n';
 
@@ -89,7 +105,10 @@ describe('a part that springs back', () => {
 
 describe('force over position', () => {
   it('never leaves the span of its knots', () => {
-    const knots = fc.array(fc.tuple(fc.double({ min: 0, max: 1, noNaN: true }), fc.double({ min: -1e5, max: 1e5, noNaN: true })), { minLength: 1, maxLength: 6 });
+    const knots = fc.array(fc.tuple(fc.double({ min: 0, max: 1, noNaN: true }), fc.double({ min: -1e5, max: 1e5, noNaN: true })), {
+      minLength: 1,
+      maxLength: 6,
+    });
     fc.assert(
       fc.property(knots, fc.double({ min: -0.5, max: 1.5, noNaN: true }), (list, x) => {
         const sorted = [...list].sort((a, b) => a[0] - b[0]);

@@ -47,7 +47,12 @@ describe('two voices', () => {
   });
   it('different commands of one coil: the first in the text counts', () => {
     const text = PLAIN.replace('4/3, centre tandem', '4/3, proportional, centre tandem');
-    const at = lookup(circuitOf(`${text}cycle Go {\n  step Out energise SOL1 at 40 % until LS1 on\n  meanwhile More energise SOL1 at 60 % for 1 s\n}\n`, true));
+    const at = lookup(
+      circuitOf(
+        `${text}cycle Go {\n  step Out energise SOL1 at 40 % until LS1 on\n  meanwhile More energise SOL1 at 60 % for 1 s\n}\n`,
+        true,
+      ),
+    );
     const both = [...at.step('Go.Out')!.actions, ...at.step('Go.More')!.actions];
     const control = decide(at, demandOf(both, 'Go'), situation());
     expect(control.twoVoices).toHaveLength(1);
@@ -87,7 +92,11 @@ describe('valves that remember, settings by coil', () => {
 });
 
 describe('conditions', () => {
-  const at = lookup(circuitOf(`${PLAIN}switch STOPPED (outside)\n${CYCLE}interlock SOL1 needs GUARD on and (LS1 on or STOPPED off)\ninterlock SOL2 needs GUARD on or STOPPED on\n`));
+  const at = lookup(
+    circuitOf(
+      `${PLAIN}switch STOPPED (outside)\n${CYCLE}interlock SOL1 needs GUARD on and (LS1 on or STOPPED off)\ninterlock SOL2 needs GUARD on or STOPPED on\n`,
+    ),
+  );
   const [first, second] = at.circuit.interlocks.map((one) => one.needs);
   it('are not known where a part that decides is not known', () => {
     expect(holds(at, first!, situation({ GUARD: undefined, LS1: true }))).toBeUndefined();
@@ -109,7 +118,13 @@ describe('the step chain', () => {
   const settle = (chain: Sequence, time: number, now: Situation) => {
     const seen: string[] = [];
     for (let change = chain.advance(time, now); change; change = chain.advance(time, now)) {
-      seen.push(change.did === 'ended' ? `ended ${change.line.step.name}` : change.did === 'entered' ? `entered ${change.lines.map((one) => one.step.name).join('+')}` : 'finished');
+      seen.push(
+        change.did === 'ended'
+          ? `ended ${change.line.step.name}`
+          : change.did === 'entered'
+            ? `entered ${change.lines.map((one) => one.step.name).join('+')}`
+            : 'finished',
+      );
       if (change.did === 'finished') break;
     }
     return seen;

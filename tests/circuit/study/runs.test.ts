@@ -35,7 +35,10 @@ describe('a cycle', () => {
     expect(result.cycles[0]?.completed).toBe(true);
   });
   it('past its limit a step is a fault that says what it waits for', () => {
-    const { result } = run('cycle Go {\n  step Out energise SOL1 until PS1 on, at most 4 s\n  step Back energise SOL2 until LS2 on\n}\n', { ...MOVING, pressure: () => 95e5 });
+    const { result } = run('cycle Go {\n  step Out energise SOL1 until PS1 on, at most 4 s\n  step Back energise SOL2 until LS2 on\n}\n', {
+      ...MOVING,
+      pressure: () => 95e5,
+    });
     const [fault] = result.cycles[0]?.faults ?? [];
     expect(fault?.kind).toBe('time limit');
     expect(fault?.words).toBe('Go.Out is not over after 4.00 s: waits for PS1 at 95.0 of 120 bar');
@@ -45,15 +48,21 @@ describe('a cycle', () => {
   });
   it('without a limit and with nothing moving it waits for ever', () => {
     const { result } = run('cycle Go {\n  step Out energise SOL1 until PS1 on\n}\n', { ...MOVING, pressure: () => 95e5 });
-    expect(result.cycles[0]?.faults.map((one) => [one.kind, one.words])).toEqual([['waits for ever', 'Go.Out waits for ever at PS1 at 95.0 of 120 bar']]);
+    expect(result.cycles[0]?.faults.map((one) => [one.kind, one.words])).toEqual([
+      ['waits for ever', 'Go.Out waits for ever at PS1 at 95.0 of 120 bar'],
+    ]);
     expect(result.cycles[0]?.run?.times.at(-1)).toBeLessThan(20);
   });
   it('names the interlock that keeps it waiting', () => {
     const { result } = run(`${CYCLE}interlock SOL1 needs PS1 on\n`);
-    expect(result.cycles[0]?.faults[0]?.words).toBe('Go.Out is not over after 5.00 s: waits for LS1, C1 at 0 mm, it switches from 295 mm to 300 mm (SOL1 is held back: PS1 at 0.0 of 120 bar)');
+    expect(result.cycles[0]?.faults[0]?.words).toBe(
+      'Go.Out is not over after 5.00 s: waits for LS1, C1 at 0 mm, it switches from 295 mm to 300 mm (SOL1 is held back: PS1 at 0.0 of 120 bar)',
+    );
   });
   it('takes outside switches as steps and interlocks need them', () => {
-    const { result } = run('cycle Go {\n  step Wait until GUARD on\n  step Out energise SOL1 until LS1 on\n}\ninterlock SOL1 needs GUARD on\n');
+    const { result } = run(
+      'cycle Go {\n  step Wait until GUARD on\n  step Out energise SOL1 until LS1 on\n}\ninterlock SOL1 needs GUARD on\n',
+    );
     expect(result.cycles[0]?.completed).toBe(true);
     expect(result.steps[0]?.time).toBe(0);
   });
@@ -68,8 +77,14 @@ describe('a cycle', () => {
   });
   it('a switch that turns over too often chatters, and what rests on it is not decided', () => {
     // The coil lifts the pressure, the switch drops the coil, both at once.
-    const rule: Rule = { ...MOVING, pressure: (_net, stands, _positions, since) => (stands.V1?.position === 'a' ? 90e5 + since * 8e9 : 130e5 - since * 8e9) };
-    const { result } = run('cycle Go {\n  step Out energise SOL1 for 1 s\n}\ninterlock SOL1 needs PS1 off\nrequire never SOL1 on and PS1 on\n', rule);
+    const rule: Rule = {
+      ...MOVING,
+      pressure: (_net, stands, _positions, since) => (stands.V1?.position === 'a' ? 90e5 + since * 8e9 : 130e5 - since * 8e9),
+    };
+    const { result } = run(
+      'cycle Go {\n  step Out energise SOL1 for 1 s\n}\ninterlock SOL1 needs PS1 off\nrequire never SOL1 on and PS1 on\n',
+      rule,
+    );
     expect(result.cycles[0]?.faults.some((one) => one.kind === 'chatters')).toBe(true);
     expect(result.requirements[0]?.verdict).toBe('undecidable');
   });
@@ -106,7 +121,11 @@ describe('cancelling', () => {
   it('stops early; nothing is passed by it', () => {
     const circuit = circuitOf(`${PLAIN}${CYCLE}require C1 speed in Out at least 50 mm/s\n`);
     let asked = 0;
-    const result = study(circuit, { machine: fakeMachine(circuit, MOVING, { C1: 0.3 }), cancelled: () => (asked += 1) > 3 });
+    const cancelled = () => {
+      asked += 1;
+      return asked > 3;
+    };
+    const result = study(circuit, { machine: fakeMachine(circuit, MOVING, { C1: 0.3 }), cancelled });
     expect(result.requirements.map((one) => one.verdict)).toEqual(['undecidable']);
   });
 });

@@ -14,12 +14,17 @@ type Read = (picture: Picture) => { readonly low: number; readonly high: number 
 const exactly = (amount: number | undefined) => (amount === undefined ? undefined : { low: amount, high: amount });
 
 /** Net of a requirement's port or line; or why there is none. */
-export function netAsked(plant: Plant, of: string, port: string | undefined): { readonly net: string; readonly head: number } | { readonly why: string } {
+export function netAsked(
+  plant: Plant,
+  of: string,
+  port: string | undefined,
+): { readonly net: string; readonly head: number } | { readonly why: string } {
   const named = plant.circuit.nets.find((one) => one.name === of || one.id === of);
   const component = plant.at.component(of);
   if (!component && named) return { net: named.id, head: 0 };
   if (!component) return { why: `${of} is no line or component` };
-  const name = port ?? (plant.at.netOf(of, 'P') !== undefined ? 'P' : plant.at.portsOf(of).length === 1 ? plant.at.portsOf(of)[0]!.port : undefined);
+  const name =
+    port ?? (plant.at.netOf(of, 'P') !== undefined ? 'P' : plant.at.portsOf(of).length === 1 ? plant.at.portsOf(of)[0]!.port : undefined);
   if (name === undefined) return { why: `${of} has several ports: name one` };
   const net = plant.at.netOf(of, name);
   return net === undefined ? { why: `${of}.${name} is joined to nothing` } : { net, head: plant.machine.heads[of] ?? 0 };
@@ -46,7 +51,10 @@ export function flow(asked: Asked, place: Place): Observed {
   const net = plant.circuit.nets.find((one) => one.name === requirement.of || one.id === requirement.of);
   const read: Read = (picture) => {
     if (requirement.port !== undefined) return exactly(Math.abs(picture.flows[`${requirement.of}.${requirement.port}`] ?? 0));
-    if (component) return exactly(component.kind === 'pump' ? Math.max(0, -(picture.flows[`${component.id}.P`] ?? 0)) : through(plant, component.id, picture));
+    if (component)
+      return exactly(
+        component.kind === 'pump' ? Math.max(0, -(picture.flows[`${component.id}.P`] ?? 0)) : through(plant, component.id, picture),
+      );
     if (net) return exactly(net.ports.reduce((sum, one) => sum + Math.max(0, picture.flows[`${one.component}.${one.port}`] ?? 0), 0));
     return undefined;
   };
@@ -65,7 +73,9 @@ export function loss(asked: Asked, place: Place): Observed {
   const ports = plant.at.portsOf(requirement.of);
   if (ports.length < 2) return { place: place.id, values: [], problems: [`${requirement.of} has no two joined ports`] };
   const read: Read = (picture) => {
-    const byFlow = ports.map((one) => ({ ...one, flow: picture.flows[`${requirement.of}.${one.port}`] ?? 0 })).sort((a, b) => b.flow - a.flow);
+    const byFlow = ports
+      .map((one) => ({ ...one, flow: picture.flows[`${requirement.of}.${one.port}`] ?? 0 }))
+      .sort((a, b) => b.flow - a.flow);
     const [entry, exit] = [byFlow[0]!, byFlow.at(-1)!];
     const [p, q] = [picture.pressures[entry.net], picture.pressures[exit.net]];
     if (p === undefined || q === undefined) return undefined;
@@ -91,13 +101,21 @@ export function power(asked: Asked, place: Place): Observed {
     if (actuator) return Math.abs(actuator.force * actuator.velocity);
     return lost(plant, component?.id, net?.ports, point);
   };
-  return over(asked, place, (picture) => exactly('solved' in picture && 'label' in picture ? ofPoint(picture as Point) : ofSolution(picture as Solution)), { run: true });
+  return over(
+    asked,
+    place,
+    (picture) => exactly('solved' in picture && 'label' in picture ? ofPoint(picture as Point) : ofSolution(picture as Solution)),
+    { run: true },
+  );
 }
 
 /** Power lost in a valve: sum over its ports of pressure times flow in. A line without own loss loses nothing. */
 function lost(plant: Plant, id: string | undefined, ports: readonly unknown[] | undefined, picture: Picture): number | undefined {
   if (id === undefined) return ports === undefined ? undefined : 0;
-  return Math.max(0, plant.at.portsOf(id).reduce((sum, one) => sum + (picture.pressures[one.net] ?? 0) * (picture.flows[`${id}.${one.port}`] ?? 0), 0));
+  return Math.max(
+    0,
+    plant.at.portsOf(id).reduce((sum, one) => sum + (picture.pressures[one.net] ?? 0) * (picture.flows[`${id}.${one.port}`] ?? 0), 0),
+  );
 }
 
 /** Reads a quantity at every selected point of a step and, with `run`, in the run between them; in every variant of a state. */
@@ -106,7 +124,11 @@ function over(asked: Asked, place: Place, read: Read, sampling: { readonly run: 
   if (place.is === 'state') return overState(asked, place, read);
   const body = rangeBody(plant, requirement);
   if (!passesRange(requirement.where, body, place)) {
-    return { place: place.id, values: [], problems: [body ? notPassed(asked, body, place.id) : 'the range is not that of one actuator: name the step instead'] };
+    return {
+      place: place.id,
+      values: [],
+      problems: [body ? notPassed(asked, body, place.id) : 'the range is not that of one actuator: name the step instead'],
+    };
   }
   const values: Value[] = [];
   const problems: string[] = [];
@@ -118,13 +140,24 @@ function over(asked: Asked, place: Place, read: Read, sampling: { readonly run: 
     const found = read(point);
     if (!found) continue;
     const x = body ? point.actuators.find((one) => one.id === body.actuators[0])?.position : undefined;
-    values.push({ ...value(placeWords(plant, place.id, body, x, point.time), found.high, point.time === undefined ? {} : { time: point.time }), low: found.low });
+    values.push({
+      ...value(placeWords(plant, place.id, body, x, point.time), found.high, point.time === undefined ? {} : { time: point.time }),
+      low: found.low,
+    });
   }
   if (sampling.run) {
     for (const one of selectedSamples(requirement.where, body, stepSamples(place))) {
       // In a run every pressure is that of the stored oil.
       const found = read({ ...one.solution, undetermined: {} });
-      if (found) values.push({ ...value(placeWords(plant, place.id, body, body ? one.solution.positions[body.id] : undefined, one.time), found.high, { since: one.since, run: true, time: one.time }), low: found.low });
+      if (found)
+        values.push({
+          ...value(placeWords(plant, place.id, body, body ? one.solution.positions[body.id] : undefined, one.time), found.high, {
+            since: one.since,
+            run: true,
+            time: one.time,
+          }),
+          low: found.low,
+        });
     }
   }
   if (values.length === 0 && problems.length === 0) problems.push(`${requirement.of} is not computed in ${place.id}`);
@@ -143,7 +176,12 @@ function overState(asked: Asked, place: Place & { readonly is: 'state' }, read: 
       }),
     );
     const problems = runs.flatMap((one) => (one.failed === undefined ? [] : [`${one.label}: ${one.failed}`]));
-    return { place: place.id, values, problems, ...(runs.length < all ? { notes: [`${runs.length} of ${all} variants run in time`] } : {}) };
+    return {
+      place: place.id,
+      values,
+      problems,
+      ...(runs.length < all ? { notes: [`${runs.length} of ${all} variants run in time`] } : {}),
+    };
   }
   const values: Value[] = [];
   const problems: string[] = [];

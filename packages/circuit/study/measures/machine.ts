@@ -23,19 +23,30 @@ export function loading(asked: Asked): readonly Observed[] {
     const duty = cycle.duty[drive.id];
     if (!duty || (names && !names.includes(cycle.id)) || cycle.run === undefined) continue;
     const worst = Math.max(duty.rms / power, duty.highest / (power * peak));
-    const how = duty.rms / power >= duty.highest / (power * peak) ? `rms ${say(plant.circuit, duty.rms, 'power')}` : `highest ${say(plant.circuit, duty.highest, 'power')}`;
-    observed.push({ place: cycle.id, values: [value(`${cycle.id}, ${how}`, worst)], problems: cycle.completed || cycle.mode === 'manual' ? [] : [`${cycle.id} does not end: ${cycle.faults[0]?.words ?? 'it stops'}`] });
+    const how =
+      duty.rms / power >= duty.highest / (power * peak)
+        ? `rms ${say(plant.circuit, duty.rms, 'power')}`
+        : `highest ${say(plant.circuit, duty.highest, 'power')}`;
+    observed.push({
+      place: cycle.id,
+      values: [value(`${cycle.id}, ${how}`, worst)],
+      problems: cycle.completed || cycle.mode === 'manual' ? [] : [`${cycle.id} does not end: ${cycle.faults[0]?.words ?? 'it stops'}`],
+    });
   }
   for (const name of names ?? []) {
     const states = facts.states.filter((one) => one.result.state === name);
     if (states.length > 0) {
-      observed.push(variantValues(asked, { is: 'state', id: name, states }, (point) => (point.power[drive.id] ?? 0) / power));
+      observed.push(variantValues({ is: 'state', id: name, states }, (point) => (point.power[drive.id] ?? 0) / power));
       continue;
     }
     const step = facts.steps.find((one) => one.id === name);
     if (step) {
       const highest = Math.max(0, ...step.points.map((one) => one.power[drive.id] ?? 0));
-      observed.push({ place: name, values: [value(name, highest / (power * peak))], problems: step.points.length === 0 ? [`${name} is not computed`] : [] });
+      observed.push({
+        place: name,
+        values: [value(name, highest / (power * peak))],
+        problems: step.points.length === 0 ? [`${name} is not computed`] : [],
+      });
     }
   }
   return observed.length > 0 ? observed : [{ place: requirement.of, values: [], problems: ['no cycle is run: name a state'] }];
@@ -61,11 +72,23 @@ export function time(asked: Asked): readonly Observed[] {
   const cycle = facts.cycles.find((one) => one.id === requirement.of);
   if (step) {
     const known = step.time;
-    return [{ place: step.id, values: known === undefined ? [] : [value(step.id, known)], problems: known === undefined ? [step.faults[0]?.words ?? `no run ends ${step.id}`] : [] }];
+    return [
+      {
+        place: step.id,
+        values: known === undefined ? [] : [value(step.id, known)],
+        problems: known === undefined ? [step.faults[0]?.words ?? `no run ends ${step.id}`] : [],
+      },
+    ];
   }
   if (!cycle) return [{ place: requirement.of, values: [], problems: [`${requirement.of} is no step or cycle that is run`] }];
   const known = cycle.time;
-  return [{ place: cycle.id, values: known === undefined ? [] : [value(cycle.id, known)], problems: known === undefined ? [`${cycle.id} does not end: ${cycle.faults[0]?.words ?? 'it stops'}`] : [] }];
+  return [
+    {
+      place: cycle.id,
+      values: known === undefined ? [] : [value(cycle.id, known)],
+      problems: known === undefined ? [`${cycle.id} does not end: ${cycle.faults[0]?.words ?? 'it stops'}`] : [],
+    },
+  ];
 }
 
 /** Oil in an accumulator, or content of a reservoir. */
@@ -74,12 +97,15 @@ export function volume(asked: Asked, place: Place): Observed {
   const component = plant.at.component(requirement.of);
   const body = rangeBody(plant, requirement);
   if (place.is === 'state') {
-    if (component?.kind !== 'accumulator') return { place: place.id, values: [], problems: ['the content of a reservoir is asked of a step or cycle'] };
-    return variantValues(asked, place, (point) => point.oil[requirement.of]);
+    if (component?.kind !== 'accumulator')
+      return { place: place.id, values: [], problems: ['the content of a reservoir is asked of a step or cycle'] };
+    return variantValues(place, (point) => point.oil[requirement.of]);
   }
   const values = selectedSamples(requirement.where, body, stepSamples(place)).flatMap((one) => {
     const amount = component?.kind === 'reservoir' ? level(plant, component.id, one.solution) : one.solution.oil[requirement.of];
-    return amount === undefined ? [] : [value(placeWords(plant, place.id, undefined, undefined, one.time), amount, { since: one.since, run: true, time: one.time })];
+    return amount === undefined
+      ? []
+      : [value(placeWords(plant, place.id, undefined, undefined, one.time), amount, { since: one.since, run: true, time: one.time })];
   });
   return { place: place.id, values, problems: values.length === 0 ? [`no run reaches ${place.id}`] : [] };
 }

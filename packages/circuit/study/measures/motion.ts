@@ -11,16 +11,21 @@ function actuatorBody(asked: Asked): Body | undefined {
   return asked.plant.bodies.find((one) => one.actuators.includes(asked.requirement.of));
 }
 function notMachine(asked: Asked, place: Place): Observed {
-  return { place: place.id, values: [], problems: [asked.plant.machine.notComputed[asked.requirement.of] ?? `${asked.requirement.of} is not computed`] };
+  return {
+    place: place.id,
+    values: [],
+    problems: [asked.plant.machine.notComputed[asked.requirement.of] ?? `${asked.requirement.of} is not computed`],
+  };
 }
 
 export function speed(asked: Asked, place: Place): Observed {
   const body = actuatorBody(asked);
   if (!body) return notMachine(asked, place);
   const { plant, requirement } = asked;
-  const of = (one: ActuatorPoint | undefined) => (one ? Math.max(0, one.direction === 0 ? Math.abs(one.velocity) : one.velocity * one.direction) : 0);
+  const of = (one: ActuatorPoint | undefined) =>
+    one ? Math.max(0, one.direction === 0 ? Math.abs(one.velocity) : one.velocity * one.direction) : 0;
   if (place.is === 'state') {
-    return variantValues(asked, place, (point) => of(point.actuators.find((one) => one.id === requirement.of)));
+    return variantValues(place, (point) => of(point.actuators.find((one) => one.id === requirement.of)));
   }
   if (!passesRange(requirement.where, body, place)) return { place: place.id, values: [], problems: [notPassed(asked, body, place.id)] };
   const values: Value[] = [];
@@ -34,7 +39,13 @@ export function speed(asked: Asked, place: Place): Observed {
     }
     const moving = Math.abs(one.velocity) > (body.type === 'rotating' ? 8.7e-4 : 5e-5) && one.atStop === undefined;
     if (!moving && one.shortBy === undefined) continue;
-    values.push(value(placeWords(plant, place.id, body, one.position, point.time), moving ? of(one) : 0, point.time === undefined ? {} : { time: point.time }));
+    values.push(
+      value(
+        placeWords(plant, place.id, body, one.position, point.time),
+        moving ? of(one) : 0,
+        point.time === undefined ? {} : { time: point.time },
+      ),
+    );
   }
   if (values.length === 0 && problems.length === 0 && asked.named) values.push(value(`${place.id}, where it does not move`, 0));
   return { place: place.id, values, problems };
@@ -44,7 +55,8 @@ export function force(asked: Asked, place: Place): Observed {
   const body = actuatorBody(asked);
   if (!body) return notMachine(asked, place);
   const { plant, requirement } = asked;
-  if (place.is === 'state') return variantValues(asked, place, (point) => Math.abs(point.actuators.find((one) => one.id === requirement.of)?.force ?? 0));
+  if (place.is === 'state')
+    return variantValues(place, (point) => Math.abs(point.actuators.find((one) => one.id === requirement.of)?.force ?? 0));
   if (!passesRange(requirement.where, body, place)) return { place: place.id, values: [], problems: [notPassed(asked, body, place.id)] };
   const values: Value[] = [];
   const problems: string[] = [];
@@ -52,13 +64,26 @@ export function force(asked: Asked, place: Place): Observed {
     const one = point.actuators.find((actuator) => actuator.id === requirement.of);
     if (!one) continue;
     if (!point.solved) problems.push(`no equilibrium found at ${point.label} of ${place.id}`);
-    else values.push(value(placeWords(plant, place.id, body, one.position, point.time), Math.abs(one.force), point.time === undefined ? {} : { time: point.time }));
+    else
+      values.push(
+        value(
+          placeWords(plant, place.id, body, one.position, point.time),
+          Math.abs(one.force),
+          point.time === undefined ? {} : { time: point.time },
+        ),
+      );
   }
   if (requirement.bound.is === 'reaches' || requirement.lasts !== undefined) {
     const single = body.actuators.length === 1;
     for (const one of selectedSamples(requirement.where, body, stepSamples(place))) {
       if (!single) break;
-      values.push(value(placeWords(plant, place.id, body, one.solution.positions[body.id], one.time), Math.abs(one.solution.forces[body.id] ?? 0), { since: one.since, run: true, time: one.time }));
+      values.push(
+        value(placeWords(plant, place.id, body, one.solution.positions[body.id], one.time), Math.abs(one.solution.forces[body.id] ?? 0), {
+          since: one.since,
+          run: true,
+          time: one.time,
+        }),
+      );
     }
   }
   return { place: place.id, values, problems };
@@ -73,7 +98,11 @@ export function position(asked: Asked, place: Place): Observed {
     return { place: place.id, values, problems: failures(runs), ...some(runs.length, all) };
   }
   const values = selectedSamples(asked.requirement.where, body, stepSamples(place)).map((one) =>
-    value(placeWords(asked.plant, place.id, body, one.solution.positions[body.id], one.time), one.solution.positions[body.id] ?? 0, { since: one.since, run: true, time: one.time }),
+    value(placeWords(asked.plant, place.id, body, one.solution.positions[body.id], one.time), one.solution.positions[body.id] ?? 0, {
+      since: one.since,
+      run: true,
+      time: one.time,
+    }),
   );
   return { place: place.id, values, problems: values.length === 0 ? [`no run reaches ${place.id}`] : [] };
 }
@@ -96,7 +125,7 @@ export function drift(asked: Asked, place: Place): Observed {
 }
 
 /** One value a variant, from its point. */
-export function variantValues(asked: Asked, place: Place & { readonly is: 'state' }, of: (point: Point) => number | undefined): Observed {
+export function variantValues(place: Place & { readonly is: 'state' }, of: (point: Point) => number | undefined): Observed {
   const values: Value[] = [];
   const problems: string[] = [];
   const notes: string[] = [];

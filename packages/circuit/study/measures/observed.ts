@@ -1,5 +1,4 @@
-/** What a measure saw in one place: values with where they stand, in order, and why some could not be had. */
-import type { Dimension } from '@oilway/quantity';
+
 
 export interface Value {
   /** SI. Equal where the value is determined. */
@@ -26,7 +25,11 @@ export interface Observed {
   readonly notes?: readonly string[];
 }
 
-export const value = (at: string, amount: number, more: { readonly since?: number; readonly series?: number; readonly run?: boolean; readonly time?: number } = {}): Value => ({
+export const value = (
+  at: string,
+  amount: number,
+  more: { readonly since?: number; readonly series?: number; readonly run?: boolean; readonly time?: number } = {},
+): Value => ({
   low: amount,
   high: amount,
   at,
@@ -35,7 +38,3 @@ export const value = (at: string, amount: number, more: { readonly since?: numbe
   ...(more.run === undefined ? {} : { run: more.run }),
   ...(more.time === undefined ? {} : { time: more.time }),
 });
-
-export interface MeasureKind {
-  readonly dimension: Dimension;
-}

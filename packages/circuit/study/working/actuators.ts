@@ -18,7 +18,10 @@ export function cylinderForce(cylinder: Component, read: Reader): Figure | undef
   const cap = side('cap', areas.cap);
   const rod = side('rod', areas.rod);
   const moving = Math.sign(actuator.velocity) || actuator.direction;
-  const seal = given(cylinder, 'seal', 'p seal', 'pressure', { value: DEFAULT_SEAL, words: '3 bar on the bore (common practice, no source)' })!;
+  const seal = given(cylinder, 'seal', 'p seal', 'pressure', {
+    value: DEFAULT_SEAL,
+    words: '3 bar on the bore (common practice, no source)',
+  })!;
   const friction = seal.value * areas.bore;
   const stop = actuator.stopForce ?? 0;
   const result = cap.force - rod.force - moving * friction + stop;
@@ -28,7 +31,13 @@ export function cylinderForce(cylinder: Component, read: Reader): Figure | undef
     dimension: 'force',
     working: {
       formula: `F = ${cap.inputs.length > 0 ? 'p cap x A cap ' : ''}${rod.inputs.length > 0 ? '- p rod x A rod ' : ''}${moving < 0 ? '+' : '-'} p seal x A bore${stop === 0 ? '' : ' + stop force'}`,
-      inputs: [...cap.inputs, ...rod.inputs, seal, derived('A bore', areas.bore, 'area', `${cylinder.id} bore`), ...(stop === 0 ? [] : [solved('stop force', stop, 'force')])],
+      inputs: [
+        ...cap.inputs,
+        ...rod.inputs,
+        seal,
+        derived('A bore', areas.bore, 'area', `${cylinder.id} bore`),
+        ...(stop === 0 ? [] : [solved('stop force', stop, 'force')]),
+      ],
       result,
       dimension: 'force',
       source: 'balance of forces at the piston (Esposito, Fluid Power with Applications, example 6-1)',
@@ -53,7 +62,10 @@ export function cylinderSpeed(cylinder: Component, read: Reader): Figure | undef
       dimension: 'velocity',
       working: {
         formula: `v = q ${port} / A ${port}`,
-        inputs: [{ ...solved(`q ${port}`, Math.abs(flow), 'flow'), source: `solved, ${port === entering ? 'entering' : 'leaving'}` }, derived(`A ${port}`, area, 'area', `${cylinder.id} ${port === 'rod' ? 'bore and rod' : 'bore'}`)],
+        inputs: [
+          { ...solved(`q ${port}`, Math.abs(flow), 'flow'), source: `solved, ${port === entering ? 'entering' : 'leaving'}` },
+          derived(`A ${port}`, area, 'area', `${cylinder.id} ${port === 'rod' ? 'bore and rod' : 'bore'}`),
+        ],
         result,
         dimension: 'velocity',
         source: 'continuity (Esposito, Fluid Power with Applications, example 6-1)',
@@ -98,7 +110,13 @@ export function motorTorque(motor: Component, read: Reader): Figure | undefined 
   const result = ideal - turning * loss;
   if (!agrees(actuator.force, result)) return undefined;
   const braking = turning * ideal < 0;
-  const inputs: readonly (Input | undefined)[] = [displacement, solved('p A', a, 'pressure'), solved('p B', b, 'pressure'), mechanical, gear === 1 ? undefined : given(motor, 'gear', 'gear', 'ratio')];
+  const inputs: readonly (Input | undefined)[] = [
+    displacement,
+    solved('p A', a, 'pressure'),
+    solved('p B', b, 'pressure'),
+    mechanical,
+    gear === 1 ? undefined : given(motor, 'gear', 'gear', 'ratio'),
+  ];
   const working: Working = {
     formula: `T = V x (p A - p B) x ${braking ? '(2 - mechanical)' : 'mechanical'}${gear === 1 ? '' : ' x gear'}`,
     inputs: inputs.filter((one) => one !== undefined),
@@ -126,7 +144,12 @@ export function motorSpeed(motor: Component, read: Reader): Figure | undefined {
     dimension: 'rotation',
     working: {
       formula: `n = (q ${entering} - leakage) / V${gear === 1 ? '' : ' / gear'}`,
-      inputs: [solved(`q ${entering}`, flow, 'flow'), solved('leakage', leak, 'flow'), displacement, ...(gear === 1 ? [] : [given(motor, 'gear', 'gear', 'ratio')!])],
+      inputs: [
+        solved(`q ${entering}`, flow, 'flow'),
+        solved('leakage', leak, 'flow'),
+        displacement,
+        ...(gear === 1 ? [] : [given(motor, 'gear', 'gear', 'ratio')!]),
+      ],
       result,
       dimension: 'rotation',
       source: 'displacement and volumetric loss (Esposito, Fluid Power with Applications, example 7-5)',
@@ -145,7 +168,10 @@ export function outputPower(component: Component, read: Reader): Figure | undefi
     dimension: 'power',
     working: {
       formula: rotating ? 'P = T x n' : 'P = F x v',
-      inputs: [solved(rotating ? 'T' : 'F', actuator.force, rotating ? 'torque' : 'force'), solved(rotating ? 'n' : 'v', actuator.velocity, rotating ? 'rotation' : 'velocity')],
+      inputs: [
+        solved(rotating ? 'T' : 'F', actuator.force, rotating ? 'torque' : 'force'),
+        solved(rotating ? 'n' : 'v', actuator.velocity, rotating ? 'rotation' : 'velocity'),
+      ],
       result,
       dimension: 'power',
       source: 'definition of power',

@@ -48,7 +48,8 @@ export function explain(circuit: Circuit, study: Study, request: ExplainRequest)
 /** Pressures at a component's own height need `heads`; a circuit on one level needs none. */
 export function readerOf(circuit: Circuit, point: Point): Reader {
   const nets = new Map<string, string>();
-  for (const net of circuit.nets) for (const port of net.ports) if (!nets.has(`${port.component}.${port.port}`)) nets.set(`${port.component}.${port.port}`, net.id);
+  for (const net of circuit.nets)
+    for (const port of net.ports) if (!nets.has(`${port.component}.${port.port}`)) nets.set(`${port.component}.${port.port}`, net.id);
   return {
     point,
     pressure(component, port) {
@@ -91,7 +92,15 @@ function componentFigures(circuit: Circuit, component: Component, point: Point):
       add('loss', lossPower(component, read, ['P', 'T']));
       break;
     case 'throttle':
-      add('flow', metered(component, read) ?? orificeFlow(component, circuit.components.find((one) => one.kind === 'fluid'), read));
+      add(
+        'flow',
+        metered(component, read) ??
+          orificeFlow(
+            component,
+            circuit.components.find((one) => one.kind === 'fluid'),
+            read,
+          ),
+      );
       add('drop', drop(component, circuit, read));
       add('loss', lossPower(component, read, ports));
       break;
@@ -118,9 +127,23 @@ function loading(drive: Component, cycle: CycleResult): readonly Explained[] {
       working: {
         formula: rms ? 'loading = P rms / power' : 'loading = P highest / (power x peak)',
         inputs: [
-          { symbol: rms ? 'P rms' : 'P highest', value: rms ? duty.rms : duty.highest, dimension: 'power', source: rms ? `root of the mean square over ${cycle.id}` : `highest in ${cycle.id}, shifting of valves not counted` },
+          {
+            symbol: rms ? 'P rms' : 'P highest',
+            value: rms ? duty.rms : duty.highest,
+            dimension: 'power',
+            source: rms ? `root of the mean square over ${cycle.id}` : `highest in ${cycle.id}, shifting of valves not counted`,
+          },
           { symbol: 'power', value: power, dimension: 'power', source: `${drive.id} power`, origin: drive.origin },
-          ...(rms ? [] : [{ symbol: 'peak', value: peak ?? 1, dimension: 'ratio' as const, source: peak === undefined ? 'default: 100 %' : `${drive.id} peak` }]),
+          ...(rms
+            ? []
+            : [
+                {
+                  symbol: 'peak',
+                  value: peak ?? 1,
+                  dimension: 'ratio' as const,
+                  source: peak === undefined ? 'default: 100 %' : `${drive.id} peak`,
+                },
+              ]),
         ],
         result: Math.max(byRms, byPeak),
         dimension: 'ratio',

@@ -7,7 +7,13 @@ import type { Point, Working } from '../study.ts';
 export type Input = Working['inputs'][number];
 
 /** A property as written; `otherwise` with its ground where it is not. */
-export function given(of: Component, name: string, symbol: string, dimension: Dimension, otherwise?: { readonly value: number; readonly words: string }): Input | undefined {
+export function given(
+  of: Component,
+  name: string,
+  symbol: string,
+  dimension: Dimension,
+  otherwise?: { readonly value: number; readonly words: string },
+): Input | undefined {
   const written = property(of, name);
   const value = si(of, name);
   if (value !== undefined && written) return { symbol, value, dimension, source: `${of.id} ${name}`, origin: written.origin };

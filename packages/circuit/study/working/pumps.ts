@@ -29,7 +29,10 @@ function factsOf(pump: Component, drive: Component | undefined, read: Reader): P
   return {
     displacement,
     speed,
-    volumetric: given(pump, 'volumetric', 'volumetric', 'ratio', { ...EFFICIENCY, words: '92 % at rated pressure (common practice, no source)' })!,
+    volumetric: given(pump, 'volumetric', 'volumetric', 'ratio', {
+      ...EFFICIENCY,
+      words: '92 % at rated pressure (common practice, no source)',
+    })!,
     mechanical: given(pump, 'mechanical', 'mechanical', 'ratio', EFFICIENCY)!,
     rated: given(pump, 'rated', 'p rated', 'pressure', RATED)!,
     stroke: read.point.openings[pump.id] ?? 1,
@@ -58,7 +61,15 @@ export function pumpFlow(pump: Component, drive: Component | undefined, read: Re
     dimension: 'flow',
     working: {
       formula: `Q = V x n${variable ? ' x stroke' : ''} - (1 - volumetric) x V x n x (p P - p S) / p rated`,
-      inputs: [facts.displacement, facts.speed, ...(variable ? [solved('stroke', facts.stroke, 'ratio')] : []), facts.volumetric, solved('p P', facts.outlet, 'pressure'), solved('p S', facts.inlet, 'pressure'), facts.rated],
+      inputs: [
+        facts.displacement,
+        facts.speed,
+        ...(variable ? [solved('stroke', facts.stroke, 'ratio')] : []),
+        facts.volumetric,
+        solved('p P', facts.outlet, 'pressure'),
+        solved('p S', facts.inlet, 'pressure'),
+        facts.rated,
+      ],
       result,
       dimension: 'flow',
       source: 'displacement and leakage in proportion to pressure (Esposito, Fluid Power with Applications, example 5-9)',
@@ -79,7 +90,14 @@ export function shaftPower(pump: Component, drive: Component | undefined, read: 
     dimension: 'power',
     working: {
       formula: `P = V x n${variable ? ' x stroke' : ''} x (p P - p S) / mechanical`,
-      inputs: [facts.displacement, facts.speed, ...(variable ? [solved('stroke', facts.stroke, 'ratio')] : []), solved('p P', facts.outlet, 'pressure'), solved('p S', facts.inlet, 'pressure'), facts.mechanical],
+      inputs: [
+        facts.displacement,
+        facts.speed,
+        ...(variable ? [solved('stroke', facts.stroke, 'ratio')] : []),
+        solved('p P', facts.outlet, 'pressure'),
+        solved('p S', facts.inlet, 'pressure'),
+        facts.mechanical,
+      ],
       result,
       dimension: 'power',
       source: 'pump torque (Esposito, Fluid Power with Applications, example 5-9)',

@@ -22,7 +22,10 @@ export function reliefPressure(relief: Component, read: Reader): Figure | undefi
   const set = given(relief, 'set', 'set', 'pressure');
   const nominal = flowAt(relief, 'passes');
   if (p === undefined || flow === undefined || !(flow > 1e-7) || !set || !nominal || flag(relief, 'coil')) return undefined;
-  const override = given(relief, 'override', 'override', 'ratio', { value: 0.1, words: '10 % at the flow of `passes` (common practice, no source)' })!;
+  const override = given(relief, 'override', 'override', 'ratio', {
+    value: 0.1,
+    words: '10 % at the flow of `passes` (common practice, no source)',
+  })!;
   const back = read.pressure(relief.id, 'Y') ?? read.pressure(relief.id, 'T') ?? 0;
   const vent = read.pressure(relief.id, 'X');
   const vented = given(relief, 'vented', 'vented', 'pressure', { value: 3e5, words: '3 bar (common practice, no source)' })!;
@@ -61,7 +64,9 @@ export function reliefPressure(relief: Component, read: Reader): Figure | undefi
 
 /** Drop of a component along the path its oil takes. */
 export function drop(component: Component, circuit: Circuit, read: Reader): Figure | undefined {
-  const ports = [...new Set(circuit.nets.flatMap((net) => net.ports.filter((one) => one.component === component.id).map((one) => one.port)))];
+  const ports = [
+    ...new Set(circuit.nets.flatMap((net) => net.ports.filter((one) => one.component === component.id).map((one) => one.port))),
+  ];
   const byFlow = ports.map((port) => ({ port, flow: read.flow(component.id, port) ?? 0 })).sort((a, b) => b.flow - a.flow);
   const entry = byFlow[0];
   const exit = byFlow.at(-1);
@@ -79,8 +84,17 @@ export function drop(component: Component, circuit: Circuit, read: Reader): Figu
     value: p - q,
     dimension: 'pressure',
     working: {
-      formula: nominal.crack ? 'dp = crack + (dp N - crack) x (q / q N)^2' : y < 1 ? 'dp = dp N x (q / (opening x q N))^2' : 'dp = dp N x (q / q N)^2',
-      inputs: [...passes(component, nominal.flow, nominal.drop), ...(nominal.crack ? [nominal.crack] : []), ...(y < 1 ? [solved('opening', y, 'ratio')] : []), { ...solved('q', entry.flow, 'flow'), source: `solved, ${entry.port} to ${exit.port}` }],
+      formula: nominal.crack
+        ? 'dp = crack + (dp N - crack) x (q / q N)^2'
+        : y < 1
+          ? 'dp = dp N x (q / (opening x q N))^2'
+          : 'dp = dp N x (q / q N)^2',
+      inputs: [
+        ...passes(component, nominal.flow, nominal.drop),
+        ...(nominal.crack ? [nominal.crack] : []),
+        ...(y < 1 ? [solved('opening', y, 'ratio')] : []),
+        { ...solved('q', entry.flow, 'flow'), source: `solved, ${entry.port} to ${exit.port}` },
+      ],
       result,
       dimension: 'pressure',
       source: 'turbulent path through the declared point (Esposito, Fluid Power with Applications, equation of the orifice)',
@@ -132,7 +146,9 @@ export function metered(throttle: Component, read: Reader): Figure | undefined {
       inputs: [set, needs, solved('dp', p - q, 'pressure')],
       result,
       dimension: 'flow',
-      source: full ? 'pressure-compensated flow control keeps its setting' : 'orifice law (Esposito, Fluid Power with Applications, example 8-4)',
+      source: full
+        ? 'pressure-compensated flow control keeps its setting'
+        : 'orifice law (Esposito, Fluid Power with Applications, example 8-4)',
     },
   };
 }
@@ -143,7 +159,12 @@ export function orificeFlow(throttle: Component, fluid: Component | undefined, r
   const flow = read.flow(throttle.id, 'in');
   const [p, q] = [read.pressure(throttle.id, 'in'), read.pressure(throttle.id, 'out')];
   if (!bore || flow === undefined || p === undefined || q === undefined) return undefined;
-  const density = (fluid ? given(fluid, 'density', 'rho', 'density', { value: 870, words: '870 kg/m3' }) : undefined) ?? { symbol: 'rho', value: 870, dimension: 'density' as const, source: 'default: 870 kg/m3' };
+  const density = (fluid ? given(fluid, 'density', 'rho', 'density', { value: 870, words: '870 kg/m3' }) : undefined) ?? {
+    symbol: 'rho',
+    value: 870,
+    dimension: 'density' as const,
+    source: 'default: 870 kg/m3',
+  };
   const result = Math.sign(p - q) * 0.62 * (Math.PI / 4) * bore.value ** 2 * Math.sqrt((2 * Math.abs(p - q)) / density.value);
   if (!agrees(flow, result)) return undefined;
   return {
@@ -151,7 +172,12 @@ export function orificeFlow(throttle: Component, fluid: Component | undefined, r
     dimension: 'flow',
     working: {
       formula: 'q = Cd x pi/4 d^2 x sqrt(2 dp / rho)',
-      inputs: [{ symbol: 'Cd', value: 0.62, dimension: 'ratio', source: 'sharp-edged orifice (0.60 to 0.64)' }, bore, solved('dp', p - q, 'pressure'), density],
+      inputs: [
+        { symbol: 'Cd', value: 0.62, dimension: 'ratio', source: 'sharp-edged orifice (0.60 to 0.64)' },
+        bore,
+        solved('dp', p - q, 'pressure'),
+        density,
+      ],
       result,
       dimension: 'flow',
       source: 'orifice law (Esposito, Fluid Power with Applications, example 8-4)',

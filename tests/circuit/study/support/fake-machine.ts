@@ -14,7 +14,15 @@ export interface Fake extends Machine {
 }
 
 export function fakeMachine(circuit: Circuit, rule: Rule, strokes: Readonly<Record<string, number>>): Fake {
-  const bodies: Body[] = Object.entries(strokes).map(([id, stroke]) => ({ id, actuators: [id], type: 'linear', stroke, begins: 0, sealFriction: 0, knots: [] }));
+  const bodies: Body[] = Object.entries(strokes).map(([id, stroke]) => ({
+    id,
+    actuators: [id],
+    type: 'linear',
+    stroke,
+    begins: 0,
+    sealFriction: 0,
+    knots: [],
+  }));
   const asked: Setting[] = [];
   const picture = (setting: Setting, since: number): Solution => {
     const positions = Object.fromEntries(bodies.map((one) => [one.id, setting.positions[one.id] ?? 0]));
@@ -71,7 +79,11 @@ function fakeRun(start: Setting, bodies: readonly Body[], picture: (setting: Set
   let changed = 0;
   const statistics = { steps: 0, rejected: 0, newton: 0, events: 0 };
   const read = (watch: Watch, solution: Solution) =>
-    watch.what === 'position' ? (solution.positions[watch.body] ?? 0) : watch.what === 'pressure' ? (solution.pressures[watch.net] ?? 0) : 0;
+    watch.what === 'position'
+      ? (solution.positions[watch.body] ?? 0)
+      : watch.what === 'pressure'
+        ? (solution.pressures[watch.net] ?? 0)
+        : 0;
   return {
     get time() {
       return time;
@@ -108,7 +120,8 @@ function fakeRun(start: Setting, bodies: readonly Body[], picture: (setting: Set
         onStep?.(time, after);
         const fired = watches.flatMap((watch, index) => {
           const [a, b] = [read(watch, before), read(watch, after)];
-          const crossed = watch.edge === 'rising' ? a < watch.threshold && b >= watch.threshold : a > watch.threshold && b <= watch.threshold;
+          const crossed =
+            watch.edge === 'rising' ? a < watch.threshold && b >= watch.threshold : a > watch.threshold && b <= watch.threshold;
           return crossed ? [index] : [];
         });
         if (fired.length > 0) {
