@@ -1,6 +1,7 @@
 /** What keeps the pressure of a net within bounds: reliefs with a way to the reservoir, reliefs inside pumps, the open reservoir itself. */
 import { type Component, read } from '@oilway/circuit';
 import type { Graph } from './graph.ts';
+import { once } from './once.ts';
 import { openAlways, type Passing, type Way, waysFrom } from './reach.ts';
 
 export interface Guard {
@@ -51,11 +52,14 @@ export function toReservoir(graph: Graph, net: string, passing: Passing): Way | 
   return best;
 }
 
-/** All guards of the circuit that work. `rejected`: reliefs whose discharge is not sure. */
-export function guardsOf(graph: Graph): {
+export interface Guards {
   readonly guards: readonly Guard[];
+  /** Reliefs whose discharge is not sure. */
   readonly rejected: readonly { readonly relief: Component; readonly net: string; readonly why: Discharge }[];
-} {
+}
+
+/** All guards of the circuit that work, and the reliefs that do not. */
+export const guardsOf = once((graph: Graph): Guards => {
   const guards: Guard[] = [];
   const rejected: { relief: Component; net: string; why: Discharge }[] = [];
   for (const relief of graph.ofKind('relief')) {
@@ -70,7 +74,7 @@ export function guardsOf(graph: Graph): {
     if (net !== undefined && read.has(pump, 'reliefs')) guards.push({ component: pump, what: 'inside', net: net.id });
   }
   return { guards, rejected };
-}
+});
 
 export interface Reached {
   readonly guard: Guard;

@@ -49,12 +49,15 @@ export function waysTo(graph: Graph, end: string, passing: Passing): ReadonlyMap
 function search(graph: Graph, start: string, passing: Passing, stop: ((net: string) => boolean) | undefined, sense: 'from' | 'to') {
   const best = new Map<string, Way>([[start, { net: start, cost: 0, edges: [] }]]);
   const open: Way[] = [best.get(start)!];
-  const done = new Set<string>();
   for (;;) {
-    let way: Way | undefined;
-    for (const one of open) if (!done.has(one.net) && best.get(one.net) === one && (way === undefined || one.cost < way.cost)) way = one;
+    let cheapest = 0;
+    for (let i = 1; i < open.length; i++) if (open[i]!.cost < open[cheapest]!.cost) cheapest = i;
+    const way = open[cheapest];
     if (way === undefined) return best;
-    done.add(way.net);
+    open[cheapest] = open[open.length - 1]!;
+    open.pop();
+    // A better way to the same net was found meanwhile.
+    if (best.get(way.net) !== way) continue;
     if (way.net !== start && (stop?.(way.net) === true || (sense === 'from' && graph.net(way.net)?.reservoir !== undefined))) continue;
     for (const edge of sense === 'from' ? graph.from(way.net) : graph.to(way.net)) {
       const cost = passing(edge);
@@ -76,9 +79,4 @@ export function wayWords(way: Way): string {
     .filter((e) => e.kind !== 'pipe')
     .map((e) => (e.kind === 'directional' ? `${e.component} (${e.from} to ${e.to})` : e.component))
     .join(', ');
-}
-
-/** What on a way can close it, in words. */
-export function closingWords(way: Way): string {
-  return way.edges.flatMap((e) => (e.class !== 'always' && e.words !== undefined ? [e.words] : [])).join('; ');
 }

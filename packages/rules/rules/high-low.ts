@@ -1,7 +1,8 @@
 /** Two-pump units as rules B01 to B06 see them: which pump is unloaded, by which valve, beside which other pump. */
 import type { Component } from '@oilway/circuit';
 import type { Edge, Graph } from '../graph/graph.ts';
-import { openAlways, type Passing, spreadable, throughValves, type Way, waysFrom } from '../graph/reach.ts';
+import { openAlways, type Passing, spreadable, throughValves, type Way, waysFrom, waysTo } from '../graph/reach.ts';
+import { once } from '../graph/once.ts';
 import { pumpFlow } from '../graph/flow.ts';
 
 export interface HighLow {
@@ -28,10 +29,8 @@ function outlet(graph: Graph, pump: Component): string | undefined {
 
 /** Pumps whose outlet is on the unloading valve's own side. */
 export function pumpsBeside(graph: Graph, net: string): readonly Component[] {
-  return graph.ofKind('pump').filter((pump) => {
-    const id = outlet(graph, pump);
-    return id !== undefined && (id === net || waysFrom(graph, id, sameSide).has(net));
-  });
+  const side = waysTo(graph, net, sameSide);
+  return graph.ofKind('pump').filter((pump) => side.has(outlet(graph, pump) ?? ''));
 }
 
 /** True where the pilot senses a store behind a check that no pump feeds but over that check: then all pumps unload on purpose. */
@@ -46,8 +45,14 @@ function unloadsAll(graph: Graph, net: string, unloading: Component, others: rea
   });
 }
 
-export function highLowUnits(graph: Graph): readonly HighLow[] {
+export const highLowUnits = once((graph: Graph): readonly HighLow[] => {
   const units: HighLow[] = [];
+  const throughAll = new Map<string, ReadonlyMap<string, Way>>();
+  const through = (from: string) => {
+    const ways = throughAll.get(from) ?? waysFrom(graph, from, throughValves);
+    throughAll.set(from, ways);
+    return ways;
+  };
   for (const unloading of graph.ofKind('unloading')) {
     const net = graph.netAt(unloading.id, 'P');
     if (net === undefined || net.open === true) continue;
@@ -60,7 +65,7 @@ export function highLowUnits(graph: Graph): readonly HighLow[] {
     for (const high of others) {
       const from = outlet(graph, high);
       if (from === undefined) continue;
-      const escapeWay = waysFrom(graph, from, throughValves).get(net.id);
+      const escapeWay = through(from).get(net.id);
       const joining = joiningCheck(graph, onward, from);
       if (escapeWay === undefined && joining === undefined) continue;
       units.push({
@@ -74,12 +79,15 @@ export function highLowUnits(graph: Graph): readonly HighLow[] {
     }
   }
   return units;
-}
+});
 
 /** The check over which the low-pressure oil joins the high-pressure line. */
 function joiningCheck(graph: Graph, onward: ReadonlyMap<string, Way>, high: string): Edge | undefined {
-  for (const id of [high, ...waysFrom(graph, high, openAlways).keys()]) {
-    const check = onward.get(id)?.edges.find((e) => e.kind === 'check');
+  const checked = (id: string) => onward.get(id)?.edges.find((e) => e.kind === 'check');
+  const direct = checked(high);
+  if (direct !== undefined || onward.size === 1) return direct;
+  for (const id of waysFrom(graph, high, openAlways).keys()) {
+    const check = checked(id);
     if (check !== undefined) return check;
   }
   return undefined;
