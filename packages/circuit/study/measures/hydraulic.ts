@@ -1,5 +1,6 @@
 /** Pressure, flow, loss and power: of ports, lines, components, drives. */
 import type { Solution } from '../../assembly/machine.ts';
+import type { Net, Piece } from '../../model/circuit.ts';
 import { passesRange, type Place, placeWords, rangeBody, selectedPoints, selectedSamples, stepSamples } from '../places.ts';
 import type { Plant } from '../scene.ts';
 import type { Point } from '../study.ts';
@@ -55,11 +56,25 @@ export function flow(asked: Asked, place: Place): Observed {
       return exactly(
         component.kind === 'pump' ? Math.max(0, -(picture.flows[`${component.id}.P`] ?? 0)) : through(plant, component.id, picture),
       );
-    if (net) return exactly(net.ports.reduce((sum, one) => sum + Math.max(0, picture.flows[`${one.component}.${one.port}`] ?? 0), 0));
+    if (net) return exactly(throughLine(plant, requirement.of, net, picture));
     return undefined;
   };
   if (!component && !net) return { place: place.id, values: [], problems: [`${requirement.of} is no line or component`] };
   return over(asked, place, read, { run: requirement.bound.is === 'reaches' || requirement.lasts !== undefined });
+}
+
+/** What goes through a line: the flow of its pipe where that has a loss of its own, else what its ports bring or take, the larger. */
+function throughLine(plant: Plant, name: string, net: Net, picture: Picture): number {
+  const pipes = pipesOf(plant, name).map((one) => Math.abs(picture.flows[one.id] ?? 0));
+  if (pipes.length > 0) return Math.max(...pipes);
+  const flows = net.ports.map((one) => picture.flows[`${one.component}.${one.port}`] ?? 0);
+  const sum = (sign: 1 | -1) => flows.reduce((total, one) => total + Math.max(0, one * sign), 0);
+  return Math.max(sum(1), sum(-1));
+}
+/** Pieces of a named line that have a loss of their own. */
+function pipesOf(plant: Plant, name: string): readonly Piece[] {
+  const ids = plant.circuit.lines.filter((one) => one.name === name).flatMap((one) => one.pieces);
+  return plant.circuit.pieces.filter((one) => ids.includes(one.id) && one.nets[0] !== one.nets[1]);
 }
 
 /** Largest flow at any port, m3/s. */
@@ -93,13 +108,13 @@ export function power(asked: Asked, place: Place): Observed {
     if (component?.kind === 'drive') return Math.max(0, drivePower(plant, component.id, solution));
     if (component?.kind === 'pump') return Math.max(0, solution.shaft[component.id] ?? 0);
     if (body) return Math.abs((solution.forces[body.id] ?? 0) * (solution.velocities[body.id] ?? 0));
-    return lost(plant, component?.id, net?.ports, solution);
+    return lost(plant, component?.id, net === undefined ? undefined : requirement.of, solution);
   };
   const ofPoint = (point: Point): number | undefined => {
     if (component?.kind === 'drive' || component?.kind === 'pump') return Math.max(0, point.power[component.id] ?? 0);
     const actuator = point.actuators.find((one) => one.id === requirement.of);
     if (actuator) return Math.abs(actuator.force * actuator.velocity);
-    return lost(plant, component?.id, net?.ports, point);
+    return lost(plant, component?.id, net === undefined ? undefined : requirement.of, point);
   };
   return over(
     asked,
@@ -109,12 +124,16 @@ export function power(asked: Asked, place: Place): Observed {
   );
 }
 
-/** Power lost in a valve: sum over its ports of pressure times flow in. A line without own loss loses nothing. */
-function lost(plant: Plant, id: string | undefined, ports: readonly unknown[] | undefined, picture: Picture): number | undefined {
-  if (id === undefined) return ports === undefined ? undefined : 0;
+/** Power lost: in a component the sum over its ports of pressure times flow in; in a line that of its pipes, none where no length is said. */
+function lost(plant: Plant, id: string | undefined, line: string | undefined, picture: Picture): number | undefined {
+  const p = (net: string) => picture.pressures[net] ?? 0;
+  if (id === undefined) {
+    if (line === undefined) return undefined;
+    return pipesOf(plant, line).reduce((sum, one) => sum + Math.abs((p(one.nets[0]) - p(one.nets[1])) * (picture.flows[one.id] ?? 0)), 0);
+  }
   return Math.max(
     0,
-    plant.at.portsOf(id).reduce((sum, one) => sum + (picture.pressures[one.net] ?? 0) * (picture.flows[`${id}.${one.port}`] ?? 0), 0),
+    plant.at.portsOf(id).reduce((sum, one) => sum + p(one.net) * (picture.flows[`${id}.${one.port}`] ?? 0), 0),
   );
 }
 

@@ -1,5 +1,3 @@
-
-
 export interface Value {
   /** SI. Equal where the value is determined. */
   readonly low: number;
