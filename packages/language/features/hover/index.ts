@@ -21,6 +21,7 @@ import { hoverLine } from './line.ts';
 import { hoverPart } from './part.ts';
 import { hoverDrive, hoverPump } from './pump.ts';
 import { hoverRequirement } from './requirement.ts';
+import { hoverState, isState } from './state.ts';
 import { hoverConstant, hoverSetting } from './setting.ts';
 import { hoverCycle, hoverStep } from './step.ts';
 import { hoverUnit } from './unit.ts';
@@ -64,8 +65,11 @@ function textOf(analysis: Analysis, offset: number, token: Token): string | unde
   }
   const property = propertyText(analysis, token);
   if (property) return property;
+  if (isState(token.text)) return hoverState(analysis, token.text);
   const requirement = circuit?.requirements.find((one) => holds(one.origin, analysis.uri, offset));
-  return hoverKeyword(token.text) ?? (requirement ? hoverRequirement(analysis, requirement) : undefined);
+  return (
+    [hoverKeyword(token.text), requirement && hoverRequirement(analysis, requirement)].filter(Boolean).join('\n\n---\n\n') || undefined
+  );
 }
 
 function hoverOccurrence(analysis: Analysis, occurrence: Occurrence): string | undefined {
