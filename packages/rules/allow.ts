@@ -40,10 +40,11 @@ export function accept(context: RuleContext, findings: readonly Finding[]): Find
 function tellUnused(context: RuleContext, allow: Allow): Finding | undefined {
   const rule = ruleOf(allow.rule);
   // What figures decide is not known to be unused before they are there.
-  if (rule !== undefined && context.study === undefined) return undefined;
+  const figures = rule !== undefined && (rule.needs === 'computed' || rule.figures === true);
+  if (figures && context.study === undefined) return undefined;
   const on = allow.on === undefined ? '' : ` on ${allow.port === undefined ? allow.on : `${allow.on}.${allow.port}`}`;
   const { uri, start, end } = allow.origin;
-  const base = { code: 'ALLOW-UNUSED', origin: allow.origin, related: [], place: `${allow.rule}${on}`, computed: rule !== undefined };
+  const base = { code: 'ALLOW-UNUSED', origin: allow.origin, related: [], place: `${allow.rule}${on}`, computed: figures };
   if (rule === undefined) {
     return {
       ...base,

@@ -63,6 +63,8 @@ export interface Rule {
   readonly mend: string;
   /** `topology`: needs the circuit only. `computed`: needs the study. */
   readonly needs: 'topology' | 'computed';
+  /** A rule of topology that says more once the study is there. */
+  readonly figures?: true;
   /** Markdown: how it is decided, near misses that stay clean. Printed by `oilway explain` and on the rule's page. */
   readonly page: string;
   detect(context: RuleContext): Finding[];

@@ -68,7 +68,13 @@ export function ruleOf(code: string): Rule | undefined {
 export const codePages: Readonly<Record<string, string>> = Object.fromEntries(RULES.map((rule) => [rule.code, pageOf(rule)]));
 
 function pageOf(rule: Rule): string {
-  const when = rule.needs === 'topology' ? 'from the text, as one types' : 'from the computed states and steps';
+  const text = 'from the text, as one types';
+  const when =
+    rule.needs === 'computed'
+      ? 'from the computed states and steps'
+      : rule.figures === true
+        ? `${text}, and from the figures once they are there`
+        : text;
   return `# ${rule.code} ${rule.title}
 
 ${rule.why}

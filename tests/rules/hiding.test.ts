@@ -99,6 +99,15 @@ describe('allow', () => {
     expect(unused[0]!.fixes[0]!.safe).toBe(true);
   });
 
+  it('one for a rule that needs no figures is told as one types', () => {
+    const text = `${faulty('A02').text}allow C01 "None here"\n`;
+    expect(
+      check(text)
+        .findings.filter((f) => f.code === 'ALLOW-UNUSED')
+        .map((f) => f.what),
+    ).toEqual(['C01 is not found: this permission accepts nothing.']);
+  });
+
   it('one for a rule that is not checked says so', () => {
     const { findings } = allowed('A02', 'allow D09 on C1.cap "Small volume"');
     const unused = findings.filter((f) => f.code === 'ALLOW-UNUSED');

@@ -28,6 +28,9 @@ export const FAULTY: readonly Sample[] = folder('samples', 'faulty');
 /** Right circuits. */
 export const SOUND: readonly Sample[] = folder('samples');
 
+/** Further right circuits, written to show the notation. */
+export const SHOWN: readonly Sample[] = folder('tests', 'language', 'circuits');
+
 export function faulty(code: string): Sample {
   const sample = FAULTY.find((s) => s.code === code);
   if (sample === undefined) throw new Error(`no faulty sample for ${code}`);

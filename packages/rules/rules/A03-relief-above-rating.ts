@@ -105,6 +105,7 @@ export const A03: Rule = {
   ground: 'ISO 4413, components within their rated limits',
   mend: 'Set the relief lower, or choose parts with a higher rating.',
   needs: 'topology',
+  figures: true,
   page: `
 Setting plus tolerance plus override at the flow of all pumps that reach the relief (plus the pressure behind it, once that is computed) is compared with
 the lowest \`rated\` of ports and lines that stand at its pressure: back to the pumps, and on through directional valves, checks and shut-offs

@@ -59,6 +59,7 @@ export const B03: Rule = {
   ground: 'high-low circuit with two pumps, fluid power textbooks: unloading at about 1.5 times the approach pressure',
   mend: 'Set it above the pressure of the approach and well below the relief.',
   needs: 'topology',
+  figures: true,
   page: `
 The unloading valve of a two-pump unit is fully open 10 % above its setting. If that is above what the high-pressure pump can reach (its relief, less
 tolerance, or its compensator): error where the setting itself is not below it, warning where only the opening band is cut.

@@ -181,6 +181,7 @@ export const D01: Rule = {
   ground: 'ISO 4413, control of movements; ISO 12100',
   mend: 'Put a counterbalance valve or a pilot-operated check valve on the port of the chamber that carries the load.',
   needs: 'topology',
+  figures: true,
   page: `
 Inward forces and weight with the rod up are carried by the cap oil, outward ones by the rod oil.
 

@@ -86,6 +86,7 @@ export const F07: Rule = {
   ground: 'sequence circuits, fluid power textbooks: working pressure of the first actuator < sequence setting < relief',
   mend: 'Set it above the working pressure of the actuator before it and well below the relief.',
   needs: 'topology',
+  figures: true,
   page: `
 The pressure a sequence valve senses is limited by the reliefs and compensators of the pumps that feed it, or by a reducing valve before it. Error where
 its setting is not below that limit (it never opens); warning where only its opening band of 10 % is cut.

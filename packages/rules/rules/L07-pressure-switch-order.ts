@@ -116,6 +116,7 @@ export const L07: Rule = {
   ground: 'order of pressure settings, fluid power textbooks: working pressure < switch < relief',
   mend: 'Set the switch below the relief or compensator and above the pressure of the motion before it.',
   needs: 'topology',
+  figures: true,
   page: `
 The threshold (\`rises\`, else \`falls\`) is compared with what limits the pressure there: the reliefs with override and compensators of the pumps that feed it,
 or a reducing valve. Error above the highest of it; warning between the setting (less tolerance) and that, where it is reached only while oil goes
