@@ -9,7 +9,7 @@ import type { Assumption } from '../study/study.ts';
 import type { Apply, Assembled, BodyNote, BrakeNote, ChamberNote, ElementNote, GasNote, PumpNote } from './assembled.ts';
 import type { Assembly, Lifting, Limitation, Memory, OpeningOf, PilotedValve, ValveOf } from './assembly.ts';
 import { type BodyGroup, groupBodies } from './bodies.ts';
-import { addLines } from './lines.ts';
+import { addLines, piecesWithoutLoss } from './lines.ts';
 import { DEAD_SHARE, netVolume } from './storage.ts';
 import { GRAVITY, toKilo, toLitres, toMPa } from './units.ts';
 
@@ -221,6 +221,17 @@ function build(
       value: '0.2 L a net, 0.01 L a pilot or drain',
       source: 'memory',
       note: `${assumedVolumes} nets without bore and length; counts for rise times only`,
+    });
+  }
+
+  const lossless = piecesWithoutLoss(circuit);
+  if (lossless > 0) {
+    assume({
+      component: '',
+      property: 'line loss',
+      value: 'none',
+      source: 'not counted',
+      note: `${lossless} of ${circuit.pieces.length} pieces without bore and length; entry, exit and manifold losses are never counted`,
     });
   }
 

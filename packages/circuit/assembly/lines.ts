@@ -9,6 +9,10 @@ const HOSE = 2e-5;
 /** Loss of one bend in velocity heads. */
 const BEND = 0.75;
 
+/** Pieces of pipe that have no loss because bore or length is not said. */
+export const piecesWithoutLoss = (circuit: Circuit): number =>
+  circuit.pieces.filter((p) => p.bore === undefined || p.length === undefined).length;
+
 export function addLines(
   circuit: Circuit,
   oil: Oil,

@@ -39,7 +39,8 @@ export function forceAt(table: { readonly at: readonly number[]; readonly force:
 }
 
 export function positionOf(body: BodyNote, setting: Setting): number {
-  const x = ofBody(setting.positions, body) ?? body.begins;
+  const given = ofBody(setting.positions, body);
+  const x = given === undefined || !Number.isFinite(given) ? body.begins : given;
   return body.stroke === Number.POSITIVE_INFINITY ? x : Math.min(Math.max(x, 0), body.stroke);
 }
 
