@@ -22,7 +22,7 @@ export interface TextAnalysis {
   readonly symbols: SymbolIndex;
   /** Syntax and resolution, in text order. */
   readonly findings: readonly Finding[];
-  /** An error of the tool itself. The rest is then as empty as the file. */
+  /** An error of the tool itself; what it cost is missing from the rest. */
   readonly failed?: string;
 }
 
@@ -73,7 +73,8 @@ export function analyseText(document: SourceDocument): TextAnalysis {
   try {
     const { circuit, findings, symbols } = resolve(parsed);
     const all = [...parsed.findings, ...findings].sort((a, b) => a.origin.start - b.origin.start);
-    return { uri: document.uri, text: document.text, parsed, circuit, symbols, findings: all };
+    const failed = parsed.failed === undefined ? {} : { failed: parsed.failed };
+    return { uri: document.uri, text: document.text, parsed, circuit, symbols, findings: all, ...failed };
   } catch (error) {
     return {
       uri: document.uri,

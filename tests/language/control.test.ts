@@ -134,6 +134,20 @@ describe('conditions', () => {
     expect(until('V1 above 5 bar')).toEqual([expect.stringContaining('has no figure to compare with')]);
   });
 
+  it('S9: a position no switch sees is computed, but said, with the switch as its fix', () => {
+    const text = `${BASE}cycle X {\n step A energise SOL1 until C1 at 265 mm\n}`;
+    const { circuit: resolved, findings } = read(text);
+    expect(resolved.cycles[0]?.steps[0]?.until).toMatchObject({ op: 'compare', of: 'C1', is: 'at' });
+    expect(findings.map((finding) => [finding.severity, finding.what])).toEqual([
+      ['warning', 'No switch sees `C1 at 265 mm`: the step list cannot be wired as written'],
+    ]);
+    const mended = fixed(text);
+    expect(mended).toContain('switch LS1 (on C1, at 265 mm)');
+    expect(mended).toContain('until LS1 on');
+    expect(read(mended).findings).toEqual([]);
+    expect(read(`${BASE}require never C1 above 5 mm and PS1 off`).findings).toEqual([]);
+  });
+
   it('coils, steps and cycles are conditions too', () => {
     expect(wrong('cycle X {\n step A for 1 s\n}\nwhile X and SOL1 off energise SOL3\ninterlock SOL1, SOL2 needs X.A or START on')).toEqual(
       [],

@@ -2,7 +2,7 @@
  * Random edits of the collection: no exception, no error of the tool, places inside the text, and reading after many edits is reading afresh.
  * 20,000 edits a run within a time that ends it early on a slow machine; `OILWAY_FUZZ=1000000` sets the number and lifts the time.
  */
-import { analyseText, format } from '@oilway/language';
+import { analyseText, forgetStatements, format } from '@oilway/language';
 import { describe, expect, it } from 'vitest';
 import { CIRCUITS } from './support.ts';
 
@@ -92,6 +92,7 @@ describe('random edits', () => {
     const roll = random(SEED);
     const started = Date.now();
     let done = 0;
+    let rounds = 0;
     while (done < EDITS && (Date.now() - started) / 1000 < SECONDS) {
       // A part of a circuit keeps a single reading short, so that more of them fit.
       const source = CIRCUITS[Math.floor(roll() * CIRCUITS.length)]?.text ?? '';
@@ -107,9 +108,10 @@ describe('random edits', () => {
             throw new Error(`${what} at ${origin.start}..${origin.end} of ${text.length}\n--- text ---\n${text}`);
         }
       }
-      // What the parser has been through leaves no trace in the next reading.
+      // What the parser has been through and what it remembers leave no trace in the next reading.
       const warm = analyseText({ uri: 'u', text });
-      analyseText({ uri: 'u', text: source });
+      if (++rounds % 20 === 0) forgetStatements();
+      else analyseText({ uri: 'u', text: source });
       const fresh = analyseText({ uri: 'u', text });
       expect(JSON.stringify(fresh.circuit)).toBe(JSON.stringify(warm.circuit));
       expect(fresh.findings).toEqual(warm.findings);

@@ -1,7 +1,8 @@
 /** The service: text, topology and figures together; what breaks inside is told apart from what is found. */
 import type { Circuit, Study } from '@oilway/circuit';
-import { analyse, finding } from '@oilway/language';
+import { analyse, analyseText, finding, forgetStatements } from '@oilway/language';
 import { describe, expect, it } from 'vitest';
+import { circuitText } from './support.ts';
 
 const text = 'circuit T\ngauge G1 (range 0 bar to 250 bar)\nworking low: G1 to low2';
 const study = (circuit: Circuit): Study => ({
@@ -71,5 +72,35 @@ describe('analyse', () => {
       circuit: document?.circuit,
       findings: document?.findings,
     });
+  });
+});
+
+describe('remembered statements', () => {
+  it('typing a circuit letter by letter gives what reading it at once gives', () => {
+    const whole = circuitText('07-lift-table.oilway');
+    const from = whole.indexOf('cylinder');
+    const to = whole.indexOf('suction');
+    for (let end = from; end <= to; end += 9) {
+      const typed = whole.slice(0, end) + whole.slice(to);
+      const warm = analyseText({ uri: 'a', text: typed });
+      if ((end - from) % 450 === 0) {
+        forgetStatements();
+        const cold = analyseText({ uri: 'a', text: typed });
+        expect(JSON.stringify(cold.circuit)).toBe(JSON.stringify(warm.circuit));
+        expect(cold.findings).toEqual(warm.findings);
+      }
+    }
+  });
+
+  it('the same statement twice, and the same text in two files, stand each at their own place', () => {
+    const twice = 'gauge G1\nrequire G1 pressure at most 5 bar\nrequire G1 pressure at most 5 bar';
+    const places = analyseText({ uri: 'a', text: twice }).circuit.requirements.map(({ origin }) => origin.start);
+    expect(places).toEqual([twice.indexOf('require'), twice.lastIndexOf('require')]);
+    const [a, b] = [analyseText({ uri: 'a', text: 'gauge G1' }), analyseText({ uri: 'b', text: '// note\ngauge G1' })];
+    expect([a.circuit.components[0]?.origin, b.circuit.components[0]?.origin]).toEqual([
+      { uri: 'a', start: 0, end: 8 },
+      { uri: 'b', start: 8, end: 16 },
+    ]);
+    expect(a.parsed.originOf(a.parsed.statements[0])).toEqual({ uri: 'a', start: 0, end: 8 });
   });
 });

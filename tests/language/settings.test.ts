@@ -144,6 +144,11 @@ describe('settings', () => {
     expect(errors('cylinder X1 (bore 0 mm, stroke 60 mm)')).toEqual([expect.stringContaining('must be above zero')]);
   });
 
+  it('the opening of a throttle is a part of what it passes', () => {
+    expect(errors('throttle X1 (orifice 1 mm, opening 40 %)')).toEqual([expect.stringContaining('it needs `passes`')]);
+    expect(errors('throttle X1 (passes 20 L/min at 5 bar, opening 40 %)')).toEqual([]);
+  });
+
   it('rated may name a port', () => {
     const rated = component(
       'directional X1 (3/2, spring to b, passes 9 L/min at 1 bar, rated 315 bar, rated T 160 bar)',

@@ -41,7 +41,7 @@ describe('words', () => {
         for (const example of spec.example.split(/ \| |, or /)) {
           // `a | b | c` of a word list: only the first stands with its setting's word.
           if (!example.startsWith(spec.name)) continue;
-          const shape = kind.name === 'directional' ? '4/3, ' : '';
+          const shape = kind.name === 'directional' ? '4/3, ' : spec.name === 'opening' ? 'passes 9 L/min at 1 bar, ' : '';
           const text = `${kind.name} Z9 (${shape}${example})\ndrive M1\ncylinder C2\nmotor HM1\nreservoir R1\nfilter F2\ndirectional V1 (4/3)`;
           const own = read(text).findings.filter(
             (finding) =>

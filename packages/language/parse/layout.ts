@@ -10,6 +10,9 @@ import { LINE_HEADS, isLineHead, isReserved } from './words.ts';
 /** Brackets in brackets: far more than any circuit needs, far fewer than a stack holds. */
 export const MOST_BRACKETS = 40;
 
+/** Blocks in blocks: an assembly holds cycles at most, and assemblies in assemblies are rare. */
+const MOST_BLOCKS = 8;
+
 /** Problems said of one statement; what follows is the echo of these. */
 const MOST_PROBLEMS = 10;
 
@@ -241,6 +244,10 @@ class Layouter {
         }
         break;
       case '{':
+        if (BLOCK_HEADS.has(head) && this.braces.length >= MOST_BLOCKS) {
+          this.say({ start: raw.start, end: raw.end, what: `Blocks are nested deeper than ${MOST_BLOCKS}: this one cannot be read` });
+          return;
+        }
         if (!BLOCK_HEADS.has(head)) {
           this.say({
             start: raw.start,

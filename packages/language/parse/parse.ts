@@ -6,7 +6,7 @@ import { finding } from './finding.ts';
 import { type Layout, type LayoutToken, layout } from './layout.ts';
 import { type StatementError, parseStatement } from './statements.ts';
 
-export { createCoreServices } from './statements.ts';
+export { createCoreServices, forgetStatements } from './statements.ts';
 
 /** Characters; a drawing has a few thousand. */
 export const LONGEST_FILE = 2_000_000;
@@ -26,6 +26,8 @@ export interface Parsed {
   readonly findings: readonly Finding[];
   /** Statements with such a finding: what they declare or join may be lost. */
   readonly broken: readonly BrokenStatement[];
+  /** Errors of the tool itself, with the statements they cost. */
+  readonly failed?: string;
   /** Where a node of these statements stands in the text. */
   originOf(node: Placed | undefined): Origin;
 }
@@ -47,11 +49,13 @@ export function parseText(uri: string, text: string): Parsed {
   const bases = new Map<object, number>();
   const statements: Statement[] = [];
   const errors: StatementError[] = [];
+  const failures: string[] = [];
   for (const tokens of statementTokens(laid.tokens)) {
     const first = tokens[0];
     const last = tokens.at(-1);
     if (first === undefined || last === undefined) continue;
-    const { node, errors: own } = parseStatement(text.slice(first.start, last.end), tokens, bases);
+    const { node, errors: own, failed } = parseStatement(text.slice(first.start, last.end), tokens, bases);
+    if (failed !== undefined) failures.push(failed);
     const root = node?.$cstNode?.root;
     if (root !== undefined) bases.set(root, first.start);
     if (node !== undefined) statements.push(node);
@@ -68,6 +72,7 @@ export function parseText(uri: string, text: string): Parsed {
     layout: laid,
     findings: [...lexicalFindings(uri, laid), ...parserFindings(uri, errors, mended)],
     broken: brokenStatements(laid, mended, lost),
+    ...(failures.length === 0 ? {} : { failed: failures.join('\n') }),
     originOf: (node) => {
       const cst = node?.$cstNode;
       if (cst === undefined) return { uri, start: 0, end: 0 };

@@ -29,6 +29,8 @@ export interface StatementError {
 export interface ParsedStatement {
   readonly node: Statement | undefined;
   readonly errors: readonly StatementError[];
+  /** An error of the tool itself. */
+  readonly failed?: string;
 }
 
 interface Kept extends ParsedStatement {
@@ -54,6 +56,12 @@ const MOST_KEPT = 6000;
 
 let room: { readonly parser: LangiumParser; readonly lexer: OilwayLexer } | undefined;
 const kept = new Map<string, Kept>();
+
+/** Forgets every statement read and the parser itself: what is read next is read as in a new process. */
+export function forgetStatements(): void {
+  kept.clear();
+  room = undefined;
+}
 
 function parserRoom(): { readonly parser: LangiumParser; readonly lexer: OilwayLexer } {
   if (room === undefined) {
@@ -107,11 +115,11 @@ function parseAfresh(text: string, tokens: readonly LayoutToken[]): ParsedStatem
   } catch (error) {
     // The parser keeps its stack after a throw: the next statement would come out empty. A new parser costs a few milliseconds.
     room = undefined;
-    const reason = error instanceof RangeError ? 'it is nested too deep' : error instanceof Error ? error.message : String(error);
-    return {
-      node: undefined,
-      errors: [{ ordinal: 0, start: 0, end: Math.min(1, text.length), message: `This cannot be read: ${reason}` }],
-    };
+    const what = { ordinal: 0, start: 0, end: Math.min(1, text.length) };
+    if (error instanceof RangeError)
+      return { node: undefined, errors: [{ ...what, message: 'This statement cannot be read: it is nested too deep' }] };
+    const failed = error instanceof Error ? (error.stack ?? error.message) : String(error);
+    return { node: undefined, errors: [{ ...what, message: 'This statement cannot be read' }], failed };
   }
 }
 

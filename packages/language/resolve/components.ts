@@ -361,6 +361,15 @@ export class Components {
       });
       this.unknown[component.id] ??= `${component.id}: the rod is as thick as the bore`;
     }
+    const opening = component.properties.find((property) => property.name === 'opening');
+    if (component.kind === 'throttle' && opening !== undefined && !component.properties.some((property) => property.name === 'passes')) {
+      this.context.report({
+        code: 'VALUE',
+        what: '`opening` is a part of what the throttle passes when open: it needs `passes`',
+        origin: opening.origin,
+        place: component.id,
+      });
+    }
     const passes = component.properties.find((property) => property.name === 'passes')?.value;
     const crack = size('crack');
     if (component.kind === 'check' && crack !== undefined && passes?.type === 'flowAt' && passes.drop.si <= crack.si) {

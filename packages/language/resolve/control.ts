@@ -20,6 +20,9 @@ import { unquoted } from './items.ts';
 import { resolvePlace } from './places.ts';
 import type { Values } from './values.ts';
 
+const isActuator = (component: Component): boolean =>
+  component.kind === 'cylinder' || component.kind === 'motor' || component.kind === 'rotary';
+
 export class Control {
   private readonly context: Context;
   private readonly values: Values;
@@ -40,10 +43,11 @@ export class Control {
     return true;
   }
 
-  condition(node: ConditionNode | undefined): Condition {
+  /** `wired`: the control asks it, so a switch or sensor must see it; a requirement may ask anything. */
+  condition(node: ConditionNode | undefined, wired = true): Condition {
     const { context } = this;
     const origin = context.origin(node);
-    const items = (node?.items ?? []).map((atom) => this.atom(atom));
+    const items = (node?.items ?? []).map((atom) => this.atom(atom, wired));
     const joins = node?.joins ?? [];
     if (items.length === 0) return { op: 'unknown', origin };
     const first = items[0];
@@ -62,12 +66,12 @@ export class Control {
     return { op: joins[0]?.text ?? 'and', items, origin };
   }
 
-  private atom(node: Atom): Condition {
-    if (node.$type === 'BracketCondition') return this.condition(node.condition);
-    return this.state(node);
+  private atom(node: Atom, wired: boolean): Condition {
+    if (node.$type === 'BracketCondition') return this.condition(node.condition, wired);
+    return this.state(node, wired);
   }
 
-  private state(node: StateAtom): Condition {
+  private state(node: StateAtom, wired: boolean): Condition {
     const { context } = this;
     const origin = context.origin(node);
     const missing: Condition = { op: 'unknown', origin };
@@ -115,7 +119,9 @@ export class Control {
       const dimensions = this.compared(declared.id, component, at);
       if (dimensions === undefined || node.value === undefined) return missing;
       const value = this.values.quantity(node.value, dimensions);
-      return value === undefined ? missing : { op: 'compare', of: declared.id, is: node.compare, value: value.q, origin };
+      if (value === undefined) return missing;
+      if (wired && component !== undefined && isActuator(component)) this.unseen(component, node, origin);
+      return { op: 'compare', of: declared.id, is: node.compare, value: value.q, origin };
     }
     const state = node.state ?? 'on';
     if (state === 'on' || state === 'off') {
@@ -126,6 +132,30 @@ export class Control {
     if (component?.kind === 'cylinder' || component?.kind === 'rotary') return { op: 'state', of: declared.id, is: state, origin };
     this.incomplete(node.of, component, declared.what, state);
     return missing;
+  }
+
+  /** A position nothing sees is understood and computed, but cannot be wired. */
+  private unseen(component: Component, node: StateAtom, origin: Origin): void {
+    const { context } = this;
+    let number = 1;
+    while (context.names.has(`LS${number}`)) number++;
+    const name = `LS${number}`;
+    const place = context.slice(context.origin(node.value));
+    const end = component.origin.end;
+    const changes = [
+      { uri: origin.uri, start: origin.start, end: origin.end, text: `${name} on` },
+      { uri: origin.uri, start: end, end, text: `\nswitch ${name} (on ${component.id}, at ${place})` },
+    ];
+    context.report({
+      code: 'VALUE',
+      severity: 'warning',
+      what: `No switch sees \`${context.slice(origin)}\`: the step list cannot be wired as written`,
+      why: 'The control knows a position only through a switch or sensor.',
+      mend: 'Declare a `switch` or a `sensor` on the actuator and ask for it.',
+      origin,
+      place: component.id,
+      fixes: node.compare === 'at' ? [{ title: `Declare the switch \`${name}\``, safe: false, changes }] : [],
+    });
   }
 
   private incomplete(ref: Ref, component: Component | undefined, what: string, state?: string): void {

@@ -45,7 +45,7 @@ export class Demands {
     const { context } = this;
     const origin = context.origin(node);
     if (node.$type === 'Never') {
-      const condition = this.control.condition(node.condition);
+      const condition = this.control.condition(node.condition, false);
       if (condition.op !== 'unknown') this.requirements.push({ form: 'never', id: this.id(context.slice(origin)), condition, origin });
       return;
     }
