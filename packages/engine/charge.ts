@@ -27,8 +27,8 @@ export function compression(oil: OilSpec, gauge: number): { value: number; slope
  * in every iteration.
  */
 export class CompressionTable {
-  private readonly values: Float64Array;
-  private readonly slopes: Float64Array;
+  readonly values: Float64Array;
+  readonly slopes: Float64Array;
   private readonly oil: OilSpec;
   value = 0;
   slope = 0;
@@ -147,15 +147,16 @@ export class Storage {
     const { net, volume } = this;
     if (!net.spec.oil) return;
     volume.set(this.dead);
-    net.spec.actuators.forEach((actuator, a) => {
+    for (let a = 0; a < x.length; a++) {
+      const { low, high } = net.spec.actuators[a]!;
       for (let c = net.chamberStart[a]!; c < net.chamberStart[a + 1]!; c++) {
         const i = net.unknownOf[net.chamberNodes[c]!]!;
         const size = area[c]!;
-        const left = size > 0 ? x[a]! - actuator.low : actuator.high - x[a]!;
+        const left = size > 0 ? x[a]! - low : high - x[a]!;
         // Motors (no stops) enclose no volume of their own here: the caller counts it as dead volume.
-        if (i >= 0 && Number.isFinite(left) && left > 0) volume[i]! += Math.abs(size) * left;
+        if (i >= 0 && left > 0 && left < Number.POSITIVE_INFINITY) volume[i]! += Math.abs(size) * left;
       }
-    });
+    }
   }
 
   /** Stored volume (L) of an unknown at gauge pressure p, left in `value`, its slope in `slope`. */
@@ -179,4 +180,64 @@ export class Storage {
     this.value = value;
     this.slope = slope;
   }
+
+  /** Stored volumes of all unknowns at pressures y. */
+  all(y: Float64Array, into: Float64Array): void {
+    for (let i = 0; i < this.constant.length; i++) {
+      this.at(i, y[i]!);
+      into[i] = this.value;
+    }
+  }
+
+  /** Takes the change of storage against `base`, times `over` (1/s), off the balances r, its slope off the Jacobian; returns the sum of squares. */
+  stamp(y: Float64Array, base: Float64Array, over: number, r: Float64Array, j: Float64Array): number {
+    const { constant, volume, chargesAt } = this;
+    const { diagonal } = this.net;
+    const pressed = this.pressed;
+    const values = pressed?.values ?? NONE;
+    const slopes = pressed?.slopes ?? NONE;
+    let sum = 0;
+    for (let i = 0; i < constant.length; i++) {
+      const p = y[i]!;
+      let value = constant[i]! * p;
+      let slope = constant[i]!;
+      const size = volume[i]!;
+      if (size > 0 && pressed) {
+        // The table's cubic, as in CompressionTable.at.
+        const absolute = p + ATMOSPHERE;
+        const s = absolute > 0 ? Math.sqrt(absolute) : 0;
+        const place = (s - TABLE_FROM) / TABLE_STEP;
+        if (place >= 0 && place < TABLE_POINTS) {
+          const n = Math.floor(place);
+          const t = place - n;
+          const v0 = values[n]!;
+          const rise = values[n + 1]! - v0;
+          const m0 = slopes[n]!;
+          const a = m0 + slopes[n + 1]! - 2 * rise;
+          const b = rise - m0 - a;
+          value += size * (v0 + t * (m0 + t * (b + t * a)));
+          slope += (size * (m0 + t * (2 * b + 3 * t * a))) / (2 * s * TABLE_STEP);
+        } else {
+          pressed.at(p);
+          value += size * pressed.value;
+          slope += size * pressed.slope;
+        }
+      }
+      const charges = chargesAt[i];
+      if (charges !== undefined) {
+        for (let c = 0; c < charges.length; c++) {
+          const held = chargeOil(charges[c]!, p);
+          value += held.value;
+          slope += held.slope;
+        }
+      }
+      const left = r[i]! - (value - base[i]!) * over;
+      r[i] = left;
+      j[diagonal[i]!]! -= slope * over;
+      sum += left * left;
+    }
+    return sum;
+  }
 }
+
+const NONE = new Float64Array(0);

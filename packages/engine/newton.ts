@@ -52,15 +52,25 @@ export class Solver {
     return Math.sqrt(sum);
   }
 
-  /** Share of the step d that keeps every pressure change under the cap. */
+  /** Share of the whole step that keeps every pressure change under the cap. */
   private cap(): number {
-    const free = this.sys.net.free;
     let largest = 0;
-    for (let i = 0; i < free; i++) {
-      const size = Math.abs(this.d[i]!);
-      if (size > largest) largest = size;
-    }
+    for (let i = 0; i < this.sys.net.free; i++) largest = Math.max(largest, Math.abs(this.d[i]!));
     return largest > PRESSURE_CAP ? PRESSURE_CAP / largest : 1;
+  }
+
+  /** Clips every pressure change to the cap (each by itself: one volume without outlet must not hold up the rest); true when one was. */
+  private clip(): boolean {
+    const { d } = this;
+    const free = this.sys.net.free;
+    let clipped = false;
+    for (let i = 0; i < free; i++) {
+      if (d[i]! > PRESSURE_CAP) d[i] = PRESSURE_CAP;
+      else if (d[i]! < -PRESSURE_CAP) d[i] = -PRESSURE_CAP;
+      else continue;
+      clipped = true;
+    }
+    return clipped;
   }
 
   private largestChange(): number {
@@ -89,15 +99,16 @@ export class Solver {
       this.change = this.largestChange();
       if (!Number.isFinite(this.change)) return false;
       const limited = sys.limitSpeeds(y, d);
-      const cap = this.cap();
-      let share = cap;
+      // With widened laws the direction is worth keeping; with sharp ones a single closed volume would stop everything.
+      let share = sys.blend > 1 ? this.cap() : 1;
+      const clipped = share < 1 || this.clip();
       y0.set(y);
       let halvings = 0;
       for (;;) {
         for (let i = 0; i < n; i++) y[i] = y0[i]! + share * d[i]!;
         sys.evaluate();
         const now = this.length();
-        if (now <= (1 - ARMIJO * share) * length || limited || (this.change < LOOSE && now < 1e-7)) {
+        if (now <= (1 - ARMIJO * share) * length || (limited && now < 1.2 * length) || (this.change < LOOSE && now < 1e-7)) {
           length = now;
           break;
         }
@@ -110,7 +121,7 @@ export class Solver {
         }
         share *= 0.5;
       }
-      if (share === 1 && !limited && (this.change < TIGHT || (this.change < LOOSE && this.residual < RESIDUAL))) {
+      if (share === 1 && !limited && !clipped && (this.change < TIGHT || (this.change < LOOSE && this.residual < RESIDUAL))) {
         // Steep passages leave a balance behind pressures that have converged: at most two steps more.
         if (this.residual < POLISHED || ++polished >= 2) return true;
       }
@@ -156,8 +167,8 @@ export class Solver {
       this.iterations++;
       y0.set(y);
       if (!Number.isFinite(length) || !this.pseudoStep(tau)) return false;
-      const cap = this.cap();
-      for (let i = 0; i < n; i++) y[i] = y0[i]! + cap * d[i]!;
+      this.clip();
+      for (let i = 0; i < n; i++) y[i] = y0[i]! + d[i]!;
       sys.evaluate();
       const now = this.length();
       if (!Number.isFinite(now) || now > 100 * length) {
@@ -200,9 +211,9 @@ export class Solver {
         sys.evaluate();
         this.length();
         if (!this.pseudoStep(tau, back)) break;
-        const cap = this.cap();
-        for (let i = 0; i < n; i++) y[i]! += cap * d[i]!;
-        if (cap === 1 && this.largestChange() < 1e-6) {
+        const clipped = this.clip();
+        for (let i = 0; i < n; i++) y[i]! += d[i]!;
+        if (!clipped && this.largestChange() < 1e-6) {
           done = true;
           break;
         }

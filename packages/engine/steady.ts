@@ -10,6 +10,8 @@ import { ATMOSPHERE, FLOOR_STEADY, SMOOTHING, STEADY_BUDGET } from './tolerances
 
 /** Distance within which a body stands at its stop, m or rad. */
 const AT_STOP = 1e-6;
+/** The floor of a continuation stage, as a multiple of floor and blend. */
+const CONTINUED_FLOOR = 10;
 /** Net force towards freedom below which a contact is kept, MPa of the scaled balance. */
 const LEAVES = 1e-9;
 
@@ -137,11 +139,13 @@ function cascade(solver: Solver, start: Float64Array | undefined): SteadyStage {
   return 'none';
 }
 
-/** One stage on laws with widened blends, each answer the start of the next; the last one decides. */
+/** One stage on laws with widened blends and a raised floor, each answer the start of the next; the last one decides. */
 function continued(solver: Solver, stage: () => boolean): boolean {
   let found = false;
+  const floor = solver.sys.floor;
   for (const blend of SMOOTHING) {
     solver.sys.blend = blend;
+    solver.sys.floor = Math.max(floor, floor * CONTINUED_FLOOR * (blend === 1 ? 0 : blend));
     found = stage();
     if (!found && blend !== 1) continue;
   }

@@ -19,9 +19,10 @@ const B1 = (1 / 6 - GAMMA + (GAMMA * GAMMA) / 2) / (GAMMA * GAMMA * (GAMMA - 1))
 const E1 = B1 - (1 - GAMMA);
 const E2 = 0.5 - B1 * GAMMA - GAMMA;
 const E0 = -E1 - E2;
-/** Newton in a stage: converged below this relative change; most iterations. */
+/** Newton in a stage: converged below this relative change; most iterations, and when shorter steps have failed too. */
 const STAGE_TIGHT = 1e-5;
-const STAGE_ITERATIONS = 12;
+const STAGE_ITERATIONS = 8;
+const PATIENT_ITERATIONS = 25;
 /** A turning body without stops is followed to this many times the tolerance: 0.001 rad where a rod is followed to 0.01 mm. */
 const ENDLESS = 100;
 /** Widening of blends on the way to a stage that is not reached directly. */
@@ -64,6 +65,7 @@ export class Stepper {
   /** Inertia of rows: bodies (scaled) and lines; 0: algebraic. */
   private readonly inertia: Float64Array;
   newtons = 0;
+  private patient = false;
   /** Weighted error of the last trial; <= 1 is accepted. */
   error = 0;
 
@@ -109,6 +111,7 @@ export class Stepper {
 
   /** Tries a step of length h from (y0, x0) at `time`; false: no convergence (`patient` tries harder). Leaves (y1, x1) and `error`. */
   trial(time: number, h: number, patient = false): boolean {
+    this.patient = patient;
     const { sys, net, storage, y0, y1, ya, x0, x1, xb, base, s0, kg, k1 } = this;
     const n = net.size;
     const gh = GAMMA * h;
@@ -172,7 +175,9 @@ export class Stepper {
     const n = y.length;
     this.ramps.apply(time, sys.parameters, false);
     let norm = this.evaluate(gh);
-    for (let k = 0; k < STAGE_ITERATIONS; k++) {
+    const patient = this.patient;
+    const most = patient ? PATIENT_ITERATIONS : STAGE_ITERATIONS;
+    for (let k = 0; k < most; k++) {
       this.newtons++;
       if (!Number.isFinite(norm) || !lu.factor(sys.j)) return false;
       lu.solve(sys.r, d);
@@ -197,7 +202,7 @@ export class Stepper {
       for (let halvings = 0; ; halvings++) {
         for (let i = 0; i < n; i++) y[i] = keep[i]! + share * d[i]!;
         const now = this.evaluate(gh);
-        if (now < norm || (limited && now < 10 * norm) || change < 1e-4 || halvings >= 10) {
+        if (now < norm || (limited && (patient || now < 10 * norm)) || change < 1e-4 || halvings >= (patient ? 10 : 6)) {
           norm = now;
           break;
         }
@@ -216,14 +221,7 @@ export class Stepper {
     sys.xv = gh;
     for (let a = 0; a < x.length; a++) x[a] = xb[a]! + gh * (sys.held[a] ? 0 : y[net.firstVelocity + a]!);
     sys.evaluate();
-    let sum = 0;
-    for (let i = 0; i < net.free; i++) {
-      storage.at(i, y[i]!);
-      const value = r[i]! - (storage.value - base[i]!) * over;
-      r[i] = value;
-      j[net.diagonal[i]!]! -= storage.slope * over;
-      sum += value * value;
-    }
+    let sum = storage.stamp(y, base, over, r, j);
     for (let i = net.free; i < net.size; i++) {
       const mass = inertia[i]!;
       if (mass > 0 && !(i < net.firstVelocity + x.length && sys.held[i - net.firstVelocity])) {

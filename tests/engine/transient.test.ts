@@ -49,7 +49,7 @@ describe('closed solutions', () => {
     const at = run.advance(5, [falling(1, term('pressure', 1))]);
     expect(at.fired).toEqual([0]);
     expect(at.time).toBeCloseTo(0.5 * Math.log(from), 3);
-    expect(run.pressures[1]!).toBeCloseTo(1, 6);
+    expect(Math.abs(run.pressures[1]! - 1)).toBeLessThan(1e-6);
   });
   it('an accumulator filled at a constant flow follows p V^n, ideal and with its oil in balance', () => {
     for (const exponent of [1, 1.4]) {
