@@ -186,6 +186,19 @@ describe('over stdio', () => {
       expect(await client.connection.sendRequest('oilway/rulePage', { code: 'none' })).toBeNull();
     });
 
+    test('the way of the oil, as a call hierarchy', async () => {
+      const items = await client.request<{ readonly name: string }[]>('prepareCallHierarchy', uri, {
+        position: client.at(uri, 'cylinder  1A|1'),
+      });
+      expect(items.map((one) => one.name)).toEqual(['1A1']);
+      const calls = await client.connection.sendRequest<{ readonly from: { readonly name: string; readonly detail: string } }[]>(
+        'callHierarchy/incomingCalls',
+        { item: items[0] },
+      );
+      expect(calls.map((one) => one.from.name)).toEqual(['1V1', '1V2', '1V3']);
+      expect(calls[0]?.from.detail).toMatch(/^Out: up to [\d.]+ L\/min$/);
+    });
+
     test('switched off nothing is computed; on again it is', async () => {
       let since = client.published.length;
       void client.connection.sendNotification('workspace/didChangeConfiguration', {

@@ -1,6 +1,14 @@
 /** Requests of an editor, each answered by one pure feature; here positions become offsets and answers become protocol. */
-import { ErrorCodes, ResponseError, SemanticTokensRequest, type Connection, type Location } from 'vscode-languageserver';
-import type { Origin } from '@oilway/circuit';
+import {
+  ErrorCodes,
+  ResponseError,
+  SemanticTokensRequest,
+  SymbolKind,
+  type CallHierarchyItem,
+  type Connection,
+  type Location,
+} from 'vscode-languageserver';
+import { KINDS, type Component, type Origin } from '@oilway/circuit';
 import type { Analysis } from '../features/analysis.ts';
 import { codeActions } from '../features/code-actions.ts';
 import { cursorAt, expectsMore } from '../features/completion/context.ts';
@@ -12,6 +20,7 @@ import { formatEdits } from '../features/format.ts';
 import { hoverAt } from '../features/hover/index.ts';
 import { inlayHints, type HintSettings } from '../features/inlay-hints.ts';
 import { definitionAt, highlightsAt, referencesAt } from '../features/navigation.ts';
+import { componentAt, neighbours } from '../features/oil-way.ts';
 import { outline, workspaceSymbols } from '../features/outline.ts';
 import { renameAt, renameTarget } from '../features/rename.ts';
 import { selectionAt } from '../features/selection.ts';
@@ -142,6 +151,39 @@ export function answerRequests(connection: Connection, room: RequestRoom): void 
       ? formatEdits(analysis, format(analysis.text), { start: analysis.lines.offset(range.start), end: analysis.lines.offset(range.end) })
       : [];
   });
+  const itemOf = (analysis: Analysis, component: Component, detail: string): CallHierarchyItem[] => {
+    const context = room.context(analysis);
+    const range = context.range(component.origin);
+    const selectionRange = context.range(component.nameOrigin);
+    if (!range || !selectionRange) return [];
+    return [
+      {
+        name: component.id,
+        kind: SymbolKind.Object,
+        detail,
+        uri: component.origin.uri,
+        range,
+        selectionRange,
+        data: { uri: analysis.uri, id: component.id },
+      },
+    ];
+  };
+  const waysOf = (item: CallHierarchyItem, into: boolean): CallHierarchyItem[] => {
+    const { uri, id } = item.data as { readonly uri: string; readonly id: string };
+    const analysis = room.analysis(uri);
+    return analysis ? neighbours(analysis, id, into).flatMap((one) => itemOf(analysis, one.component, one.detail)) : [];
+  };
+  connection.languages.callHierarchy.onPrepare(({ textDocument, position }) => {
+    const here = at(textDocument.uri, position);
+    const component = here && componentAt(here.analysis, here.offset);
+    return here && component ? itemOf(here.analysis, component, component.title ?? KINDS[component.kind].noun) : [];
+  });
+  connection.languages.callHierarchy.onIncomingCalls(({ item }) =>
+    waysOf(item, true).map((from) => ({ from, fromRanges: [from.selectionRange] })),
+  );
+  connection.languages.callHierarchy.onOutgoingCalls(({ item }) =>
+    waysOf(item, false).map((to) => ({ to, fromRanges: [item.selectionRange] })),
+  );
   connection.onRequest(SemanticTokensRequest.type, ({ textDocument }) => {
     const analysis = room.analysis(textDocument.uri);
     return analysis ? semanticTokens(analysis) : { data: [] };

@@ -106,6 +106,7 @@ export function startServer(connection: Connection, host: Host, analyser: Analys
         workspaceSymbolProvider: true,
         foldingRangeProvider: true,
         selectionRangeProvider: true,
+        callHierarchyProvider: true,
         codeActionProvider: { codeActionKinds: [CodeActionKind.QuickFix, FIX_ALL] },
         inlayHintProvider: true,
         documentFormattingProvider: true,
