@@ -9,11 +9,13 @@ export const HELP = `oilway: reads hydraulic circuits as text, computes them and
 check
   --format text|json    text (default): each finding with its line of source; json: for other programs
   --accepted            show findings accepted by "allow" too
+  --limit SECONDS       longest computation of one circuit (120)
   exit status: 0 nothing found (or for information only), 1 errors or warnings, 2 cannot run
 
 run
   --format text|json|csv  text (default): tables; json, csv: the course over time in SI units
   --cycle NAME            only this cycle or manual function
+  --limit SECONDS         longest computation (120)
   exit status: 0 all requirements met, 1 missed, not decided, a fault in the cycle or errors in the text, 2 cannot run
 
   --help, -h   this text        --version   the version

@@ -16,10 +16,11 @@ const OPTIONS = {
   format: { type: 'string' },
   cycle: { type: 'string' },
   accepted: { type: 'boolean' },
+  limit: { type: 'string' },
 } as const;
 
 interface Arguments {
-  readonly values: { help?: boolean; version?: boolean; format?: string; cycle?: string; accepted?: boolean };
+  readonly values: { help?: boolean; version?: boolean; format?: string; cycle?: string; accepted?: boolean; limit?: string };
   readonly positionals: readonly string[];
 }
 
@@ -32,7 +33,11 @@ function readArguments(args: readonly string[]): Arguments | string {
 }
 
 /** Options that belong to another command are a mistake worth saying. */
-const TAKEN: Readonly<Record<string, readonly string[]>> = { check: ['format', 'accepted'], run: ['format', 'cycle'], explain: [] };
+const TAKEN: Readonly<Record<string, readonly string[]>> = {
+  check: ['format', 'accepted', 'limit'],
+  run: ['format', 'cycle', 'limit'],
+  explain: [],
+};
 
 export async function main(args: readonly string[], output: Output): Promise<Exit> {
   const refuse = (why: string): Exit => {
@@ -63,9 +68,12 @@ export async function main(args: readonly string[], output: Output): Promise<Exi
   const formats = command === 'check' ? ['text', 'json'] : ['text', 'json', 'csv'];
   const format = values.format ?? 'text';
   if (!formats.includes(format)) return refuse(`${command} has no format ${format} (${formats.join(', ')})`);
+  const seconds = values.limit === undefined ? undefined : Number(values.limit);
+  if (seconds !== undefined && !(seconds > 0)) return refuse(`--limit takes seconds, not ${values.limit}`);
+  const limit = seconds === undefined ? {} : { limit: seconds };
   if (command === 'check') {
     return check(
-      { paths: rest.length === 0 ? ['.'] : rest, format: format as 'text' | 'json', accepted: values.accepted === true },
+      { paths: rest.length === 0 ? ['.'] : rest, format: format as 'text' | 'json', accepted: values.accepted === true, ...limit },
       output,
       paint,
     );
@@ -73,7 +81,7 @@ export async function main(args: readonly string[], output: Output): Promise<Exi
   const [path, ...more] = rest;
   if (path === undefined || more.length > 0) return refuse('run takes one file');
   return run(
-    { path, format: format as 'text' | 'json' | 'csv', ...(values.cycle === undefined ? {} : { cycle: values.cycle }) },
+    { path, format: format as 'text' | 'json' | 'csv', ...(values.cycle === undefined ? {} : { cycle: values.cycle }), ...limit },
     output,
     paint,
   );

@@ -17,16 +17,16 @@ export interface Opened {
 export interface Session {
   readonly opened: readonly Opened[];
   readonly texts: Texts;
-  /** Errors of the program itself, a line each: what they were to find is missing. */
+  /** What was not computed: errors of the program itself, or time run out. What they were to find is missing. */
   readonly failures: readonly string[];
 }
 
-/** Analyses files; results in their order. */
-export function open(files: readonly SourceFile[]): Session {
+/** Analyses files, each within `limit` seconds; results in their order. */
+export function open(files: readonly SourceFile[], limit?: number): Session {
   const failures: string[] = [];
   const { documents } = analyse(
     files.map(({ uri, text }) => ({ uri, text })),
-    engines(failures),
+    engines(failures, limit),
   );
   const byUri = new Map(documents.map((document) => [document.uri, document]));
   const opened = files.map((file): Opened => {
@@ -36,7 +36,7 @@ export function open(files: readonly SourceFile[]): Session {
       return { file, findings: [] };
     }
     const { circuit, findings, study, failed } = document;
-    if (failed !== undefined) failures.push(`${file.path}: ${failed}`);
+    if (failed !== undefined) failures.push(`internal error, please report it: ${file.path}: ${failed}`);
     return { file, findings, ...(circuit.name === undefined ? {} : { circuit }), ...(study === undefined ? {} : { study }) };
   });
   const texts = new Map(files.map((file) => [file.uri, file.text]));

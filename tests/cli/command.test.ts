@@ -217,6 +217,14 @@ describe('run', () => {
   });
 });
 
+describe('a computation that takes too long', () => {
+  it('is cut off, said, and never reads as clean', () => {
+    const { status, err } = oilway(['check', '--limit', '0.000001', join(ROOT, 'samples', '01-table.oilway')]);
+    expect(status).toBe(2);
+    expect(err).toMatch(/^oilway: SandingTable is not computed within 0\.000001 s: figures and findings are missing/);
+  });
+});
+
 describe('Node 20', () => {
   it('is enough: the command brings what that lacks', () => {
     const older = 'data:text/javascript,delete Object.groupBy;delete Map.groupBy;delete Promise.withResolvers;delete Array.fromAsync;';
@@ -282,6 +290,7 @@ describe('explain, help, version, mistakes', () => {
     [['check', '--format', 'xml'], /check has no format xml/],
     [['check', '--cycle', 'A'], /check does not take --cycle/],
     [['check', '--colour'], /--colour/],
+    [['check', '--limit', 'soon'], /--limit takes seconds, not soon/],
     [['explain', 'A01', 'A02'], /takes one code/],
   ])('%j is refused in one line', (args, words) => {
     const { status, err } = oilway(args);

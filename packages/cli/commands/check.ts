@@ -12,6 +12,8 @@ export interface CheckOptions {
   readonly format: 'text' | 'json';
   /** Show accepted findings (`allow`) too. */
   readonly accepted: boolean;
+  /** Longest computation of one circuit, s. */
+  readonly limit?: number;
 }
 
 const ORDER = { error: 0, warning: 1, information: 2 } as const;
@@ -86,10 +88,10 @@ export async function check(options: CheckOptions, output: Output, paint: Paint)
   const gathered = await gather(options.paths);
   for (const one of gathered.unusable) output.err(`oilway: ${one.path} ${one.why}`);
   if (gathered.files.length === 0 && options.format === 'text') return 2;
-  const session = open(gathered.files);
+  const session = open(gathered.files, options.limit);
   if (options.format === 'json') output.out(JSON.stringify(dataOf(session, gathered), null, 2));
   else for (const line of textOf(session, options, paint)) output.out(line);
-  for (const failure of session.failures) output.err(`oilway: internal error, please report it: ${failure}`);
+  for (const failure of session.failures) output.err(`oilway: ${failure}`);
   if (gathered.unusable.length > 0 || session.failures.length > 0) return 2;
   const { errors, warnings } = totalsOf(session.opened);
   return errors + warnings > 0 ? 1 : 0;

@@ -11,6 +11,8 @@ export interface RunOptions {
   readonly format: 'text' | 'json' | 'csv';
   /** Only this cycle or manual function. */
   readonly cycle?: string;
+  /** Longest computation of the circuit, s. */
+  readonly limit?: number;
 }
 
 export async function run(options: RunOptions, output: Output, paint: Paint): Promise<Exit> {
@@ -22,8 +24,8 @@ export async function run(options: RunOptions, output: Output, paint: Paint): Pr
   const unusable = gathered.unusable[0];
   if (unusable !== undefined) return refuse(`${unusable.path} ${unusable.why}`);
   if (gathered.files.length > 1) return refuse(`${options.path} holds ${gathered.files.length} circuits: name one file to run`);
-  const { opened, failures } = open(gathered.files);
-  for (const failure of failures) output.err(`oilway: internal error, please report it: ${failure}`);
+  const { opened, failures } = open(gathered.files, options.limit);
+  for (const failure of failures) output.err(`oilway: ${failure}`);
   if (failures.length > 0) return 2;
   const one = opened[0];
   if (one === undefined) return refuse(`${options.path} cannot be run`);
