@@ -22,7 +22,7 @@ export function limiters(plant: Plant, body: Body, setting: Setting, solution: S
   if (motion.moving) {
     const shares = plant.machine.sensitivities(setting, solution, body.id);
     const most = Math.max(0, ...shares.map((one) => Math.abs(one.share)));
-    for (const one of [...shares].sort((a, b) => Math.abs(b.share) - Math.abs(a.share))) {
+    for (const one of [...shares].sort((a, b) => byShare(plant, a, b))) {
       if (most > 0.05 && Math.abs(one.share) > most / 2) found.push({ of: one.of, words: one.words, share: one.share });
     }
   }
@@ -43,6 +43,19 @@ export function limiters(plant: Plant, body: Body, setting: Setting, solution: S
   }
   if (!motion.moving && motion.atStop === undefined && motion.short === undefined) found.push(...closedAround(plant, body, solution));
   return found;
+}
+
+/** Shares within 5 % of each other are a tie: what meters comes before the pump, the pump before a path's loss. */
+function byShare(plant: Plant, one: Share, other: Share): number {
+  const [a, b] = [Math.abs(one.share), Math.abs(other.share)];
+  if (Math.abs(a - b) > 0.05 * Math.max(a, b)) return b - a;
+  return rank(plant, one) - rank(plant, other) || b - a;
+}
+type Share = ReturnType<Plant['machine']['sensitivities']>[number];
+function rank(plant: Plant, one: Share): number {
+  const kind = plant.at.component(one.of)?.kind;
+  if (kind === 'throttle' || kind === 'deceleration' || /command|set$/.test(one.words)) return 0;
+  return kind === 'pump' ? 1 : 2;
 }
 
 /** Reliefs over which more than 1 % of the pump flow goes. */

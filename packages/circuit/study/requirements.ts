@@ -15,6 +15,7 @@ import { judgeStill } from './still.ts';
 import type { RequirementResult } from './study.ts';
 import type { Trace } from './trace.ts';
 import { judge, type Verdict } from './verdict.ts';
+import { unknownBehind } from './unknown.ts';
 import { unitOnce } from './waiting.ts';
 import { list, say, sayAgainst, sayPlace } from './words.ts';
 
@@ -23,6 +24,8 @@ export function requirementResults(facts: Facts): readonly RequirementResult[] {
   return facts.plant.circuit.requirements.map((one) => {
     if (facts.plant.cancelled()) return undecided(one, 'the study was stopped');
     if (one.form === 'never') return never(facts, one);
+    const unknown = unknownBehind(facts, one);
+    if (unknown !== undefined) return undecided(one, unknown);
     if (one.form === 'still') return judgeStill(facts, one, runner);
     return bounded(facts, one, runner);
   });
@@ -50,8 +53,6 @@ function bounded(facts: Facts, requirement: Bounded, runner: StateRunner): Requi
   const { plant } = facts;
   const named = requirement.where.places !== undefined;
   const asked: Asked = { plant, facts, requirement, runner, named };
-  const reason = plant.circuit.unknown[requirement.of] ?? plant.machine.notComputed[requirement.of];
-  if (reason !== undefined && requirement.measure !== 'loading') return undecided(requirement, reason);
   const whole = WHOLE[requirement.measure];
   const placed = PLACED[requirement.measure];
   let observed: readonly Observed[];

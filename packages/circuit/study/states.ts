@@ -46,7 +46,7 @@ export function heritageOf(plant: Plant, rans: readonly Ran[], charged: Readonly
   for (const { counted } of rans) {
     for (const trace of counted) {
       for (const span of trace.spans) {
-        const last = trace.between(span.from, span.to).at(-1);
+        const last = trace.lastBy(span.to);
         if (!last) continue;
         for (const [id, x] of Object.entries(last.solution.positions)) {
           const known = ends[id] ?? [];

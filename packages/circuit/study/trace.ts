@@ -105,6 +105,17 @@ export class Trace {
     for (let i = low; i < this.samples.length && this.samples[i]!.time <= to + near; i += 1) found.push(this.samples[i]!);
     return found;
   }
+  /** The last sample not after a time. */
+  lastBy(time: number): Sample | undefined {
+    let low = 0;
+    let high = this.samples.length;
+    while (low < high) {
+      const middle = (low + high) >> 1;
+      if (this.samples[middle]!.time <= time + 1e-9) low = middle + 1;
+      else high = middle;
+    }
+    return this.samples[low - 1];
+  }
   /** What was set just before a time (`before`) or from it on. */
   snapshotAt(time: number, before: boolean): Snapshot | undefined {
     let found: Snapshot | undefined;

@@ -94,6 +94,20 @@ describe('a circuit that is not whole', () => {
     expect(Object.values(result.notComputed).length).toBeGreaterThan(0);
     expect(result.states.find((one) => one.id === 'REST')!.variants.length).toBeGreaterThan(0);
   });
+  it('does not decide what rests on the unknown part, and decides the rest', () => {
+    const circuit = circuitOf(
+      broken.replace(
+        /directional( +)V1 \([^)]*\(?[^)]*\)?[^)]*\)/,
+        'directional$1V1 (4/3, centre closed, spring to centre, coil a SOL1, coil b SOL2)',
+      ),
+      true,
+    );
+    expect(Object.keys(circuit.unknown)).toEqual(['V1']);
+    const result = study(circuit);
+    const byWords = result.requirements.map((one) => `${one.verdict} ${one.words}`);
+    expect(byWords.filter((one) => one.startsWith('met') && /C1/.test(one))).toEqual([]);
+    expect(byWords.filter((one) => /cannot be decided: .*V1/.test(one)).length).toBeGreaterThan(0);
+  });
   it('an empty one gives an empty study', () => {
     const result = study(circuitOf('circuit Empty\n', true));
     expect(result.steps).toEqual([]);
