@@ -26,7 +26,10 @@ export function unitsOfActuator(component: Component): ActuatorUnits {
   return { force: 'torque', speed: 'rotation', position: 'angle', words: ['backward', 'stands', 'forward'], ports: ['A', 'B'] };
 }
 
-/** Points of a place by wanted direction; those that only stand are kept where they press. */
+/** The wanted direction; without one the direction it moves in, creeping not counted: leakage is no motion. */
+const wayOf = (at: ActuatorPoint): number => at.direction || (Math.abs(at.velocity) > STILL.velocity ? Math.sign(at.velocity) : 0);
+
+/** Points of a place by direction; those that only stand are kept where they press. */
 export function rowsOf(places: readonly Place[], id: string): Row[] {
   const rows: Row[] = [];
   for (const place of places) {
@@ -37,7 +40,7 @@ export function rowsOf(places: readonly Place[], id: string): Row[] {
     const of = (direction: -1 | 0 | 1): Row => ({
       place,
       direction,
-      points: points.filter((one) => (one.at.direction || Math.sign(one.at.velocity)) === direction),
+      points: points.filter((one) => wayOf(one.at) === direction),
     });
     const moving = [of(1), of(-1)].filter((row) => row.points.length > 0);
     const standing = of(0);
