@@ -15,6 +15,10 @@ export function clientOptions(output: vscode.LogOutputChannel, more: Record<stri
     outputChannel: output,
     synchronize: { fileEvents: vscode.workspace.createFileSystemWatcher('**/*.oilway') },
     // Asked for anew at each start. Plain data: what the editor hands out has functions in it, which no worker takes.
-    initializationOptions: () => ({ settings: JSON.parse(JSON.stringify(vscode.workspace.getConfiguration(LANGUAGE))), ...more }),
+    initializationOptions: () => ({
+      settings: JSON.parse(JSON.stringify(vscode.workspace.getConfiguration(LANGUAGE))),
+      suggestCommand: 'editor.action.triggerSuggest',
+      ...more,
+    }),
   };
 }
