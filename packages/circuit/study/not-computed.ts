@@ -1,5 +1,6 @@
 /** What depends on something unknown: nets reached from a component that was taken out without passing a closed valve. */
 import type { Solution } from '../assembly/machine.ts';
+import type { Component } from '../model/circuit.ts';
 import { openPairs, pathsIn } from './passage.ts';
 import type { Plant } from './scene.ts';
 import type { Point } from './study.ts';
@@ -28,9 +29,8 @@ export function spread(plant: Plant, point: Point): Point {
         reasons[component] = why;
         continue;
       }
-      for (const pair of openPairs(plant.at, part, picture)) {
-        if (!pair.includes(port)) continue;
-        const other = plant.at.netOf(component, pair[0] === port ? pair[1] : pair[0]);
+      for (const onward of waysOn(plant, part, port, picture)) {
+        const other = plant.at.netOf(component, onward);
         if (other === undefined || reasons[other] !== undefined) continue;
         reasons[other] = why;
         queue.push(other);
@@ -38,6 +38,30 @@ export function spread(plant: Plant, point: Point): Point {
     }
   }
   return { ...point, notComputed: reasons };
+}
+
+/** Ports whose pressure decides how the whole component stands. */
+const DECIDES = ['X', 'Y', 'LS'];
+/** Ways that oil of an unknown source may open, whatever stands there now. */
+const OPENS: Readonly<Record<string, readonly [string, string]>> = {
+  check: ['in', 'out'],
+  pilotcheck: ['V', 'C'],
+  counterbalance: ['V', 'C'],
+  burst: ['V', 'C'],
+};
+
+/** Ports of a component to which something unknown at one of its ports goes on. */
+function waysOn(plant: Plant, part: Component, port: string, picture: Solution): readonly string[] {
+  const others = plant.at
+    .portsOf(part.id)
+    .map((one) => one.port)
+    .filter((one) => one !== port);
+  if (DECIDES.includes(port)) return others;
+  const open = openPairs(plant.at, part, picture)
+    .filter((pair) => pair.includes(port))
+    .map((pair) => (pair[0] === port ? pair[1] : pair[0]));
+  const way = OPENS[part.kind];
+  return way !== undefined && way[0] === port ? [...open, way[1]] : open;
 }
 
 function standsOf(plant: Plant, point: Point): Solution['stands'] {
