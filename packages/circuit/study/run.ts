@@ -119,7 +119,10 @@ export class Runner {
       const after = this.#run.now();
       if (trace.end < this.#run.time - began - 1e-9)
         trace.sample(this.#run.time - began, after, ids, this.#run.time <= this.#shiftingUntil + 1e-9);
-      for (const one of report.happened) trace.event(one.time - began, one.of, one.words);
+      for (const one of report.happened) {
+        trace.event(one.time - began, one.of, one.words);
+        if (one.words.endsWith(' chatters')) this.switches.chattering.add(one.of);
+      }
       fired = report.fired.flatMap((index) => armed[index] ?? []);
       events += 1 + report.happened.length;
       if (report.failed !== undefined) {
