@@ -20,11 +20,38 @@ const LEAST_STORAGE = 1e-9;
 /** Default rating above which oil has no outlet, MPa. */
 const CEILING = 60;
 
+/** Properties that no law reads: an error in one of them costs its component nothing. */
+const FACTS: ReadonlySet<string> = new Set([
+  ...['code', 'attitude', 'certified', 'fineness', 'collapse', 'inlet', 'casing', 'mounted', 'connection', 'cleanliness', 'cold', 'hot'],
+  ...[
+    'starts',
+    'peak',
+    'power',
+    'engine',
+    'breather',
+    'usable',
+    'surface',
+    'ambient',
+    'coolant',
+    'range',
+    'test',
+    'on',
+    'at',
+    'from',
+    'rises',
+  ],
+  ...['falls', 'outside', 'broken', 'locked', 'seals', 'bladder', 'piston', 'diaphragm', 'gas'],
+]);
+
 /** Repeats without the components that turn out not to be computable, until none is left. */
 export function assembleNetwork(circuit: Circuit, temperature?: number, leakage = true): Assembled {
   const out = new Map<string, string>(Object.entries(circuit.unknown));
   for (const c of circuit.components) {
     if (KINDS[c.kind].assemble === undefined && !out.has(c.id)) out.set(c.id, `${c.id}: a ${KINDS[c.kind].noun} is not computed yet`);
+  }
+  for (const c of circuit.components) {
+    const bad = c.properties.find((p) => p.value.type === 'unknown' && !FACTS.has(p.name));
+    if (bad?.value.type === 'unknown' && !out.has(c.id)) out.set(c.id, `${c.id}: ${bad.value.why}`);
   }
   for (;;) {
     const refused = new Map<string, string>();
@@ -136,6 +163,9 @@ function build(
     inner: (component, name, volume = 1e-6) => inner(`${component.id} ${name}`, volume),
     parameter: (_component, _name, value) => parameter(value),
     add(component, law, ports, words = '') {
+      const bad = Object.entries(law).find(([, v]) => typeof v === 'number' && !Number.isFinite(v));
+      if (bad !== undefined)
+        refused.set(component.id, `${component.id}${words === '' ? '' : ` ${words}`}: a figure is zero that must not be`);
       const h = toMPa(head(component));
       // All terminals of a component lie at its elevation; the engine reads as many heads as the law has terminals.
       const withHead = h === 0 ? {} : { heads: [h, h, h, h, h, h] };
@@ -189,6 +219,7 @@ function build(
       if (body !== undefined) drafts[body]?.knots.push({ at, words });
     },
     gas(component, node, volume, precharge) {
+      if (!(volume > 0) || !(precharge > 0)) refused.set(component.id, `${component.id}: volume and precharge must be more than zero`);
       gases.push({ component: component.id, node, volume, precharge });
     },
     brake(component, b) {
@@ -240,6 +271,11 @@ function build(
     notComputed[id] = why;
     for (const net of circuit.nets)
       if (net.ports.some((p) => p.component === id) && notComputed[net.id] === undefined) notComputed[net.id] = why;
+  }
+
+  for (const piece of circuit.pieces) {
+    if (piece.nets[0] === piece.nets[1] || ((piece.bore ?? 0) > 0 && (piece.length ?? 0) > 0)) continue;
+    for (const net of piece.nets) notComputed[net] ??= 'a line with a bore or length of zero';
   }
 
   const bodies: BodyNote[] = drafts.map((d) => bodyNote(d.group, d.seal, d.springs, d.knots));

@@ -1,5 +1,5 @@
 /** What a kind sees when it adds its law to the network: named ports in, elements out. SI at this edge; engine units behind it. */
-import type { ActuatorSpec, CamPathSpec, CheckSpec, ElementSpec, ForceTable, NodeIndex, Param } from '@oilway/engine';
+import type { ActuatorSpec, ElementSpec, ForceTable, NodeIndex, Param } from '@oilway/engine';
 import type { Oil } from '../fluid/oil.ts';
 import type { Circuit, Component } from '../model/circuit.ts';
 import type { Assumption } from '../study/study.ts';
@@ -135,4 +135,3 @@ export interface Assembly {
   /** Theoretical flow of all pumps together, m3/s. */
   readonly pumpFlow: number;
 }
-export type { CamPathSpec, CheckSpec };

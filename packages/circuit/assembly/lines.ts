@@ -21,7 +21,7 @@ export function addLines(
 ): void {
   for (const piece of circuit.pieces) {
     const [one, other] = piece.nets;
-    if (one === other || piece.bore === undefined || piece.length === undefined) continue;
+    if (one === other || !(piece.bore !== undefined && piece.bore > 0) || !(piece.length !== undefined && piece.length > 0)) continue;
     const a = nodeOf.get(one);
     const b = nodeOf.get(other);
     if (a === undefined || b === undefined || a === b) continue;

@@ -40,7 +40,7 @@ export function oilOf(circuit: Circuit, temperature?: number): { readonly oil: O
   const assumptions: Assumption[] = [];
   const read = (name: string, otherwise: number, shown: string, source: Assumption['source'] = 'default'): number => {
     const v = fluid === undefined ? undefined : si(fluid, name);
-    if (v !== undefined && Number.isFinite(v)) return v;
+    if (v !== undefined && Number.isFinite(v) && (v > 0 || (v === 0 && (name === 'air' || name === 'index')))) return v;
     assumptions.push({ component: fluid?.id ?? 'fluid', property: name, value: shown, source, note: 'common practice, no source' });
     return otherwise;
   };

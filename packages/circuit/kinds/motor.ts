@@ -75,7 +75,7 @@ export const motor: Kind = {
   /** Turns by the oil into A; leakage and friction by its efficiencies; everything at the output of its gear. */
   assemble(component, into) {
     const displacement = si(component, 'displacement');
-    if (displacement === undefined) return into.cannot(component, `${component.id} has no \`displacement\``);
+    if (displacement === undefined || !(displacement > 0)) return into.cannot(component, `${component.id} has no \`displacement\``);
     const volumetric = siOr(component, into, 'volumetric', 0.94, '94 % at rated pressure');
     const mechanical = siOr(component, into, 'mechanical', 0.9, '90 %');
     const rated = ratedAt(component, 'A') ?? DEFAULT_RATED;

@@ -37,7 +37,7 @@ export const rotary: Kind = {
   /** Torque = pressure difference x volume an angle, less a tenth for friction; stops at 0 and `angle`. */
   assemble(component, into) {
     const displacement = si(component, 'displacement');
-    if (displacement === undefined) return into.cannot(component, `${component.id} has no \`displacement\``);
+    if (displacement === undefined || !(displacement > 0)) return into.cannot(component, `${component.id} has no \`displacement\``);
     const angle = si(component, 'angle');
     if (angle === undefined) return into.cannot(component, `${component.id} has no \`angle\``);
     const area = toArea(displacement);

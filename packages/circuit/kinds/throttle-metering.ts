@@ -61,6 +61,7 @@ export function addMetering(component: Component, into: Assembly, a: End, b: End
       note: 'drop at which the setting holds: common practice, no source',
     });
   }
+  if (!(needs > 0)) return `${id} \`needs\` a drop of more than zero`;
   const t = into.node(component, 'T');
   if (!has(component, 'compensated') && t === undefined) {
     const at = scaled({ flow: set, drop: needs }, into);

@@ -1,8 +1,10 @@
 /** What cannot be computed is taken out with its nets marked; the rest is computed. */
 import { assemble } from '@oilway/circuit';
 import { parseText, resolve } from '@oilway/language';
+import fc from 'fast-check';
 import { expect, test } from 'vitest';
 import { delivers, HEAD, toBar } from '../support/bench.ts';
+import { HEAD_AND_FEED } from '../support/machines.ts';
 import { blank } from '../support/text.ts';
 
 const machine = (text: string) => assemble(resolve(parseText('test.oilway', text)).circuit);
@@ -56,4 +58,30 @@ test('an empty file assembles to nothing', () => {
   const m = machine('');
   expect(m.bodies).toEqual([]);
   expect(m.settle(blank).solved).toBe(true);
+});
+
+test('a figure of zero where there must be one takes the component out, never the file', () => {
+  const m = machine(`${HEAD}${delivers('P1', 20, 'RV1, BV1.A')}
+relief RV1 (set 80 bar, passes 40 L/min at 2 bar)
+shutoff BV1 (open, passes 40 L/min at 0 bar)
+cylinder C1 (bore 0 mm, stroke 100 mm)
+working BV1.B to C1.cap
+return RV1 to R1`);
+  expect(m.notComputed.BV1).toBeDefined();
+  expect(m.notComputed.C1).toBeDefined();
+  const s = m.settle(blank);
+  expect(s.solved).toBe(true);
+  expect(toBar(s.pressures['P1.P'])).toBeGreaterThan(80);
+});
+
+test('broken text of any kind assembles and solves without an exception', () => {
+  const whole = HEAD_AND_FEED;
+  fc.assert(
+    fc.property(fc.nat({ max: whole.length }), fc.nat({ max: 60 }), fc.constantFrom('', '0', 'x', ' bar', '('), (from, length, instead) => {
+      const m = machine(whole.slice(0, from) + instead + whole.slice(from + length));
+      const s = m.settle(blank);
+      for (const p of Object.values(s.pressures)) expect(Number.isFinite(p)).toBe(true);
+    }),
+    { numRuns: 60 },
+  );
 });
