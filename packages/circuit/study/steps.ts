@@ -85,7 +85,8 @@ function alone(plant: Plant, step: Step): readonly Point[] {
 /** With no cycle in the file: the same table for each coil alone; coils that only make the pump work are added and named. */
 export function coilTables(plant: Plant, circuit: Circuit): readonly StepResult[] {
   if (circuit.cycles.length > 0) return [];
-  return circuit.coils.map((coil) => {
+  return circuit.coils.flatMap((coil) => {
+    if (plant.cancelled()) return [];
     const command = { coil: coil.id, origin: coil.origin };
     const demand = demandOf([{ does: 'energise', commands: [command], origin: coil.origin }], coil.id);
     const dead = { contact: () => undefined, live: () => false, running: () => false };
