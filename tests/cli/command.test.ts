@@ -219,9 +219,10 @@ describe('run', () => {
 
 describe('a computation that takes too long', () => {
   it('is cut off, said, and never reads as clean', () => {
-    const { status, err } = oilway(['check', '--limit', '0.000001', join(ROOT, 'samples', '01-table.oilway')]);
+    const { status, out, err } = oilway(['check', '--limit', '0.000001', join(ROOT, 'samples', '01-table.oilway')]);
     expect(status).toBe(2);
     expect(err).toMatch(/^oilway: SandingTable is not computed within 0\.000001 s: figures and findings are missing/);
+    expect(out).toContain('1 circuit, not fully computed: ');
   });
 });
 

@@ -129,7 +129,9 @@ function loaders(plant: Plant, coil: string): readonly string[] {
   };
   if (outlet([coil]) >= limit) return [];
   const own = plant.at.coil(coil)?.component;
-  const found = plant.circuit.coils.filter((one) => !plant.cancelled() && one.component !== own && outlet([one.id]) >= limit && outlet([coil, one.id]) >= limit);
+  const found = plant.circuit.coils.filter(
+    (one) => !plant.cancelled() && one.component !== own && outlet([one.id]) >= limit && outlet([coil, one.id]) >= limit,
+  );
   // One coil a valve: two of one valve would be two voices.
   return found.filter((one, index) => found.findIndex((other) => other.component === one.component) === index).map((one) => one.id);
 }

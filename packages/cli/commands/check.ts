@@ -46,7 +46,7 @@ function inOrder(findings: readonly Finding[]): readonly Finding[] {
   );
 }
 
-function summary(totals: Totals): string {
+function summary(totals: Totals, complete: boolean): string {
   const parts = [
     totals.errors > 0 ? plural(totals.errors, 'error') : '',
     totals.warnings > 0 ? plural(totals.warnings, 'warning') : '',
@@ -54,7 +54,7 @@ function summary(totals: Totals): string {
   ].filter((part) => part !== '');
   const found = parts.length === 0 ? 'nothing found' : parts.join(', ');
   const accepted = totals.accepted === 0 ? '' : `; ${totals.accepted} accepted by allow`;
-  return `${plural(totals.files, 'circuit')}: ${found}${accepted}`;
+  return `${plural(totals.files, 'circuit')}${complete ? '' : ', not fully computed'}: ${found}${accepted}`;
 }
 
 function textOf(session: Session, options: CheckOptions, paint: Paint): string[] {
@@ -67,7 +67,7 @@ function textOf(session: Session, options: CheckOptions, paint: Paint): string[]
       lines.push('');
     }
   }
-  return [...lines, summary(totalsOf(session.opened))];
+  return [...lines, summary(totalsOf(session.opened), session.failures.length === 0)];
 }
 
 function dataOf(session: Session, gathered: Gathered): Record<string, unknown> {
