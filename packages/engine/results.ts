@@ -101,7 +101,7 @@ export interface TransientOptions {
   /** Relative error of positions and oil volumes in a step; default 1e-4. */
   readonly tolerance?: number;
   readonly maxStep?: number;
-  /** Most steps in one `advance`; default 200,000. */
+  /** Most steps in one `advance`; default 20,000. */
   readonly maxSteps?: number;
   readonly floor?: number;
 }

@@ -66,6 +66,7 @@ export class Stepper {
   private readonly inertia: Float64Array;
   newtons = 0;
   private patient = false;
+  private limits = true;
   /** Weighted error of the last trial; <= 1 is accepted. */
   error = 0;
 
@@ -165,7 +166,13 @@ export class Stepper {
     sys.blend = SOFT_BLEND;
     const near = this.stage(time, gh);
     sys.blend = 1;
-    return near && this.stage(time, gh);
+    if (near && this.stage(time, gh)) return true;
+    // A body that slips with its friction nearly full is found by plain Newton steps.
+    sys.y.set(start);
+    this.limits = false;
+    const plain = this.stage(time, gh);
+    this.limits = true;
+    return plain;
   }
 
   /** Newton on one stage: base + gamma h (right side) = stored; bodies at xb + gamma h v. */
@@ -182,7 +189,7 @@ export class Stepper {
       if (!Number.isFinite(norm) || !lu.factor(sys.j)) return false;
       lu.solve(sys.r, d);
       for (let i = 0; i < n; i++) d[i] = -d[i]!;
-      const limited = sys.limitSpeeds(y, d);
+      const limited = this.limits && sys.limitSpeeds(y, d);
       let change = 0;
       for (let i = 0; i < n; i++) {
         let size = Math.abs(d[i]!) / (1 + Math.abs(y[i]!));

@@ -23,6 +23,7 @@ import { ATMOSPHERE, FLOOR_TIME } from './tolerances.ts';
 
 /** First step after a jump, s: below the rise time of a small pressurised volume. */
 const FIRST_STEP = 2e-4;
+const PATIENCE = 3;
 /** Least step: below it nothing in a machine changes. */
 const LEAST_STEP = 1e-12;
 const GROWTH = 5;
@@ -33,7 +34,9 @@ const LEAVES = 1e-9;
 /** A knot crossed this often, each time within a millisecond of the last, holds the body when the forces on both sides press towards it. */
 const CROSSINGS = 4;
 const NO_TIME = 1e-3;
-const MAX_STEPS = 200_000;
+/** Most steps and Newton iterations in one `advance`: a hundred times what a machine cycle takes, a second or two. */
+const MAX_STEPS = 20_000;
+const MAX_ITERATIONS = 400_000;
 
 /** Pressures: loosely where inertia is off; as multiples of the relative tolerance where it is on. */
 const QUASI_STATIC = { pressure: 0.1, pressureRelative: 0.05 };
@@ -57,6 +60,8 @@ export class Transient {
   private readonly maxSteps: number;
   private h = FIRST_STEP;
   private stale = true;
+  /** Steps that did not converge lately; many make the stepper patient. */
+  private trouble = 0;
   private before: Float64Array = new Float64Array(0);
   private readonly counts = { steps: 0, rejected: 0, events: 0 };
   private readonly crossed: { knot: number; time: number; count: number }[];
@@ -229,17 +234,20 @@ export class Transient {
       ...(failed ? { failed } : {}),
     });
     let failures = 0;
+    const begun = stepper.newtons;
     this.stale = true;
     for (let count = 0; this.time < until - LEAST_STEP; count++) {
       if (count >= this.maxSteps) return report([], `more than ${this.maxSteps} steps: it changes without end`);
+      if (stepper.newtons - begun > MAX_ITERATIONS) return report([], `more than ${MAX_ITERATIONS} iterations: it changes without end`);
       if (this.stale) this.prepare(happened);
       const edge = Math.min(until, this.ramps.next(this.time));
       let h = Math.min(this.h, this.maxStep);
       const left = edge - this.time;
       if (h > left * 0.999) h = left;
       else if (2 * h > left) h = 0.5 * left;
-      if (!this.trial(h, failures > 2)) {
+      if (!this.trial(h, this.trouble > PATIENCE)) {
         this.counts.rejected++;
+        this.trouble++;
         this.h = 0.25 * h;
         stepper.smooth = false;
         if (++failures > 60 || this.h < LEAST_STEP) return report([], 'no solution in time: the equations do not converge');
@@ -264,6 +272,7 @@ export class Transient {
         fired = this.fired();
       }
       failures = 0;
+      this.trouble = Math.max(0, this.trouble - 0.3);
       const grown = taken * Math.min(GROWTH, Math.max(SHRINK, SAFETY * Math.max(stepper.error, 1e-6) ** (-1 / 3)));
       this.commit(taken, edge);
       if (taken === h || grown > this.h) this.h = grown;
