@@ -3,10 +3,11 @@ import { oilGroups, surfaceOf, WALL } from './heat.ts';
 import { range, si } from './read.ts';
 import type { Plant } from './scene.ts';
 import type { Assumption, Study } from './study.ts';
+import { REAL_ABOVE, storedBetween } from './working/gas.ts';
 import { say } from './words.ts';
 
-export function noticed(plant: Plant, heat: Study['heat']): readonly Assumption[] {
-  const found: Assumption[] = [...plant.assumptions];
+export function noticed(plant: Plant, heat: Study['heat'], cycles: Study['cycles']): readonly Assumption[] {
+  const found: Assumption[] = [...plant.assumptions, ...idealGas(plant, cycles)];
   const { circuit } = plant;
   if (Object.keys(heat).length > 0) {
     for (const group of oilGroups(plant)) {
@@ -51,4 +52,27 @@ export function noticed(plant: Plant, heat: Study['heat']): readonly Assumption[
     }
   }
   return found;
+}
+
+/** Runs take the gas as ideal; where a run goes above 150 bar the real figure is said beside it. */
+function idealGas(plant: Plant, cycles: Study['cycles']): readonly Assumption[] {
+  return plant.at.accumulators.flatMap((accumulator): readonly Assumption[] => {
+    const net = plant.at.netOf(accumulator.id, 'P');
+    const pressures = net === undefined ? [] : cycles.flatMap((one) => one.run?.pressures[net] ?? []);
+    if (pressures.length === 0) return [];
+    const [low, high] = [Math.min(...pressures), Math.max(...pressures)];
+    const stored = high > REAL_ABOVE ? storedBetween(accumulator, low, high, plant.temperature) : undefined;
+    if (!stored) return [];
+    const { circuit } = plant;
+    const between = `between ${say(circuit, low, 'pressure')} and ${say(circuit, high, 'pressure')}`;
+    return [
+      {
+        component: accumulator.id,
+        property: 'gas law',
+        value: `ideal: ${say(circuit, stored.ideal.value, 'volume')} ${between}; real nitrogen: ${say(circuit, stored.real.value, 'volume')}`,
+        source: 'derived',
+        note: 'the run takes the gas as ideal; filled slowly, real nitrogen after Span et al. (2000) gives the second figure',
+      },
+    ];
+  });
 }

@@ -49,7 +49,7 @@ export function study(circuit: Circuit, options: StudyOptions = {}): Study {
     steps,
     cycles,
     requirements,
-    assumptions: [...machine.assumptions, ...noticed(plant, heat)],
+    assumptions: [...machine.assumptions, ...noticed(plant, heat, cycles)],
     heat,
     spent: clock() - began,
     notComputed: machine.notComputed,

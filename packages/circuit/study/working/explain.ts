@@ -1,8 +1,10 @@
 /** Workings on demand: every figure of a component at a point, of a cycle, of the oil, each with formula, inputs, sources. Solves nothing. */
+import { oilOf } from '../../fluid/oil.ts';
 import type { Circuit, Component } from '../../model/circuit.ts';
 import { si } from '../read.ts';
 import type { CycleResult, Figure, Point, StepResult, Study } from '../study.ts';
 import { cylinderForce, cylinderSpeed, margin, motorSpeed, motorTorque, outputPower } from './actuators.ts';
+import { storedBetween } from './gas.ts';
 import type { Reader } from './inputs.ts';
 import { driveOf, pumpFlow, shaftPower } from './pumps.ts';
 import { drop, lossPower, metered, orificeFlow, reliefPressure } from './valves.ts';
@@ -19,6 +21,8 @@ export type ExplainRequest =
   | { readonly of: 'loading'; readonly drive: string; readonly cycle: string }
   /** Steady oil temperature by the key of `Study.heat`. */
   | { readonly of: 'temperature'; readonly place: string }
+  /** Oil of an accumulator between the lowest and highest pressure of a cycle: ideal gas and real nitrogen. */
+  | { readonly of: 'accumulator'; readonly id: string; readonly cycle: string }
   /** Mean speed and time of a step. */
   | { readonly of: 'step'; readonly id: string };
 
@@ -36,6 +40,20 @@ export function explain(circuit: Circuit, study: Study, request: ExplainRequest)
     case 'temperature': {
       const found = study.heat[request.place];
       return found ? [{ name: 'oil temperature', ...found.temperature }] : [];
+    }
+    case 'accumulator': {
+      const accumulator = circuit.components.find((one) => one.id === request.id);
+      const run = study.cycles.find((one) => one.id === request.cycle)?.run;
+      const net = circuit.nets.find((one) => one.ports.some((port) => port.component === request.id && port.port === 'P'));
+      const pressures = net ? run?.pressures[net.id] : undefined;
+      if (!accumulator || !pressures || pressures.length === 0) return [];
+      const found = storedBetween(accumulator, Math.min(...pressures), Math.max(...pressures), oilOf(circuit).oil.temperature);
+      return found
+        ? [
+            { name: 'oil, ideal gas', ...found.ideal },
+            { name: 'oil, real nitrogen', ...found.real },
+          ]
+        : [];
     }
     case 'step': {
       const step = study.steps.find((one) => one.id === request.id);
