@@ -104,6 +104,10 @@ describe('who is let in', () => {
     expect(await from(`http://abc.rig.localhost.example.org:${rig.port}`)).toBe('');
   });
 
+  it('refuses an address that is none', async () => {
+    expect((await ask('/build/%')).status).toBe(400);
+  });
+
   it.each(['/build/../secret.txt', '/build/%2e%2e/secret.txt', '/ext/..%2f..%2fsecret.txt', '/build/..'])(
     'refuses to leave its folders: %s',
     async (path) => {

@@ -17,6 +17,8 @@ export interface Session {
   readonly page: Window['page'];
   /** The text as it stands on the disk. */
   saved(): string;
+  /** Changes the file behind the editor's back. */
+  write(text: string): void;
   /** 1-based line and column of the first place where `text` stands in the saved text. */
   find(text: string): { readonly line: number; readonly column: number };
   /** A picture for the eye, `tests/output/editor/NAME.png`. */
@@ -66,7 +68,7 @@ export async function inEditor(
         const before = saved().slice(0, at).split('\n');
         return { line: before.length, column: (before.at(-1) ?? '').length + 1 };
       };
-      await test({ editor, page, saved, find, show: shot });
+      await test({ editor, page, saved, write: (content) => writeFileSync(file, content), find, show: shot });
     } catch (error) {
       await shot(`failed ${context.task.name}`.replace(/[^\w -]+/g, ' ')).catch(() => {});
       throw error;

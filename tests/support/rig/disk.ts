@@ -45,6 +45,8 @@ export class Disk {
       const path = `${FOLDER}/${name.split(sep).join('/')}`;
       for (const listener of this.listeners) listener.write(`data: ${JSON.stringify(path)}\n\n`);
     });
+    // A folder that can no longer be watched costs the news of outside changes; reading and writing go on.
+    this.watcher.on('error', () => this.watcher.close());
   }
 
   /** The file a workspace path names; never one outside the workspace. */

@@ -50,6 +50,14 @@ const refuse = (response: ServerResponse, status: number, why: string): void => 
   response.writeHead(status, { 'content-type': 'text/plain; charset=utf-8' }).end(why);
 };
 
+function decoded(path: string): string | undefined {
+  try {
+    return decodeURIComponent(path);
+  } catch {
+    return undefined;
+  }
+}
+
 /** A file below `base`, or a refusal: 403 outside of it, 404 if there is none. */
 async function sendFile(response: ServerResponse, base: string, path: string, fresh: boolean, asker: string | undefined): Promise<void> {
   const file = resolve(join(base, path));
@@ -81,7 +89,8 @@ export async function startRig(options: RigOptions): Promise<Rig> {
     const from = hostOf(request, port);
     if (from === 'foreign') return refuse(response, 421, 'not a name of this server');
     // The raw path, not the one URL has already tidied: `/build/../..` is to be refused, not to be answered as something else.
-    const raw = decodeURIComponent((request.url ?? '/').split(/[?#]/)[0] ?? '/');
+    const raw = decoded((request.url ?? '/').split(/[?#]/)[0] ?? '/');
+    if (raw === undefined) return refuse(response, 400, 'not an address');
     if (raw.split('/').includes('..')) return refuse(response, 403, 'outside');
     const url = new URL(request.url ?? '/', `http://${LABEL}:${port}`);
     if (from === 'loopback') return raw === '/health' ? refuse(response, 200, 'ok') : refuse(response, 421, 'open the address by its name');
