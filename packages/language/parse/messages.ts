@@ -34,8 +34,9 @@ export class MessageProvider implements IParserErrorMessageProvider {
       return `\`${actual.image}\` is a word of the notation and cannot be a name`;
     }
     if (expected.name === 'EOF') return `${seen(actual)} does not fit here`;
-    if (expected.name === 'EOL')
-      return `${seen(actual)} does not fit here: after ${this.after(previous)} the line should end, or a \`,\` or \`to\` is missing`;
+    if (expected.name === 'EOL') {
+      return `${seen(actual)} does not fit here: the line could end after ${this.after(previous)}; if it goes on, a sign or word between them is missing (\`(\`, \`,\`, \`to\`)`;
+    }
     if (ENDS.has(actual.tokenType.name)) return `The line ends too soon: ${thing(expected.name)} is missing after ${this.after(previous)}`;
     return `${thing(expected.name)} is missing before ${seen(actual)}`.replace(/^a /, 'A ');
   }
