@@ -18,7 +18,7 @@ function lineEnd(text: string, offset: number): number {
   return text[found - 1] === '\r' ? found - 1 : found;
 }
 
-export function newline(text: string): string {
+function newline(text: string): string {
   return text.includes('\r\n') ? '\r\n' : '\n';
 }
 

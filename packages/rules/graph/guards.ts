@@ -22,7 +22,7 @@ export interface Discharge {
 }
 
 /** Whether what a relief lets out reaches a reservoir by ways that nothing can close (a cooler only with a check beside it). */
-export function dischargeOf(graph: Graph, relief: Component): Discharge {
+function dischargeOf(graph: Graph, relief: Component): Discharge {
   const net = graph.netAt(relief.id, 'T');
   if (net === undefined || (net.open === true && net.plugged === undefined))
     return { ok: false, cause: 'open', why: `${relief.id}.T is open` };

@@ -13,7 +13,7 @@ export interface Rating {
 }
 
 /** `rated T 160 bar` of a port, else the general `rated` of the component. */
-export function portRating(component: Component, port: string): Rating | undefined {
+function portRating(component: Component, port: string): Rating | undefined {
   const rated = (p: Property) => p.name === 'rated' && p.value.type === 'quantity';
   const own = component.properties.find((p) => rated(p) && p.port === port);
   const general = own ?? component.properties.find((p) => rated(p) && p.port === undefined);
