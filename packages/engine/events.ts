@@ -15,6 +15,8 @@ export class Events {
   private flows: Float64Array;
   /** Fixed force that comes in on the upper side of the knot a body is pinned at, kN. */
   readonly jump: Float64Array;
+  /** Area that comes in there, by chamber, 1e-3 m2 (stages of a telescopic cylinder). */
+  readonly areaJump: Float64Array;
 
   constructor(sys: System, stepper: Stepper, contacts: ActuatorContact[]) {
     this.sys = sys;
@@ -22,6 +24,7 @@ export class Events {
     this.contacts = contacts;
     this.flows = new Float64Array(sys.net.flowRows.length);
     this.jump = new Float64Array(contacts.length);
+    this.areaJump = new Float64Array(sys.net.chamberNodes.length);
   }
 
   get count(): number {
@@ -45,13 +48,23 @@ export class Events {
           : contact === 'high'
             ? -net
             : contact === 'pinned'
-              ? Math.max(net + this.jump[a]! / sys.net.forceScale[a]!, -net)
+              ? Math.max(net + this.jumpOf(a) / sys.net.forceScale[a]!, -net)
               : -1;
     }
     const first = 3 * contacts.length;
     this.watches.forEach((watch, w) => {
       into[first + w] = (watch.edge === 'rising' ? 1 : -1) * (this.valueOf(watch, x) - watch.threshold);
     });
+  }
+
+  /** Force that comes in on the upper side of the knot a body is pinned at, at the present pressures, kN. */
+  jumpOf(a: number): number {
+    const { net, p } = this.sys;
+    let force = this.jump[a]!;
+    for (let c = net.chamberStart[a]!; c < net.chamberStart[a + 1]!; c++) {
+      if (this.areaJump[c] !== 0) force += this.areaJump[c]! * (p[net.chamberNodes[c]!]! - net.chamberHeads[c]!);
+    }
+    return force;
   }
 
   valueOf(watch: TransientWatch, x: Float64Array): number {

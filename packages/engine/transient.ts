@@ -4,7 +4,7 @@ import type { Network } from './compile.ts';
 import { diagnose } from './diagnosis.ts';
 import { Events } from './events.ts';
 import { chargeOf, GAS_EXPONENT } from './gas.ts';
-import type { LoadState } from './network.ts';
+import type { GasCurve, LoadState } from './network.ts';
 import { Ramps } from './ramps.ts';
 import { resultOf } from './report.ts';
 import { System } from './residual.ts';
@@ -80,8 +80,8 @@ export class Transient {
     const charges = network.spec.gas.map((spec, g): Charge => {
       const charge = chargeOf(spec, request.gas?.[g], exponent);
       return charge
-        ? { spec, pressure: charge.pressure, volume: spec.volume - charge.oil, exponent }
-        : { spec, pressure: spec.precharge, volume: spec.volume, exponent };
+        ? { spec, pressure: charge.pressure, volume: spec.volume - charge.oil, exponent, curve: spec.curve }
+        : { spec, pressure: spec.precharge, volume: spec.volume, exponent, curve: spec.curve };
     });
     this.storage = new Storage(network, charges);
     const relative = options.tolerance ?? 1e-4;
@@ -158,13 +158,21 @@ export class Transient {
     this.refresh();
     for (const charge of this.storage.charges) {
       const oil = chargeOil(charge, this.sys.p[charge.spec.node]!).value;
-      if (oil > 0 && !charge.spec.curve) {
+      if (oil > 0 && !charge.curve) {
         charge.pressure = this.sys.p[charge.spec.node]! - (charge.spec.head ?? 0) + ATMOSPHERE;
         charge.volume = charge.spec.volume - oil;
       }
       charge.exponent = exponent;
     }
     this.stepper.smooth = false;
+  }
+
+  /** From now on a charge follows this real-gas curve; its pressure stays, so the curve must pass through the present oil and pressure. */
+  setGasCurve(gas: number, curve: GasCurve | undefined): void {
+    const charge = this.storage.charges[gas];
+    if (!charge) return;
+    charge.curve = curve;
+    this.jumped();
   }
 
   /** Oil in each charge, L, with its absolute pressure, MPa. */
@@ -311,7 +319,7 @@ export class Transient {
   private leave(a: number, happened: Happening[]): void {
     const { sys, events } = this;
     if (this.contacts[a] === 'pinned') {
-      const outward = sys.net0[a]! + events.jump[a]! > -sys.net0[a]!;
+      const outward = sys.net0[a]! + events.jumpOf(a) > -sys.net0[a]!;
       if (outward) sys.enter(a, sys.cell[a]! + 1);
       this.crossed[a]!.count = 0;
     } else happened.push({ time: this.time, actuator: a, what: 'stop left' });
@@ -439,17 +447,25 @@ export class Transient {
     else crossed.count = 1;
     crossed.knot = knot;
     crossed.time = this.time;
-    if (Math.abs(jump) > 1e-9) {
+    // What comes in or goes out at the knot: a force, or the area of a stage under its present pressure.
+    let whole = jump;
+    const otherArea = area.some((size, c) => size !== sys.area[c]);
+    for (let c = network.chamberStart[a]!; c < network.chamberStart[a + 1]!; c++) {
+      const more = sys.area[c]! - area[c]!;
+      this.events.areaJump[c] = direction * more;
+      whole += more * (sys.p[network.chamberNodes[c]!]! - network.chamberHeads[c]!);
+    }
+    if (Math.abs(whole) > 1e-9) {
       // Forces on both sides may press towards the knot: then the body rests on it.
-      const below = direction > 0 ? sys.net0[a]! : sys.net0[a]! + jump;
-      const above = direction > 0 ? sys.net0[a]! + jump : sys.net0[a]!;
-      if (crossed.count >= CROSSINGS && below > 0 && above < 0) {
+      const below = direction > 0 ? sys.net0[a]! : sys.net0[a]! + whole;
+      const above = direction > 0 ? sys.net0[a]! + whole : sys.net0[a]!;
+      if ((crossed.count >= CROSSINGS || otherArea) && below > 0 && above < 0) {
         sys.enter(a, direction > 0 ? cell : cell - 1);
-        this.events.jump[a] = above - below;
+        this.events.jump[a] = direction * jump;
         this.hold(a, 'pinned', knot);
       }
     }
-    if (Math.abs(jump) > 1e-9 || area.some((size, c) => size !== sys.area[c])) this.jumped();
+    if (Math.abs(jump) > 1e-9 || otherArea) this.jumped();
   }
 
   private hold(a: number, contact: ActuatorContact, at: number): void {

@@ -1,8 +1,9 @@
 /** Runs in time: shifting, stops, watches, memory bits, accumulators. */
+import { assemble } from '@oilway/circuit';
 import { expect, test } from 'vitest';
 import { delivers, HEAD, toBar } from '../support/bench.ts';
 import { HEAD_AND_FEED } from '../support/machines.ts';
-import { blank, load, machineOf } from '../support/text.ts';
+import { blank, circuitOf, load, machineOf } from '../support/text.ts';
 
 const RAM = `${HEAD}${delivers('P1', 30, 'V1.P, RV1')}
 relief RV1 (set 100 bar, passes 40 L/min at 5 bar)
@@ -191,4 +192,65 @@ test('what happens along the way is told in words, when it happens', () => {
   expect(report.time - at('DV1 closed')).toBeGreaterThan(3.2);
   expect(report.time - at('DV1 closed')).toBeLessThan(3.5);
   expect(report.happened.map((h) => h.words)).toContain('UV1 has lifted');
+});
+
+test('a telescopic cylinder takes the volume of all its stages', () => {
+  const m = machineOf(`${HEAD}cylinder C1 (bore 100 mm, telescopic 80 mm and 60 mm, single cap, stroke 900 mm, attitude rod up)
+${delivers('P1', 20, 'C1.cap, RV1')}
+relief RV1 (set 150 bar, passes 30 L/min at 3 bar)
+return RV1 to R1`);
+  const setting = { ...blank, loads: { C1: load(-20000) } };
+  const run = m.start(setting, m.settle({ ...setting, drives: { M1: false } }));
+  run.drive('M1', true);
+  const report = run.advance(60, [{ what: 'position', body: 'C1', threshold: 0.899, edge: 'rising' }]);
+  const volume = ((100 ** 2 + 80 ** 2 + 60 ** 2) * (Math.PI / 4) * 300) / 1e6;
+  expect(report.fired).toEqual([0]);
+  // And what the oil takes as its pressure rises from stage to stage.
+  expect(report.time).toBeGreaterThan((volume / 20) * 60 - 0.05);
+  expect(report.time).toBeLessThan((volume / 20) * 60 + 0.3);
+  expect(report.happened.filter((h) => h.words === 'C1 next stage').length).toBe(2);
+});
+
+test('a cushion slows the rod before its stop', () => {
+  const m = machineOf(`${HEAD}${delivers('P1', 20, 'C1.cap, RV1')}
+relief RV1 (set 60 bar, passes 30 L/min at 3 bar)
+cylinder C1 (bore 50 mm, rod 28 mm, stroke 400 mm, cushion 25 mm)
+working C1.rod to R1
+return RV1 to R1`);
+  const start = { ...blank, positions: { C1: 0.3 } };
+  const run = m.start(start, m.settle(start));
+  run.advance(5, [{ what: 'position', body: 'C1', threshold: 0.37, edge: 'rising' }]);
+  const before = run.now().velocities.C1 ?? 0;
+  run.advance(5, [{ what: 'position', body: 'C1', threshold: 0.3995, edge: 'rising' }]);
+  const last = run.now().velocities.C1 ?? 0;
+  expect(before).toBeCloseTo(20 / 60 / 1.9635, 2);
+  expect(last).toBeLessThan(0.5 * before);
+  const end = run.advance(8, []);
+  expect(end.happened.map((h) => h.words)).toContain('C1 reaches its stop, extended');
+});
+
+test('a spring brings a single-acting cylinder back when its port is led to the reservoir', () => {
+  const m = machineOf(`${HEAD}${delivers('P1', 10, 'V1.P, RV1')}
+relief RV1 (set 60 bar, passes 30 L/min at 3 bar)
+directional V1 (3/2, normally closed, coil SOL1, passes 20 L/min at 4 bar)
+cylinder C1 (bore 40 mm, rod 18 mm, single cap, spring 900 N to 1500 N, stroke 100 mm)
+working V1.A to C1.cap
+return V1.T, RV1 to R1`);
+  const run = m.start(blank, m.settle(blank));
+  run.shift('V1', { position: 'a' });
+  run.advance(3, []);
+  expect(run.now().positions.C1).toBeCloseTo(0.1, 6);
+  run.shift('V1', { position: 'b' });
+  run.advance(10, []);
+  expect(run.now().positions.C1).toBeCloseTo(0, 6);
+});
+
+test('full dynamics and quasi-static run agree on a slow machine', () => {
+  const end = (dynamics: boolean): number => {
+    const m = assemble(circuitOf(RAM), { dynamics });
+    const run = m.start(blank, m.settle(blank));
+    run.shift('V1', { position: 'a' });
+    return run.advance(10, [{ what: 'position', body: 'C1', threshold: 0.25, edge: 'rising' }]).time;
+  };
+  expect(Math.abs(end(true) / end(false) - 1)).toBeLessThan(0.01);
 });
