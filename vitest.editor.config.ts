@@ -6,7 +6,7 @@ export default defineConfig({
     include: ['tests/editor/**/*.test.ts'],
     globalSetup: ['tests/editor/support/build.ts'],
     fileParallelism: false,
-    testTimeout: 120_000,
+    testTimeout: 180_000,
     hookTimeout: 120_000,
     // One retry, which the reporter names: a browser on a busy machine may lose a key; a fault of ours fails twice.
     retry: 1,

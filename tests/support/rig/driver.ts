@@ -6,6 +6,8 @@ import { chromiumPath } from './chromium.ts';
 
 /** A step of a test may take this long, ms. */
 export const STEP = 20_000;
+/** Opening the editor, some 30 MB of script, may take longer on a busy machine, ms. */
+export const OPENING = 60_000;
 
 const FLAGS = [
   '--no-sandbox',
@@ -54,8 +56,8 @@ export async function openWindow(address: string, options: WindowOptions = {}): 
     page.on('console', (message) => {
       if (message.type() === 'error') errors.push(message.text());
     });
-    await page.goto(address);
-    await page.locator('.monaco-workbench').waitFor();
+    await page.goto(address, { timeout: OPENING });
+    await page.locator('.monaco-workbench').waitFor({ timeout: OPENING });
     return { page, strangers, errors, close: () => browser.close() };
   } catch (error) {
     await browser.close();

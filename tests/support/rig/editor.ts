@@ -1,6 +1,6 @@
 /** What a person does in the editor and sees there, in the words of this suite. Waits for things, never for time. */
 import type { Locator, Page } from 'playwright-core';
-import { STEP } from './driver.ts';
+import { OPENING, STEP } from './driver.ts';
 
 /** The editor writes no-break spaces; the suite reads plain ones. */
 export const plain = (text: string): string => text.replaceAll('\u00a0', ' ').replaceAll('\u200b', '');
@@ -18,21 +18,13 @@ export class Editor {
     return this.page.locator('.editor-instance .squiggly-error');
   }
 
-  get warnings(): Locator {
-    return this.page.locator('.editor-instance .squiggly-warning');
-  }
-
-  get hints(): Locator {
-    return this.page.locator('.editor-instance .view-line span[class*="dyn-rule"], .editor-instance .view-line span[class*="inlayHint"]');
-  }
-
   get lines(): Locator {
     return this.page.locator('.editor-instance .view-line');
   }
 
   /** The file at start is open and read by the language server. */
   async ready(): Promise<void> {
-    await this.page.locator('.explorer-folders-view .monaco-list-row').first().waitFor();
+    await this.page.locator('.explorer-folders-view .monaco-list-row').first().waitFor({ timeout: OPENING });
     await this.lines.first().waitFor();
     await this.waitForText('.statusbar-item', 'Oilway');
     await this.page.locator('.editor-instance .view-line').first().click();
