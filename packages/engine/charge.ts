@@ -1,7 +1,7 @@
 /** What a node stores over its pressure: constant storage, oil with air in lines and chambers, gas charges. */
 import type { Network } from './compile.ts';
-import { curveVolume } from './gas.ts';
-import type { GasSpec, OilSpec } from './network.ts';
+import { curvePressure, curveVolume } from './gas.ts';
+import type { GasCurve, GasSpec, OilSpec } from './network.ts';
 import { positive, positiveSlope } from './smooth.ts';
 import { ATMOSPHERE, GAS_EDGE } from './tolerances.ts';
 
@@ -80,20 +80,23 @@ export interface Charge {
   pressure: number;
   volume: number;
   exponent: number;
+  /** Real gas instead of p V^n. */
+  curve?: GasCurve | undefined;
 }
 
 /** Oil (L) in a charge at node gauge pressure p and its slope. Zero up to where the gas fills its volume, rounded over a hundredth of that. */
 export function chargeOil(charge: Charge, gauge: number): { value: number; slope: number } {
   const { spec } = charge;
   const absolute = gauge - (spec.head ?? 0) + ATMOSPHERE;
-  const empty = spec.curve ? spec.precharge : charge.pressure * (charge.volume / spec.volume) ** charge.exponent;
+  const curve = charge.curve;
+  const empty = curve ? curvePressure(curve, spec.volume) : charge.pressure * (charge.volume / spec.volume) ** charge.exponent;
   const width = GAS_EDGE * empty;
   const excess = positive(absolute - empty, width);
   if (excess <= 0) return { value: 0, slope: 0 };
   const at = empty + excess;
   const by = positiveSlope(absolute - empty, width);
-  if (spec.curve) {
-    const { volume, slope } = curveVolume(spec.curve, at);
+  if (curve) {
+    const { volume, slope } = curveVolume(curve, at);
     return { value: spec.volume - volume, slope: -slope * by };
   }
   const volume = spec.volume * (empty / at) ** (1 / charge.exponent);

@@ -37,7 +37,7 @@ export function gasPressure(spec: GasSpec, oil: number, exponent = GAS_EXPONENT)
   return spec.curve ? curvePressure(spec.curve, volume) : spec.precharge * (spec.volume / volume) ** exponent;
 }
 
-/** Oil (L) in a charge at an absolute pressure (MPa); 0 below the precharge. */
+/** Oil (L) in a charge at an absolute pressure (MPa); 0 where the gas fills it. */
 export function gasOil(spec: GasSpec, absolute: number, exponent = GAS_EXPONENT): number {
   if (absolute <= spec.precharge) return 0;
   return (

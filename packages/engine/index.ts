@@ -2,6 +2,7 @@
 export { compile, problemsOf, type CompileProblem, type Network } from './compile.ts';
 export { chargeOf, gasOil, gasPressure } from './gas.ts';
 export * from './network.ts';
+export { nitrogenCurve, nitrogenDensity, nitrogenEntropy, nitrogenPressure } from './nitrogen.ts';
 export * from './results.ts';
 export { sensitivities } from './sensitivity.ts';
 export { solveSteady } from './steady.ts';
