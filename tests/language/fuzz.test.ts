@@ -7,7 +7,7 @@ import { describe, expect, it } from 'vitest';
 import { CIRCUITS } from './support.ts';
 
 const EDITS = Number(process.env['OILWAY_FUZZ'] ?? 20_000);
-const SECONDS = process.env['OILWAY_FUZZ'] === undefined ? 20 : Number.POSITIVE_INFINITY;
+const SECONDS = process.env['OILWAY_FUZZ'] === undefined ? 45 : Number.POSITIVE_INFINITY;
 const SEED = Number(process.env['OILWAY_SEED'] ?? 20_251);
 
 /** Mulberry32: small, seeded, the same everywhere. */
@@ -110,7 +110,7 @@ describe('random edits', () => {
       }
       // What the parser has been through and what it remembers leave no trace in the next reading.
       const warm = analyseText({ uri: 'u', text });
-      if (++rounds % 20 === 0) forgetStatements();
+      if (++rounds % 200 === 0) forgetStatements();
       else analyseText({ uri: 'u', text: source });
       const fresh = analyseText({ uri: 'u', text });
       expect(JSON.stringify(fresh.circuit)).toBe(JSON.stringify(warm.circuit));
