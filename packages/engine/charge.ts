@@ -141,7 +141,7 @@ export class Storage {
     }
     for (const charge of charges) {
       const i = net.unknownOf[charge.spec.node]!;
-      if (i >= 0) (this.chargesAt[i] ??= []).push(charge);
+      if (i >= 0) this.chargesAt[i] = [...(this.chargesAt[i] ?? []), charge];
     }
   }
 

@@ -294,20 +294,21 @@ export function runCycle(made: Machine, run: Transient): string | undefined {
     }
     return undefined;
   };
-  const steps: (() => string | undefined)[] = [
-    () => until(1),
-    () => (go('clamp', 1), until(2)),
-    () => (go('liftUp', 1), until(6, at(1, 0.25, 'rising'))),
-    () => (go('liftUp', 0), go('turn', 1), until(1)),
-    () => (go('feedOut', 1), until(16, at(0, 0.36, 'rising'))),
-    () => (go('feedOut', 0), until(0.5)),
-    () => (go('feedIn', 1), until(5, at(0, 0.001, 'falling'))),
-    () => (go('feedIn', 0), go('turn', 0), go('liftDown', 1), until(6, at(1, 0.001, 'falling'))),
-    () => (go('liftDown', 0), go('clamp', 0), go('release', 1), until(1)),
-    () => (go('release', 0), until(Math.max(0.1, 28 - run.time))),
+  const steps: { readonly set: Partial<Record<keyof Commands, number>>; readonly until: () => string | undefined }[] = [
+    { set: {}, until: () => until(1) },
+    { set: { clamp: 1 }, until: () => until(2) },
+    { set: { liftUp: 1 }, until: () => until(6, at(1, 0.25, 'rising')) },
+    { set: { liftUp: 0, turn: 1 }, until: () => until(1) },
+    { set: { feedOut: 1 }, until: () => until(16, at(0, 0.36, 'rising')) },
+    { set: { feedOut: 0 }, until: () => until(0.5) },
+    { set: { feedIn: 1 }, until: () => until(5, at(0, 0.001, 'falling')) },
+    { set: { feedIn: 0, turn: 0, liftDown: 1 }, until: () => until(6, at(1, 0.001, 'falling')) },
+    { set: { liftDown: 0, clamp: 0, release: 1 }, until: () => until(1) },
+    { set: { release: 0 }, until: () => until(Math.max(0.1, 28 - run.time)) },
   ];
   for (const step of steps) {
-    const failed = step();
+    for (const [name, to] of Object.entries(step.set)) go(name as keyof Commands, to);
+    const failed = step.until();
     if (failed) return failed;
   }
   return undefined;
