@@ -30,6 +30,9 @@ function ofRequirement(context: RuleContext, result: RequirementResult): Finding
   ];
 }
 
+/** Faults with which the run goes on and gives its figures. */
+const MILD: readonly Fault['kind'][] = ['first run short of oil', 'does not settle', 'interlock'];
+
 /**
  * A fault that a rule has told already, for the same step, is not told twice. Beside other errors, or with parts of the circuit unknown, it
  * follows from them as likely as not: then it is for information.
@@ -42,7 +45,7 @@ function ofFault(fault: Fault, cycle: string, told: readonly Finding[], incomple
     {
       ...plain,
       code: 'CYCLE',
-      severity: follows ? 'information' : 'error',
+      severity: follows ? 'information' : MILD.includes(fault.kind) ? 'warning' : 'error',
       what: fault.words,
       ...(follows ? { why: 'It may follow from the other errors of this circuit.' } : {}),
       origin: fault.origin,

@@ -5,6 +5,7 @@ import { A02 } from './rules/A02-relief-behind-valve.ts';
 import { A03 } from './rules/A03-relief-above-rating.ts';
 import { A04 } from './rules/A04-relief-below-need.ts';
 import { A06 } from './rules/A06-relief-no-tank.ts';
+import { A07 } from './rules/A07-comp-no-safety-relief.ts';
 import { A09 } from './rules/A09-deadhead-idle.ts';
 import { A10 } from './rules/A10-no-outlet-check.ts';
 import { A19 } from './rules/A19-pump-parallel-no-check.ts';
@@ -34,6 +35,7 @@ export const RULES: readonly Rule[] = [
   A03,
   A04,
   A06,
+  A07,
   A09,
   A10,
   A19,

@@ -69,8 +69,9 @@ const NEAR: readonly Near[] = [
   },
   {
     code: 'A01',
-    why: 'a pump with a compensator is judged by another rule',
+    why: 'a pump with a compensator is judged by A07',
     edits: [['rated 210 bar, code "0.1"', 'rated 210 bar, compensator 150 bar, code "0.1"']],
+    only: true,
   },
   // A02
   {
@@ -180,6 +181,17 @@ const NEAR: readonly Near[] = [
       ['working V1.A to C1.cap', 'working V1.A to C1.cap, RV2.P, RV3.T'],
       ['working V1.B to C1.rod', 'working V1.B to C1.rod, RV3.P, RV2.T'],
       ['filter    F1 (', 'relief    RV2, RV3 (set 160 bar, passes 20 L/min at 4 bar)\nfilter    F1 ('],
+    ],
+  },
+  // A07
+  { code: 'A07', why: 'a relief inside the pump', edits: [['compensator 70 bar', 'compensator 70 bar, reliefs 85 bar']] },
+  {
+    code: 'A07',
+    why: 'a relief beyond a check in its free direction',
+    edits: [
+      ['filter    F1 (', 'check     CV1 (crack 0.5 bar)\nrelief    RV1 (set 85 bar, passes 20 L/min at 4 bar)\nfilter    F1 ('],
+      ['working P1 to V1.P, V2.P', 'working P1 to CV1\nworking CV1 to RV1, V1.P, V2.P'],
+      ['drain   P1.L to R1', 'drain   P1.L to R1\nreturn  RV1 to R1'],
     ],
   },
   // A09
@@ -467,6 +479,7 @@ describe('near misses', () => {
       'A03',
       'A04',
       'A06',
+      'A07',
       'A09',
       'A10',
       'A19',

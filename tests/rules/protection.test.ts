@@ -156,6 +156,32 @@ describe('only through something that can close: A02', () => {
   });
 });
 
+describe('pumps with a compensator: A07', () => {
+  const compensated = (text: string) => text.replace('driven by M1, rated 210 bar', 'driven by M1, compensator 80 bar, rated 210 bar');
+
+  it('no relief in reach: a warning, an error with people near', () => {
+    const none = compensated(unit([], [], '').replace(/^relief RV1.*\n/m, ''));
+    expect(told(none)).toEqual(['warning A07 P1']);
+    expect(cured(none)).toBe(1);
+    expect(told(`${none}load C1 (friction 100 N, people near)\n`)).toEqual(['error A07 P1']);
+    expect(word(`${none}load C1 (friction 100 N, people near)\n`, 'A07')).toContain('People are near C1.');
+  });
+
+  it('only through something that can close', () => {
+    const text = compensated(unit(['shutoff BV1 (open)'], ['working P1.P to BV1 to RV1']));
+    expect(told(text)).toEqual(['warning A07 P1']);
+    expect(word(text, 'A07')).toContain('RV1 protects P1 only while BV1 is open');
+  });
+
+  it('with a sure relief nothing is said', () => {
+    expect(told(compensated(unit([], ['working P1.P to RV1'])))).toEqual([]);
+  });
+
+  it('a relief without a way to the reservoir is A06 alone', () => {
+    expect(told(compensated(unit([], ['working P1.P to RV1'], 'plug RV1.T')))).toEqual(['error A06 RV1']);
+  });
+});
+
 describe('behind the relief: A06', () => {
   it.each([
     ['T plugged', [], [], 'plug RV1.T', 'RV1.T is plugged'],

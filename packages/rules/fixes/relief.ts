@@ -9,13 +9,13 @@ import { pumpFlow, pumpFlowTo } from '../graph/flow.ts';
 import { drop, reliefSetting, round, type Setting } from './values.ts';
 
 /** A new relief at the pump's outlet with its line to the reservoir. */
-export function addRelief(context: RuleContext, graph: Graph, pump: Component, like?: Component): Fix | undefined {
+export function addRelief(context: RuleContext, graph: Graph, pump: Component, preferred?: Setting): Fix | undefined {
   const { circuit } = graph;
   const net = graph.netAt(pump.id, 'P');
   const reservoir = reservoirFor(circuit, pump.id);
   const at = writtenAt(circuit, pump.id, 'P')[0];
   if (net === undefined || reservoir === undefined || at === undefined || !writable(context, pump)) return undefined;
-  const setting = (like === undefined ? undefined : settingLike(context, graph, net.id, like)) ?? reliefSetting(graph, net.id);
+  const setting = preferred ?? reliefSetting(graph, net.id);
   // All the oil that comes here, not only this pump's; this pump's own flow must be known.
   const flow = pumpFlow(graph, pump) === undefined ? undefined : pumpFlowTo(graph, net.id);
   if (setting === undefined || flow === undefined) return undefined;
@@ -37,7 +37,7 @@ export function addRelief(context: RuleContext, graph: Graph, pump: Component, l
 }
 
 /** The setting of the relief that is there, as written, unless it is above what the pump's line bears. */
-function settingLike(context: RuleContext, graph: Graph, net: string, like: Component): Setting | undefined {
+export function settingLike(context: RuleContext, graph: Graph, net: string, like: Component): Setting | undefined {
   const property = like.properties.find((p) => p.name === 'set' && p.part === undefined);
   const value = property?.value;
   const rating = ratingOf(graph, net);

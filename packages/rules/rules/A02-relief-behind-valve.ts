@@ -1,60 +1,10 @@
 /** A02: the only relief of a fixed pump stands behind something that can close. */
-import type { Component } from '@oilway/circuit';
 import { graphOf, type Graph } from '../graph/graph.ts';
-import type { Reached } from '../graph/guards.ts';
 import { tell } from '../finding.ts';
-import { addRelief, lockOpen, moveRelief } from '../fixes/relief.ts';
+import { addRelief, lockOpen, moveRelief, settingLike } from '../fixes/relief.ts';
 import type { Finding, Rule, RuleContext } from '../rule.ts';
-import { list } from '../words.ts';
-import { positionsOf, positionWords } from '../graph/paths.ts';
 import { pumpGuards, relatedTo, stakes, type PumpGuard } from './pump-guard.ts';
-
-/** "V1 stands in a (P to A)": what must be so for oil to reach the relief. */
-function conditions(
-  graph: Graph,
-  reached: Reached,
-): { readonly only: string; readonly else: string; readonly closing: readonly Component[] } {
-  const only: string[] = [];
-  const otherwise: string[] = [];
-  const closing: Component[] = [];
-  for (const edge of reached.way.edges) {
-    const component = graph.component(edge.component);
-    if (edge.class === 'always' || component === undefined) continue;
-    closing.push(component);
-    if (edge.kind === 'directional') {
-      const open = edge.positions ?? [];
-      const shut = positionsOf(component).filter((p) => !open.includes(p));
-      only.push(
-        `${component.id} joins ${edge.from} to ${edge.to} (position ${list(
-          open.map((p) => positionWords(component, p)),
-          'or',
-        )})`,
-      );
-      otherwise.push(
-        shut.length > 0
-          ? `${component.id} in ${list(
-              shut.map((p) => positionWords(component, p)),
-              'or',
-            )}`
-          : `${component.id} on its way between two positions`,
-      );
-    } else if (edge.shut === true) {
-      only.push(`${component.id} is opened by hand; it is declared closed`);
-      otherwise.push(`${component.id} closed`);
-    } else {
-      only.push(
-        edge.byHand === true
-          ? `${component.id} is open`
-          : (edge.words ?? component.id).replace(
-              / (at its setting only|may be parted|may clog|may have shut|may stand)$/,
-              ' lets oil through',
-            ),
-      );
-      otherwise.push(`${component.id} closed`);
-    }
-  }
-  return { only: only.join(' and '), else: list(otherwise, 'or'), closing };
-}
+import { conditions } from './conditions.ts';
 
 function judge(context: RuleContext, graph: Graph, { pump, outlet, perhaps }: PumpGuard): Finding[] {
   const reached = perhaps[0];
@@ -76,7 +26,7 @@ function judge(context: RuleContext, graph: Graph, { pump, outlet, perhaps }: Pu
       fixes: [
         ...(byHand ? closing.map((c) => lockOpen(context, c)) : []),
         reached.guard.what === 'relief' ? moveRelief(context, graph, pump, relief) : undefined,
-        addRelief(context, graph, pump, reached.guard.what === 'relief' ? relief : undefined),
+        addRelief(context, graph, pump, reached.guard.what === 'relief' ? settingLike(context, graph, outlet.id, relief) : undefined),
       ],
     }),
   ];
