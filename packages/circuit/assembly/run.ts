@@ -2,6 +2,7 @@
 import { type Network, type SteadyResult, Transient, type TransientWatch } from '@oilway/engine';
 import type { Assembled } from './assembled.ts';
 import type { BodyLoad, MachineRun, RunReport, Setting, Solution, Stand, Watch } from './machine.ts';
+import { Charges } from './real-gas.ts';
 import { type Internal, InternalEvents } from './run-events.ts';
 import { applySetting, LEAKAGE_FLOOR, loadState, ofBody, requestOf } from './setting.ts';
 import { crossover, type Move, proportionalMoves } from './shifting.ts';
@@ -26,6 +27,7 @@ export class Run implements MachineRun {
   readonly #network: Network;
   readonly #engine: Transient;
   readonly #events: InternalEvents;
+  readonly #charges: Charges;
   #setting: Setting;
   /** Where each valve is told to stand; it may lack the pilot pressure to go there. */
   readonly #wanted: Record<string, Stand>;
@@ -58,7 +60,8 @@ export class Run implements MachineRun {
       dynamics,
       ...(setting.leakage === true ? { floor: LEAKAGE_FLOOR } : {}),
     });
-    this.#engine.setGasExponent(setting.gasExponent ?? 1.4);
+    this.#charges = new Charges(assembled);
+    this.#charges.exponent(this.#engine, setting.gasExponent ?? 1.4);
     this.#events = new InternalEvents(assembled, network);
   }
 
@@ -207,7 +210,7 @@ export class Run implements MachineRun {
   }
 
   gasExponent(n: number): void {
-    this.#engine.setGasExponent(n);
+    this.#charges.exponent(this.#engine, n);
     this.#setting = { ...this.#setting, gasExponent: n };
   }
 

@@ -1,106 +1,47 @@
 /**
- * Nitrogen as a real gas: the reference equation of state of Span, Lemmon, Jacobsen, Wagner, Yokozeki, J. Phys. Chem. Ref. Data 29 (2000) 1361
- * (uncertainty of density 0.02 % below 30 MPa). SI: K, Pa, mol/m3, J/(mol K). Valid from 63 K to 1000 K; here for charges of accumulators.
+ * What a nitrogen charge holds and gives as a real gas (Span et al., J. Phys. Chem. Ref. Data 29 (2000) 1361). Absolute pressures in Pa,
+ * volumes in m3, temperatures in K.
  */
+import { nitrogenDensity, nitrogenEntropy, nitrogenPressure } from '@oilway/engine';
 
-const R = 8.31451;
-const T_CRITICAL = 126.192;
-const RHO_CRITICAL = 11183.9;
+/** kg/m3 at Pa and K. */
+const densityAt = (p: number, t: number): number => nitrogenDensity(p * 1e-6, t);
 
-/** N, exponent of delta, exponent of tau, exponent of delta in the exponential (0: none). */
-// biome-ignore format: a table
-const TERMS: readonly (readonly [number, number, number, number])[] = [
-  [0.924803575275, 1, 0.25, 0], [-0.492448489428, 1, 0.875, 0], [0.661883336938, 2, 0.5, 0], [-0.192902649201e1, 2, 0.875, 0],
-  [-0.622469309629e-1, 3, 0.375, 0], [0.349943957581, 3, 0.75, 0], [0.564857472498, 1, 0.5, 1], [-0.161720005987e1, 1, 0.75, 1],
-  [-0.481395031883, 1, 2, 1], [0.421150636384, 3, 1.25, 1], [-0.161962230825e-1, 3, 3.5, 1], [0.172100994165, 4, 1, 1],
-  [0.735448924933e-2, 6, 0.5, 1], [0.168077305479e-1, 6, 3, 1], [-0.107626664179e-2, 7, 0, 1], [-0.137318088513e-1, 7, 2.75, 1],
-  [0.635466899859e-3, 8, 0.75, 1], [0.304432279419e-2, 8, 2.5, 1], [-0.435762336045e-1, 1, 4, 2], [-0.723174889316e-1, 2, 6, 2],
-  [0.389644315272e-1, 3, 6, 2], [-0.212201363910e-1, 4, 3, 2], [0.408822981509e-2, 5, 3, 2], [-0.551990017984e-4, 8, 6, 2],
-  [-0.462016716479e-1, 4, 16, 3], [-0.300311716011e-2, 5, 11, 3], [0.368825891208e-1, 5, 15, 3], [-0.255856846220e-2, 8, 12, 3],
-  [0.896915264558e-2, 3, 12, 4], [-0.441513370350e-2, 5, 7, 4], [0.133722924858e-2, 6, 4, 4], [0.264832491957e-3, 9, 16, 4],
-];
-/** N, exponents of delta and tau, phi, beta, gamma of exp(-phi (delta - 1)^2 - beta (tau - gamma)^2). */
-// biome-ignore format: a table
-const BELLS: readonly (readonly [number, number, number, number, number, number])[] = [
-  [0.196688194015e2, 1, 0, 20, 325, 1.16], [-0.209115600730e2, 1, 1, 20, 325, 1.16],
-  [0.167788306989e-1, 3, 2, 15, 300, 1.13], [0.262767566274e4, 2, 3, 25, 275, 1.25],
-];
-/** Ideal part: ln delta + a1 ln tau + a2 + a3 tau + a4/tau + a5/tau^2 + a6/tau^3 + a7 ln(1 - exp(-a8 tau)). */
-const IDEAL = [2.5, -12.76952708, -0.00784163, -1.934819e-4, -1.247742e-5, 6.678326e-8, 1.012941, 26.65788] as const;
+/** Oil in a charge of gas volume `volume` and precharge p0 at pressure p, filled slowly at t. */
+export const realOilAt = (volume: number, p0: number, p: number, t: number): number =>
+  p <= p0 ? 0 : volume * (1 - densityAt(p0, t) / densityAt(p, t));
 
-/** Residual Helmholtz energy and its derivatives to delta and tau. */
-function residual(delta: number, tau: number): { readonly a: number; readonly byDelta: number; readonly byTau: number } {
-  let a = 0;
-  let byDelta = 0;
-  let byTau = 0;
-  for (const [n, i, j, l] of TERMS) {
-    const damp = l === 0 ? 0 : delta ** l;
-    const term = n * delta ** i * tau ** j * Math.exp(-damp);
-    a += term;
-    byDelta += (term * (i - l * damp)) / delta;
-    byTau += (term * j) / tau;
+/** Precharge at another gas temperature: constant volume. */
+export const realPrechargeAt = (p0: number, t0: number, t: number): number => nitrogenPressure(densityAt(p0, t0), t) * 1e6;
+
+/** Root of a rising function between two positive bounds, to 1e-10: false position, halving the end that stays (Illinois). */
+function rising(from: number, to: number, excess: (x: number) => number): number {
+  let [low, high] = [from, to];
+  let [atLow, atHigh] = [excess(low), excess(high)];
+  if (atLow >= 0) return low;
+  if (atHigh <= 0) return high;
+  let last = 0;
+  for (let i = 0; i < 100 && high - low > 1e-10 * high; i++) {
+    const guess = low - (atLow * (high - low)) / (atHigh - atLow);
+    const x = i % 8 === 7 ? (low + high) / 2 : guess;
+    const at = excess(x);
+    if (Math.abs(at) < 1e-12) return x;
+    if (at < 0) {
+      if (last < 0) atHigh /= 2;
+      [low, atLow, last] = [x, at, -1];
+    } else {
+      if (last > 0) atLow /= 2;
+      [high, atHigh, last] = [x, at, 1];
+    }
   }
-  for (const [n, i, j, phi, beta, gamma] of BELLS) {
-    const term = n * delta ** i * tau ** j * Math.exp(-phi * (delta - 1) ** 2 - beta * (tau - gamma) ** 2);
-    a += term;
-    byDelta += term * (i / delta - 2 * phi * (delta - 1));
-    byTau += term * (j / tau - 2 * beta * (tau - gamma));
-  }
-  return { a, byDelta, byTau };
+  return (low + high) / 2;
 }
 
-/** Pressure, Pa absolute, at a temperature (K) and molar density (mol/m3). */
-export function nitrogenPressure(t: number, rho: number): number {
-  const delta = rho / RHO_CRITICAL;
-  return rho * R * t * (1 + delta * residual(delta, T_CRITICAL / t).byDelta);
-}
-
-/** Entropy, J/(mol K), at a temperature (K) and molar density (mol/m3). */
-export function nitrogenEntropy(t: number, rho: number): number {
-  const delta = rho / RHO_CRITICAL;
-  const tau = T_CRITICAL / t;
-  const [a1, a2, a3, a4, a5, a6, a7, a8] = IDEAL;
-  const ideal =
-    Math.log(delta) +
-    a1 * Math.log(tau) +
-    a2 +
-    a3 * tau +
-    a4 / tau +
-    a5 / tau ** 2 +
-    a6 / tau ** 3 +
-    a7 * Math.log(1 - Math.exp(-a8 * tau));
-  const idealByTau = a1 / tau + a3 - a4 / tau ** 2 - (2 * a5) / tau ** 3 - (3 * a6) / tau ** 4 + (a7 * a8) / (Math.exp(a8 * tau) - 1);
-  const rest = residual(delta, tau);
-  return R * (tau * (idealByTau + rest.byTau) - ideal - rest.a);
-}
-
-/** Root of a rising function in [low, high], by bisection on the logarithm. */
-function rising(low: number, high: number, excess: (x: number) => number): number {
-  for (let i = 0; i < 80; i++) {
-    const middle = Math.sqrt(low * high);
-    if (excess(middle) < 0) low = middle;
-    else high = middle;
-  }
-  return Math.sqrt(low * high);
-}
-
-/** Molar density, mol/m3, at a temperature above 150 K and an absolute pressure, Pa. */
-export const nitrogenDensity = (t: number, p: number): number => rising(1e-3, 3.2e4, (rho) => nitrogenPressure(t, rho) - p);
-
-/** Compressibility Z = p/(rho R T). */
-export const nitrogenZ = (t: number, p: number): number => p / (nitrogenDensity(t, p) * R * t);
-
-/** Oil (m3) in a charge of gas volume `volume` and precharge p0 at absolute pressure p, filled slowly at t K: no more than ideal below 100 bar. */
-export function realOilAt(volume: number, p0: number, p: number, t: number): number {
-  return p <= p0 ? 0 : volume * (1 - nitrogenDensity(t, p0) / nitrogenDensity(t, p));
-}
-
-/** Precharge, Pa absolute, at another gas temperature: constant volume. */
-export const realPrechargeAt = (p0: number, t0: number, t: number): number => nitrogenPressure(t, nitrogenDensity(t0, p0));
+/** Temperature at which nitrogen of this density (kg/m3) has this entropy (J/(mol K)). */
+const temperatureOf = (density: number, entropy: number): number => rising(70, 1200, (t) => nitrogenEntropy(density, t) - entropy);
 
 /**
- * Oil (m3) given quickly (no heat exchanged) between absolute pressures `from` and `to`, after filling slowly to `from` at t K; and the gas
- * temperature at the end, K.
+ * Oil given quickly (no heat exchanged) between pressures `from` and `to`, after filling slowly to `from` at t; and the gas temperature at the end.
  */
 export function realYield(
   volume: number,
@@ -109,10 +50,58 @@ export function realYield(
   to: number,
   t: number,
 ): { readonly oil: number; readonly temperature: number } {
-  const filled = nitrogenDensity(t, from);
-  const entropy = nitrogenEntropy(t, filled);
-  const gas = (volume * nitrogenDensity(t, p0)) / filled;
-  // Along the isentrope density falls with pressure: for each temperature the density at `to`, and the temperature of equal entropy.
-  const temperature = rising(120, t, (x) => nitrogenEntropy(x, nitrogenDensity(x, to)) - entropy);
-  return { oil: gas * (filled / nitrogenDensity(temperature, to) - 1), temperature };
+  const filled = densityAt(from, t);
+  const entropy = nitrogenEntropy(filled, t);
+  // Along the isentrope pressure rises with density.
+  const density = rising(1e-2, filled, (d) => nitrogenPressure(d, temperatureOf(d, entropy)) * 1e6 - to);
+  const gas = (volume * densityAt(p0, t)) / filled;
+  return { oil: gas * (filled / density - 1), temperature: temperatureOf(density, entropy) };
 }
+
+/** A charge at one instant. */
+export interface GasPoint {
+  /** Gas volume, m3. */
+  readonly volume: number;
+  /** Pa absolute */
+  readonly pressure: number;
+  /** K */
+  readonly temperature: number;
+}
+
+const POINTS = 40;
+/** Density beyond which the equation is not asked, kg/m3. */
+const DENSEST = 850;
+
+/**
+ * Pressure over gas volume through a point, for a heat exchange given as a polytropic exponent: 1.4 none (isentrope), 1 full (isotherm of the
+ * point), between them in proportion of log p. Volumes from `largest` down, m3; pressures Pa absolute, rising.
+ */
+export function realCurve(
+  point: GasPoint,
+  largest: number,
+  n: number,
+): { readonly volumes: readonly number[]; readonly pressures: readonly number[] } {
+  const share = Math.min(1, Math.max(0, (n - 1) / 0.4));
+  const density = densityAt(point.pressure, point.temperature);
+  const mass = density * point.volume;
+  const entropy = nitrogenEntropy(density, point.temperature);
+  const smallest = Math.max(mass / DENSEST, 0.3 * Math.min(point.volume, largest));
+  const volumes: number[] = [];
+  const pressures: number[] = [];
+  for (let i = 0; i < POINTS; i++) {
+    const volume = largest * (smallest / largest) ** (i / (POINTS - 1));
+    const d = mass / volume;
+    const slow = nitrogenPressure(d, point.temperature);
+    const quick = share === 0 ? slow : nitrogenPressure(d, temperatureOf(d, entropy));
+    volumes.push(volume);
+    pressures.push(Math.exp(share * Math.log(quick) + (1 - share) * Math.log(slow)) * 1e6);
+  }
+  return { volumes, pressures };
+}
+
+/** Temperature of a charge of this mass (kg) at a volume and pressure. */
+export function temperatureAt(mass: number, volume: number, pressure: number): number {
+  return rising(70, 1200, (t) => nitrogenPressure(mass / volume, t) * 1e6 - pressure);
+}
+/** Mass of the gas at a point, kg. */
+export const massAt = (point: GasPoint): number => densityAt(point.pressure, point.temperature) * point.volume;

@@ -55,6 +55,13 @@ export const accumulator: Kind = {
     const charge = precharge(component, 'precharge');
     if (volume === undefined || charge === undefined)
       return into.cannot(component, `${component.id} has no \`${volume === undefined ? 'volume' : 'precharge'}\``);
+    into.assume({
+      component: component.id,
+      property: 'gas',
+      value: 'p V^n ideal; real nitrogen from a charge above 100 bar',
+      source: 'derived',
+      note: 'Span et al., J. Phys. Chem. Ref. Data 29 (2000) 1361; n 1.4 quickly, 1 slowly: common practice',
+    });
     into.gas(
       component,
       into.nodeOrBlind(component, 'P'),

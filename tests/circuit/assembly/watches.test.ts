@@ -1,4 +1,5 @@
 /** What a run is stopped for: level, oil, drop over a filter, ends of a stroke. */
+import { realOilAt } from '@oilway/circuit';
 import { expect, test } from 'vitest';
 import { delivers, HEAD, toBar } from '../support/bench.ts';
 import { blank, machineOf } from '../support/text.ts';
@@ -71,4 +72,21 @@ return V1.T, RV1 to R1`);
   expect(report.fired).toEqual([]);
   expect(run.now().positions.C1).toBe(0);
   expect(report.happened.map((h) => h.words)).toContain('C1 reaches its stop, retracted');
+});
+
+// 10 L, precharge 90 bar, filled slowly to 200 bar at 20 degC, let down quickly to 100 bar: 2.189 L (real nitrogen; p V^1.4 would give 2.874 L).
+test('a high charge gives what real nitrogen gives', () => {
+  const m =
+    machineOf(`${HEAD.replace('45 degC', '20 degC')}accumulator ACC1 (bladder, volume 10 L, precharge 90 bar at 20 degC, gas nitrogen)
+throttle FC1 (set 20 L/min, compensated)
+working ACC1 to FC1 to R1`);
+  const filled = realOilAt(0.01, 90e5 + 101325, 200e5 + 101325, 293.15);
+  const setting = { ...blank, oil: { ACC1: filled }, gasPressures: { ACC1: 200e5 + 101325 } };
+  const run = m.start(setting, m.settle(setting));
+  const report = run.advance(60, [{ what: 'pressure', net: 'ACC1.P', threshold: 100e5, edge: 'falling' }]);
+  expect(report.fired).toEqual([0]);
+  expect(Math.abs((filled - (run.now().oil.ACC1 ?? 0)) / 2.189e-3 - 1)).toBeLessThan(3e-3);
+  // Left alone, the gas warms up again along another curve from where it is.
+  run.gasExponent(1);
+  expect(toBar(run.now().pressures['ACC1.P'])).toBeCloseTo(100, 1);
 });
