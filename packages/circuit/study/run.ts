@@ -57,6 +57,8 @@ export class Runner {
   #drives: Readonly<Record<string, boolean>>;
   #loads = new Map<string, string>();
   #control: Control;
+  /** Step and coil: it was live there. */
+  readonly #livedIn = new Set<string>();
   /** As last set. */
   #setting: Setting;
   #shiftingUntil = 0;
@@ -227,6 +229,7 @@ export class Runner {
         this.#gasFrom = this.#run.time;
       } else {
         trace.leave(did.line.step.id, time);
+        this.#neverLive(did.line, time, faults);
         trace.event(time, did.line.step.id, `${did.line.step.id} ends`);
       }
       control = decide(at, sequence.demand(), this.#situation(sequence, control));
@@ -243,6 +246,17 @@ export class Runner {
     }
     this.#apply(control, sequence.lines(), time, trace);
     return 'goes on';
+  }
+
+  /** A step that ends without one of its coils ever having been live: its interlock held it back all the time. */
+  #neverLive(line: Line, time: number, faults: Fault[]): void {
+    if (time - line.entered < 1e-9) return;
+    for (const drop of this.#control.dropped) {
+      if (drop.step !== line.step.id || this.#livedIn.has(`${line.step.id} ${drop.coil}`)) continue;
+      const words = `${drop.coil} is never live in ${line.step.id}: its interlock holds it back from the first to the last moment`;
+      if (!faults.some((one) => one.words === words))
+        faults.push({ kind: 'interlock', words, step: line.step.id, time, origin: drop.by.origin });
+    }
   }
 
   /** Sets the machine as the control asks: valves begin to shift, settings and drives change, loads of the steps come and go. */
@@ -285,6 +299,7 @@ export class Runner {
     this.#drives = setting.drives;
     this.#control = control;
     this.#setting = setting;
+    for (const line of lines) for (const coil of control.live.keys()) this.#livedIn.add(`${line.step.id} ${coil}`);
     const last = trace.snapshots.at(-1);
     if (last && last.time >= time - 1e-9) trace.snapshots.pop();
     trace.snapshots.push({ time, setting, lines: steps });

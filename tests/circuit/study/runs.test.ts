@@ -59,6 +59,11 @@ describe('a cycle', () => {
       'Go.Out is not over after 5.00 s: waits for LS1, C1 at 0 mm, it switches from 295 mm to 300 mm (SOL1 is held back: PS1 at 0.0 of 120 bar)',
     );
   });
+  it('says so where a step ends without its coil ever having been live', () => {
+    const { result } = run('cycle Go {\n  step Out energise SOL1 for 2 s\n}\ninterlock SOL1 needs PS1 on\n');
+    expect(result.cycles[0]?.faults.map((one) => [one.kind, one.step])).toEqual([['interlock', 'Go.Out']]);
+    expect(result.cycles[0]?.completed).toBe(true);
+  });
   it('takes outside switches as steps and interlocks need them', () => {
     const { result } = run(
       'cycle Go {\n  step Wait until GUARD on\n  step Out energise SOL1 until LS1 on\n}\ninterlock SOL1 needs GUARD on\n',

@@ -7,6 +7,18 @@ import { circuitOf } from './support/circuits.ts';
 const folder = new URL('../../../samples/', import.meta.url);
 const files = readdirSync(folder).filter((one) => one.endsWith('.oilway'));
 
+/** The statements of a text, each with the lines of its braces. */
+function statements(text: string): string[] {
+  const found: string[] = [];
+  let depth = 0;
+  for (const line of text.split('\n')) {
+    if (depth > 0) found[found.length - 1] += `\n${line}`;
+    else found.push(line);
+    depth += line.split('{').length - line.split('}').length;
+  }
+  return found;
+}
+
 describe.each(files)('%s', (file) => {
   let circuit: Circuit;
   let result: Study;
@@ -48,6 +60,13 @@ describe.each(files)('%s', (file) => {
     };
     walk(result, 'study');
     expect(seen).toEqual([]);
+  });
+  it('says the same whatever the order of its statements', () => {
+    const text = readFileSync(new URL(file, folder), 'utf8');
+    const turned = study(circuitOf(statements(text).reverse().join('\n')));
+    const of = (one: Study) => one.requirements.map((requirement) => [requirement.verdict, requirement.worst?.value.toPrecision(3)]);
+    expect(of(turned).reverse()).toEqual(of(result));
+    expect(turned.cycles.map((one) => one.time?.toFixed(3))).toEqual(result.cycles.map((one) => one.time?.toFixed(3)));
   });
   it('crosses a worker boundary', () => {
     expect(structuredClone(result)).toEqual(result);
