@@ -40,6 +40,21 @@ function rising(from: number, to: number, excess: (x: number) => number): number
 /** Temperature at which nitrogen of this density (kg/m3) has this entropy (J/(mol K)). */
 const temperatureOf = (density: number, entropy: number): number => rising(70, 1200, (t) => nitrogenEntropy(density, t) - entropy);
 
+/** The same from a near guess: secant steps, the bracket only where they fail. */
+function temperatureNear(density: number, entropy: number, guess: number): number {
+  let [t0, t1] = [guess, guess * 1.01];
+  let s0 = nitrogenEntropy(density, t0) - entropy;
+  for (let i = 0; i < 8; i++) {
+    const s1 = nitrogenEntropy(density, t1) - entropy;
+    if (Math.abs(s1) < 1e-9) return t1;
+    const next = t1 - (s1 * (t1 - t0)) / (s1 - s0);
+    if (!(next > 70 && next < 1200)) break;
+    [t0, s0, t1] = [t1, s1, next];
+    if (Math.abs(t1 - t0) < 1e-9 * t1) return t1;
+  }
+  return temperatureOf(density, entropy);
+}
+
 /**
  * Oil given quickly (no heat exchanged) between pressures `from` and `to`, after filling slowly to `from` at t; and the gas temperature at the end.
  */
@@ -68,7 +83,7 @@ export interface GasPoint {
   readonly temperature: number;
 }
 
-const POINTS = 40;
+const POINTS = 24;
 /** Density beyond which the equation is not asked, kg/m3. */
 const DENSEST = 850;
 
@@ -88,11 +103,16 @@ export function realCurve(
   const smallest = Math.max(mass / DENSEST, 0.3 * Math.min(point.volume, largest));
   const volumes: number[] = [];
   const pressures: number[] = [];
+  let t = point.temperature;
+  let before = largest;
   for (let i = 0; i < POINTS; i++) {
     const volume = largest * (smallest / largest) ** (i / (POINTS - 1));
     const d = mass / volume;
     const slow = nitrogenPressure(d, point.temperature);
-    const quick = share === 0 ? slow : nitrogenPressure(d, temperatureOf(d, entropy));
+    if (share > 0)
+      t = temperatureNear(d, entropy, i === 0 ? point.temperature * (point.volume / volume) ** 0.4 : t * (before / volume) ** 0.4);
+    before = volume;
+    const quick = share === 0 ? slow : nitrogenPressure(d, t);
     volumes.push(volume);
     pressures.push(Math.exp(share * Math.log(quick) + (1 - share) * Math.log(slow)) * 1e6);
   }
