@@ -126,24 +126,62 @@ export function terminalPorts(assembled: Assembled, network: Network, element: n
   return ports;
 }
 
-function flowsOf(assembled: Assembled, network: Network, standing: Standing, result: SteadyResult): Record<string, number> {
-  const flows: Record<string, number> = {};
-  const add = (component: string, port: string | undefined, litres: number): void => {
-    if (port === undefined) return;
-    const key = `${component}.${port}`;
-    flows[key] = (flows[key] ?? 0) + fromLitresPerSecond(litres);
+/** Which key of `flows` each terminal, chamber and charge adds to: the same for every solution of a network. */
+interface FlowKeys {
+  readonly keys: readonly string[];
+  /** By place in the engine's flows; -1: an inner terminal. */
+  readonly ofTerminal: Int32Array;
+  readonly ofChamber: Int32Array;
+  readonly ofGas: Int32Array;
+}
+const flowKeys = new WeakMap<Network, FlowKeys>();
+
+function flowKeysOf(assembled: Assembled, network: Network, result: SteadyResult): FlowKeys {
+  const there = flowKeys.get(network);
+  if (there !== undefined) return there;
+  const keys: string[] = [];
+  const index = new Map<string, number>();
+  const of = (key: string): number => {
+    const known = index.get(key);
+    if (known !== undefined) return known;
+    index.set(key, keys.length);
+    return keys.push(key) - 1;
   };
-  assembled.elements.forEach((note, e) => {
-    if (note.words === 'line') {
-      flows[note.component] = fromLitresPerSecond(terminalFlow(result, e, 0));
-      return;
+  const ofTerminal = new Int32Array(result.flows.length).fill(-1);
+  for (const [e, note] of assembled.elements.entries()) {
+    const first = result.elementStart[e] ?? 0;
+    if (note.words === 'line') ofTerminal[first] = of(note.component);
+    else {
+      for (const [t, port] of terminalPorts(assembled, network, e).entries()) {
+        if (port !== undefined) ofTerminal[first + t] = of(`${note.component}.${port}`);
+      }
     }
-    for (const [t, port] of terminalPorts(assembled, network, e).entries()) add(note.component, port, terminalFlow(result, e, t));
-  });
-  for (const c of assembled.chambers) {
-    add(c.component, c.port, areaAt(c, standing.positions[c.body] ?? 0) * (result.velocities[c.body] ?? 0));
   }
-  for (const [i, g] of assembled.gases.entries()) add(g.component, 'P', result.gasFlows[i] ?? 0);
+  const made: FlowKeys = {
+    keys,
+    ofTerminal,
+    ofChamber: Int32Array.from(assembled.chambers, (c) => (c.port === undefined ? -1 : of(`${c.component}.${c.port}`))),
+    ofGas: Int32Array.from(assembled.gases, (g) => of(`${g.component}.P`)),
+  };
+  flowKeys.set(network, made);
+  return made;
+}
+
+function flowsOf(assembled: Assembled, network: Network, standing: Standing, result: SteadyResult): Record<string, number> {
+  const { keys, ofTerminal, ofChamber, ofGas } = flowKeysOf(assembled, network, result);
+  const sums = new Float64Array(keys.length + 1);
+  // Inner terminals go to a spare place past the last.
+  const add = (key: number, litres: number): void => {
+    const at = key < 0 ? keys.length : key;
+    sums[at] = (sums[at] ?? 0) + litres;
+  };
+  for (let t = 0; t < ofTerminal.length; t++) add(ofTerminal[t] ?? -1, result.flows[t] ?? 0);
+  for (const [i, c] of assembled.chambers.entries()) {
+    add(ofChamber[i] ?? -1, areaAt(c, standing.positions[c.body] ?? 0) * (result.velocities[c.body] ?? 0));
+  }
+  for (let g = 0; g < ofGas.length; g++) add(ofGas[g] ?? -1, result.gasFlows[g] ?? 0);
+  const flows: Record<string, number> = {};
+  for (let k = 0; k < keys.length; k++) flows[keys[k] ?? ''] = fromLitresPerSecond(sums[k] ?? 0);
   return flows;
 }
 
