@@ -353,6 +353,23 @@ export class System {
     }
   }
 
+  /** Node pressures and net forces at y and x, without the rest of an evaluation. */
+  observe(): void {
+    const { net, y, p } = this;
+    for (let i = 0; i < net.free; i++) p[net.nodeOf[i]!] = y[i]!;
+    for (let a = 0; a < this.x.length; a++) {
+      let force = this.fixed0[a]! + this.fixed1[a]! * (this.x[a]! - this.ref[a]!);
+      for (let c = net.chamberStart[a]!; c < net.chamberStart[a + 1]!; c++)
+        force += this.area[c]! * (p[net.chamberNodes[c]!]! - net.chamberHeads[c]!);
+      const own = net.spec.actuators[a]!.force;
+      if (own) {
+        own(this.x[a]!, y[net.firstVelocity + a]!, this.own);
+        force += this.own[0]!;
+      }
+      this.net0[a] = force;
+    }
+  }
+
   /** Flow into every element at its terminals (and openings), at the present state. */
   flows(flows: Float64Array, openings?: Float64Array): void {
     const { net, y, p, z, out, gradient, x } = this;

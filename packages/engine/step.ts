@@ -137,6 +137,7 @@ export class Stepper {
     y1.set(sys.y);
     x1.set(sys.x);
     for (let i = 0; i < n; i++) k1[i] = (this.stored(i, y1[i]!) - base[i]!) / gh;
+    sys.observe();
     this.error = this.estimate(h);
     return Number.isFinite(this.error);
   }
@@ -198,6 +199,12 @@ export class Stepper {
         if (!(size <= change)) change = size;
       }
       if (!Number.isFinite(change)) return false;
+      if (change < STAGE_TIGHT && !limited) {
+        // What is left is of second order in the change: no need to look again.
+        for (let i = 0; i < n; i++) y[i] = y[i]! + d[i]!;
+        this.place(gh);
+        return true;
+      }
       keep.set(y);
       let largest = 0;
       for (let i = 0; i < net.free; i++) {
@@ -215,18 +222,23 @@ export class Stepper {
         }
         share *= 0.5;
       }
-      if (change < STAGE_TIGHT && share === 1 && !limited) return true;
     }
     return false;
   }
 
+  /** Positions that belong to the speeds of a stage. */
+  private place(gh: number): void {
+    const { sys, net, xb } = this;
+    for (let a = 0; a < xb.length; a++) sys.x[a] = xb[a]! + gh * (sys.held[a] ? 0 : sys.y[net.firstVelocity + a]!);
+  }
+
   /** Stage residual and Jacobian into sys.r, sys.j; returns the length of the residual. */
   private evaluate(gh: number): number {
-    const { sys, net, storage, base, inertia, xb } = this;
+    const { sys, net, storage, base, inertia } = this;
     const { r, j, y, x } = sys;
     const over = 1 / gh;
     sys.xv = gh;
-    for (let a = 0; a < x.length; a++) x[a] = xb[a]! + gh * (sys.held[a] ? 0 : y[net.firstVelocity + a]!);
+    this.place(gh);
     sys.evaluate();
     let sum = storage.stamp(y, base, over, r, j);
     for (let i = net.free; i < net.size; i++) {

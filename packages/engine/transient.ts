@@ -242,6 +242,7 @@ export class Transient {
       ...(failed ? { failed } : {}),
     });
     let failures = 0;
+    let refused = false;
     const begun = stepper.newtons;
     this.stale = true;
     for (let count = 0; this.time < until - LEAST_STEP; count++) {
@@ -255,6 +256,7 @@ export class Transient {
       else if (2 * h > left) h = 0.5 * left;
       if (!this.trial(h, this.trouble > PATIENCE)) {
         this.counts.rejected++;
+        refused = true;
         this.trouble++;
         this.h = 0.25 * h;
         stepper.smooth = false;
@@ -264,6 +266,7 @@ export class Transient {
       if (stepper.error > 1 && h > 1e-9) {
         this.counts.rejected++;
         this.h = h * Math.max(SHRINK, SAFETY * stepper.error ** (-1 / 3));
+        refused = true;
         continue;
       }
       let fired = this.fired();
@@ -281,7 +284,8 @@ export class Transient {
       }
       failures = 0;
       this.trouble = Math.max(0, this.trouble - 0.3);
-      const grown = taken * Math.min(GROWTH, Math.max(SHRINK, SAFETY * Math.max(stepper.error, 1e-6) ** (-1 / 3)));
+      const grown = taken * Math.min(refused ? 1 : GROWTH, Math.max(SHRINK, SAFETY * Math.max(stepper.error, 1e-6) ** (-1 / 3)));
+      refused = false;
       this.commit(taken, edge);
       if (taken === h || grown > this.h) this.h = grown;
       onStep?.(this.time);
