@@ -12,9 +12,10 @@ import { BENCH, URI } from './support/check.ts';
 /** Nothing waits: what is asked for is done when the test says so. */
 class Idle implements Timers {
   #waiting: { readonly action: () => void; dropped: boolean }[] = [];
-  set(action: () => void): unknown {
+  set(action: () => void, ms: number): unknown {
     const one = { action, dropped: false };
-    this.#waiting.push(one);
+    // Limits never pass here.
+    if (ms < 10_000) this.#waiting.push(one);
     return one;
   }
   clear(handle: unknown): void {
@@ -38,10 +39,12 @@ class Runner implements StudyRunner {
   #resolve: ((answer: StudyAnswer | undefined) => void) | undefined;
   run(job: StudyJob): Promise<StudyAnswer | undefined> {
     this.jobs.push(job);
-    return new Promise((resolve) => {
+    return new Promise((resolve, reject) => {
       this.#resolve = resolve;
+      this.#reject = reject;
     });
   }
+  #reject: ((reason: Error) => void) | undefined;
   cut = 0;
   cancel(): void {
     if (this.#resolve) this.cut += 1;
@@ -50,6 +53,10 @@ class Runner implements StudyRunner {
   }
   dispose(): void {
     this.cancel();
+  }
+  async fail(reason: string): Promise<void> {
+    this.#reject?.(new Error(reason));
+    for (let i = 0; i < 5; i += 1) await Promise.resolve();
   }
   async answer(findings: readonly Finding[]): Promise<void> {
     const study: Study = {
@@ -201,6 +208,29 @@ describe('session', () => {
     expect([runner.jobs.length, runner.cut]).toEqual([1, 1]);
     timers.flush();
     expect([runner.jobs.length, runner.cut]).toEqual([2, 1]);
+  });
+
+  test('a study that breaks down is logged and told in the hover, never a finding', async () => {
+    const { session, timers, runner, shown, logged } = start();
+    session.update(URI, 1, BENCH);
+    timers.flush();
+    expect(session.analysis(URI)?.figures).toBe('coming');
+    await runner.fail('a hole in the ground');
+    expect(logged).toEqual([`the study of ${URI} broke down: a hole in the ground`]);
+    expect(session.analysis(URI)?.figures).toBe('broken');
+    expect(shown.flatMap((one) => one.findings).some((one) => one.what.includes('hole'))).toBe(false);
+    session.update(URI, 2, `${BENCH}\n`);
+    expect(session.analysis(URI)?.figures).toBe('coming');
+    session.compute = false;
+    expect(session.analysis(URI)?.figures).toBe('off');
+  });
+
+  test('a file without a circuit is read, and says that nothing runs in it', () => {
+    const { session, timers, runner } = start();
+    session.update(URI, 1, 'check CV1 (passes 40 L/min at 3 bar)');
+    timers.flush();
+    expect(session.analysis(URI)?.figures).toBe('shelf');
+    expect(runner.jobs).toEqual([]);
   });
 
   test('computing switched off: findings of figures go, nothing runs; on again: it runs', async () => {

@@ -1,6 +1,7 @@
 /** One study at a time: the newest wins, one that is overtaken never speaks, a worker that dies is replaced. */
 import { describe, expect, test } from 'vitest';
 import type { Circuit, Study } from '@oilway/circuit';
+import type { Timers } from '../../packages/language/server/coalesce.ts';
 import { StudyQueue, type QueuedStudy } from '../../packages/language/server/study-queue.ts';
 import {
   InlineRunner,
@@ -148,14 +149,25 @@ describe('queue of documents', () => {
     queue: StudyQueue;
     done: string[];
     failed: string[];
+    late: () => void;
     study: (uri: string, empty?: boolean) => QueuedStudy;
   } {
     const { workers, runner: run } = runner();
     const done: string[] = [];
     const failed: string[] = [];
+    let limit: () => void = () => undefined;
+    const timers: Timers = {
+      set: (action) => {
+        limit = action;
+        return action;
+      },
+      clear: () => undefined,
+      now: () => 0,
+    };
     return {
+      late: () => limit(),
       workers,
-      queue: new StudyQueue(run, () => 0),
+      queue: new StudyQueue(run, timers),
       done,
       failed,
       study: (uri, empty = false) => ({
@@ -212,6 +224,20 @@ describe('queue of documents', () => {
     workers[0]?.reply(1);
     await settle();
     expect(done).toEqual(['c']);
+  });
+
+  test('a study that does not end is given up and said; the next one runs', async () => {
+    const { workers, queue: studies, done, failed, late, study } = queue();
+    studies.ask(study('endless'), true);
+    studies.ask(study('b'), false);
+    await settle();
+    late();
+    await settle();
+    expect(failed).toEqual(['endless: not over after 120 s']);
+    expect(workers[0]?.ended).toBe(true);
+    workers[1]?.reply(0);
+    await settle();
+    expect(done).toEqual(['b']);
   });
 
   test('a closed document is forgotten', async () => {

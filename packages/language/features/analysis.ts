@@ -38,6 +38,8 @@ export interface Studied {
   readonly older: boolean;
 }
 
+export type FiguresState = 'coming' | 'off' | 'broken' | 'shelf';
+
 export interface AnalysisInput {
   readonly uri: string;
   readonly version: number;
@@ -48,6 +50,8 @@ export interface AnalysisInput {
   /** Occurrences in this document and in those it uses. */
   readonly occurrences: readonly Occurrence[];
   readonly studied?: Studied;
+  /** Why there is no study of this very text: it runs (said if absent), is switched off, broke down, or the file is a shelf. */
+  readonly figures?: FiguresState;
   /** Text of another document of the same circuit. */
   readonly textOf?: (uri: string) => string | undefined;
 }
@@ -61,6 +65,7 @@ export class Analysis {
   readonly findings: readonly Finding[];
   readonly occurrences: readonly Occurrence[];
   readonly studied: Studied | undefined;
+  readonly figures: FiguresState;
   readonly textOf: (uri: string) => string | undefined;
   #tokens: readonly Token[] | undefined;
   #lines: Lines | undefined;
@@ -73,6 +78,7 @@ export class Analysis {
     this.findings = input.findings;
     this.occurrences = input.occurrences;
     this.studied = input.studied;
+    this.figures = input.figures ?? 'coming';
     this.textOf = input.textOf ?? ((uri) => (uri === input.uri ? input.text : undefined));
   }
 

@@ -40,6 +40,8 @@ interface Document {
   /** Computed findings of the latest study, moved along with the edits since. */
   moved: readonly Finding[];
   analysis: Analysis | undefined;
+  /** The study of this text broke down. */
+  broken: boolean;
   /** Handle of the pause before the next study. */
   pause: unknown;
 }
@@ -62,7 +64,7 @@ export class Session {
     this.#parts = parts;
     this.#timers = parts.timers ?? realTimers;
     this.#typing = new Coalescer((uri) => this.#analyse(uri), { timers: this.#timers });
-    this.#studies = new StudyQueue(parts.runner, () => this.#timers.now());
+    this.#studies = new StudyQueue(parts.runner, this.#timers);
   }
 
   /** Studies on or off. Off: what was computed is forgotten. */
@@ -70,6 +72,7 @@ export class Session {
     if (this.#compute === on) return;
     this.#compute = on;
     for (const document of this.#documents.values()) {
+      document.analysis = undefined;
       if (on) this.#study(document, false);
       else {
         this.#studies.drop(document.uri);
@@ -98,6 +101,7 @@ export class Session {
         studied: undefined,
         moved: [],
         analysis: undefined,
+        broken: false,
         pause: undefined,
       });
     } else {
@@ -158,6 +162,7 @@ export class Session {
   /** What was resolved is of an older text; a study of it is cut off. */
   #outdate(document: Document): void {
     document.serial += 1;
+    document.broken = false;
     document.analysis = undefined;
     this.#studies.drop(document.uri);
     if (document.pause !== undefined) this.#timers.clear(document.pause);
@@ -247,7 +252,12 @@ export class Session {
         this.#publish(document);
         this.#parts.studied(uri, document.version ?? 0, ms);
       },
-      failed: (reason) => this.#parts.log(`the study of ${uri} broke down: ${reason}`),
+      failed: (reason) => {
+        this.#parts.log(`the study of ${uri} broke down: ${reason}`);
+        if (!current()) return;
+        document.broken = true;
+        document.analysis = undefined;
+      },
     };
   }
 
@@ -273,6 +283,7 @@ export class Session {
       findings: this.#findings(document),
       occurrences: answer?.occurrences ?? [],
       ...(studied ? { studied: { study: studied.study, circuit: studied.circuit, older: studied.text !== document.serial } } : {}),
+      figures: answer?.runs === false ? 'shelf' : !this.#compute ? 'off' : document.broken ? 'broken' : 'coming',
       textOf: (uri) => this.textOf(uri),
     });
   }

@@ -1,5 +1,9 @@
 /** Which document's study runs: the one edited last comes first, an edit cuts off the study of the same text, another document's is put back. */
+import type { Timers } from './coalesce.ts';
 import type { StudyAnswer, StudyJob, StudyRunner } from './study-runner.ts';
+
+/** A study that takes longer is given up, ms: figures that never come are worse than none. */
+const LONGEST = 120_000;
 
 export interface QueuedStudy {
   readonly uri: string;
@@ -11,15 +15,15 @@ export interface QueuedStudy {
 
 export class StudyQueue {
   readonly #runner: StudyRunner;
-  readonly #now: () => number;
+  readonly #timers: Timers;
   /** Next is last. */
   #waiting: QueuedStudy[] = [];
   #running: QueuedStudy | undefined;
   #disposed = false;
 
-  constructor(runner: StudyRunner, now: () => number) {
+  constructor(runner: StudyRunner, timers: Timers) {
     this.#runner = runner;
-    this.#now = now;
+    this.#timers = timers;
   }
 
   /** Asks for a study. `urgent`: its text is being edited, so it goes before all others. */
@@ -67,15 +71,24 @@ export class StudyQueue {
       return;
     }
     this.#running = study;
-    const began = this.#now();
+    const began = this.#timers.now();
+    const limit = this.#timers.set(() => {
+      if (this.#running !== study) return;
+      this.#running = undefined;
+      this.#runner.cancel();
+      study.failed(`not over after ${LONGEST / 1000} s`);
+      this.#next();
+    }, LONGEST);
     this.#runner.run(job).then(
       (answer) => {
+        this.#timers.clear(limit);
         if (this.#running !== study) return;
         this.#running = undefined;
-        if (answer) study.done(answer, this.#now() - began);
+        if (answer) study.done(answer, this.#timers.now() - began);
         this.#next();
       },
       (reason: unknown) => {
+        this.#timers.clear(limit);
         if (this.#running !== study) return;
         this.#running = undefined;
         study.failed(reason instanceof Error ? reason.message : String(reason));

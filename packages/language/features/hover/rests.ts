@@ -23,8 +23,13 @@ function words(one: Assumption): string {
 /** Says why there are no figures, or that they belong to an older text. */
 export function standing(analysis: Analysis): string {
   if (!analysis.circuit) return '';
-  if (!analysis.studied) return '_Figures are being computed._';
-  return analysis.studied.older ? '_These figures are older than the text; new ones are being computed._' : '';
+  const { studied, figures } = analysis;
+  if (studied && !studied.older) return '';
+  if (figures === 'shelf') return '_Nothing is computed in a file without a `circuit` line._';
+  if (figures === 'off') return '_Computing is switched off (`oilway.compute.enabled`)._';
+  const older = studied ? 'These figures are older than the text; ' : '';
+  if (figures === 'broken') return `_${older}${older ? 'the' : 'The'} study of this text broke down: the log of the server says why._`;
+  return older ? `_${older}new ones are being computed._` : '_Figures are being computed._';
 }
 
 /** "not computed: V2 has no `passes`" for a component or net, where that is so. */
