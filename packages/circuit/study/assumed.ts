@@ -54,7 +54,7 @@ export function noticed(plant: Plant, heat: Study['heat'], cycles: Study['cycles
   return found;
 }
 
-/** Runs take the gas as ideal; where a run goes above 150 bar the real figure is said beside it. */
+/** Where a run goes above 150 bar the real gas decides; what an ideal one would give is said beside it. */
 function idealGas(plant: Plant, cycles: Study['cycles']): readonly Assumption[] {
   return plant.at.accumulators.flatMap((accumulator): readonly Assumption[] => {
     const net = plant.at.netOf(accumulator.id, 'P');
@@ -69,9 +69,9 @@ function idealGas(plant: Plant, cycles: Study['cycles']): readonly Assumption[] 
       {
         component: accumulator.id,
         property: 'gas law',
-        value: `ideal: ${say(circuit, stored.ideal.value, 'volume')} ${between}; real nitrogen: ${say(circuit, stored.real.value, 'volume')}`,
+        value: `real nitrogen: ${say(circuit, stored.real.value, 'volume')} ${between}; an ideal gas: ${say(circuit, stored.ideal.value, 'volume')}`,
         source: 'derived',
-        note: 'the run takes the gas as ideal; filled slowly, real nitrogen after Span et al. (2000) gives the second figure',
+        note: 'filled slowly; nitrogen after Span et al. (2000), which the run follows at such pressures',
       },
     ];
   });

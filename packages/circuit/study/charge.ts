@@ -1,16 +1,22 @@
 /** How much oil an accumulator holds at a pressure, and the pressure to which its net can charge it. */
 import { ATMOSPHERE } from '../fluid/density.ts';
 import { oilAt as chargedWith, prechargeAt } from '../fluid/gas.ts';
+import { realOilAt, realPrechargeAt } from '../fluid/nitrogen.ts';
 import type { Component } from '../model/circuit.ts';
 import { si, valueNamed } from './read.ts';
 import type { Plant } from './scene.ts';
+import { REAL_ABOVE } from './working/gas.ts';
 
-/** Oil (m3) that an accumulator holds at a gauge pressure, filled isothermally: V0 (1 - p0/p), absolute, p0 at the fluid's temperature. */
+/** Oil (m3) that an accumulator holds at a gauge pressure, filled slowly: V0 (1 - p0/p), absolute, p0 at the fluid's temperature; above 150 bar as real nitrogen. */
 export function oilAt(accumulator: Component, pressure: number, temperature: number): number {
   const volume = si(accumulator, 'volume');
   const value = valueNamed(accumulator, 'precharge');
   if (volume === undefined || value?.type !== 'precharge') return 0;
-  return chargedWith(volume, prechargeAt(value.pressure.si, value.temperature.si, temperature), pressure + ATMOSPHERE, 1);
+  const p = pressure + ATMOSPHERE;
+  if (pressure > REAL_ABOVE) {
+    return realOilAt(volume, realPrechargeAt(value.pressure.si + ATMOSPHERE, value.temperature.si, temperature), p, temperature);
+  }
+  return chargedWith(volume, prechargeAt(value.pressure.si, value.temperature.si, temperature), p, 1);
 }
 
 /** With no cycle to tell: the lowest of compensators, reliefs and switch thresholds on nets joined to the accumulator, Pa gauge. */
@@ -60,16 +66,28 @@ function joinedThroughOpen(plant: Plant, start: string): ReadonlySet<string> {
   return seen;
 }
 
-/** Oil of every accumulator when charged: the highest pressure its net reached in the cycles, else the usual charge. */
-export function chargedOil(plant: Plant, highest: Readonly<Record<string, number>>): Record<string, number> {
+/** What accumulators hold: oil by id, and the absolute gas pressure that goes with it. */
+export interface Charge {
+  readonly oil: Readonly<Record<string, number | 'empty'>>;
+  readonly gasPressures: Readonly<Record<string, number>>;
+}
+
+/** Every accumulator charged: to the highest pressure its net reached in the cycles, else to the usual charge. */
+export function charge(plant: Plant, highest: Readonly<Record<string, number>>): Charge {
   const oil: Record<string, number> = {};
+  const gasPressures: Record<string, number> = {};
   for (const one of plant.at.accumulators) {
     const net = plant.at.netOf(one.id, 'P');
     const reached = net === undefined ? undefined : highest[net];
     const pressure = reached ?? usualCharge(plant, one);
     oil[one.id] = pressure === undefined ? 0 : oilAt(one, pressure, plant.temperature);
+    if (pressure !== undefined && oil[one.id]! > 0) gasPressures[one.id] = pressure + ATMOSPHERE;
   }
-  return oil;
+  return { oil, gasPressures };
+}
+/** No oil, the gas at precharge. */
+export function empty(plant: Plant): Charge {
+  return { oil: noOil(plant), gasPressures: {} };
 }
 export function noOil(plant: Plant): Record<string, 'empty'> {
   return Object.fromEntries(plant.at.accumulators.map((one) => [one.id, 'empty' as const]));

@@ -1,7 +1,7 @@
 /** Cycles and manual functions over time: start, first run, repetition until periodic, what faults. */
 import type { Setting, Solution, Stand } from '../assembly/machine.ts';
 import type { Cycle } from '../model/circuit.ts';
-import { chargedOil, noOil } from './charge.ts';
+import { type Charge, charge, empty } from './charge.ts';
 import { isDetent, positionsOf } from './coils.ts';
 import { decide, detentsAfter, demandOf, NOTHING } from './logic.ts';
 import { dutyOf, meanPower } from './duty.ts';
@@ -50,14 +50,10 @@ function allSteps(plant: Plant, cycle: Cycle, depth: number): readonly Cycle['st
 }
 
 /** All drives turn, valves sprung, cylinders at `begins`: pressures as at REST. */
-export function startOf(
-  plant: Plant,
-  detents: Detents,
-  oil: Readonly<Record<string, number | 'empty'>>,
-): { readonly setting: Setting; readonly solution: Solution } {
+export function startOf(plant: Plant, detents: Detents, stored: Charge): { readonly setting: Setting; readonly solution: Solution } {
   const dead = { contact: () => undefined, live: () => false, running: () => false };
   const control = decide(plant.at, NOTHING, dead, { whileLines: false });
-  const setting = settingOf(plant, { control, detents, positions: begins(plant), oil, loads: loadsInSteps(plant, []) });
+  const setting = settingOf(plant, { control, detents, positions: begins(plant), ...stored, loads: loadsInSteps(plant, []) });
   const solution = plant.machine.settle(setting);
   return { setting: { ...setting, bits: solution.bits }, solution };
 }
@@ -67,10 +63,10 @@ export function runCycle(plant: Plant, cycle: Cycle): Ran {
 }
 
 function runAutomatic(plant: Plant, cycle: Cycle): Ran {
-  const first = attempt(plant, cycle, noOil(plant));
+  const first = attempt(plant, cycle, empty(plant));
   const storing = plant.at.accumulators.length > 0;
   if (first.completed || !storing || plant.cancelled()) return first.ran;
-  const second = attempt(plant, cycle, chargedOil(plant, {}));
+  const second = attempt(plant, cycle, charge(plant, {}));
   if (!second.completed) return first.ran;
   const short: Fault = {
     kind: 'first run short of oil',
@@ -80,13 +76,9 @@ function runAutomatic(plant: Plant, cycle: Cycle): Ran {
   return { ...second.ran, result: { ...second.ran.result, faults: [short, ...second.ran.result.faults] } };
 }
 
-function attempt(
-  plant: Plant,
-  cycle: Cycle,
-  oil: Readonly<Record<string, number | 'empty'>>,
-): { readonly completed: boolean; readonly ran: Ran } {
+function attempt(plant: Plant, cycle: Cycle, stored: Charge): { readonly completed: boolean; readonly ran: Ran } {
   const detents = detentsAtStart(plant, cycle);
-  const { setting, solution } = startOf(plant, detents, oil);
+  const { setting, solution } = startOf(plant, detents, stored);
   const runner = new Runner(plant, plant.machine.start(setting, solution), setting, detents);
   const wanted = typeof cycle.repeat === 'number' ? cycle.repeat : 1;
   const settling = cycle.repeat === 'ever' || (plant.at.accumulators.length > 0 && typeof cycle.repeat !== 'number');
@@ -144,7 +136,7 @@ function periodic(plant: Plant, before: Closing, after: Closing, timeBefore: num
 /** Each step a push button: alone, dead when released, one after another from where the one before left the machine. */
 function runManual(plant: Plant, cycle: Cycle): Ran {
   const detents = detentsAtStart(plant, cycle);
-  const { setting, solution } = startOf(plant, detents, plant.at.accumulators.length > 0 ? chargedOil(plant, {}) : {});
+  const { setting, solution } = startOf(plant, detents, charge(plant, {}));
   const runner = new Runner(plant, plant.machine.start(setting, solution), setting, detents);
   const ends: End[] = [];
   const faults: Fault[] = [];

@@ -3,7 +3,7 @@ import { assemble } from '../assembly/assemble.ts';
 import type { Machine } from '../assembly/machine.ts';
 import type { Circuit } from '../model/circuit.ts';
 import { noticed } from './assumed.ts';
-import { chargedOil } from './charge.ts';
+import { charge } from './charge.ts';
 import { type Ran, runCycle } from './cycle.ts';
 import { heatOf } from './heat.ts';
 import { spread } from './not-computed.ts';
@@ -37,7 +37,7 @@ export function study(circuit: Circuit, options: StudyOptions = {}): Study {
     rans,
     steps.flatMap((one) => one.points),
   );
-  const heritage = heritageOf(plant, rans, chargedOil(plant, rans.length > 0 ? highest : {}));
+  const heritage = heritageOf(plant, rans, charge(plant, rans.length > 0 ? highest : {}));
   const states = studyStates(plant, heritage).map((one) => ({ ...one, result: bounded(plant, one.result, highest) }));
   const cycles = rans.map((one) => one.result);
   const heat = heatOf(plant, rans, states);

@@ -9,6 +9,8 @@ export interface Situated {
   readonly detents: Readonly<Record<string, Stand['position']>>;
   readonly positions: Readonly<Record<string, number>>;
   readonly oil?: Readonly<Record<string, number | 'empty'>>;
+  /** Absolute gas pressures that go with the oil, Pa. */
+  readonly gasPressures?: Readonly<Record<string, number>>;
   readonly bits?: Readonly<Record<string, boolean>>;
   readonly loads: Readonly<Record<string, BodyLoad>>;
   /** Drives that stand, besides those the control stops. */
@@ -24,6 +26,7 @@ export function settingOf(plant: Plant, of: Situated): Setting {
     bits: of.bits ?? {},
     positions: of.positions,
     oil: of.oil ?? {},
+    ...(of.gasPressures === undefined ? {} : { gasPressures: of.gasPressures }),
     loads: of.loads,
   };
 }

@@ -1,7 +1,7 @@
 /** Machine states: OFF, REST, IDLE, STOP from every step and from rest, every coil alone, every manual function. */
 import type { Setting, Solution, Stand } from '../assembly/machine.ts';
 import type { Action, Condition } from '../model/circuit.ts';
-import { noOil } from './charge.ts';
+import { type Charge, empty } from './charge.ts';
 import { greatest, isDetent } from './coils.ts';
 import { atoms, closed } from './contacts.ts';
 import type { Situation } from './conditions.ts';
@@ -18,12 +18,12 @@ import { allDetents, type Choice, type Factors, variantsOf } from './variants.ts
 
 /** What the cycles leave behind for the states: oil when charged, ends of steps, detents and oil after each step. */
 export interface Heritage {
-  readonly charged: Readonly<Record<string, number>>;
+  readonly charged: Charge;
   /** Body -> positions in which steps end. */
   readonly ends: Readonly<Record<string, readonly number[]>>;
   /** Step -> detents as it left them. */
   readonly detents: ReadonlyMap<string, Readonly<Record<string, Stand['position']>>>;
-  readonly left?: Readonly<Record<string, number>>;
+  readonly left?: Charge;
 }
 
 /** A state with the settings of its variants, so that it can be run on in time. */
@@ -35,10 +35,10 @@ export interface StudiedState {
 
 const DEAD: Situation = { contact: () => undefined, live: () => false, running: () => false };
 
-export function heritageOf(plant: Plant, rans: readonly Ran[], charged: Readonly<Record<string, number>>): Heritage {
+export function heritageOf(plant: Plant, rans: readonly Ran[], charged: Charge): Heritage {
   const ends: Record<string, number[]> = {};
   const detents = new Map<string, Readonly<Record<string, Stand['position']>>>();
-  let left: Readonly<Record<string, number>> | undefined;
+  let left: Charge | undefined;
   const valves = plant.at
     .ofKind('directional')
     .filter(isDetent)
@@ -55,7 +55,8 @@ export function heritageOf(plant: Plant, rans: readonly Ran[], charged: Readonly
         const stands = trace.snapshotAt(span.to, true)?.setting.valves ?? {};
         detents.set(span.id, Object.fromEntries(valves.flatMap((id) => (stands[id] ? [[id, stands[id].position]] : []))));
       }
-      left = trace.samples.at(-1)?.solution.oil ?? left;
+      const last = trace.samples.at(-1)?.solution;
+      if (last) left = { oil: last.oil, gasPressures: last.gasPressures ?? {} };
     }
   }
   return { charged, ends, detents, ...(left === undefined ? {} : { left }) };
@@ -95,13 +96,13 @@ export function studyStates(plant: Plant, heritage: Heritage): readonly StudiedS
 }
 
 function charged(plant: Plant, heritage: Heritage): NonNullable<Factors['accumulators']> {
-  return plant.at.accumulators.length === 0 ? [{ oil: {}, as: 'none' }] : [{ oil: heritage.charged, as: 'charged' }];
+  return plant.at.accumulators.length === 0 ? [{ oil: {}, as: 'none' }] : [{ ...heritage.charged, as: 'charged' }];
 }
 function accumulatorsBoth(plant: Plant, heritage: Heritage): NonNullable<Factors['accumulators']> {
-  return plant.at.accumulators.length === 0 ? [{ oil: {}, as: 'none' }] : [...charged(plant, heritage), { oil: noOil(plant), as: 'empty' }];
+  return plant.at.accumulators.length === 0 ? [{ oil: {}, as: 'none' }] : [...charged(plant, heritage), { ...empty(plant), as: 'empty' }];
 }
 function leftOil(plant: Plant, heritage: Heritage): NonNullable<Factors['accumulators']> | undefined {
-  return plant.at.accumulators.length > 0 && heritage.left ? [{ oil: heritage.left, as: 'charged' }] : undefined;
+  return plant.at.accumulators.length > 0 && heritage.left ? [{ ...heritage.left, as: 'charged' }] : undefined;
 }
 
 /** Whether a while line can be true without a cycle. */
@@ -306,6 +307,7 @@ function settled(
       detents: choice.detents,
       positions: choice.positions,
       oil: choice.oil,
+      ...(choice.gasPressures === undefined ? {} : { gasPressures: choice.gasPressures }),
       bits: Object.fromEntries(choice.lifted.map((id) => [id, true])),
       loads: choice.loads,
       standing: choice.standing,

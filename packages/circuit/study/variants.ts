@@ -13,6 +13,7 @@ const MOST = 256;
 export interface Choice {
   readonly detents: Readonly<Record<string, Stand['position']>>;
   readonly oil: Readonly<Record<string, number | 'empty'>>;
+  readonly gasPressures?: Readonly<Record<string, number>>;
   readonly accumulators: 'charged' | 'empty' | 'none';
   /** Drives that stand. */
   readonly standing: readonly string[];
@@ -27,7 +28,11 @@ export interface Choice {
 
 export interface Factors {
   readonly detents?: readonly Readonly<Record<string, Stand['position']>>[];
-  readonly accumulators?: readonly { readonly oil: Readonly<Record<string, number | 'empty'>>; readonly as: Choice['accumulators'] }[];
+  readonly accumulators?: readonly {
+    readonly oil: Readonly<Record<string, number | 'empty'>>;
+    readonly gasPressures?: Readonly<Record<string, number>>;
+    readonly as: Choice['accumulators'];
+  }[];
   readonly standing?: readonly (readonly string[])[];
 }
 
@@ -142,6 +147,7 @@ export function variantsOf(plant: Plant, factors: Factors, ends: Readonly<Record
     return {
       detents: detent,
       oil: accumulator.oil,
+      ...(accumulator.gasPressures === undefined ? {} : { gasPressures: accumulator.gasPressures }),
       accumulators: accumulator.as,
       standing: stand,
       lifted: lift,

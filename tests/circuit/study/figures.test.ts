@@ -57,14 +57,16 @@ describe('duty of a drive', () => {
 });
 
 describe('stored oil', () => {
-  // Absolute pressures: 10 L, 90 bar at 20 degC, oil between 100 and 200 bar: 4.482 L isothermal (recomputed from Boyle's law; gauge figures would give 4.500).
-  it('10 L at 90 bar gives 4.482 L between 100 and 200 bar', () => {
+  // Absolute pressures, Boyle by hand: 10 L x 91.013 x (1/101.013 - 1/141.013) = 2.556 L.
+  it('10 L at 90 bar gives 2.556 L between 100 and 140 bar', () => {
     const accumulator = part(
       'circuit T\naccumulator A1 (bladder, volume 10 L, precharge 90 bar at 20 degC, gas nitrogen)\nplug A1.P\n',
       'A1',
     );
-    expect((oilAt(accumulator, 200e5, 293.15) - oilAt(accumulator, 100e5, 293.15)) * 1000).toBeCloseTo(4.482, 3);
+    expect((oilAt(accumulator, 140e5, 293.15) - oilAt(accumulator, 100e5, 293.15)) * 1000).toBeCloseTo(2.556, 3);
     expect(oilAt(accumulator, 80e5, 293.15)).toBe(0);
+    // Above 150 bar the real gas decides: 5.26 L at 200 bar, an ideal one would take 5.47 L.
+    expect(oilAt(accumulator, 200e5, 293.15) * 1000).toBeLessThan(5.35);
   });
   it('as real nitrogen 10 L at 90 bar give 4.26 L between 100 and 200 bar, not 4.48 L', () => {
     // Computed from the reference equation of Span et al., J. Phys. Chem. Ref. Data 29 (2000) 1361.
