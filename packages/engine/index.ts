@@ -7,3 +7,4 @@ export * from './results.ts';
 export { sensitivities } from './sensitivity.ts';
 export { solveSteady } from './steady.ts';
 export { Transient } from './transient.ts';
+export { magnitude } from './smooth.ts';

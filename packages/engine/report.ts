@@ -1,7 +1,7 @@
 /** From a solved system to the result a caller reads. */
 import type { System } from './residual.ts';
 import type { ActuatorContact, SteadyResult } from './results.ts';
-import { onset, ramp, resisting, sliding } from './smooth.ts';
+import { magnitude, onset, ramp, resisting, sliding } from './smooth.ts';
 import { BAND_EDGE, CEILING_ONSET, DELTA, FICTITIOUS, FLOOR_PRESSURE, SUPPLY_ONSET } from './tolerances.ts';
 
 export type Reported = Omit<SteadyResult, 'converged' | 'how' | 'iterations' | 'residual' | 'diagnosis'>;
@@ -31,7 +31,7 @@ export function resultOf(sys: System, contacts: readonly ActuatorContact[], atSt
     const perPressure = net.spec.actuators[a]!.pressureFriction ?? 0;
     if (perPressure > 0 && net.chamberStart[a + 1]! - first >= 2) {
       const d = sys.p[net.chamberNodes[first]!]! - sys.p[net.chamberNodes[first + 1]!]!;
-      coulomb += perPressure * (Math.sqrt(d * d + DELTA * DELTA) - DELTA);
+      coulomb += perPressure * magnitude(d, DELTA);
     }
     const { brake } = net.spec.actuators[a]!;
     if (brake) {

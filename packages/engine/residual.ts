@@ -2,7 +2,7 @@
 import type { Network } from './compile.ts';
 import { MAX_INPUTS, MAX_OUTPUTS, OPENING } from './laws/law.ts';
 import type { LoadState } from './network.ts';
-import { onset, onsetSlope, ramp, rampSlope, resisting, resistingSlope, sliding, slidingSlope } from './smooth.ts';
+import { magnitude, magnitudeSlope, onset, onsetSlope, ramp, rampSlope, resisting, resistingSlope, sliding, slidingSlope } from './smooth.ts';
 import { SparseLu } from './sparse/lu.ts';
 import { cellOf, insideOf, lineAt, sortedKnots, sumAt } from './tables.ts';
 import {
@@ -175,8 +175,9 @@ export class System {
       const own = ownOf[e]!;
       if (own >= 0) z[inputs++] = y[own]!;
       if (law.actuator >= 0) z[inputs++] = x[law.actuator]!;
-      law.evaluate(z, parameters, blend, out, gradient);
+      const open = law.evaluate(z, parameters, blend, out, gradient);
       const terminals = law.terminals;
+      if (open === false && !law.floor) continue;
       if (law.floor) {
         for (let t = 1; t < terminals; t++) {
           const leak = floor * (z[0]! - z[t]!);
@@ -263,9 +264,8 @@ export class System {
     const perPressure = spec.pressureFriction ?? 0;
     if (perPressure > 0 && end - first >= 2) {
       const d = p[net.chamberNodes[first]!]! - p[net.chamberNodes[first + 1]!]!;
-      const apart = Math.sqrt(d * d + DELTA * DELTA);
-      coulomb += perPressure * (apart - DELTA);
-      const by = (perPressure * d * sliding(v, v0) * scale) / apart;
+      coulomb += perPressure * magnitude(d, DELTA);
+      const by = perPressure * magnitudeSlope(d, DELTA) * sliding(v, v0) * scale;
       j[net.chamberForceSlot[first]!]! -= by;
       j[net.chamberForceSlot[first + 1]!]! += by;
     }

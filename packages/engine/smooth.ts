@@ -92,3 +92,11 @@ export function resistingSlope(v: number, v0: number): number {
   const t = v / (3 * v0);
   return t >= 1 ? 0 : (6 * t * (1 - t)) / (3 * v0);
 }
+
+/** Size of z, rounded at zero over `width` and exact beyond it: friction that grows with a pressure difference keeps its declared share. */
+export function magnitude(z: number, width: number): number {
+  return z < 0 ? positive(-z, width) : positive(z, width);
+}
+export function magnitudeSlope(z: number, width: number): number {
+  return z < 0 ? -positiveSlope(-z, width) : positiveSlope(z, width);
+}

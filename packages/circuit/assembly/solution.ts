@@ -1,5 +1,5 @@
 /** From the engine's result to a solution in SI and names. */
-import type { Network, SteadyResult } from '@oilway/engine';
+import { magnitude, type Network, type SteadyResult } from '@oilway/engine';
 import type { Assembled } from './assembled.ts';
 import { translate } from './diagnosis.ts';
 import type { Setting, Solution, Stand } from './machine.ts';
@@ -7,6 +7,7 @@ import { chargeIn, forceAt, ofBody, positionOf } from './setting.ts';
 import { fromKilo, fromLitresPerSecond, fromMPa, toMPa } from './units.ts';
 
 /** Laminar core of pressure-dependent friction, MPa. */
+/** Pressure difference below which friction that grows with it is rounded, MPa (as in the engine). */
 const DELTA = 0.01;
 
 /** Where bodies and gas charges stand: m or rad by body index, oil m3 and absolute pressure Pa by accumulator index. */
@@ -204,7 +205,7 @@ function ownFriction(assembled: Assembled, i: number, result: SteadyResult): num
   const [first, second] = spec?.chambers ?? [];
   if (spec?.pressureFriction !== undefined && first !== undefined && second !== undefined) {
     const d = (result.pressures[first.node] ?? 0) - (result.pressures[second.node] ?? 0);
-    own += fromKilo(spec.pressureFriction * (Math.sqrt(d * d + DELTA * DELTA) - DELTA));
+    own += fromKilo(spec.pressureFriction * magnitude(d, DELTA));
   }
   return own;
 }
