@@ -22,6 +22,10 @@ export function install(root) {
   const why = whyInstall(root);
   if (why === undefined) return;
   console.log(`Installing the locked packages (npm ci): ${why}.`);
-  const done = spawnSync('npm', ['ci', '--no-audit', '--no-fund', '--loglevel=error'], { cwd: root, stdio: 'inherit', shell: process.platform === 'win32' });
+  const done = spawnSync('npm', ['ci', '--no-audit', '--no-fund', '--loglevel=error'], {
+    cwd: root,
+    stdio: 'inherit',
+    shell: process.platform === 'win32',
+  });
   if (done.status !== 0) throw new Error('npm ci failed; its own messages stand above.');
 }
