@@ -6,7 +6,6 @@ import type { Setting, Solution, Stand } from './machine.ts';
 import { chargeIn, forceAt, ofBody, positionOf } from './setting.ts';
 import { fromKilo, fromLitresPerSecond, fromMPa, toMPa } from './units.ts';
 
-/** Laminar core of pressure-dependent friction, MPa. */
 /** Pressure difference below which friction that grows with it is rounded, MPa (as in the engine). */
 const DELTA = 0.01;
 
