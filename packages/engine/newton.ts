@@ -16,6 +16,9 @@ import {
 /** Pseudo storage of the pseudo-transients, L/MPa, t per 1e-3 m2, MPa s/L: of the order of a real net, its value only sets the pseudo time. */
 const PSEUDO_STORAGE = 1e-2;
 
+/** How often a line search may end uphill, and with which share of its step. */
+const STUCK = 4;
+const UPHILL = 0.125;
 /** Residual below which nothing more is asked, L/s, MPa. */
 const POLISHED = 1e-11;
 
@@ -91,6 +94,7 @@ export class Solver {
     sys.evaluate();
     let length = this.length();
     let polished = -1;
+    let stuck = 0;
     for (let k = 0; k < most; k++) {
       this.iterations++;
       if (!Number.isFinite(length) || !sys.lu.factor(sys.j)) return false;
@@ -113,6 +117,14 @@ export class Solver {
           break;
         }
         if (polished >= 0 || ++halvings > HALVINGS) {
+          if (polished < 0 && stuck++ < STUCK) {
+            // Uphill now and then: most often the way leads over the edge of a valve that opens or shuts.
+            share = UPHILL;
+            for (let i = 0; i < n; i++) y[i] = y0[i]! + share * d[i]!;
+            sys.evaluate();
+            length = this.length();
+            break;
+          }
           // No better than it was: converged already, or not to be had.
           y.set(y0);
           sys.evaluate();

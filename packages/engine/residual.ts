@@ -2,7 +2,18 @@
 import type { Network } from './compile.ts';
 import { MAX_INPUTS, MAX_OUTPUTS, OPENING } from './laws/law.ts';
 import type { LoadState } from './network.ts';
-import { magnitude, magnitudeSlope, onset, onsetSlope, ramp, rampSlope, resisting, resistingSlope, sliding, slidingSlope } from './smooth.ts';
+import {
+  magnitude,
+  magnitudeSlope,
+  onset,
+  onsetSlope,
+  ramp,
+  rampSlope,
+  resisting,
+  resistingSlope,
+  sliding,
+  slidingSlope,
+} from './smooth.ts';
 import { SparseLu } from './sparse/lu.ts';
 import { cellOf, insideOf, lineAt, sortedKnots, sumAt } from './tables.ts';
 import {

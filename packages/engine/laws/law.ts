@@ -27,9 +27,9 @@ export interface Law {
   /**
    * Inputs z: pressures of `nodes`, then the own unknown, then the position. Writes flow INTO the element at each terminal,
    * then the own residual, to `out`; the opening to out[OPENING]; derivatives row by row (outputs by inputs) to `gradient`.
-   * `blend` >= 1 widens all roundings (continuation); 1 is the law itself.
+   * `blend` >= 1 widens all roundings (continuation); 1 is the law itself. Returns false when it is shut: all flows and slopes are zero.
    */
-  evaluate(z: Float64Array, parameters: Float64Array, blend: number, out: Float64Array, gradient: Float64Array): void;
+  evaluate(z: Float64Array, parameters: Float64Array, blend: number, out: Float64Array, gradient: Float64Array): unknown;
 }
 
 export const inputsOf = (law: Law): number => law.nodes.length + law.own + (law.actuator >= 0 ? 1 : 0);
@@ -43,6 +43,15 @@ export function through(q: number, da: number, db: number, out: Float64Array, gr
   gradient[1] = db;
   gradient[2] = -da;
   gradient[3] = -db;
+}
+
+/** A shut two-terminal element with `inputs` inputs: no flow, no slopes. */
+export function shut(out: Float64Array, gradient: Float64Array, inputs: number): false {
+  out[0] = 0;
+  out[1] = 0;
+  out[OPENING] = 0;
+  for (let i = 0; i < 2 * inputs; i++) gradient[i] = 0;
+  return false;
 }
 
 /** Heads of an element padded with zeros to the number of its nodes. */

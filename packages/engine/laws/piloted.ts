@@ -5,7 +5,7 @@
 import type { PilotedSpec } from '../network.ts';
 import { positive, positiveSlope, ramp, rampSlope, root, rootSlope } from '../smooth.ts';
 import { BAND_EDGE, DELTA, EPS } from '../tolerances.ts';
-import { headsOf, type Law, OPENING } from './law.ts';
+import { headsOf, type Law, OPENING, shut } from './law.ts';
 
 export function pilotedLaw(spec: PilotedSpec): Law {
   const { k, set, band, oneWay } = spec;
@@ -25,6 +25,7 @@ export function pilotedLaw(spec: PilotedSpec): Law {
     evaluate(z, parameters, blend, out, gradient) {
       let pilot = -parameters[bit >= 0 && parameters[bit]! > 0.5 ? setWhenOn : set]!;
       for (let i = 0; i < weights.length; i++) pilot += weights[i]! * z[2 + i]!;
+      if (pilot <= 0) return shut(out, gradient, count);
       const width = Math.max(parameters[band]!, 1e-6);
       const edge = Math.min(0.5, BAND_EDGE * blend);
       const y = ramp(pilot / width, edge);
@@ -44,6 +45,7 @@ export function pilotedLaw(spec: PilotedSpec): Law {
         gradient[2 + i] = perPilot * weights[i]!;
         gradient[count + 2 + i] = -perPilot * weights[i]!;
       }
+      return true;
     },
   };
 }

@@ -5,7 +5,7 @@
 import type { ReliefSpec } from '../network.ts';
 import { positive, positiveSlope, root, rootSlope, smaller, smallerSlope } from '../smooth.ts';
 import { DELTA, EPS, LEAST_RELIEF_BAND, MIN_EDGE } from '../tolerances.ts';
-import { headsOf, type Law, OPENING } from './law.ts';
+import { headsOf, type Law, OPENING, shut } from './law.ts';
 
 export function reliefLaw(spec: ReliefSpec): Law {
   const { set, vented, override, qN, k } = spec;
@@ -37,6 +37,7 @@ export function reliefLaw(spec: ReliefSpec): Law {
         effectiveByX = positiveSlope(overSet, EPS * blend);
         effective -= positive(overSet, EPS * blend);
       }
+      if (z[0]! <= opens) return shut(out, gradient, count);
       const wanted = override * effective;
       const band = Math.max(wanted, LEAST_RELIEF_BAND);
       const bandByX = wanted > LEAST_RELIEF_BAND ? override * effectiveByX : 0;
@@ -59,6 +60,7 @@ export function reliefLaw(spec: ReliefSpec): Law {
       gradient[2] = -byLinear * liftSlope * opensByRef;
       if (remote) gradient[3] = byLinear * (-liftSlope * opensByX - (linear / band) * bandByX);
       for (let i = 0; i < count; i++) gradient[count + i] = -gradient[i]!;
+      return true;
     },
   };
 }
