@@ -3,7 +3,7 @@ import type { LoadValue } from '@oilway/circuit';
 import type { Dimension, Quantity } from '@oilway/quantity';
 import type { Entry } from '../generated/ast.ts';
 import { Items } from './items.ts';
-import { type Read, type Reading, readQuantity, unknown, wrong } from './shapes.ts';
+import { type Read, type Reading, readQuantity, unknown, wrong } from './reading.ts';
 import { resolvePlace } from './places.ts';
 
 export function readLoad(reading: Reading, items: Items, origin: LoadValue['origin']): Read {

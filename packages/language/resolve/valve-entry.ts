@@ -1,7 +1,7 @@
 /** Entries of valves: positions with their paths, coils, cams. */
 import type { Origin, PathSpec } from '@oilway/circuit';
 import { Items } from './items.ts';
-import { type Read, type Reading, readQuantity, unknown, wrong } from './shapes.ts';
+import { type Read, type Reading, readQuantity, unknown, wrong } from './reading.ts';
 
 export const NAMED_CENTRES = ['closed', 'open', 'tandem', 'float'] as const;
 type NamedCentre = (typeof NAMED_CENTRES)[number];
