@@ -1,7 +1,8 @@
 /** Every element law: derivatives against differences, volume balance, passivity, monotony, and the declared point met exactly. */
-import type { ActuatorSpec, ElementSpec } from '@oilway/engine';
+import type { ActuatorSpec, CheckSpec, ElementSpec, PathSpec } from '@oilway/engine';
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
+import { Batch } from '../../packages/engine/laws/batch.ts';
 import { lawOf } from '../../packages/engine/laws/index.ts';
 import { inputsOf, type Law, MAX_INPUTS, MAX_OUTPUTS, outputsOf } from '../../packages/engine/laws/law.ts';
 
@@ -188,4 +189,29 @@ describe.each(Object.entries(specs))('%s', (name, spec) => {
       );
     });
   }
+});
+
+it('passages and checks in the loop give what the laws give', () => {
+  fc.assert(
+    fc.property(
+      pressure,
+      pressure,
+      parameters,
+      fc.constantFrom(1, 10, 100),
+      fc.constantFrom<'path' | 'check'>('path', 'check'),
+      (a, b, par, blend, type) => {
+        const spec = { type, tag: 0, a: 0, b: 1, k: 0.7, crack: 0.05, opening: 3, heads: [0.02, 0.01] } as PathSpec | CheckSpec;
+        const law = lawOf(spec, []);
+        const single = evaluate(law, [a - 0.02, b - 0.01], par, blend);
+        const floor = 1e-6;
+        const r = new Float64Array(3);
+        const j = new Float64Array(5);
+        new Batch([spec], type === 'check', [0, 1], [0, 1, 2, 3]).stamp(Float64Array.from([a, b]), par, blend, floor, r, j);
+        const leak = floor * (a - b - 0.01);
+        expect(Math.abs(r[0]! + single.out[0]! + leak)).toBeLessThan(1e-12);
+        expect(Math.abs(r[1]! + single.out[1]! - leak)).toBeLessThan(1e-12);
+        for (let i = 0; i < 4; i++) expect(Math.abs(j[i]! + single.gradient[i]! + (i % 3 === 0 ? floor : -floor))).toBeLessThan(1e-9);
+      },
+    ),
+  );
 });
