@@ -2,7 +2,7 @@
 import type { Dimension } from '@oilway/quantity';
 import { KINDS, type ActuatorPoint, type Component, type Point } from '@oilway/circuit';
 import type { Analysis } from '../analysis.ts';
-import { actuatorAt, extent, flowInto, placesOf, pressureAt, STILL, type Place } from './places.ts';
+import { actuatorAt, extent, flowInto, greatest, placesOf, pressureAt, STILL, type Place } from './places.ts';
 import { notComputed, restsOn, standing } from './rests.ts';
 import { literal, paragraphs, Show, table } from './show.ts';
 import { forceWorking, speedWorking, torqueWorking, workingText } from './working.ts';
@@ -50,11 +50,13 @@ export function rowsOf(places: readonly Place[], id: string): Row[] {
   return rows;
 }
 
+/** Force needed of what is available; undefined where nothing is needed or asked for. */
+const strain = (at: ActuatorPoint | undefined): number | undefined =>
+  at?.available !== undefined && at.needed > 0 ? at.needed / at.available : undefined;
+
 /** The point with the least of force available against needed; without such, the one that presses most. */
 export function tightest(row: Row): Row['points'][number] | undefined {
-  const ratio = (one: ActuatorPoint): number =>
-    one.available !== undefined && one.needed > 0 ? one.available / one.needed : Number.POSITIVE_INFINITY;
-  return [...row.points].sort((a, b) => ratio(a.at) - ratio(b.at) || Math.abs(b.at.force) - Math.abs(a.at.force))[0];
+  return greatest(row.points, (one) => strain(one.at)) ?? greatest(row.points, (one) => Math.abs(one.at.force));
 }
 
 export function limits(row: Row): string {
@@ -128,11 +130,8 @@ function forceText(at: ActuatorPoint, direction: -1 | 0 | 1, force: Dimension, s
 
 function working(rows: readonly Row[], circuit: Parameters<typeof pressureAt>[0], id: string, units: ActuatorUnits, show: Show): string {
   const moving = rows.filter((row) => row.direction !== 0);
-  const margin = (row: Row): number => {
-    const at = tightest(row)?.at;
-    return at?.available !== undefined && at.needed > 0 ? at.available / at.needed : Number.POSITIVE_INFINITY;
-  };
-  const row = [...(moving.length > 0 ? moving : rows)].sort((a, b) => margin(a) - margin(b))[0];
+  const choice = moving.length > 0 ? moving : rows;
+  const row = greatest(choice, (one) => strain(tightest(one)?.at)) ?? choice[0];
   const worst = row && tightest(row);
   if (!row || !worst) return '';
   const force = forceWorking(circuit, id, worst.point) ?? torqueWorking(circuit, id, worst.point);

@@ -1,7 +1,7 @@
 /** Hover on a line: flow, velocity, Reynolds number, loss by step, and the highest pressure against the rating. */
 import { oilOf, ratedAt, type Circuit, type LineStatement, type Piece, type Point, type PortRef } from '@oilway/circuit';
 import type { Analysis } from '../analysis.ts';
-import { componentOf, extent, placesOf, type Place } from './places.ts';
+import { componentOf, extent, greatest, placesOf, type Place } from './places.ts';
 import { notComputed, restsOn, standing } from './rests.ts';
 import { literal, paragraphs, Show, table } from './show.ts';
 
@@ -119,10 +119,10 @@ function pieceText(circuit: Circuit, piece: Piece, places: readonly Place[], sho
       peak === undefined ? '—' : show.figure(peak, 'pressure'),
     ];
   });
-  const worst = places
-    .map((place) => ({ place, peak: highest(place) }))
-    .filter((one) => one.peak !== undefined)
-    .sort((a, b) => (b.peak ?? 0) - (a.peak ?? 0))[0];
+  const worst = greatest(
+    places.map((place) => ({ place, peak: highest(place) })),
+    (one) => one.peak,
+  );
   const rating = piece.nets
     .map((net) => ratingOf(circuit, net))
     .filter((one) => one !== undefined)

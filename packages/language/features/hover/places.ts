@@ -49,3 +49,16 @@ export function extent(values: readonly (number | undefined)[]): { readonly low:
 
 /** Slower than this is leakage, not motion: 0.05 mm/s, 0.05 deg/s (in SI). */
 export const STILL = { velocity: 5e-5, rotation: (0.05 * Math.PI) / 180 } as const;
+
+/** The item with the greatest value. Of those alike within a thousandth the first: what is shown must not hop with the last digit of a solution. */
+export function greatest<T>(items: readonly T[], value: (item: T) => number | undefined): T | undefined {
+  let best: T | undefined;
+  let most = Number.NEGATIVE_INFINITY;
+  for (const item of items) {
+    const one = value(item);
+    if (one === undefined || Number.isNaN(one) || (best !== undefined && one <= most + 1e-3 * Math.abs(most))) continue;
+    best = item;
+    most = one;
+  }
+  return best;
+}

@@ -1,7 +1,7 @@
 /** Hover on a pump or a drive: flow, pressure, hydraulic and shaft power by step, and how the drive is loaded. */
 import { KINDS, read, type Component, type Point } from '@oilway/circuit';
 import type { Analysis } from '../analysis.ts';
-import { componentOf, extent, flowInto, placesOf, pressureAt, type Place } from './places.ts';
+import { componentOf, extent, flowInto, greatest, placesOf, pressureAt, type Place } from './places.ts';
 import { notComputed, restsOn, standing } from './rests.ts';
 import { literal, paragraphs, Show, table } from './show.ts';
 import { flowWorking, shaftWorking } from './supply-working.ts';
@@ -51,10 +51,8 @@ export function hoverPump(analysis: Analysis, pump: Component): string {
       ? spanOf(place, show, 'ratio', (point) => (point.power[drive.id] === undefined ? undefined : (point.power[drive.id] ?? 0) / power))
       : '—',
   ]);
-  const hardest = all
-    .flatMap((place) => place.points.map((point) => ({ place, point })))
-    .filter((one) => one.point.solved)
-    .sort((a, b) => (b.point.power[pump.id] ?? 0) - (a.point.power[pump.id] ?? 0))[0];
+  const points = all.flatMap((place) => place.points.filter((point) => point.solved).map((point) => ({ place, point })));
+  const hardest = greatest(points, (one) => one.point.power[pump.id] ?? 0);
   const flow = hardest && flowWorking(circuit, pump.id, hardest.point);
   const shaft = hardest && shaftWorking(circuit, pump.id, hardest.point);
   return paragraphs(

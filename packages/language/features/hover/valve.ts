@@ -1,7 +1,7 @@
 /** Hover on a valve, filter, cooler or any part oil passes: where it stands, its opening, pressures, flow and drop by step, and whether it lifts. */
 import { KINDS, type Circuit, type Component, type Point } from '@oilway/circuit';
 import type { Analysis } from '../analysis.ts';
-import { extent, flowInto, netOf, placesOf, pressureAt, type Place } from './places.ts';
+import { extent, flowInto, greatest, netOf, placesOf, pressureAt, type Place } from './places.ts';
 import { notComputed, restsOn, standing } from './rests.ts';
 import { meteringOf } from './metering.ts';
 import { reliefWorking } from './supply-working.ts';
@@ -40,10 +40,10 @@ export function hoverValve(analysis: Analysis, component: Component): string {
     component.kind === 'relief' ? (place.points.some((point) => point.lifting.includes(component.id)) ? 'yes' : 'no') : '',
   ]);
   // A relief's working: where it holds the highest pressure.
-  const lifted = places
-    .flatMap((place) => place.points.map((point) => ({ place, point })))
-    .filter((one) => one.point.lifting.includes(component.id))
-    .sort((a, b) => (pressureAt(circuit, b.point, component.id, 'P') ?? 0) - (pressureAt(circuit, a.point, component.id, 'P') ?? 0))[0];
+  const lifting = places.flatMap((place) =>
+    place.points.filter((point) => point.lifting.includes(component.id)).map((point) => ({ place, point })),
+  );
+  const lifted = greatest(lifting, (one) => pressureAt(circuit, one.point, component.id, 'P'));
   const working = lifted && reliefWorking(circuit, component.id, lifted.point);
   const remarks = [
     ...new Set(
