@@ -244,7 +244,9 @@ export function nastyNet(seed: number): Net {
   const loads = actuators.map((actuator): LoadState => {
     const size = actuator.chambers[0]!.area * 10;
     const at = (force: number) =>
-      Number.isFinite(actuator.high) ? [{ at: [0, 0.2, 0.2, 0.5], force: [force, force, force * 1.5, force * 2] }] : [{ at: [0], force: [force] }];
+      Number.isFinite(actuator.high)
+        ? [{ at: [0, 0.2, 0.2, 0.5], force: [force, force, force * 1.5, force * 2] }]
+        : [{ at: [0], force: [force] }];
     return {
       fixed: chance(0.6) ? at(between(-size, size)) : [],
       resistOut: chance(0.3) ? at(between(0, size)) : [],

@@ -110,7 +110,13 @@ export type Condition =
   /** A switch, coil (`on`/`off`) or actuator (`extended`/`retracted`). */
   | { readonly op: 'state'; readonly of: string; readonly is: 'on' | 'off' | 'extended' | 'retracted'; readonly origin: Origin }
   /** An actuator's position, a sensor's or switch's quantity against a value. */
-  | { readonly op: 'compare'; readonly of: string; readonly is: 'at' | 'above' | 'below'; readonly value: Quantity; readonly origin: Origin }
+  | {
+      readonly op: 'compare';
+      readonly of: string;
+      readonly is: 'at' | 'above' | 'below';
+      readonly value: Quantity;
+      readonly origin: Origin;
+    }
   /** A step (`Drill.Clamp`) or cycle (`Drill`) is running. */
   | { readonly op: 'running'; readonly of: string; readonly origin: Origin }
   /** Did not resolve; an error was reported. */
@@ -178,8 +184,19 @@ export interface Emergency {
 }
 
 export type Measure =
-  | 'speed' | 'force' | 'torque' | 'pressure' | 'power' | 'loading' | 'flow'
-  | 'loss' | 'temperature' | 'time' | 'position' | 'volume' | 'drift';
+  | 'speed'
+  | 'force'
+  | 'torque'
+  | 'pressure'
+  | 'power'
+  | 'loading'
+  | 'flow'
+  | 'loss'
+  | 'temperature'
+  | 'time'
+  | 'position'
+  | 'volume'
+  | 'drift';
 
 export interface Where {
   /** Steps, cycles, or REST OFF STOP IDLE; all must hold. */
@@ -194,7 +211,14 @@ export type Bound =
 
 export type Requirement =
   | { readonly form: 'never'; readonly id: string; readonly condition: Condition; readonly origin: Origin }
-  | { readonly form: 'still'; readonly id: string; readonly of: string; readonly where: Where; readonly lasts?: number; readonly origin: Origin }
+  | {
+      readonly form: 'still';
+      readonly id: string;
+      readonly of: string;
+      readonly where: Where;
+      readonly lasts?: number;
+      readonly origin: Origin;
+    }
   | {
       readonly form: 'bound';
       readonly id: string;
