@@ -157,7 +157,7 @@ describe('conditions', () => {
 });
 
 describe('requirements', () => {
-  const require = (line: string) => wrong(`cycle X {\n step A energise SOL1 for 1 s\n}\nrequire ${line}`);
+  const required = (line: string) => wrong(`cycle X {\n step A energise SOL1 for 1 s\n}\nrequire ${line}`);
 
   it('all forms', () => {
     const { requirements } = circuit(`cycle X {\n step A energise SOL1 for 1 s\n}
@@ -179,31 +179,31 @@ require P1 power in REST at most 1.5 kW`);
   });
 
   it('the measure fits the subject', () => {
-    expect(require('C1 torque at most 5 N.m')).toEqual([expect.stringContaining('`torque` is a measure of a motor')]);
-    expect(require('P1 speed at most 5 rpm')).toEqual([expect.stringContaining('`speed` is a measure of an actuator')]);
-    expect(require('C1 time at most 5 s')).toEqual([expect.stringContaining('`time` is a measure of a step or cycle')]);
-    expect(require('P1 still in REST')).toEqual([expect.stringContaining('does not move')]);
-    expect(require('C1 spead at most 5 mm/s')).toEqual(['VALUE `spead` is no measure: did you mean `speed` @ spead']);
-    expect(require('C1 speed at most 5 bar')).toEqual([expect.stringContaining('M07 `5 bar` is a pressure; a velocity')]);
-    expect(require('HM1 speed at most 5 mm/s')).toEqual([expect.stringContaining('a speed of rotation is needed')]);
+    expect(required('C1 torque at most 5 N.m')).toEqual([expect.stringContaining('`torque` is a measure of a motor')]);
+    expect(required('P1 speed at most 5 rpm')).toEqual([expect.stringContaining('`speed` is a measure of an actuator')]);
+    expect(required('C1 time at most 5 s')).toEqual([expect.stringContaining('`time` is a measure of a step or cycle')]);
+    expect(required('P1 still in REST')).toEqual([expect.stringContaining('does not move')]);
+    expect(required('C1 spead at most 5 mm/s')).toEqual(['VALUE `spead` is no measure: did you mean `speed` @ spead']);
+    expect(required('C1 speed at most 5 bar')).toEqual([expect.stringContaining('M07 `5 bar` is a pressure; a velocity')]);
+    expect(required('HM1 speed at most 5 mm/s')).toEqual([expect.stringContaining('a speed of rotation is needed')]);
   });
 
   it('S4: which chamber', () => {
-    expect(require('C1 pressure at most 180 bar')).toEqual([expect.stringContaining('Which pressure of `C1`: `C1.cap` or `C1.rod`')]);
-    expect(require('P1 pressure at most 180 bar')).toEqual([]);
-    expect(require('C1.caps pressure at most 180 bar')).toEqual([expect.stringContaining('PORT `C1` has no port `caps`')]);
+    expect(required('C1 pressure at most 180 bar')).toEqual([expect.stringContaining('Which pressure of `C1`: `C1.cap` or `C1.rod`')]);
+    expect(required('P1 pressure at most 180 bar')).toEqual([]);
+    expect(required('C1.caps pressure at most 180 bar')).toEqual([expect.stringContaining('PORT `C1` has no port `caps`')]);
   });
 
   it('places that are not there, bounds that are missing or backwards, a drift without its time', () => {
-    expect(require('C1 speed in B at most 5 mm/s')).toEqual([expect.stringContaining('NAME `B` is not declared')]);
-    expect(require('C1 speed')).toEqual([expect.stringContaining('A bound is missing')]);
-    expect(require('C1 speed between 8 mm/s and 5 mm/s')).toEqual([expect.stringContaining('run backwards')]);
-    expect(require('C1 speed from 9 mm to 5 mm at most 5 mm/s')).toEqual([expect.stringContaining('runs backwards')]);
-    expect(require('C1 drift in OFF at most 2 mm')).toEqual([expect.stringContaining('A drift needs its time')]);
+    expect(required('C1 speed in B at most 5 mm/s')).toEqual([expect.stringContaining('NAME `B` is not declared')]);
+    expect(required('C1 speed')).toEqual([expect.stringContaining('A bound is missing')]);
+    expect(required('C1 speed between 8 mm/s and 5 mm/s')).toEqual([expect.stringContaining('run backwards')]);
+    expect(required('C1 speed from 9 mm to 5 mm at most 5 mm/s')).toEqual([expect.stringContaining('runs backwards')]);
+    expect(required('C1 drift in OFF at most 2 mm')).toEqual([expect.stringContaining('A drift needs its time')]);
   });
 
   it('a range on what does not move is that of the only actuator', () => {
-    expect(require('RV2 flow extending at most 5 L/min')).toEqual([
+    expect(required('RV2 flow extending at most 5 L/min')).toEqual([
       expect.stringContaining('Whose way or direction is meant: there are `C1`, `HM1`'),
     ]);
     const alone =

@@ -23,8 +23,6 @@ export function read(text: string, uri = 'file:///test.oilway'): TextAnalysis {
   return analysis;
 }
 
-export const lineOf = (text: string, offset: number): number => text.slice(0, offset).split(/\r\n|\r|\n/).length - 1;
-
 /** `CODE what @ characters`, one a finding. */
 export function said(text: string): string[] {
   return read(text).findings.map((finding) => `${finding.code} ${finding.what} @ ${text.slice(finding.origin.start, finding.origin.end)}`);
