@@ -64,7 +64,7 @@ export function liftingOverPumpShare(plant: Plant, solution: Solution): readonly
   return plant.at
     .ofKind('relief')
     .map((one) => one.id)
-    .filter((id) => pumped > 0 && (solution.flows[`${id}.P`] ?? 0) > 0.01 * pumped);
+    .filter((id) => pumped > 0 && (solution.openings[id] ?? 0) > 0 && (solution.flows[`${id}.P`] ?? 0) > 0.01 * pumped);
 }
 
 /** Valves that close the way of the oil of a body that should move but stands. */

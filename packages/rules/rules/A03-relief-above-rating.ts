@@ -1,4 +1,5 @@
 /** A03: a relief lets the pressure rise above what the weakest part on its line is rated for. */
+import type { Component } from '@oilway/circuit';
 import { graphOf, type Graph } from '../graph/graph.ts';
 import { type Guard, guardsOf, guardsReached } from '../graph/guards.ts';
 import { openAlways, waysFrom, waysTo } from '../graph/reach.ts';
@@ -21,8 +22,9 @@ function weakest(graph: Graph, guard: Guard): { readonly rating: Rating; readonl
     return relief.id !== guard.component.id && net !== undefined && (settingOf(relief)?.set ?? Infinity) < set ? [net.id] : [];
   });
   // Back along the free ways to the pumps it guards, and on from there to everything that is pressed by the same oil.
-  const nets = new Set(waysTo(graph, guard.net, openAlways).keys());
-  for (const net of waysFrom(graph, guard.net, spreads).keys()) nets.add(net);
+  const onward = waysFrom(graph, guard.net, spreads);
+  const back = [...waysTo(graph, guard.net, openAlways).keys()].filter((net) => onward.has(net) || !heldLower(graph, guard, net));
+  const nets = new Set([...back, ...onward.keys()]);
   let found: { rating: Rating; net: string } | undefined;
   for (const net of nets) {
     const node = graph.net(net);
@@ -32,27 +34,36 @@ function weakest(graph: Graph, guard: Guard): { readonly rating: Rating; readonl
       node.functions.every((f) => f === 'return' || f === 'drain' || f === 'suction')
     )
       continue;
-    const onward = waysFrom(graph, net, openAlways);
-    if (lower.some((own) => onward.has(own))) continue;
+    const free = waysFrom(graph, net, openAlways);
+    if (lower.some((own) => free.has(own))) continue;
     const rating = ratingOf(graph, net);
     if (rating !== undefined && (found === undefined || rating.value < found.rating.value)) found = { rating, net };
   }
   return found;
 }
 
+/** True where another guard that is as sure lets the oil of this pump out at a lower pressure. */
+function hasLowerGuard(graph: Graph, guard: Guard, pump: Component): boolean {
+  const set = settingOf(guard.component)?.set ?? 0;
+  const outlet = graph.netAt(pump.id, 'P')?.id;
+  return (
+    outlet === undefined ||
+    guardsReached(graph, outlet, openAlways).some(
+      (r) => r.guard.component.id !== guard.component.id && (settingOf(r.guard.component)?.set ?? Infinity) < set,
+    )
+  );
+}
+
+/** True for a net before the guard's own, fed by pumps that others hold lower: what rises behind the check does not come back to it. */
+function heldLower(graph: Graph, guard: Guard, net: string): boolean {
+  const ways = waysTo(graph, net, spreads);
+  const feeding = graph.ofKind('pump').filter((pump) => ways.has(graph.netAt(pump.id, 'P')?.id ?? ''));
+  return feeding.length > 0 && feeding.every((pump) => hasLowerGuard(graph, guard, pump));
+}
+
 /** Flow of the pumps whose oil leaves here: those without a lower guard that is as sure, m3/s. */
 function flowOver(graph: Graph, guard: Guard): number {
-  const set = settingOf(guard.component)?.set ?? 0;
-  const others = graph.ofKind('pump').every((pump) => {
-    const outlet = graph.netAt(pump.id, 'P')?.id;
-    return (
-      outlet === undefined ||
-      guardsReached(graph, outlet, openAlways).some(
-        (r) => r.guard.component.id !== guard.component.id && (settingOf(r.guard.component)?.set ?? Infinity) < set,
-      )
-    );
-  });
-  return others ? 0 : pumpFlowTo(graph, guard.net);
+  return graph.ofKind('pump').every((pump) => hasLowerGuard(graph, guard, pump)) ? 0 : pumpFlowTo(graph, guard.net);
 }
 
 function judge(context: RuleContext, graph: Graph, guard: Guard): Finding[] {
@@ -111,7 +122,7 @@ Setting plus tolerance plus override at the flow of all pumps that reach the rel
 the lowest \`rated\` of ports and lines that stand at its pressure: back to the pumps, and on through directional valves, checks and shut-offs
 to the actuators.
 
-Stays clean: parts behind a reducing valve, or with a relief of their own that is set lower; return and drain lines; parts without a declared
+Stays clean: parts behind a reducing valve, before a check or counterbalance valve where the pumps are held lower, or with a relief of their own that is set lower; return and drain lines; parts without a declared
 rating (nothing is guessed).`,
   detect(context) {
     const graph = graphOf(context.circuit);

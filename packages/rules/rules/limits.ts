@@ -62,6 +62,10 @@ export function limitOfPump(graph: Graph, pump: Component): Limit | undefined {
  */
 export function limitOfNet(graph: Graph, net: string): Limit | undefined {
   const full = waysTo(graph, net, spreads);
+  const raises = (component: Component, ports: readonly string[]) =>
+    ports.some((port) => full.has(graph.netAt(component.id, port)?.id ?? ''));
+  if (graph.ofKind('intensifier').some((c) => raises(c, ['A'])) || graph.ofKind('divider').some((c) => raises(c, ['A', 'B'])))
+    return undefined;
   const direct = graph.ofKind('pump').filter((pump) => full.has(graph.netAt(pump.id, 'P')?.id ?? ''));
   if (direct.length > 0) {
     const limits = direct.map((pump) => limitOfPump(graph, pump));
