@@ -1,4 +1,5 @@
 /** Published worked values, each with its source: data only, brought to circuits in published.test.ts. */
+import { NITROGEN } from './published-nitrogen.ts';
 
 export interface Published {
   readonly what: string;
@@ -13,6 +14,7 @@ export interface Published {
 }
 
 export const PUBLISHED = {
+  ...NITROGEN,
   'cyl-01': {
     what: 'cap-side pressure from load',
     value: 318,
