@@ -457,6 +457,28 @@ const NEAR: readonly Near[] = [
   },
 ];
 
+/** A clamp: its intensifier gives four times the 60 bar of the pump; RV2 guards what the intensifier gives, RV1 the pump. */
+const clamp = () => SOUND.find((one) => one.name.startsWith('11'))!.text;
+
+describe('behind an intensifier', () => {
+  const told = (edits: readonly (readonly [string, string])[], code: string) =>
+    check(edited(clamp(), edits), 'figures')
+      .problems.filter((p) => p.code === code)
+      .map((p) => p.place);
+  it('a switch above the compensator is no L07; on the pump line it is one', () => {
+    expect(told([], 'L07')).toEqual([]);
+    const moved = [
+      ['V3.P, PS1, PS2 (flanged)', 'V3.P, PS2 (flanged)'],
+      ['working opening: V1.B', 'working F1.out to PS1\nworking opening: V1.B'],
+    ] as const;
+    expect(told(moved, 'L07')).toEqual(['PS1']);
+  });
+  it('its relief does not press on the line before the check that the pump relief holds lower; without a lower one it does', () => {
+    expect(told([], 'A03')).toEqual([]);
+    expect(told([['set system + 15 bar', 'set 280 bar']], 'A03')).toContain('RV2');
+  });
+});
+
 describe('near misses', () => {
   it.each(NEAR)('$code stays silent: $why', ({ code, edits, from, only }) => {
     const text = edited(faulty(from ?? code).text, edits);
