@@ -5,7 +5,7 @@ import { lineFigures } from './hover.ts';
 import type { PublishedId } from './published-values.ts';
 
 /** A pump that sends `flow` through one pipe to the reservoir. */
-function pipe(options: { readonly flow: string; readonly fluid: string; readonly line: string }): string {
+export function pipe(options: { readonly flow: string; readonly fluid: string; readonly line: string }): string {
   return `circuit Bench
 fluid F1 (${options.fluid})
 reservoir R1 (volume 400 L)
@@ -22,7 +22,7 @@ return RV1 to R1
 }
 
 /** Loss of the pipe, Pa. The far end lies at the reservoir. */
-const loss = (bench: Bench): number => {
+export const loss = (bench: Bench): number => {
   const point = bench.state('REST');
   const net = bench.circuit.nets.find((one) => one.ports.some((port) => port.component === 'P1' && port.port === 'P'));
   const far = bench.circuit.nets.find((one) => one.ports.some((port) => port.component === 'G1'));
@@ -49,7 +49,7 @@ const velocities: readonly (readonly [PublishedId, string, string, number, numbe
 const kelvin = (celsius: string) => `temperature ${celsius} degC`;
 
 /** Kinematic viscosity, m2/s, from the laminar loss of a 10 mm pipe of 10 m at 2 L/min (Hagen-Poiseuille). */
-const viscosity: Shown = {
+export const viscosity: Shown = {
   read: (bench) => (loss(bench) * Math.PI * 0.01 ** 4) / (128 * 900 * 10 * (2e-3 / 60)),
 };
 const oils: readonly (readonly [PublishedId, grade: string, celsius: string, index?: string])[] = [
@@ -75,11 +75,11 @@ const oils: readonly (readonly [PublishedId, grade: string, celsius: string, ind
 ];
 
 /** Darcy friction factor from the loss over a length, m, at a velocity, m/s. */
-const friction = (bore: number, velocity: number, length = 10, within?: Shown['within']): Shown => ({
+export const friction = (bore: number, velocity: number, length = 10, within?: Shown['within']): Shown => ({
   read: (bench) => (loss(bench) * 2 * bore) / (length * 900 * velocity ** 2),
   ...(within === undefined ? {} : { within }),
 });
-const CHURCHILL: Shown['within'] = [0.03, 'the product uses Churchill (1977), an explicit form that keeps to Colebrook within 3 %'];
+export const CHURCHILL: Shown['within'] = [0.03, 'the product uses Churchill (1977), an explicit form that keeps to Colebrook within 3 %'];
 
 interface Rough {
   readonly id: PublishedId;

@@ -17,7 +17,9 @@ const name = (precharge: number) => `ACC${PRECHARGES.findIndex((one) => one === 
 
 /** Accumulators of 10 L on a pump that its relief holds at `pressure`, bar absolute; filled with gas and charged at one temperature. */
 function charged(precharges: readonly number[], pressure: number, celsius: number): string {
-  const each = precharges.map((one) => `accumulator ${name(one)} (bladder, volume 10 L, precharge ${gauge(one)} bar at ${celsius} degC, gas nitrogen)`);
+  const each = precharges.map(
+    (one) => `accumulator ${name(one)} (bladder, volume 10 L, precharge ${gauge(one)} bar at ${celsius} degC, gas nitrogen)`,
+  );
   return `circuit Bench
 fluid F1 (grade 46, temperature ${celsius} degC)
 reservoir R1 (volume 400 L)
@@ -59,7 +61,8 @@ export const NITROGEN_CHARGES: readonly {
     const pressure = Number(key);
     const id: NitrogenId = `n2z-${key}-${celsius}`;
     if (pressure === 1) return { id, circuits: [highest], read: ([at]: readonly Bench[]) => 1 + (thin(at as Bench) - 1) / ATMOSPHERE };
-    if (pressure === HIGHEST) return { id, circuits: [highest], read: ([at]: readonly Bench[]) => chargedZ(at as Bench, HIGHEST, thin(at as Bench)) };
+    if (pressure === HIGHEST)
+      return { id, circuits: [highest], read: ([at]: readonly Bench[]) => chargedZ(at as Bench, HIGHEST, thin(at as Bench)) };
     if (CHARGES.some((one) => one === pressure)) {
       return {
         id,

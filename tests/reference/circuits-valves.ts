@@ -11,21 +11,6 @@ const time = (step: string): Shown => ({
 });
 const available = (step: string, id = 'C1'): Shown => ({ read: (bench) => Math.abs(bench.actuator(step, id).available ?? Number.NaN) });
 
-/** An accumulator on a pump that its relief holds at `pressure`. */
-function charged(accumulator: string, pressure: string, temperature = '20 degC'): string {
-  return `circuit Bench
-fluid F1 (grade 46, temperature ${temperature})
-reservoir R1 (volume 400 L)
-drive M1 (power 50 kW, speed 1000 rpm)
-pump P1 (displacement 10 cm3/rev, driven by M1, volumetric 100 %)
-relief RV1 (set ${pressure}, passes 10000 L/min at 1 bar, override 1 %)
-accumulator ACC1 (bladder, ${accumulator} at 20 degC, gas nitrogen)
-suction R1 to P1
-working P1 to RV1, ACC1
-return RV1 to R1
-`;
-}
-
 /** A plunger that sinks through a holding valve whose pilot has its own supply of `pilot` bar. */
 function lowering(options: { readonly valve: string; readonly load: string; readonly pilot: string; readonly back?: string }): string {
   return `circuit Bench
@@ -193,36 +178,3 @@ require R1 temperature in REST at most 200 degF
     },
   },
 ];
-
-/** m3 of oil in the accumulator at rest, charged to its relief. */
-const oil = (bench: Bench): number => {
-  const variant = bench.study.states.find((one) => one.id === 'REST')?.variants.find((one) => one.accumulators === 'charged');
-  return variant?.point.oil.ACC1 ?? Number.NaN;
-};
-
-/** Figures of accumulators: each compares two circuits, or works back from one. */
-export const ACCUMULATORS: readonly {
-  readonly id: PublishedId;
-  readonly circuits: readonly string[];
-  /** SI */
-  readonly read: (benches: readonly Bench[]) => number;
-}[] = [
-  {
-    id: 'acc-01',
-    // The volume asked for, in proportion to the 5 gal that a bottle of 20 gal is found to give.
-    circuits: ['2000 psi', '3000 psi'].map((pressure) => charged('volume 20 gal, precharge 1500 psi', pressure)),
-    read: ([low, high]) => (20 * 5 * GALLON * GALLON) / (oil(high as Bench) - oil(low as Bench)),
-  },
-  {
-    id: 'acc-06',
-    circuits: ['100 bar', '200 bar'].map((pressure) => charged('volume 10 L, precharge 90 bar', pressure)),
-    read: ([low, high]) => oil(high as Bench) - oil(low as Bench),
-  },
-  {
-    id: 'acc-10',
-    // At 120 bar the gas has the share of its volume that its precharge is of the pressure (both absolute).
-    circuits: [charged('volume 10 L, precharge 90 bar', '120 bar', '50 degC')],
-    read: ([warm]) => (1 - oil(warm as Bench) / 0.01) * (120e5 + 101325) - 101325,
-  },
-];
-const GALLON = 231 * 0.0254 ** 3;

@@ -6,12 +6,8 @@ import { hoverAt } from '../../packages/language/features/hover/index.ts';
 import { occurrencesOf } from '../../packages/language/features/names.ts';
 import type { Bench } from './bench.ts';
 
-/** What hover shows over the word that begins `line`, in the table's row of `place`. */
-export function lineFigures(
-  bench: Bench,
-  line: string,
-  place: string,
-): { readonly flow: number; readonly velocity: number; readonly reynolds: number } {
+/** What hover shows over the word that begins `line`. */
+function shown(bench: Bench, line: string, into = 1): string {
   const { uri } = bench.circuit;
   const { circuit, findings, symbols } = analyseText({ uri, text: bench.text });
   const analysis = new Analysis({
@@ -23,7 +19,24 @@ export function lineFigures(
     occurrences: occurrencesOf(symbols, uri),
     studied: { study: bench.study, circuit: bench.circuit, older: false },
   });
-  const text = hoverAt(analysis, bench.text.indexOf(line) + 1)?.markdown ?? '';
+  return hoverAt(analysis, bench.text.indexOf(line) + into)?.markdown ?? '';
+}
+
+/** Kinematic viscosity, m2/s, that hover shows over the fluid. */
+export function fluidViscosity(bench: Bench): number {
+  const text = shown(bench, 'fluid F1', 'fluid '.length + 1);
+  const q = parseQuantity(/viscosity ([^,]+),/.exec(text)?.[1] ?? '');
+  if (!q.ok) throw new Error(`no viscosity in: ${text}`);
+  return q.value.si;
+}
+
+/** Figures of the row of `place` in the table that hover shows over the word that begins `line`. */
+export function lineFigures(
+  bench: Bench,
+  line: string,
+  place: string,
+): { readonly flow: number; readonly velocity: number; readonly reynolds: number } {
+  const text = shown(bench, line);
   const rows = text
     .split('\n')
     .filter((row) => row.startsWith('|'))

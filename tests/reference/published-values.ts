@@ -1,4 +1,5 @@
 /** Published worked values, each with its source: data only, brought to circuits in published.test.ts. */
+import { GRADES, MORE } from './published-more.ts';
 import { NITROGEN } from './published-nitrogen.ts';
 
 export interface Published {
@@ -15,6 +16,8 @@ export interface Published {
 
 export const PUBLISHED = {
   ...NITROGEN,
+  ...GRADES,
+  ...MORE,
   'cyl-01': {
     what: 'cap-side pressure from load',
     value: 318,

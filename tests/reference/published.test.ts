@@ -2,12 +2,14 @@
 import { describe, expect, it } from 'vitest';
 import { type Bench, bench, inUnits } from './bench.ts';
 import { CIRCUITS } from './circuits.ts';
+import { ACCUMULATORS } from './circuits-accumulators.ts';
 import { LINE_CIRCUITS } from './circuits-lines.ts';
+import { COMPARED_CIRCUITS, MORE_CIRCUITS } from './circuits-more.ts';
 import { NITROGEN_CHARGES } from './circuits-nitrogen.ts';
-import { ACCUMULATORS, VALVE_CIRCUITS } from './circuits-valves.ts';
+import { VALVE_CIRCUITS } from './circuits-valves.ts';
 import { PUBLISHED, type Published, type PublishedId } from './published-values.ts';
 
-const ALL = [...CIRCUITS, ...LINE_CIRCUITS, ...VALVE_CIRCUITS];
+const ALL = [...CIRCUITS, ...LINE_CIRCUITS, ...VALVE_CIRCUITS, ...MORE_CIRCUITS];
 
 for (const circuit of ALL) {
   describe(circuit.about, () => {
@@ -33,7 +35,7 @@ const opened = (text: string): Promise<Bench> => {
   return found;
 };
 
-const COMPARED = [...ACCUMULATORS, ...NITROGEN_CHARGES];
+const COMPARED = [...ACCUMULATORS, ...NITROGEN_CHARGES, ...COMPARED_CIRCUITS];
 
 describe('figures that several circuits give together', () => {
   for (const { id, circuits, read } of COMPARED) {
