@@ -29,9 +29,13 @@ export function unitsOfActuator(component: Component): ActuatorUnits {
 /** The wanted direction; without one the direction it moves in, creeping not counted: leakage is no motion. */
 const wayOf = (at: ActuatorPoint): number => at.direction || (Math.abs(at.velocity) > STILL.velocity ? Math.sign(at.velocity) : 0);
 
+/** Share of the greatest force below which a standing rod presses with nothing worth a row. */
+const PRESSING = 0.01;
+
 /** Points of a place by direction; those that only stand are kept where they press. */
 export function rowsOf(places: readonly Place[], id: string): Row[] {
   const rows: Row[] = [];
+  const most = Math.max(1, ...places.flatMap((place) => place.points.map((point) => Math.abs(actuatorAt(point, id)?.force ?? 0))));
   for (const place of places) {
     const points = place.points.flatMap((point) => {
       const at = actuatorAt(point, id);
@@ -45,7 +49,7 @@ export function rowsOf(places: readonly Place[], id: string): Row[] {
     const moving = [of(1), of(-1)].filter((row) => row.points.length > 0);
     const standing = of(0);
     rows.push(...moving);
-    if (moving.length === 0 && standing.points.some((one) => Math.abs(one.at.force) > 1)) rows.push(standing);
+    if (moving.length === 0 && standing.points.some((one) => Math.abs(one.at.force) > PRESSING * most)) rows.push(standing);
   }
   return rows;
 }
@@ -79,7 +83,7 @@ export function hoverActuator(analysis: Analysis, component: Component): string 
   const cells = rows.map((row) => cellsOf(row, studied.circuit, component.id, units, show));
   const head = [
     'Step',
-    units.force === 'force' ? 'Force available of needed' : 'Torque available of needed',
+    units.force === 'force' ? 'Force available / needed' : 'Torque available / needed',
     'Speed',
     `Pressure ${units.ports[0]}`,
     `Pressure ${units.ports[1]}`,
@@ -120,12 +124,12 @@ function cellsOf(row: Row, circuit: Parameters<typeof pressureAt>[0], id: string
   ];
 }
 
-/** `22.4 of 9.25 kN`, how short a stalled one is, what a standing one presses with. */
+/** `22.4 / 9.25 kN`, how short a stalled one is, what a standing one presses with. */
 function forceText(at: ActuatorPoint, direction: -1 | 0 | 1, force: Dimension, show: Show): string {
   if (at.shortBy !== undefined && at.shortBy > 0) return `stalled, short by ${show.figure(at.shortBy, force)}`;
   if (at.available === undefined || direction === 0) return `presses ${show.figure(Math.abs(at.force), force)}`;
   if (at.needed < 0) return `${show.figure(at.available, force)}, the load drives with ${show.figure(-at.needed, force)}`;
-  return show.of(at.available, at.needed, force);
+  return show.against(at.available, at.needed, force);
 }
 
 function working(rows: readonly Row[], circuit: Parameters<typeof pressureAt>[0], id: string, units: ActuatorUnits, show: Show): string {

@@ -28,9 +28,14 @@ export class Show {
     return number === formatNumber(high, dimension, this.#options) ? most : `${number} to ${most}`;
   }
 
-  /** `17.3 of 9.25 kN`: the first number without its unit. */
+  /** `17.3 of 250 bar`: the first number without its unit. */
   of(have: number, need: number, dimension: Dimension): string {
     return `${formatNumber(have, dimension, this.#options)} of ${this.figure(need, dimension)}`;
+  }
+
+  /** `17.3 / 9.25 kN`: the first number without its unit. */
+  against(have: number, need: number, dimension: Dimension): string {
+    return `${formatNumber(have, dimension, this.#options)} / ${this.figure(need, dimension)}`;
   }
 }
 
@@ -45,7 +50,8 @@ export function table(head: readonly string[], rows: readonly (readonly string[]
   const line = (cells: readonly string[]): string =>
     `| ${cells
       .filter((_, column) => used[column])
-      .map((cell) => cell.replace(/\|/g, '\\|'))
+      // A number and its unit stay on one line of the narrow table; text to be copied keeps its spaces.
+      .map((cell) => (cell.includes('`') ? cell : cell.replace(/(\d) (?=\S)/g, '$1\u00a0')).replace(/\|/g, '\\|'))
       .join(' | ')} |`;
   return [line(head), line(head.map(() => '---')), ...rows.map(line)].join('\n');
 }
