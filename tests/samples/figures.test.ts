@@ -192,6 +192,15 @@ describe('08 conveyor', () => {
     const leak = (g / 2) * (bar(at(), 'side_a') - bar(at(), 'side_b')) + (g / 2) * bar(at(), 'side_a');
     agrees(rpm(at(), 'HM1'), (pumped(28, 1450, bar(at(), 'P1.P'), 250) - leak) / 0.2 / 10);
   });
+  it('the work given to the belt and the heat of the oil', () => {
+    // 920 N.m at 19.7 rpm = 1.90 kW, for 60 of 65 s: 1.75 kW. The heat leaves by the cooler, 120 W/K, and the wall, 12 W/m2K x 6 x 0.2^(2/3) m2
+    // = 25 W/K, at 20 degC around: 1.21 kW / 145 W/K = 8.4 K.
+    const run = studied('08-conveyor').cycles.find((c) => c.id === 'Run')!;
+    agrees(run.work! / 1e3, (((920 * 2 * Math.PI * 19.66) / 60 / 1000) * 60) / 65);
+    agrees(run.heat! + run.work!, run.duty.M1!.mean, 1e-3);
+    const asked = studied('08-conveyor').requirements.find((r) => r.words.includes('R1 temperature'))!;
+    agrees(asked.worst!.value - 273.15, 20 + run.heat! / (120 + 12 * 6 * 0.2 ** (2 / 3)));
+  });
   it('running back the motor brakes with 2 - 0.9 of the ideal torque', () => {
     // The belt drives with 900 - 20 N.m: 88 N.m / 1.1 x 20 pi / 200 = 25.1 bar above side B.
     const p = point('08-conveyor', 'Back.Down', 'end');

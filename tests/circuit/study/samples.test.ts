@@ -40,7 +40,8 @@ describe.each(files)('%s', (file) => {
       ...result.steps.flatMap((one) => one.points),
       ...result.states.flatMap((one) => one.variants.map((variant) => variant.point)),
     ];
-    expect(points.length).toBeGreaterThan(20);
+    // Each step has its entry and its end, each state at least one variant.
+    expect(points.length).toBeGreaterThanOrEqual(2 * result.steps.length + result.states.length);
     expect(points.filter((one) => !one.solved).map((one) => one.label)).toEqual([]);
   });
   it('decides and meets every requirement', () => {
@@ -66,7 +67,8 @@ describe.each(files)('%s', (file) => {
     const turned = study(circuitOf(statements(text).reverse().join('\n')));
     const of = (one: Study) => one.requirements.map((requirement) => [requirement.verdict, requirement.worst?.value.toPrecision(3)]);
     expect(of(turned).reverse()).toEqual(of(result));
-    expect(turned.cycles.map((one) => one.time?.toFixed(3))).toEqual(result.cycles.map((one) => one.time?.toFixed(3)));
+    const times = (one: Study) => Object.fromEntries(one.cycles.map((cycle) => [cycle.id, cycle.time?.toFixed(3)]));
+    expect(times(turned)).toEqual(times(result));
   });
   it('crosses a worker boundary', () => {
     expect(structuredClone(result)).toEqual(result);
