@@ -1,7 +1,6 @@
 /** Published values of orifices, valves, accumulators, heat and times of strokes. */
-import { type Bench, bothWays, supply } from './bench.ts';
+import { bothWays, supply } from './bench.ts';
 import type { BenchCircuit, Shown } from './circuits.ts';
-import type { PublishedId } from './published-values.ts';
 
 const IDEAL = 'seal 0 bar';
 const round = (area: string) => `sqrt(4 * ${area} / 3.14159265358979)`;

@@ -67,14 +67,15 @@ export class StateRunner {
     const gas = plant.at.accumulators.length > 0;
     while (run.time - began < duration - 1e-9 && failed === undefined && !plant.cancelled()) {
       const into = run.time - began;
-      const next = gas ? Math.min(duration, nextChange(into)) : duration;
+      // Stops where settling ends, so that there is a sample to count from: steps may be long where little changes.
+      const settles = into < SETTLING - 1e-9 && duration > SETTLING;
+      const next = settles ? SETTLING : gas ? Math.min(duration, nextChange(into)) : duration;
       const report = run.advance(began + next, [], (time, now) => samples.push({ time: time - began, solution: now }));
       failed = report.failed;
-      if (gas) run.gasExponent(gasExponent(run.time - began));
+      if (samples.at(-1)!.time < run.time - began - 1e-9) samples.push({ time: run.time - began, solution: run.now() });
+      if (gas && !settles) run.gasExponent(gasExponent(run.time - began));
       if (run.time - began <= into) break;
     }
-    const last = samples.at(-1)!;
-    if (last.time < run.time - began - 1e-9) samples.push({ time: run.time - began, solution: run.now() });
     return { label, setting, samples, ...(failed === undefined ? {} : { failed }) };
   }
 }
