@@ -68,6 +68,36 @@ function notComputed(of: string, why: string, origin: Origin): Finding {
   };
 }
 
+/** States and steps of which a solution was not found: they are not clean, they are not known. */
+function unsolved({ circuit, study }: RuleContext): Finding[] {
+  const places = [
+    ...(study?.states ?? []).map((one) => ({ id: one.id, points: one.variants.map((variant) => variant.point) })),
+    ...(study?.steps ?? []),
+  ];
+  const steps = circuit.cycles.flatMap((cycle) => cycle.steps);
+  const usual = circuit.components.find((one) => one.kind === 'pump') ?? circuit.components[0];
+  return places.flatMap(({ id, points }): Finding[] => {
+    const failed = points.filter((one) => !one.solved);
+    const origin = steps.find((one) => one.id === id)?.origin ?? usual?.nameOrigin;
+    if (failed.length === 0 || origin === undefined) return [];
+    const why = failed.flatMap((one) => one.diagnosis).find((one) => one.kind === 'NO EQUILIBRIUM');
+    const what = `No solution was found in ${failed.length} of ${points.length} cases of ${id}; what is said of it rests on the others`;
+    return [
+      {
+        ...plain,
+        code: 'NOT-COMPUTED',
+        severity: 'warning',
+        what,
+        ...(why?.kind === 'NO EQUILIBRIUM' ? { why: why.why } : {}),
+        origin,
+        place: id,
+        state: id,
+        computed: true,
+      },
+    ];
+  });
+}
+
 /** Findings of the study and of what it leaves out; `told` are those of the rules. */
 export function outcome(context: RuleContext, told: readonly Finding[]): readonly Finding[] {
   const { circuit, study } = context;
@@ -80,5 +110,5 @@ export function outcome(context: RuleContext, told: readonly Finding[]): readonl
   });
   const incomplete = Object.keys(circuit.unknown).length > 0;
   const faults = study.cycles.flatMap((cycle) => cycle.faults.flatMap((fault) => ofFault(fault, cycle.id, told, incomplete)));
-  return [...left, ...faults, ...study.requirements.flatMap((one) => ofRequirement(context, one))];
+  return [...left, ...unsolved(context), ...faults, ...study.requirements.flatMap((one) => ofRequirement(context, one))];
 }

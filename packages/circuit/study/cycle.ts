@@ -103,6 +103,7 @@ function attempt(plant: Plant, cycle: Cycle, stored: Charge): { readonly complet
     before = { solution: end.solution, states };
   }
   const last = ends.at(-1)!;
+  if (cycle.steps.length === 0) faults.push({ kind: 'cycle without time', words: `${cycle.id} has no steps`, origin: cycle.nameOrigin });
   if (last.completed && !settled && ends.length >= RUNS) {
     faults.push({
       kind: 'does not settle',

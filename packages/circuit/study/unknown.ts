@@ -7,7 +7,12 @@ import type { Point } from './study.ts';
 /** The reason ("V2 has no `passes`"), or undefined where all it rests on is known. */
 export function unknownBehind(facts: Facts, requirement: Requirement): string | undefined {
   const { plant } = facts;
-  if (requirement.form === 'never' || Object.keys(plant.machine.notComputed).length === 0) return undefined;
+  if (requirement.form === 'never') return undefined;
+  // Without one of its loads a machine moves otherwise: nothing is decided by it.
+  for (const load of plant.circuit.loads) {
+    for (const { value } of load.properties) if (value.type === 'unknown') return `load of ${load.actuators.join(', ')}: ${value.why}`;
+  }
+  if (Object.keys(plant.machine.notComputed).length === 0) return undefined;
   const direct = plant.circuit.unknown[requirement.of] ?? plant.machine.notComputed[requirement.of];
   if (direct !== undefined) return direct;
   const keys = keysOf(facts, requirement);

@@ -4,6 +4,7 @@ import type { Component as ComponentNode, Name } from '../generated/ast.ts';
 import { type Context, kindOf, oneOf, portsOf } from './context.ts';
 import { unquoted } from './items.ts';
 import { type Owner, type Shape, readProperties } from './properties.ts';
+import { wrongSize } from './sizes.ts';
 import { NAMED_CENTRES, pathsOfCentre } from './valve-entry.ts';
 import type { Values } from './values.ts';
 
@@ -328,26 +329,11 @@ export class Components {
       const property = component.properties.find((candidate) => candidate.name === name && candidate.port === undefined);
       return property?.value.type === 'quantity' ? { si: property.value.q.si, origin: property.origin } : undefined;
     };
-    for (const name of [
-      'bore',
-      'rod',
-      'stroke',
-      'displacement',
-      'volume',
-      'orifice',
-      'angle',
-      'set',
-      'closes',
-      'power',
-      'speed',
-      'opens',
-      'torque',
-    ] as const) {
-      const value = size(name);
-      if (value !== undefined && !(value.si > 0)) {
-        this.context.report({ code: 'VALUE', what: `\`${name}\` must be above zero`, origin: value.origin, place: component.id });
-        this.unknown[component.id] ??= `${component.id}: \`${name}\` must be above zero`;
-      }
+    for (const property of component.properties) {
+      const what = wrongSize(property);
+      if (what === undefined) continue;
+      this.context.report({ code: 'VALUE', what, origin: property.origin, place: component.id });
+      this.unknown[component.id] ??= `${component.id}: ${what}`;
     }
     const bore = size('bore');
     const rod = size('rod');

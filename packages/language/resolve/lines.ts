@@ -6,6 +6,7 @@ import { nearest } from '../parse/near.ts';
 import { type Context, chainOf, kindOf, oneOf, portsOf } from './context.ts';
 import { NetBuilder } from './nets.ts';
 import { readProperties } from './properties.ts';
+import { wrongSize } from './sizes.ts';
 import type { Values } from './values.ts';
 
 /** Where a place stands in its chain. */
@@ -115,9 +116,10 @@ export class Lines {
         value.type === 'quantity' &&
         (property.name === 'bore' || property.name === 'wall' || property.name === 'length' || property.name === 'rated')
       ) {
-        if (value.q.si < 0 || (property.name !== 'length' && value.q.si === 0)) {
-          this.context.report({ code: 'VALUE', what: `\`${property.name}\` must be above zero`, origin: property.origin });
-        } else found[property.name] = value.q.si;
+        const none = property.name !== 'length' && value.q.si === 0;
+        const what = none ? `\`${property.name}\` must be above zero` : wrongSize(property);
+        if (what !== undefined) this.context.report({ code: 'VALUE', what, origin: property.origin });
+        else found[property.name] = value.q.si;
       }
       if (value.type === 'number' && property.name === 'bends') found.bends = value.value;
     }

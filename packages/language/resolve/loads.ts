@@ -3,6 +3,7 @@ import { type Component, LOAD_PROPERTIES, type Load, type Property } from '@oilw
 import type { Load as LoadNode } from '../generated/ast.ts';
 import type { Context } from './context.ts';
 import { readProperties } from './properties.ts';
+import { wrongSize } from './sizes.ts';
 import type { Values } from './values.ts';
 
 /** One load statement; nothing where no actuator resolves. */
@@ -47,12 +48,18 @@ export function resolveLoad(context: Context, values: Values, node: LoadNode): L
   const specs = LOAD_PROPERTIES.map((spec) =>
     spec.name === 'friction' ? { ...spec, shape: { form: 'quantity', dimensions: [turns ? 'torque' : 'force'] } as const } : spec,
   ).map((spec) => (spec.name === 'speed' && turns ? { ...spec, shape: { form: 'quantity', dimensions: ['rotation'] } as const } : spec));
-  const { properties } = readProperties(context, values, node.properties, {
+  const read = readProperties(context, values, node.properties, {
     name: first.id,
     specs,
     shaped: false,
     of: 'a load',
     actuator: first.kind,
+  });
+  const properties = read.properties.map((property): Property => {
+    const what = wrongSize(property);
+    if (what === undefined) return property;
+    context.report({ code: 'VALUE', what, origin: property.origin, place: first.id });
+    return { ...property, value: { type: 'unknown', why: what, origin: property.origin } };
   });
   checkLoad(context, properties, actuators, turns);
   return { actuators: actuators.map((actuator) => actuator.id), properties, origin: context.origin(node) };
