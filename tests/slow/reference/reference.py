@@ -1,7 +1,8 @@
 """Solves every reference circuit with SciPy and, where there is a run, with ngspice; prints one JSON object.
 
 {circuit: {step: {pressures: {net: MPa}, speeds: {actuator: m/s or rad/s}, runs: [{by, time (s from the start of the step), pressures}]}}}
-Nets and actuators have the names that the program gives them. Usage: reference.py [--steady] [--no-ngspice] [--rtol 1e-7] [circuit ...]
+Nets and actuators have the names that the program gives them. Usage: reference.py [--stored | --steady] [--no-ngspice] [--rtol 1e-7] [circuit ...]
+--stored: steady points only, as tests/reference/equations.json keeps them.
 """
 
 import json
@@ -131,9 +132,16 @@ def solved(circuit, solvers, rtol):
 def main():
     words = sys.argv[1:]
     rtol = float(words[words.index("--rtol") + 1]) if "--rtol" in words else 1e-7
-    solvers = [] if "--steady" in words else ["scipy"] if "--no-ngspice" in words else ["scipy", "ngspice"]
-    chosen = [n for n in NETS if n in words] or list(NETS)
-    json.dump({n: solved(n, solvers, rtol) for n in chosen}, sys.stdout, indent=2)
+    stored = "--stored" in words
+    solvers = [] if stored or "--steady" in words else ["scipy"] if "--no-ngspice" in words else ["scipy", "ngspice"]
+    answers = {n: solved(n, solvers, rtol) for n in NETS if n in words or not any(n in words for n in NETS)}
+    if stored:
+        answers = {
+            "produced": "by root of SciPy: python3 tests/slow/reference/reference.py --stored > tests/reference/equations.json",
+            "units": "pressures MPa gauge, speeds m/s (motor rad/s)",
+            "circuits": {n: {k: {"pressures": s["pressures"], "speeds": s["speeds"]} for k, s in steps.items()} for n, steps in answers.items()},
+        }
+    json.dump(answers, sys.stdout, indent=2)
     print()
 
 
