@@ -22,7 +22,7 @@ export interface Unusable {
 export type Read = { readonly ok: true; readonly file: SourceFile } | { readonly ok: false; readonly unusable: Unusable };
 
 const CAUSES: Readonly<Record<string, string>> = {
-  ENOENT: 'there is no such file or folder',
+  ENOENT: 'does not exist',
   EACCES: 'may not be read (permission denied)',
   EPERM: 'may not be read (not permitted)',
   EISDIR: 'is a folder',

@@ -114,7 +114,7 @@ describe('what cannot be read', () => {
     expect(err.trimEnd().split('\n')).toHaveLength(1);
     expect(err).toMatch(words);
   };
-  it('a file that is not there', () => refused(['check', 'nowhere.oilway'], /^oilway: nowhere\.oilway there is no such file or folder/));
+  it('a file that is not there', () => refused(['check', 'nowhere.oilway'], /^oilway: nowhere\.oilway does not exist/));
   it('a folder without circuits', () => {
     write('empty/readme.txt', 'nothing');
     refused(['check', 'empty'], /^oilway: empty holds no circuit/);
@@ -145,10 +145,10 @@ describe('what cannot be read', () => {
   it('JSON says it too, so that a failed run never reads as clean', () => {
     const { status, out } = oilway(['check', '--format', 'json', 'nowhere.oilway']);
     expect(status).toBe(2);
-    expect(JSON.parse(out)).toMatchObject({ files: [], cannotRead: [{ file: 'nowhere.oilway', why: 'there is no such file or folder' }] });
+    expect(JSON.parse(out)).toMatchObject({ files: [], cannotRead: [{ file: 'nowhere.oilway', why: 'does not exist' }] });
   });
   it('run refuses the same ways, and a folder of several circuits', () => {
-    refused(['run', 'nowhere.oilway'], /no such file/);
+    refused(['run', 'nowhere.oilway'], /does not exist/);
     refused(['run', 'tree'], /holds 2 circuits/);
     refused(['run'], /takes one file/);
     refused(['run', '--cycle', 'Nothing', 'good.oilway'], /has no cycle Nothing \(it has Sand\)/);

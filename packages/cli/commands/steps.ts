@@ -36,8 +36,14 @@ interface Row {
   readonly limits: string;
 }
 
+/** Limits named in a row of the step table. */
+const LIMITERS_SHOWN = 3;
+
 function limitsOf(points: readonly ActuatorPoint[]): string {
-  return [...new Set(points.flatMap((point) => point.limitedBy.map((limiter) => limiter.words)))].join('; ');
+  const words = [...new Set(points.flatMap((point) => point.limitedBy.map((limiter) => limiter.words)))];
+  // The strongest come first; a row stays readable, and the JSON has them all.
+  const more = words.length - LIMITERS_SHOWN;
+  return [...words.slice(0, LIMITERS_SHOWN), ...(more > 0 ? [`and ${more} more`] : [])].join('; ');
 }
 
 /** What one actuator does in a step: nothing where it neither moves nor is pushed. */
