@@ -180,6 +180,14 @@ describe('07 lift table', () => {
   });
 });
 
+describe('07 lift table at rest', () => {
+  it('sinks by what the seat of CB1 passes: 0.25 cm3/min at 100 bar, 0.158 at 63.2 bar, for 10 min on 50.27 cm2', () => {
+    // 31.77 kN / 50.27 cm2 = 63.2 bar; 1.58 cm3 / 50.27 cm2 = 0.314 mm. Five drops a minute at a seat: common practice, from memory.
+    const drift = studied('07-lift-table').requirements.find((r) => r.words.includes('drift'))!;
+    agrees(drift.worst!.value * 1e3, ((0.25 * pressed(1.2 * 9.80665 + 20, area(80))) / 100) * 10 * (10 / area(80)));
+  });
+});
+
 describe('08 conveyor', () => {
   const at = () => point('08-conveyor', 'Run.Up', 'end');
   it('pressure difference: 920 N.m behind 10:1 and 90 %', () => {
