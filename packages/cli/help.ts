@@ -4,7 +4,7 @@ export const HELP = `oilway: reads hydraulic circuits as text, computes them and
 
   oilway check [FILE or FOLDER ...]   findings of circuits; no path: this folder
   oilway run FILE                     step table, requirements and duty of the circuit's cycles
-  oilway explain [CODE]               the page of a rule; no code: all rules
+  oilway explain [CODE or WORD]       the page of a rule or of a word of the notation; alone: all of them
 
 check
   --format text|json    text (default): each finding with its line of source; json: for other programs
@@ -27,6 +27,7 @@ Examples
   oilway run press.oilway
   oilway run --format csv --cycle Stroke press.oilway > stroke.csv
   oilway explain A01
+  oilway explain cylinder
 
 Colours are used on a terminal only; NO_COLOR=1 turns them off.
 Results are calculations from what was declared. Local codes, the standards named and a competent person decide.

@@ -62,7 +62,7 @@ export async function main(args: readonly string[], output: Output): Promise<Exi
   for (const option of Object.keys(values)) if (!taken.includes(option)) return refuse(`${command} does not take --${option}`);
   const paint = paintFor(process.stdout.isTTY === true, process.env);
   if (command === 'explain') {
-    if (rest.length > 1) return refuse('explain takes one code');
+    if (rest.length > 1) return refuse('explain takes one code or word');
     return explain(rest[0], output, paint);
   }
   const formats = command === 'check' ? ['text', 'json'] : ['text', 'json', 'csv'];

@@ -261,6 +261,15 @@ describe('explain, help, version, mistakes', () => {
     expect(status).toBe(0);
     for (const name of rules) expect(out, name).toMatch(new RegExp(`^${name.slice(0, 3)} `, 'm'));
   });
+  it('explains a word of the notation from the tables: ports and settings', () => {
+    const { status, out } = oilway(['explain', 'Cylinder']);
+    expect(status).toBe(0);
+    expect(out).toMatch(/^cylinder: cylinder/);
+    expect(out).toMatch(/^bore +bore 63 mm +required/m);
+    expect(out).toMatch(/^rod +working/m);
+    expect(oilway(['explain', 'load']).out).toMatch(/^inward +inward 12 kN/m);
+  });
+
   it('explains every code that the notation itself gives', () => {
     const folder = join(ROOT, 'packages/language');
     const sources = ['parse', 'resolve'].flatMap((part) =>
@@ -292,7 +301,7 @@ describe('explain, help, version, mistakes', () => {
     [['check', '--cycle', 'A'], /check does not take --cycle/],
     [['check', '--colour'], /--colour/],
     [['check', '--limit', 'soon'], /--limit takes seconds, not soon/],
-    [['explain', 'A01', 'A02'], /takes one code/],
+    [['explain', 'A01', 'A02'], /takes one code or word/],
   ])('%j is refused in one line', (args, words) => {
     const { status, err } = oilway(args);
     expect(status).toBe(2);

@@ -10,7 +10,7 @@ import { Client, type Published } from './support/client.ts';
 import { BENCH } from './support/check.ts';
 
 const samples = fileURLToPath(new URL('../../samples', import.meta.url));
-const URI = 'file:///work/bench.oilway';
+const URI = 'file:///circuits/bench.oilway';
 let folder = '';
 let client: Client;
 
@@ -42,7 +42,7 @@ describe('over stdio', () => {
   });
 
   test.each(readdirSync(samples).filter((name) => name.endsWith('.oilway')))('%s opens without an error', async (name) => {
-    const uri = `file:///work/samples/${name}`;
+    const uri = `file:///circuits/samples/${name}`;
     const { diagnostics } = await client.open(uri, readFileSync(join(samples, name), 'utf8'));
     expect(diagnostics.filter((one) => one.severity === 1).map((one) => `${one.code}: ${one.message}`)).toEqual([]);
   });
@@ -143,7 +143,7 @@ describe('over stdio', () => {
   });
 
   describe('figures', () => {
-    const uri = 'file:///work/figures.oilway';
+    const uri = 'file:///circuits/figures.oilway';
     const text = readFileSync(join(samples, '04-traverse-feed.oilway'), 'utf8');
     const missed = (one: Published): boolean => one.diagnostics.some((found) => found.code === 'REQUIREMENT');
 
@@ -269,7 +269,7 @@ describe('over stdio', () => {
       'let a = 999999999999999999999999999 bar',
     ];
     for (const [index, text] of texts.entries()) {
-      const { diagnostics } = await client.open(`file:///work/hostile${index}.oilway`, text);
+      const { diagnostics } = await client.open(`file:///circuits/hostile${index}.oilway`, text);
       for (const one of diagnostics) expect(one.message).not.toMatch(/TypeError|RangeError|undefined|NaN|Cannot read|at Object/);
     }
   });

@@ -47,7 +47,7 @@ export interface Setting {
   readonly locked?: readonly string[];
   /** Directions in which stops do not hold ("as if free to move both ways"). */
   readonly free?: readonly string[];
-  /** Count leakage (drift studies); otherwise only the engine's floor and what semantics.md says of a step. */
+  /** Count leakage (drift studies); otherwise only pump and motor leakage and the solver's floor. */
   readonly leakage?: boolean;
   /** Seal friction counted: always, or only against a motion that no declared load pushes (states). */
   readonly sealFriction?: 'always' | 'not with load';
@@ -149,7 +149,7 @@ export interface Machine {
   solve(setting: Setting, near?: Solution): Solution;
   /** Solve with memory logic: unloading lifted, burst shut, piloted valves that cannot shift; remarks say what was found ("hunts between 38 and 45 bar"). */
   settle(setting: Setting, near?: Solution): Solution;
-  /** d ln v / d ln s of a body's speed for each setting or size that can limit it (semantics.md section 4, "Limited by"). */
+  /** d ln v / d ln s of a body's speed for each setting or size that can limit it. */
   sensitivities(
     setting: Setting,
     at: Solution,

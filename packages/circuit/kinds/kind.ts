@@ -15,7 +15,7 @@ export interface PortSpec {
   readonly about: string;
 }
 
-/** The form a property's items take in the text; see notation.md. */
+/** The form a property's items take in the text. */
 export type Shape =
   | { readonly form: 'quantity'; readonly dimensions: readonly Dimension[] }
   /** `rated 315 bar`, `rated T 160 bar` */

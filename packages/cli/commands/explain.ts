@@ -1,9 +1,10 @@
-/** `oilway explain`: the page of one code, or the list of all. */
+/** `oilway explain`: the page of one code or word, or the list of all. */
 import { RULES, codePages, ruleOf } from '@oilway/rules';
 import type { Paint } from '../text/colour.ts';
 import { table } from '../text/table.ts';
 import { LANGUAGE_CODES } from '@oilway/language';
 import type { Exit, Output } from './outcome.ts';
+import { explainWord, WORDS } from './word.ts';
 
 export function explain(code: string | undefined, output: Output, paint: Paint): Exit {
   if (code === undefined) {
@@ -11,8 +12,11 @@ export function explain(code: string | undefined, output: Output, paint: Paint):
     const rows = [...RULES].sort((a, b) => (a.code < b.code ? -1 : 1)).map((rule) => [rule.code, rule.severity, rule.title]);
     const own = Object.entries(LANGUAGE_CODES).map(([name, one]) => [name, one.severity, one.title]);
     for (const line of table(columns, [...rows, ...own], paint.strong)) output.out(line);
+    output.out('');
+    output.out(`words of the notation: ${WORDS.join(', ')}`);
     return 0;
   }
+  if (explainWord(code.toLowerCase(), output, paint)) return 0;
   const known = code.toUpperCase();
   const own = LANGUAGE_CODES[known];
   const page = own === undefined ? codePages[ruleOf(known)?.code ?? ''] : `# ${known} ${own.title}\n\n${own.page}`;
