@@ -79,7 +79,7 @@ export const friction = (bore: number, velocity: number, length = 10, within?: S
   read: (bench) => (loss(bench) * 2 * bore) / (length * 900 * velocity ** 2),
   ...(within === undefined ? {} : { within }),
 });
-export const CHURCHILL: Shown['within'] = [0.03, 'the product uses Churchill (1977), an explicit form that keeps to Colebrook within 3 %'];
+const CHURCHILL: Shown['within'] = [0.03, 'the product uses Churchill (1977), an explicit form that keeps to Colebrook within 3 %'];
 
 interface Rough {
   readonly id: PublishedId;

@@ -13,7 +13,7 @@ const CHARGES = [200, 250, 300, 350] as const;
 const HIGHEST = 400;
 
 const gauge = (absolute: number) => absolute - ATMOSPHERE;
-const name = (precharge: number) => `ACC${PRECHARGES.findIndex((one) => one === precharge) + 1}`;
+const name = (precharge: number) => `ACC${(PRECHARGES as readonly number[]).indexOf(precharge) + 1}`;
 
 /** Accumulators of 10 L on a pump that its relief holds at `pressure`, bar absolute; filled with gas and charged at one temperature. */
 function charged(precharges: readonly number[], pressure: number, celsius: number): string {
