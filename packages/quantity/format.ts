@@ -179,9 +179,15 @@ function largeArea(si: number, unit: Unit, options: FormatOptions): Unit {
   return unitOf(unit.system === 'us' ? 'ft2' : 'm2') as Unit;
 }
 
+/** A time of seconds in a text that counts in minutes or hours reads in seconds: `1.75 s`, not `0.0292 min`. */
+function shortTime(si: number, unit: Unit, options: FormatOptions): Unit {
+  if (unit.dimension !== 'time' || unit.factor < 60 || Math.abs(si) >= unit.factor || options.unit === unit.symbol) return unit;
+  return unitOf('s') as Unit;
+}
+
 /** A figure with its unit as people read it: `183 bar`, `4.23 s`, `-0.2 bar`. `si` is in the SI unit of `dimension` (pressure gauge). */
 export function format(si: number, dimension: Dimension, options: FormatOptions = {}): string {
-  const unit = largeArea(si, displayUnit(dimension, options), options);
+  const unit = shortTime(si, largeArea(si, displayUnit(dimension, options), options), options);
   if (Number.isNaN(si)) return 'not computed';
   if (!Number.isFinite(si)) return si > 0 ? 'unlimited' : '-unlimited';
   const value = fromSi(si, unit);

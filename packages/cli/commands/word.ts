@@ -36,7 +36,13 @@ export function explainWord(word: string, output: Output, paint: Paint): boolean
     for (const group of kind.groups) output.out(`${group.need} of: ${group.of.join(', ')}`);
     return true;
   }
-  const specs = LINES.includes(word) ? LINE_PROPERTIES : word === 'load' ? LOAD_PROPERTIES : word === 'limits' ? LIMITS_PROPERTIES : undefined;
+  const specs = LINES.includes(word)
+    ? LINE_PROPERTIES
+    : word === 'load'
+      ? LOAD_PROPERTIES
+      : word === 'limits'
+        ? LIMITS_PROPERTIES
+        : undefined;
   if (specs === undefined) return false;
   output.out(paint.strong(word === 'line' || word === 'load' || word === 'limits' ? word : `${word}: a line`));
   settings(specs, output, paint);
