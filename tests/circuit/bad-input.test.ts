@@ -63,6 +63,8 @@ const FIGURES: readonly (readonly [string, string, string])[] = [
   ['displacement 16 cm3/rev', 'displacement 16 cm3/rev, volumetric 101 %', '`volumetric` is an efficiency: at most 100 %'],
   ['displacement 16 cm3/rev', 'displacement 16 cm3/rev, mechanical 0 %', '`mechanical` must be above zero'],
   ['displacement 16 cm3/rev', 'displacement 16 cm3/rev, compensator 0 bar', '`compensator` must be above zero'],
+  ['grade 46', 'grade 46, air 1000 %', '`air` is a share of the volume: at most 100 %'],
+  ['volume 100 L', 'volume 100 L, ambient -300 degC to 35 degC', 'is no temperature of a fluid'],
   ['1450 rpm', '0 rpm', '`speed` must be above zero'],
   ['1450 rpm', '1000000000000 rpm', 'beyond anything that is built'],
   ['speed 1450 rpm', 'peak 130 %', '`M1` has no `speed`'],
@@ -121,9 +123,27 @@ describe('a figure that cannot be', () => {
     expect(study.states.length).toBeGreaterThan(0);
     expect(study.states.every((one) => one.variants.every((variant) => variant.point.solved))).toBe(true);
     // A fluid, or a piece of pipe, that is not understood is taken as the usual one, and said so.
-    if (/^(temperature|grade|V1\.A)/.test(good)) return;
+    if (/^(temperature|grade|volume|V1\.A)/.test(good)) return;
     expect(study.requirements[0]?.verdict, study.requirements[0]?.words).not.toBe('met');
   });
+});
+
+it.each([
+  [
+    'accumulator AC1 (volume 1 L, precharge 0 bar at 20 degC, bladder, gas nitrogen)\nworking P1 to AC1\n',
+    '`precharge` must be above zero',
+  ],
+  [
+    'accumulator AC1 (volume 1 L, precharge 50 bar at -400 degC, bladder, gas nitrogen)\nworking P1 to AC1\n',
+    'is no temperature of a fluid',
+  ],
+  ['filter F1 (passes 60 L/min at 0.5 bar, bypass -1 bar)\nworking P1 to F1\nplug F1.out\n', '`bypass` cannot be negative'],
+  ['throttle OR1 (passes 20 L/min at 5 bar, opening 500 %)\nworking P1 to OR1\nplug OR1.out\n', 'at most 100 %'],
+])('%s: the rest goes on', (statement, words) => {
+  const { done, study } = all(GOOD + statement);
+  const found = done.findings.filter((one) => one.severity === 'error' && one.code !== 'REQUIREMENT' && one.what.includes(words));
+  expect(found.map((one) => lineOf(GOOD + statement, one))).toEqual([statement.split('\n')[0]]);
+  expect(study.cycles[0]?.completed).toBe(true);
 });
 
 describe('a circuit that cannot work', () => {

@@ -26,8 +26,13 @@ const ABOVE_ZERO: ReadonlySet<string> = new Set([
   'volumetric',
 ]);
 
-/** An efficiency above one would make energy. */
-const AT_MOST_ONE: ReadonlySet<string> = new Set(['mechanical', 'volumetric']);
+/** An efficiency above one would make energy; of a whole there is no more than all. */
+const AT_MOST_ONE: ReadonlyMap<string, string> = new Map([
+  ['mechanical', 'an efficiency'],
+  ['volumetric', 'an efficiency'],
+  ['air', 'a share of the volume'],
+  ['opening', 'a share of what it passes when open'],
+]);
 
 /** May have a sign: a suction below the atmosphere, a height below oil level. Temperatures have bounds of their own. */
 const SIGNED: ReadonlySet<string> = new Set(['inlet', 'elevation']);
@@ -61,7 +66,8 @@ function wrongQuantity(name: string, q: Quantity): string | undefined {
   }
   if (ABOVE_ZERO.has(name) && !(q.si > 0)) return `\`${name}\` must be above zero`;
   if (q.si < 0 && !SIGNED.has(name)) return `\`${name}\` cannot be negative`;
-  if (AT_MOST_ONE.has(name) && q.si > 1) return `\`${name}\` is an efficiency: at most 100 %`;
+  const share = AT_MOST_ONE.get(name);
+  if (share !== undefined && q.dimension === 'ratio' && q.si > 1) return `\`${name}\` is ${share}: at most 100 %`;
   return tooLarge(name, q);
 }
 
@@ -83,7 +89,13 @@ export function wrongSize({ name, value }: Pick<Property, 'name' | 'value'>): st
     case 'pathPasses':
       return tooLarge('passes', value.flow) ?? tooLarge('passes', value.drop);
     case 'precharge':
-      return tooLarge(name, value.pressure);
+      return value.pressure.si > 0
+        ? (tooLarge(name, value.pressure) ?? wrongQuantity(name, value.temperature))
+        : `\`${name}\` must be above zero`;
+    case 'range':
+      return value.from.dimension === 'temperature' ? (wrongQuantity(name, value.from) ?? wrongQuantity(name, value.to)) : undefined;
+    case 'bypass':
+      return value.crack === undefined ? undefined : wrongQuantity(name, value.crack);
     case 'load': {
       const sizes = [...(value.constant === undefined ? [] : [value.constant]), ...(value.table ?? []).map((row) => row.value)];
       return sizes.map((q) => tooLarge(name, q)).find((words) => words !== undefined);
