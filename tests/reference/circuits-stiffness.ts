@@ -7,7 +7,8 @@ const AREA = (Math.PI / 4) * (0.2 ** 2 - 0.05 ** 2);
 const TRAPPED = 1.05 * AREA * 1 + 0.2e-3;
 const ATMOSPHERE = 101325;
 
-function pressed(pressure: string, bulk: string, air: string): string {
+/** `marks`: gauge pressures of the trapped oil, bar, at which a pressure switch turns, so that the run has a sample there. */
+function pressed(pressure: string, bulk: string, air: string, marks: readonly number[] = []): string {
   return `circuit Bench
 ${supply('20 L/min', pressure, ', V1.P').replace('bulk 100 GPa, air 0 %', `bulk ${bulk}, air ${air}`)}
 directional V1 (3/2, normally closed, coil a SOL1, passes 6000 L/min at 0.1 bar, takes 1 ms)
@@ -15,19 +16,21 @@ cylinder C1 (bore 200 mm, rod 50 mm, through, stroke 1000 mm, begins 0 mm, seal 
 shutoff BV1 (closed)
 working V1.A to C1.cap
 working C1.rod to BV1 to R1
-return V1.T to R1
+${marks.map((bar, i) => `switch PS${i} (rises ${bar.toFixed(6)} bar, falls 1 bar)\nworking C1.rod to PS${i}\n`).join('')}return V1.T to R1
 cycle T {
   step Push energise SOL1 for 12 s
 }
 `;
 }
 
-/** At the end of the run: pressure of the trapped oil, Pa absolute, and what is left of its volume, m3. */
-function end(bench: Bench): { readonly pressure: number; readonly volume: number } {
+/** Pressure of the trapped oil, Pa absolute, and what is left of its volume, m3: at the end of the run, or when a pressure switch turned. */
+function end(bench: Bench, turned?: string): { readonly pressure: number; readonly volume: number } {
   const run = bench.study.cycles[0]?.run;
+  const time = run?.events.find((event) => event.words === `${turned} on`)?.time ?? Number.NaN;
+  const at = turned === undefined ? (run?.times.length ?? 0) - 1 : (run?.times.findIndex((one) => one >= time - 1e-9) ?? -1);
   const net = bench.circuit.nets.find((one) => one.ports.some(({ component, port }) => component === 'C1' && port === 'rod'));
-  const position = run?.positions.C1?.at(-1) ?? Number.NaN;
-  return { pressure: (run?.pressures[net?.id ?? '']?.at(-1) ?? Number.NaN) + ATMOSPHERE, volume: TRAPPED - AREA * position };
+  const position = run?.positions.C1?.[at] ?? Number.NaN;
+  return { pressure: (run?.pressures[net?.id ?? '']?.[at] ?? Number.NaN) + ATMOSPHERE, volume: TRAPPED - AREA * position };
 }
 
 export const STIFFNESS: readonly {
@@ -37,7 +40,7 @@ export const STIFFNESS: readonly {
   readonly read: (benches: readonly Bench[]) => number;
 }[] = [
   { id: 'blk-01', circuits: [pressed('1000 psi', '350000 psi', '0 %')], read: ([bench]) => 1 - end(bench as Bench).volume / TRAPPED },
-  // Tangent stiffness at a pressure, bar absolute: dp over dV/V between two pressures about it.
+  // Tangent stiffness at a pressure, bar absolute: dp over dV/V between two pressures about it, passed in one run.
   ...(
     [
       ['blk-air-0.01-50', 0.01, 50],
@@ -48,9 +51,16 @@ export const STIFFNESS: readonly {
     ] as const
   ).map(([id, air, absolute]) => ({
     id,
-    circuits: [0.97, 1.03].map((share) => pressed(`${(absolute * share - 1.01325).toFixed(6)} bar`, '1.5 GPa', `${air * 100} %`)),
-    read: (benches: readonly Bench[]) => {
-      const [low, high] = benches.map(end) as [ReturnType<typeof end>, ReturnType<typeof end>];
+    circuits: [
+      pressed(
+        `${absolute * 1.2} bar`,
+        '1.5 GPa',
+        `${air * 100} %`,
+        [0.97, 1.03].map((share) => absolute * share - 1.01325),
+      ),
+    ],
+    read: ([bench]: readonly Bench[]) => {
+      const [low, high] = [end(bench as Bench, 'PS0'), end(bench as Bench, 'PS1')];
       return (high.pressure - low.pressure) / Math.log(low.volume / high.volume);
     },
   })),
