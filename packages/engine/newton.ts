@@ -21,6 +21,8 @@ const STUCK = 4;
 const UPHILL = 0.125;
 /** Residual below which nothing more is asked, L/s, MPa. */
 const POLISHED = 1e-11;
+/** Most steps spent on a balance behind converged pressures. */
+const MOST_POLISHING = 8;
 
 export class Solver {
   readonly sys: System;
@@ -134,8 +136,8 @@ export class Solver {
         share *= 0.5;
       }
       if (share === 1 && !limited && !clipped && (this.change < TIGHT || (this.change < LOOSE && this.residual < RESIDUAL))) {
-        // Steep passages leave a balance behind pressures that have converged: at most two steps more.
-        if (this.residual < POLISHED || ++polished >= 2) return true;
+        // Steep passages leave a balance behind pressures that have converged: two steps more, a few where a flow is still missing.
+        if (this.residual < POLISHED || ++polished >= (this.residual < RESIDUAL ? 2 : MOST_POLISHING)) return true;
       }
     }
     return false;

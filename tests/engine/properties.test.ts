@@ -21,6 +21,9 @@ function solved(net: Net, spec: NetworkSpec = net.spec): { network: Network; res
   return { network, request, result: solveSteady(network, request) };
 }
 
+/** Seeds at which steep passages once left a balance open behind converged pressures. */
+const STEEP = [335, 1648, 2135, 4415];
+
 describe('every network', () => {
   it('balances at every node to a billionth of its largest flow', () => {
     fc.assert(
@@ -50,7 +53,7 @@ describe('every network', () => {
           if (i > 0 && node.fixed === undefined) expect(Math.abs(inflow[i]!), `node ${i} of net ${s}`).toBeLessThan(1e-9 * largest + 1e-9);
         });
       }),
-      { numRuns: 150 },
+      { numRuns: 150, examples: STEEP.map((s): [number] => [s]) },
     );
   });
 
