@@ -226,19 +226,6 @@ export interface CustomSpec extends Base {
   readonly evaluate: (inputs: Float64Array, parameters: Float64Array, flows: Float64Array, gradient: Float64Array) => void;
 }
 
-/**
- * An element with a law of its own, for tests and for kinds still to come. `evaluate` gets the pressures of `nodes` (terminals first, then
- * sensed nodes), then the position of `actuator` if given; it writes the flow INTO the element at each terminal (L/s) and the derivatives,
- * row by row over all inputs. The one element that cannot be structured-cloned.
- */
-export interface CustomSpec extends Base {
-  readonly type: 'custom';
-  readonly nodes: readonly NodeIndex[];
-  readonly terminals: number;
-  readonly actuator?: number;
-  readonly evaluate: (inputs: Float64Array, parameters: Float64Array, flows: Float64Array, gradient: Float64Array) => void;
-}
-
 export type ElementSpec =
   | PathSpec
   | CheckSpec
