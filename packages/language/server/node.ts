@@ -16,15 +16,24 @@ function workerFile(): URL {
   return existsSync(bundled) ? bundled : new URL('./study-worker-node.ts', import.meta.url);
 }
 
+/** Memory of one study, MB: a circuit that needs more is given up with the reason, and the editor goes on. */
+const MOST_MEMORY = 1024;
+
+const reasonOf = (reason: unknown): string => {
+  if (!(reason instanceof Error)) return String(reason);
+  const outOfMemory = (reason as { code?: unknown }).code === 'ERR_WORKER_OUT_OF_MEMORY';
+  return outOfMemory ? `the circuit is too large: its study needs more than ${MOST_MEMORY} MB` : reason.message;
+};
+
 function startWorker(): WorkerLike {
-  const worker = new Worker(workerFile());
+  const worker = new Worker(workerFile(), { resourceLimits: { maxOldGenerationSizeMb: MOST_MEMORY } });
   // An idle study must not keep a process alive whose client is gone.
   worker.unref();
   return {
     post: (message) => worker.postMessage(message),
     onMessage: (listener) => worker.on('message', (reply: WorkerReply) => listener(reply)),
     onError: (listener) => {
-      worker.on('error', (reason) => listener(reason instanceof Error ? reason.message : String(reason)));
+      worker.on('error', (reason) => listener(reasonOf(reason)));
       worker.on('exit', (code) => listener(`the study's thread ended with code ${code}`));
     },
     terminate: () => void worker.terminate(),
