@@ -3,7 +3,7 @@ import { compile, solveSteady, Transient } from '@oilway/engine';
 import { expect, it } from 'vitest';
 import { nastyNet, random } from './nets.ts';
 
-const count = Number(process.env['NETS'] ?? 200);
+const count = Number(process.env.NETS ?? 200);
 const finite = (values: Iterable<number>): boolean => {
   for (const value of values) if (!Number.isFinite(value)) return false;
   return true;

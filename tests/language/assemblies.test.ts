@@ -40,7 +40,7 @@ describe('assemblies', () => {
     expect(
       errors('use "shelf.oilway"\ncheck CV1 as NonReturn\nunit U1 as Power\nrelief RV1 (set system, passes 9 L/min at 1 bar)'),
     ).toEqual([]);
-    expect(read('use "shelf.oilway"\ncheck CV1 as NonReturn').circuit.unknown['CV1']).toContain('stands in another file');
+    expect(read('use "shelf.oilway"\ncheck CV1 as NonReturn').circuit.unknown.CV1).toContain('stands in another file');
     expect(errors('check CV1 as NonReturn').length).toBe(1);
   });
 

@@ -134,7 +134,7 @@ describe('settings', () => {
     const text = 'cylinder X1 (bore ?, stroke 60 mm)';
     expect(errors(text)).toEqual([]);
     expect(value(text, 'bore')).toMatchObject({ type: 'wanted', dimension: 'length' });
-    expect(read(text).circuit.unknown['X1']).toContain('to be found');
+    expect(read(text).circuit.unknown.X1).toContain('to be found');
     expect(read('drive X1 (power ?, speed 1450 rpm)').circuit.unknown).toEqual({});
   });
 
