@@ -130,8 +130,8 @@ describe('a figure that cannot be', () => {
 
 it.each([
   [
-    'accumulator AC1 (volume 1 L, precharge 0 bar at 20 degC, bladder, gas nitrogen)\nworking P1 to AC1\n',
-    '`precharge` must be above zero',
+    'accumulator AC1 (volume 1 L, precharge -2 bar at 20 degC, bladder, gas nitrogen)\nworking P1 to AC1\n',
+    '`precharge` cannot be negative',
   ],
   [
     'accumulator AC1 (volume 1 L, precharge 50 bar at -400 degC, bladder, gas nitrogen)\nworking P1 to AC1\n',

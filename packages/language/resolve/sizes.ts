@@ -89,9 +89,8 @@ export function wrongSize({ name, value }: Pick<Property, 'name' | 'value'>): st
     case 'pathPasses':
       return tooLarge('passes', value.flow) ?? tooLarge('passes', value.drop);
     case 'precharge':
-      return value.pressure.si > 0
-        ? (tooLarge(name, value.pressure) ?? wrongQuantity(name, value.temperature))
-        : `\`${name}\` must be above zero`;
+      // Zero is gas at the pressure of the atmosphere: of little use, but it can be.
+      return wrongQuantity(name, value.pressure) ?? wrongQuantity(name, value.temperature);
     case 'range':
       return value.from.dimension === 'temperature' ? (wrongQuantity(name, value.from) ?? wrongQuantity(name, value.to)) : undefined;
     case 'bypass':
