@@ -2,6 +2,7 @@
 export * from './model/origin.ts';
 export * from './model/value.ts';
 export * from './model/circuit.ts';
+export { emptyCircuit } from './model/empty.ts';
 export * from './kinds/names.ts';
 export * from './kinds/kind.ts';
 export * from './study/study.ts';

@@ -2,7 +2,7 @@
  * The whole service on one page, without any connection: documents in, circuits, findings and studies out.
  * Editor, command and workers use the same functions. What fails inside comes back as `failed`, never as a finding.
  */
-import type { Circuit, Study } from '@oilway/circuit';
+import { type Circuit, emptyCircuit, type Study } from '@oilway/circuit';
 import type { Finding, RuleContext } from '@oilway/rules';
 import { type Parsed, parseText } from './parse/parse.ts';
 import { resolve } from './resolve/resolve.ts';
@@ -44,26 +44,6 @@ export interface Analysed {
   readonly study?: Study;
   readonly failed?: string;
 }
-
-const emptyCircuit = (uri: string): Circuit => ({
-  uri,
-  display: 'as written',
-  units: {},
-  components: [],
-  coils: [],
-  lines: [],
-  pieces: [],
-  nets: [],
-  loads: [],
-  cycles: [],
-  whiles: [],
-  interlocks: [],
-  requirements: [],
-  allows: [],
-  constants: [],
-  notComputed: [],
-  unknown: {},
-});
 
 const reasonOf = (error: unknown): string => (error instanceof Error ? (error.stack ?? error.message) : String(error));
 

@@ -1,5 +1,6 @@
 /** What the parser says when a line does not fit: in trade words, not in token names. */
 import type { LangiumCoreServices } from 'langium';
+import { nearest } from './near.ts';
 import { isLineHead, isReserved } from './words.ts';
 
 type IParserErrorMessageProvider = LangiumCoreServices['parser']['ParserErrorMessageProvider'];
@@ -25,6 +26,25 @@ export function seen(token: { readonly image: string; readonly tokenType: { read
   return `\`${token.image.length > 40 ? `${token.image.slice(0, 40)}...` : token.image}\``;
 }
 
+/** Words that may go on where a line of control or a requirement could end: for "did you mean". */
+const CONTROL_WORDS = [
+  'above',
+  'below',
+  'extended',
+  'retracted',
+  'extending',
+  'retracting',
+  'until',
+  'within',
+  'over',
+  'times',
+  'most',
+  'least',
+  'between',
+  'reaches',
+  'still',
+];
+
 const ENDS: ReadonlySet<string> = new Set(['EOL', 'EOF']);
 
 export class MessageProvider implements IParserErrorMessageProvider {
@@ -35,6 +55,9 @@ export class MessageProvider implements IParserErrorMessageProvider {
     }
     if (expected.name === 'EOF') return `${seen(actual)} does not fit here`;
     if (expected.name === 'EOL') {
+      if (actual.image === ',' && /^\d+$/.test(previous.image)) return 'A number has a decimal point, not a comma';
+      const near = actual.tokenType.name === 'ID' ? nearest(actual.image, CONTROL_WORDS) : undefined;
+      if (near !== undefined) return `\`${actual.image}\` does not fit here: did you mean \`${near}\``;
       return `${seen(actual)} does not fit here: the line could end after ${this.after(previous)}; if it goes on, a sign or word between them is missing (\`(\`, \`,\`, \`to\`)`;
     }
     if (ENDS.has(actual.tokenType.name)) return `The line ends too soon: ${thing(expected.name)} is missing after ${this.after(previous)}`;

@@ -109,18 +109,30 @@ function declareStep(context: Context, step: StepNode, owner: string): void {
   else known.push(id);
 }
 
-/** Units of assemblies are understood but not resolved: said once, so that nothing seems computed that is not. */
+/** What other files and assemblies hold is understood but not resolved: said at each statement, so that nothing seems computed that is not. */
 function notResolvedYet(context: Context, statements: readonly Statement[]): void {
-  const first = statements.find((statement) => statement.$type === 'Unit' || statement.$type === 'Use' || statement.$type === 'Assembly');
-  if (first === undefined) return;
-  const origin = context.origin(first.$type === 'Assembly' ? (first.name ?? first) : first);
-  const what = 'units of an assembly';
-  context.notComputed.push({ what, why: 'not resolved yet', origin });
-  context.report({
-    code: 'NOT-COMPUTED',
-    severity: 'information',
-    what: 'Not resolved yet: units of an assembly are not computed',
-    mend: 'What the rest of the file says is computed; write the unit out to have it computed too.',
-    origin,
-  });
+  for (const statement of statements) {
+    const said = notResolved(statement);
+    if (said === undefined) continue;
+    const origin = context.origin(statement.$type === 'Assembly' ? (statement.name ?? statement) : statement);
+    context.notComputed.push({ what: said.what, why: 'not resolved yet', origin });
+    context.report({ code: 'NOT-COMPUTED', severity: 'information', what: `Not resolved yet: ${said.what}`, mend: said.mend, origin });
+  }
+}
+
+function notResolved(statement: Statement): { readonly what: string; readonly mend: string } | undefined {
+  const mend = 'What the rest of the file says is computed; write the unit out to have it computed too.';
+  switch (statement.$type) {
+    case 'Use':
+      return {
+        what: '`use` reads no other file; names that may stand there are not looked for',
+        mend: 'Write what is needed of the other file into this one to have it computed.',
+      };
+    case 'Unit':
+      return { what: 'units of an assembly are not computed', mend };
+    case 'Assembly':
+      return { what: 'units of an assembly are not computed; its own statements are checked', mend };
+    default:
+      return undefined;
+  }
 }

@@ -12,6 +12,14 @@ export function readItems(reading: Reading, items: Items, origin: Origin): Read 
   const first = items.peek();
   if (first?.is === 'wanted') {
     items.skip(1);
+    reading.context.report({
+      code: 'NOT-COMPUTED',
+      severity: 'information',
+      what: `Not computed yet: \`${reading.spec.name} ?\` of ${reading.owner} asks for a size, and sizes are not found yet`,
+      mend: 'Write a value; what rests on it is computed then.',
+      origin,
+      place: reading.owner,
+    });
     const shape = reading.spec.shape;
     const dimension = shape.form === 'quantity' && shape.dimensions.length === 1 ? shape.dimensions[0] : undefined;
     return { value: { type: 'wanted', ...(dimension === undefined ? {} : { dimension }), origin } };

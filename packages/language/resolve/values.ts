@@ -198,7 +198,7 @@ export class Values {
     let total: Part | undefined;
     let failed = false;
     (node.factors ?? []).forEach((factor, i) => {
-      const part = this.factor(factor, from);
+      const part = this.unitBroken(node, i) ? undefined : this.factor(factor, from);
       if (part === undefined) failed = true;
       if (part === undefined || failed) return;
       if (i === 0) total = part;
@@ -209,6 +209,31 @@ export class Values {
       if (total === undefined) failed = true;
     });
     return failed ? undefined : total;
+  }
+
+  /** `30 L/mn`: written in one with the unit before it and no name, the word behind the stroke is the rest of a unit that is none. */
+  private unitBroken(node: Term, i: number): boolean {
+    const before = (node.factors ?? [])[i - 1];
+    const factor = (node.factors ?? [])[i];
+    if (factor?.$type !== 'RefValue' || before?.$type !== 'Quantity' || before.unit === undefined || factor.arguments !== undefined)
+      return false;
+    if ((node.operators ?? [])[i - 1] !== '/') return false;
+    const first = this.context.origin(before);
+    const at: Origin = { ...first, start: first.end - before.unit.length, end: this.context.origin(factor).end };
+    const written = this.context.slice(at);
+    if (/\s/.test(written) || this.context.names.has(this.context.wordsOf(factor.ref)[0] ?? '')) return false;
+    this.noUnit(written, at);
+    return true;
+  }
+
+  private noUnit(written: string, at: Origin): void {
+    const near = (this.wanted === undefined ? undefined : nearestUnit(written, this.wanted)) ?? nearestUnit(written);
+    this.context.report({
+      code: 'M07',
+      what: `\`${written}\` is no unit${near === undefined ? '' : `: did you mean \`${near.symbol}\``}`,
+      origin: at,
+      fixes: near === undefined ? [] : [this.context.replace(at, near.symbol, `Write \`${near.symbol}\``)],
+    });
   }
 
   private factor(node: Factor, from: string[]): Part | undefined {
@@ -240,13 +265,7 @@ export class Values {
     if (unit === undefined) {
       const origin = this.context.origin(node);
       const at: Origin = { ...origin, start: origin.end - node.unit.length };
-      const near = (this.wanted === undefined ? undefined : nearestUnit(node.unit, this.wanted)) ?? nearestUnit(node.unit);
-      this.context.report({
-        code: 'M07',
-        what: `\`${node.unit}\` is no unit${near === undefined ? '' : `: did you mean \`${near.symbol}\``}`,
-        origin: at,
-        fixes: near === undefined ? [] : [this.context.replace(at, near.symbol, `Write \`${near.symbol}\``)],
-      });
+      this.noUnit(node.unit, at);
       return undefined;
     }
     return { amount: amountOf({ si: toSi(sign * size, unit), dimension: unit.dimension, unit: unit.symbol }), bare: false };

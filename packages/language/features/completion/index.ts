@@ -1,6 +1,6 @@
 /** Completion: what may stand at the cursor, from the statement before it and what the circuit holds. */
 import { CompletionItemKind, type CompletionItem } from 'vscode-languageserver-types';
-import { KIND_NAMES, KINDS, type Circuit } from '@oilway/circuit';
+import { type Circuit, emptyCircuit, KIND_NAMES, KINDS } from '@oilway/circuit';
 import type { Analysis } from '../analysis.ts';
 import { LINE_FUNCTIONS } from '../../parse/words.ts';
 import { bracketEntry, cursorAt, type Cursor } from './context.ts';
@@ -20,25 +20,7 @@ export interface CompletionOptions {
   readonly rules?: readonly { readonly code: string; readonly title: string }[];
 }
 
-const EMPTY: Circuit = {
-  uri: '',
-  display: 'as written',
-  units: {},
-  components: [],
-  coils: [],
-  lines: [],
-  pieces: [],
-  nets: [],
-  loads: [],
-  cycles: [],
-  whiles: [],
-  interlocks: [],
-  requirements: [],
-  allows: [],
-  constants: [],
-  notComputed: [],
-  unknown: {},
-};
+const EMPTY = emptyCircuit('');
 
 export function completionAt(analysis: Analysis, offset: number, options: CompletionOptions): CompletionItem[] {
   const cursor = cursorAt(analysis, offset);
